@@ -1,0 +1,103 @@
+//! A fluid's file: what it must hold, and what is refused.
+
+use serde::Deserialize;
+
+use super::Fluid;
+use super::correlated::Correlated;
+use super::helmholtz::{Equation, EquationData, EquationError};
+use super::model::Model;
+use super::safety::Safety;
+use crate::source::{Source, Sourced};
+
+const FORMAT: u32 = 1;
+
+#[derive(Debug, Deserialize)]
+#[serde(deny_unknown_fields)]
+struct FluidFile {
+    format: u32,
+    id: String,
+    name: String,
+    #[serde(default)]
+    also: Vec<String>,
+    cas: String,
+    #[serde(default)]
+    refrigerant: Option<String>,
+    formula: String,
+    molar_mass_kg_per_mol: f64,
+    melting_point_k: Sourced<f64>,
+    #[serde(default)]
+    solid_density_kg_per_m3: Option<Sourced<f64>>,
+    model: ModelFile,
+    #[serde(default)]
+    surface_tension: Option<SurfaceTension>,
+    safety: Safety,
+}
+
+#[derive(Debug, Deserialize)]
+enum ModelFile {
+    Helmholtz(Box<EquationData>),
+    Correlated(Box<Correlated>),
+}
+
+/// σ = Σ a(1 − T/T_c)ⁿ, N/m.
+#[derive(Debug, Clone, PartialEq, Deserialize)]
+#[serde(deny_unknown_fields)]
+pub struct SurfaceTension {
+    pub critical_temperature_k: f64,
+    pub a: Vec<f64>,
+    pub n: Vec<f64>,
+    pub temperature_range_k: (f64, f64),
+    pub source: Source,
+}
+
+/// Why a fluid file is refused.
+#[derive(Debug, Clone, PartialEq, thiserror::Error)]
+pub enum FluidFileError {
+    #[error("{0}")]
+    Syntax(Box<ron::error::SpannedError>),
+    #[error("format {found} is not one this program reads ({FORMAT})")]
+    Format { found: u32 },
+    #[error("{field} must be a finite number above 0, not {value}")]
+    NotPositive { field: &'static str, value: f64 },
+    #[error("model: {0}")]
+    Equation(#[from] EquationError),
+}
+
+/// Reads one fluid's file.
+///
+/// # Errors
+/// [`FluidFileError`] says what is wrong and where.
+pub fn parse(text: &str) -> Result<Fluid, FluidFileError> {
+    // Option fields may be given bare or in Some(..).
+    let options = ron::Options::default();
+    let file: FluidFile = options.from_str(text).map_err(|e| FluidFileError::Syntax(Box::new(e)))?;
+    if file.format != FORMAT {
+        return Err(FluidFileError::Format { found: file.format });
+    }
+    for (field, value) in
+        [("molar_mass_kg_per_mol", file.molar_mass_kg_per_mol), ("melting_point_k", file.melting_point_k.value)]
+    {
+        if !(value.is_finite() && value > 0.0) {
+            return Err(FluidFileError::NotPositive { field, value });
+        }
+    }
+    let model = match file.model {
+        ModelFile::Helmholtz(data) => Model::Equation(Box::new(Equation::new(*data)?)),
+        ModelFile::Correlated(data) => Model::Correlated(data),
+    };
+    Ok(Fluid {
+        id: file.id,
+        name: file.name,
+        also: file.also,
+        cas: file.cas,
+        refrigerant: file.refrigerant,
+        formula: file.formula,
+        molar_mass: file.molar_mass_kg_per_mol,
+        melting_point: file.melting_point_k,
+        solid_density: file.solid_density_kg_per_m3,
+        surface_tension: file.surface_tension,
+        safety: file.safety,
+        model,
+        curve: std::sync::OnceLock::new(),
+    })
+}

@@ -1,0 +1,253 @@
+//! Working fluids: two kinds of model behind one interface.
+//!
+//! [`Fluid`] is the door. A fluid is data (`assets/fluids/*.ron`), read by
+//! [`asset`], evaluated by [`helmholtz`] or [`correlated`], and looked up in the
+//! [`Catalog`].
+
+mod asset;
+mod catalog;
+pub mod correlated;
+mod curve;
+mod error;
+pub mod helmholtz;
+mod model;
+mod safety;
+mod state;
+
+use std::sync::OnceLock;
+
+pub use asset::{FluidFileError, SurfaceTension, parse as parse_fluid};
+pub use catalog::{Catalog, UnknownFluid};
+pub use curve::{CurvePoint, SaturationCurve};
+pub use error::FluidError;
+pub use model::{Critical, Model, SaturationPoint};
+pub use safety::{Safety, Stability, StabilityKind};
+pub use state::{Crossing, DomeSide, Regime, State};
+
+use crate::source::Sourced;
+use crate::units::{Density, Pressure, Temperature};
+
+/// A working fluid with everything that is known of it.
+#[derive(Debug)]
+pub struct Fluid {
+    id: String,
+    name: String,
+    also: Vec<String>,
+    cas: String,
+    refrigerant: Option<String>,
+    formula: String,
+    molar_mass: f64,
+    melting_point: Sourced<f64>,
+    solid_density: Option<Sourced<f64>>,
+    surface_tension: Option<SurfaceTension>,
+    safety: Safety,
+    model: Model,
+    curve: OnceLock<Result<SaturationCurve, FluidError>>,
+}
+
+/// One fluid is the same as another if its file is.
+impl PartialEq for Fluid {
+    fn eq(&self, other: &Self) -> bool {
+        self.id == other.id && self.model == other.model
+    }
+}
+
+impl Fluid {
+    pub fn id(&self) -> &str {
+        &self.id
+    }
+
+    pub fn name(&self) -> &str {
+        &self.name
+    }
+
+    /// Other names it is known by.
+    pub fn also(&self) -> &[String] {
+        &self.also
+    }
+
+    pub fn cas(&self) -> &str {
+        &self.cas
+    }
+
+    pub fn refrigerant(&self) -> Option<&str> {
+        self.refrigerant.as_deref()
+    }
+
+    pub fn formula(&self) -> &str {
+        &self.formula
+    }
+
+    /// kg/mol.
+    pub fn molar_mass(&self) -> f64 {
+        self.molar_mass
+    }
+
+    /// Density of the solid at its melting point, kg/m³; given where it is lighter than the liquid.
+    pub fn solid_density(&self) -> Option<&Sourced<f64>> {
+        self.solid_density.as_ref()
+    }
+
+    pub fn melting_point(&self) -> &Sourced<f64> {
+        &self.melting_point
+    }
+
+    pub fn safety(&self) -> &Safety {
+        &self.safety
+    }
+
+    pub fn model(&self) -> &Model {
+        &self.model
+    }
+
+    /// Name of the kind of model, in a word.
+    pub fn model_kind(&self) -> &'static str {
+        match self.model {
+            Model::Equation(_) => "equation",
+            Model::Correlated(_) => "correlations",
+        }
+    }
+
+    /// Where the fluid's numbers come from, one line each.
+    pub fn model_sources(&self) -> Vec<String> {
+        match &self.model {
+            Model::Equation(equation) => vec![equation.data().source.to_string()],
+            Model::Correlated(model) => {
+                model.sources().iter().map(|(what, source)| format!("{what}: {source}")).collect()
+            }
+        }
+    }
+
+    /// What the source states of its uncertainty.
+    pub fn uncertainty(&self) -> String {
+        match &self.model {
+            Model::Equation(equation) => equation.data().uncertainty.clone(),
+            Model::Correlated(model) => {
+                format!("vapour pressure within {:.1} %", 100.0 * model.pressure_uncertainty())
+            }
+        }
+    }
+
+    /// Relative uncertainty of the saturation pressure that a worst case must carry.
+    /// Reference equations state tenths of a per cent, far inside the wall factors: 0.
+    pub fn pressure_uncertainty(&self) -> f64 {
+        match &self.model {
+            Model::Equation(_) => 0.0,
+            Model::Correlated(model) => model.pressure_uncertainty(),
+        }
+    }
+
+    /// Critical point of the model.
+    pub fn critical(&self) -> Critical {
+        self.model.critical(self.molar_mass)
+    }
+
+    /// Lowest and highest temperature of the model.
+    pub fn range(&self) -> (Temperature, Temperature) {
+        typed_range(self.model.range_k())
+    }
+
+    /// Lowest and highest temperature at which saturation is given.
+    pub fn saturation_range(&self) -> (Temperature, Temperature) {
+        typed_range(self.model.saturation_range_k())
+    }
+
+    /// Below this the sealed fluid is frozen.
+    ///
+    /// The sourced melting point; where the equation starts within 0.05 K above
+    /// it (water: 273.16 K against 273.15 K), that start, since a sealed unit
+    /// freezes at the triple point and not under an atmosphere.
+    pub fn freezing_point(&self) -> Temperature {
+        let melting = self.melting_point.value;
+        let low = self.model.range_k().0;
+        let point = if low > melting && low - melting <= 0.05 { low } else { melting };
+        Temperature::from_kelvin(point).expect("a fluid file's melting point is checked when read")
+    }
+
+    /// Saturation by the direct solve.
+    ///
+    /// # Errors
+    /// [`FluidError`] outside [`Self::saturation_range`], or frozen.
+    pub fn saturation(&self, temperature: Temperature) -> Result<SaturationPoint, FluidError> {
+        self.saturation_allowed(temperature)?;
+        self.model
+            .saturation(temperature.kelvin(), self.molar_mass)
+            .map_err(|_| FluidError::NotConverged { fluid: self.name.clone(), temperature })
+    }
+
+    /// Saturation expansions over the whole range, built on first use.
+    ///
+    /// # Errors
+    /// [`FluidError::NotConverged`] if the direct solve fails somewhere.
+    pub fn curve(&self) -> Result<&SaturationCurve, FluidError> {
+        self.curve
+            .get_or_init(|| {
+                SaturationCurve::build(
+                    self.critical().temperature_k,
+                    self.model.saturation_range_k(),
+                    |t| self.model.curve_point(t, self.molar_mass),
+                )
+                .map_err(|e| FluidError::NotConverged {
+                    fluid: self.name.clone(),
+                    temperature: clamped(e.temperature_k),
+                })
+            })
+            .as_ref()
+            .map_err(Clone::clone)
+    }
+
+    /// Vapour pressure from the expansions; the same numbers as [`Self::saturation`] to 1e-10.
+    ///
+    /// # Errors
+    /// As [`Self::saturation`].
+    pub fn saturation_pressure(&self, temperature: Temperature) -> Result<Pressure, FluidError> {
+        self.saturation_allowed(temperature)?;
+        let p = self.curve()?.at(temperature.kelvin()).pressure_pa;
+        Ok(Pressure::from_pascal(p).expect("a vapour pressure is finite"))
+    }
+
+    /// Surface tension in N/m, where known.
+    pub fn surface_tension(&self, temperature: Temperature) -> Option<f64> {
+        let form = self.surface_tension.as_ref()?;
+        let t = temperature.kelvin();
+        let (low, high) = form.temperature_range_k;
+        if !(low..=high).contains(&t) {
+            return None;
+        }
+        let theta = 1.0 - t / form.critical_temperature_k;
+        (theta > 0.0).then(|| form.a.iter().zip(&form.n).map(|(a, n)| a * theta.powf(*n)).sum())
+    }
+
+    /// Greatest density given, kg/m³, and greatest pressure.
+    pub fn limits(&self) -> (Option<Density>, Pressure) {
+        let (pressure, density) = self.model.limits(self.molar_mass);
+        (
+            Density::from_kilogram_per_cubic_metre(density).ok(),
+            Pressure::from_pascal(pressure).expect("a fluid file's limits are checked when read"),
+        )
+    }
+
+    fn saturation_allowed(&self, temperature: Temperature) -> Result<(), FluidError> {
+        let (low, high) = self.saturation_range();
+        if temperature < self.freezing_point() {
+            return Err(FluidError::Frozen { fluid: self.name.clone(), temperature, melting: self.freezing_point() });
+        }
+        if temperature < low {
+            return Err(FluidError::TooCold { fluid: self.name.clone(), temperature, low });
+        }
+        if temperature > high {
+            let critical = clamped(self.critical().temperature_k);
+            return Err(FluidError::NoSaturation { fluid: self.name.clone(), temperature, high, critical });
+        }
+        Ok(())
+    }
+}
+
+fn typed_range((low, high): (f64, f64)) -> (Temperature, Temperature) {
+    (clamped(low), clamped(high))
+}
+
+/// A temperature from a model's own finite figures.
+fn clamped(kelvin: f64) -> Temperature {
+    Temperature::from_kelvin(kelvin.clamp(1e-3, 1e5)).expect("clamped into the type's range")
+}

@@ -1,0 +1,90 @@
+//! What a fluid does to people and to itself; each figure with its source.
+
+use serde::Deserialize;
+
+use crate::source::{Source, Sourced};
+
+/// Hazard data of a fluid. A gap is a real gap: not known is never "harmless".
+#[derive(Debug, Clone, PartialEq, Deserialize)]
+#[serde(deny_unknown_fields)]
+pub struct Safety {
+    /// Refrigerant safety group.
+    #[serde(default)]
+    pub group: Option<Sourced<String>>,
+    /// GHS hazard statement codes.
+    pub statements: Sourced<Vec<String>>,
+    /// Volume fraction in air.
+    #[serde(default)]
+    pub lower_flammable_limit: Option<Sourced<f64>>,
+    #[serde(default)]
+    pub upper_flammable_limit: Option<Sourced<f64>>,
+    #[serde(default)]
+    pub flash_point_k: Option<Sourced<f64>>,
+    #[serde(default)]
+    pub autoignition_k: Option<Sourced<f64>>,
+    /// Eight-hour average, the lowest of the authorities found.
+    #[serde(default)]
+    pub exposure_limit_ppm: Option<Sourced<f64>>,
+    #[serde(default)]
+    pub short_term_limit_ppm: Option<Sourced<f64>>,
+    #[serde(default)]
+    pub immediately_dangerous_ppm: Option<Sourced<f64>>,
+    /// Why consumers may not be given it.
+    #[serde(default)]
+    pub consumer_restriction: Option<Sourced<String>>,
+    #[serde(default)]
+    pub gwp_100: Option<Sourced<f64>>,
+    #[serde(default)]
+    pub stability: Vec<Stability>,
+    #[serde(default)]
+    pub highest_stable_temperature_k: Option<Sourced<f64>>,
+}
+
+/// One way in which a fluid does not stay what it is.
+#[derive(Debug, Clone, PartialEq, Deserialize)]
+#[serde(deny_unknown_fields)]
+pub struct Stability {
+    pub kind: StabilityKind,
+    pub note: String,
+    pub source: Source,
+}
+
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Deserialize)]
+pub enum StabilityKind {
+    SelfDecomposing,
+    Oxidising,
+    WaterReactive,
+    Pyrophoric,
+    PeroxideForming,
+    Hydrolysing,
+    AcidInFlame,
+}
+
+impl Safety {
+    /// GHS statements H220 to H226: flammable gas or liquid.
+    pub fn is_flammable(&self) -> bool {
+        self.lower_flammable_limit.is_some() && self.has_statement(&["H220", "H221", "H224", "H225", "H226", "H206"])
+    }
+
+    /// Burns only under conditions: a flammable range without a flammable classification.
+    pub fn burns_with_difficulty(&self) -> bool {
+        self.lower_flammable_limit.is_some() && !self.is_flammable()
+    }
+
+    /// GHS statements of acute or chronic poisoning, or of cancer.
+    pub fn is_toxic(&self) -> bool {
+        self.has_statement(&[
+            "H300", "H301", "H302", "H310", "H311", "H330", "H331", "H332", "H340", "H341", "H350", "H351",
+            "H360", "H361", "H370", "H371", "H372", "H373",
+        ])
+    }
+
+    /// GHS statement H314: burns skin and eyes.
+    pub fn is_corrosive(&self) -> bool {
+        self.has_statement(&["H314"])
+    }
+
+    fn has_statement(&self, codes: &[&str]) -> bool {
+        self.statements.value.iter().any(|s| codes.iter().any(|code| s.starts_with(code)))
+    }
+}

@@ -1,0 +1,236 @@
+//! The state at a density and a temperature: regime, pressure, how much is liquid.
+
+use super::model::Model;
+use super::{Fluid, FluidError, clamped};
+use crate::solve::{bracketed_root, roots_between};
+use crate::units::{Density, Pressure, Temperature};
+
+/// What the inside of a sealed unit looks like.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash)]
+pub enum Regime {
+    TwoPhase,
+    AllVapour,
+    LiquidFull,
+    Supercritical,
+    Frozen,
+}
+
+/// The fluid at one mean density and temperature.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct State {
+    pub regime: Regime,
+    /// Absolute. For a frozen fluid the vapour pressure is not above this.
+    pub pressure: Pressure,
+    /// Volume of liquid over the whole volume; none where the phases are not told apart.
+    pub liquid_share: Option<f64>,
+    /// Mass of vapour over the whole mass.
+    pub quality: Option<f64>,
+}
+
+/// Which side of the dome a line of constant density leaves it by.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum DomeSide {
+    /// The last liquid evaporates: dry-out.
+    Vapour,
+    /// The last vapour is squeezed out: liquid-full.
+    Liquid,
+    /// Within a double's reach of the critical point.
+    Critical,
+}
+
+/// Where a line of constant density crosses the dome.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Crossing {
+    pub temperature: Temperature,
+    pub side: DomeSide,
+}
+
+impl Fluid {
+    /// Regime, pressure and liquid share at a mean density and a temperature.
+    ///
+    /// # Errors
+    /// [`FluidError`] outside the model; a frozen fluid is a state, not an error.
+    pub fn state(&self, density: Density, temperature: Temperature) -> Result<State, FluidError> {
+        let rho = density.kilogram_per_cubic_metre();
+        let t = temperature.kelvin();
+        if temperature < self.freezing_point() {
+            return self.frozen_state();
+        }
+        let (low, high) = self.range();
+        if temperature < low {
+            return Err(FluidError::TooCold { fluid: self.name.clone(), temperature, low });
+        }
+        if temperature > high {
+            return Err(FluidError::TooHot { fluid: self.name.clone(), temperature, high });
+        }
+        let critical = self.critical();
+        if t >= critical.temperature_k {
+            return self.single(Regime::Supercritical, density, temperature, None);
+        }
+        let (_, top) = self.saturation_range();
+        let curve = self.curve()?;
+        let at = curve.at(t.min(top.kelvin()));
+        if rho >= at.liquid_kg_per_m3 {
+            self.single(Regime::LiquidFull, density, temperature, Some(1.0))
+        } else if rho <= at.vapour_kg_per_m3 {
+            self.single(Regime::AllVapour, density, temperature, Some(0.0))
+        } else if temperature > top {
+            // Between 0.9999 T_c and T_c the equation's own loop is flatter than a
+            // part in a million: its pressure is the answer, the shares are not.
+            let mut state = self.single(Regime::TwoPhase, density, temperature, None)?;
+            state.quality = None;
+            Ok(state)
+        } else {
+            let (l, v) = (at.liquid_kg_per_m3, at.vapour_kg_per_m3);
+            Ok(State {
+                regime: Regime::TwoPhase,
+                pressure: Pressure::from_pascal(at.pressure_pa).expect("a vapour pressure is finite"),
+                liquid_share: Some((rho - v) / (l - v)),
+                quality: Some((1.0 / rho - 1.0 / l) / (1.0 / v - 1.0 / l)),
+            })
+        }
+    }
+
+    /// Temperatures at which a unit of this mean density leaves or enters the
+    /// dome, ascending. Water's liquid line turns near 4 °C, so there can be
+    /// three. A density whose line meets the dome above 0.9999 T_c is given the
+    /// critical temperature.
+    ///
+    /// # Errors
+    /// [`FluidError::NotConverged`] if the fluid's saturation cannot be solved.
+    pub fn crossings(&self, density: Density) -> Result<Vec<Crossing>, FluidError> {
+        let rho = density.kilogram_per_cubic_metre();
+        let curve = self.curve()?;
+        let (low, high) = curve.range_k();
+        let top = curve.at(high);
+        let critical = self.critical();
+        let from = self.freezing_point().kelvin().max(low);
+        let mut found = Vec::new();
+        let tolerance = 1e-11 * critical.temperature_k;
+        let knots: Vec<f64> = std::iter::once(from)
+            .chain(curve.turning_points().iter().copied().filter(|t| *t > from && *t < high))
+            .chain([high])
+            .collect();
+        if rho >= critical.density_kg_per_m3 {
+            for t in roots_between(|t| curve.at(t).liquid_kg_per_m3 - rho, &knots, tolerance) {
+                found.push(Crossing { temperature: clamped(t), side: DomeSide::Liquid });
+            }
+        } else {
+            for t in roots_between(|t| curve.at(t).vapour_kg_per_m3 - rho, &[from, high], tolerance) {
+                found.push(Crossing { temperature: clamped(t), side: DomeSide::Vapour });
+            }
+        }
+        let inside_at_top = rho < top.liquid_kg_per_m3 && rho > top.vapour_kg_per_m3;
+        if inside_at_top && matches!(self.model, Model::Equation(_)) {
+            found.push(Crossing { temperature: clamped(critical.temperature_k), side: DomeSide::Critical });
+        }
+        Ok(found)
+    }
+
+    /// The density at which a sealed unit at `temperature` stands at `pressure`;
+    /// `None` where every density of the model is below it.
+    ///
+    /// Below the critical temperature the pressure is constant through the dome:
+    /// a pressure above saturation answers with a compressed liquid, one below
+    /// with a superheated vapour.
+    ///
+    /// # Errors
+    /// [`FluidError`] outside the model's temperatures, or frozen.
+    pub fn density_at(&self, pressure: Pressure, temperature: Temperature) -> Result<Option<Density>, FluidError> {
+        let (low, high) = self.range();
+        if temperature < self.freezing_point() {
+            return Err(FluidError::Frozen { fluid: self.name.clone(), temperature, melting: self.freezing_point() });
+        }
+        if temperature < low {
+            return Err(FluidError::TooCold { fluid: self.name.clone(), temperature, low });
+        }
+        if temperature > high {
+            return Err(FluidError::TooHot { fluid: self.name.clone(), temperature, high });
+        }
+        let t = temperature.kelvin();
+        let p = pressure.pascal();
+        let critical = self.critical();
+        let (_, most) = self.model.limits(self.molar_mass);
+        let (from, to, liquid) = if t < critical.temperature_k {
+            let (_, top) = self.saturation_range();
+            let at = self.curve()?.at(t.min(top.kelvin()));
+            if p > at.pressure_pa {
+                // A correlated liquid has no stated densest state: twice ρ′ is beyond its pressure limit.
+                (at.liquid_kg_per_m3, most.min(2.0 * at.liquid_kg_per_m3), true)
+            } else {
+                (1e-9 * at.vapour_kg_per_m3, at.vapour_kg_per_m3, false)
+            }
+        } else {
+            (1e-9 * critical.density_kg_per_m3, most, false)
+        };
+        let isotherm = self.model.isotherm(t, self.molar_mass, liquid);
+        if isotherm(to) <= p {
+            return Ok(None);
+        }
+        if isotherm(from) >= p {
+            return Ok(Density::from_kilogram_per_cubic_metre(from).ok());
+        }
+        let root = bracketed_root(|rho| isotherm(rho) - p, from, to, 1e-13 * to)
+            .map_err(|_| FluidError::NotConverged { fluid: self.name.clone(), temperature })?;
+        Ok(Density::from_kilogram_per_cubic_metre(root).ok())
+    }
+
+    /// Specific internal energy and entropy of a homogeneous state, J/kg and J/(kg K).
+    ///
+    /// # Errors
+    /// [`FluidError::NoEnergy`] for a correlated fluid.
+    pub fn energy_and_entropy(
+        &self,
+        density_kg_per_m3: f64,
+        temperature: Temperature,
+    ) -> Result<(f64, f64), FluidError> {
+        match &self.model {
+            Model::Equation(equation) => {
+                let c = equation.caloric(temperature.kelvin(), density_kg_per_m3 / self.molar_mass);
+                Ok((c.internal_energy / self.molar_mass, c.entropy / self.molar_mass))
+            }
+            Model::Correlated(_) => Err(FluidError::NoEnergy { fluid: self.name.clone() }),
+        }
+    }
+
+    fn frozen_state(&self) -> Result<State, FluidError> {
+        let (low, _) = self.saturation_range();
+        let pressure = self.curve()?.at(self.freezing_point().max(low).kelvin()).pressure_pa;
+        Ok(State {
+            regime: Regime::Frozen,
+            pressure: Pressure::from_pascal(pressure).expect("a vapour pressure is finite"),
+            liquid_share: None,
+            quality: None,
+        })
+    }
+
+    fn single(
+        &self,
+        regime: Regime,
+        density: Density,
+        temperature: Temperature,
+        liquid_share: Option<f64>,
+    ) -> Result<State, FluidError> {
+        let rho = density.kilogram_per_cubic_metre();
+        let (most_pressure, most_density) = self.model.limits(self.molar_mass);
+        let fluid = || self.name.clone();
+        if rho > most_density {
+            let high = Density::from_kilogram_per_cubic_metre(most_density)
+                .expect("a fluid file's limits are checked when read");
+            return Err(FluidError::TooDense { fluid: fluid(), density, high });
+        }
+        let p = self.model.isotherm(temperature.kelvin(), self.molar_mass, regime == Regime::LiquidFull)(rho);
+        if p.is_nan() || p > most_pressure {
+            let high = Pressure::from_pascal(most_pressure).expect("a fluid file's limits are checked when read");
+            return Err(FluidError::PressureTooHigh { fluid: fluid(), high });
+        }
+        let pressure = Pressure::from_pascal(p)
+            .map_err(|_| FluidError::NotConverged { fluid: fluid(), temperature })?;
+        let quality = match regime {
+            Regime::LiquidFull => Some(0.0),
+            Regime::AllVapour => Some(1.0),
+            _ => None,
+        };
+        Ok(State { regime, pressure, liquid_share, quality })
+    }
+}

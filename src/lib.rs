@@ -1,0 +1,5 @@
+//! bird's-eye view comes later
+pub mod units;
+pub mod solve;
+pub mod source;
+pub mod fluid;

@@ -1,0 +1,335 @@
+"""Writes assets/fluids/<id>.ron from published coefficients and from the facts beside this script.
+
+    python3 -m venv target/venv
+    target/venv/bin/pip install coolprop==8.0.0 mpmath==1.3.0 scipy numpy
+    target/venv/bin/python tests/reference/make_fluids.py <folder with fluid-equations.json and correlation-coefficients.json>
+
+The coefficients are those that CoolProp 8.0.0 carries (see assets/fluids/NOTICE.txt). What a person has to know and cite
+(melting point, hazards, limits, the paper's own words) stands in fluid-facts.json. Two things are computed here:
+the equation's own critical point, and the highest density at which the equation may be asked. Only mpmath is needed.
+Running it twice writes the same bytes.
+"""
+
+import json
+import pathlib
+import sys
+
+from mpmath import findroot, mp, mpf
+
+import correlated
+from helmholtz import Equation, load_equations
+
+HERE = pathlib.Path(__file__).resolve().parent
+ASSETS = HERE.parent.parent / "assets" / "fluids"
+EQUATIONS = HERE / "equations"
+
+# Equations that only the tests read: between them they bring in every term form that the fifteen fluids do not use.
+TEST_ONLY = {
+    "r-125": "R125",              # Lemmon and Jacobsen's 2005 residual form
+    "n-heptane": "n-Heptane",     # Aly-Lee heat capacity, with empty halves
+    "d6": "D6",                   # Aly-Lee heat capacity, one full term
+    "r-22": "R22",                # constant and polynomial heat capacity
+    "r-11": "R11",                # as R-22, reducing point apart from the ancillaries'
+    "cyclopropane": "CycloPropane",  # polynomial heat capacity, lower limit far above melting
+    "hfe-143m": "HFE143m",        # constant and polynomial heat capacity in powers of kelvin
+    "fluorine": "Fluorine",       # exponential residual terms, generalised Planck-Einstein
+    "hydrogen": "Hydrogen",       # Planck-Einstein in kelvin, quantum gas
+    "r-114": "R114",              # Bender's form, critical point 0.4 % above the reducing one
+    "toluene": "Toluene",         # the short industrial form
+    "r-1336mzz-z": "R1336mzz(Z)", # heat capacity terms that carry their own gas constant
+}
+
+
+# ---- RON text -------------------------------------------------------------------------------------------------------
+
+
+def number(value):
+    """Shortest text that reads back as the same double."""
+    return repr(float(value))
+
+
+def numbers(values):
+    return "[" + ", ".join(number(value) for value in values) + "]"
+
+
+def text(value):
+    return json.dumps(value, ensure_ascii=False)
+
+
+def source(fact):
+    """Published, Memory or Practice, whichever the fact names; exactly one of them."""
+    (kind,) = [kind for kind in ("Published", "Memory", "Practice") if kind in fact]
+    return f"{kind}({text(fact[kind])})"
+
+
+def sourced(fact):
+    value = fact["value"]
+    if isinstance(value, list):
+        shown = "[" + ", ".join(text(item) for item in value) + "]"
+    elif isinstance(value, str):
+        shown = text(value)
+    else:
+        shown = number(value)
+    return f"(value: {shown}, source: {source(fact)})"
+
+
+def field(key, shown):
+    return [f"{key}: {shown},"]
+
+
+def optional(key, fact, show=sourced):
+    """A fact that is not known is left out: a gap stays a gap."""
+    return [] if fact is None else [f"{key}: Some({show(fact)}),"]
+
+
+def block(opening, lines, closing):
+    return [opening, *("    " + line for line in lines), closing]
+
+
+def lists(term, names):
+    """`name: [...]` for each coefficient list, renamed plainly."""
+    return ", ".join(f"{ours}: {numbers(term[theirs])}" for ours, theirs in names)
+
+
+def plain(*names):
+    return [(name, name) for name in names]
+
+
+# ---- terms ----------------------------------------------------------------------------------------------------------
+
+
+def ideal_term(term):
+    kind = term["type"].removeprefix("IdealGasHelmholtz")
+    own_gas_constant = f", gas_constant: Some({number(term['R'])})" if "R" in term else ""
+    if kind == "Lead":
+        return f"Lead(a1: {number(term['a1'])}, a2: {number(term['a2'])})"
+    if kind == "EnthalpyEntropyOffset":
+        return f"Offset(a1: {number(term['a1'])}, a2: {number(term['a2'])})"
+    if kind == "LogTau":
+        return f"LogTau(a: {number(term['a'])})"
+    if kind == "Power":
+        return f"Power({lists(term, plain('n', 't'))})"
+    if kind == "PlanckEinstein":
+        return f"PlanckEinstein({lists(term, [('n', 'n'), ('theta', 't')])})"
+    if kind == "PlanckEinsteinGeneralized":
+        return f"PlanckEinsteinGeneral({lists(term, [('n', 'n'), ('theta', 't'), ('c', 'c'), ('d', 'd')])})"
+    if kind == "PlanckEinsteinFunctionT":
+        return (
+            f"PlanckEinsteinKelvin({lists(term, [('n', 'n'), ('v_k', 'v')])}, "
+            f"critical_temperature_k: {number(term['Tcrit'])}{own_gas_constant})"
+        )
+    at = f"critical_temperature_k: {number(term['Tc'])}, t0_k: {number(term['T0'])}"
+    if kind == "CP0Constant":
+        return f"HeatCapacityConstant(cp_over_r: {number(term['cp_over_R'])}, {at})"
+    if kind == "CP0PolyT":
+        return f"HeatCapacityPoly({lists(term, plain('c', 't'))}, {at}{own_gas_constant})"
+    if kind == "CP0AlyLee":
+        return f"HeatCapacityAlyLee(c: {numbers(term['c'])}, {at})"
+    raise ValueError(f"no rule for the ideal-gas term {kind}")
+
+
+RESIDUAL_FIELDS = {
+    "Power": plain("n", "t", "d", "l"),
+    "Exponential": plain("n", "t", "d", "g", "l"),
+    "Gaussian": plain("n", "t", "d", "eta", "epsilon", "beta", "gamma"),
+    "NonAnalytic": plain("n", "a", "b", "beta") + [("big_a", "A"), ("big_b", "B"), ("big_c", "C"), ("big_d", "D")],
+    "GaoB": plain("n", "t", "d", "eta", "epsilon", "beta", "gamma", "b"),
+    "DoubleExponential": plain("n", "t", "d", "gd", "ld", "gt", "lt"),
+    "Lemmon2005": plain("n", "t", "d", "l", "m"),
+}
+
+
+def residual_term(term):
+    kind = term["type"].removeprefix("ResidualHelmholtz")
+    names = RESIDUAL_FIELDS[kind]
+    lengths = {len(term[theirs]) for _, theirs in names}
+    assert len(lengths) == 1, f"lists of unequal length in {kind}"
+    return f"{kind}({lists(term, names)})"
+
+
+def ancillary(term):
+    form = "Linear" if term["type"] == "rhoLnoexp" else "Exponential"
+    return (
+        f"(form: {form}, tau_first: {str(term['using_tau_r']).lower()}, "
+        f"reducing_temperature_k: {number(term['T_r'])}, reducing: {number(term['reducing_value'])}, "
+        f"n: {numbers(term['n'])}, t: {numbers(term['t'])})"
+    )
+
+
+# ---- one equation ---------------------------------------------------------------------------------------------------
+
+
+def lower_limit(record):
+    """The equation's lower limit: CoolProp's lowest saturation state, which is never below the stated triple point."""
+    lowest = record["STATES"]["sat_min_liquid"]["T"]
+    return max(float(f"{lowest:.6f}"), record["Ttriple"])
+
+
+def own_critical_point(equation, record):
+    """Temperature, density and pressure where the equation's own isotherm has its flat inflection."""
+    if equation.is_non_analytic:
+        # The critical-region terms make the third derivative singular; both equations were made to pass through this point.
+        temperature, density = equation.reducing_temperature, equation.reducing_density
+    else:
+        states = record["STATES"]["critical"]
+        temperature, density = equation.critical_point(states["T"], states["rhomolar"])
+        assert abs(temperature / mpf(states["T"]) - 1) < 0.01, "the critical point found is not the published one"
+    return temperature, density, equation.pressure(temperature, density)
+
+
+def highest_density(equation, record, lowest):
+    """The larger of 1.05 saturated liquid densities at the lower limit and the density at (lower limit, highest pressure)."""
+    liquid = mpf(record["EOS"][0]["STATES"]["sat_min_liquid"]["rhomolar"])
+    highest_pressure = mpf(record["EOS"][0]["p_max"])
+    digits, mp.dps = mp.dps, 25
+    try:
+        upper = liquid
+        while equation.pressure(lowest, upper) < highest_pressure:
+            upper *= mpf("1.02")
+        squeezed = liquid
+        if upper > liquid:
+            squeezed = findroot(
+                lambda density: equation.pressure(lowest, density) / highest_pressure - 1,
+                (upper / mpf("1.02"), upper), solver="anderson", tol=1e-12,
+            )
+    finally:
+        mp.dps = digits
+    return float(f"{float(max(squeezed, mpf('1.05') * liquid)):.6g}")
+
+
+def equation_lines(record, papers):
+    """The lines inside `Helmholtz(( ... ))`."""
+    state = record["EOS"][0]
+    equation = Equation(state)
+    paper = papers[state["BibTeX_EOS"]]
+    lowest = lower_limit(state)
+    temperature, density, pressure = own_critical_point(equation, record)
+    doi = f", doi: Some({text(paper['doi'])})" if "doi" in paper else ""
+    curves = record["ANCILLARIES"]
+    return [
+        f"source: (authors: {text(paper['authors'])}, year: {paper['year']}, title: {text(paper['title'])}, "
+        f"publication: {text(paper['publication'])}{doi}),",
+        f"temperature_range_k: ({number(lowest)}, {number(state['T_max'])}),",
+        f"highest_pressure_pa: {number(state['p_max'])},",
+        "// the larger of 1.05 saturated liquid densities at the lower limit and the density at (lower limit, highest pressure)",
+        f"highest_density_mol_per_m3: {number(highest_density(equation, record, lowest))},",
+        f"uncertainty: {text(paper['uncertainty'])},",
+        f"gas_constant_j_per_mol_k: {number(state['gas_constant'])},",
+        f"reducing: (temperature_k: {number(equation.reducing_temperature)}, "
+        f"density_mol_per_m3: {number(equation.reducing_density)}),",
+        "// the equation's own critical point"
+        + (", its reducing point (non-analytic terms)" if equation.is_non_analytic else ": dp/drho = d2p/drho2 = 0"),
+        f"critical: (temperature_k: {number(temperature)}, density_mol_per_m3: {number(density)}, "
+        f"pressure_pa: {number(pressure)}),",
+        *block("ideal: [", [ideal_term(term) + "," for term in state["alpha0"]], "],"),
+        *block("residual: [", [residual_term(term) + "," for term in state["alphar"]], "],"),
+        *block("ancillary: (", [
+            f"pressure: {ancillary(curves['pS'])},",
+            f"liquid_density: {ancillary(curves['rhoL'])},",
+            f"vapour_density: {ancillary(curves['rhoV'])},",
+        ], "),"),
+    ]
+
+
+def surface_tension(record, papers):
+    """The correlation, in the range it shares with the equation."""
+    curve = record["ANCILLARIES"].get("surface_tension")
+    if curve is None:
+        return []
+    lowest = lower_limit(record["EOS"][0])
+    critical, _, _ = own_critical_point(Equation(record["EOS"][0]), record)
+    highest = min(curve["Tc"], float(critical))
+    return [
+        f"surface_tension: Some((critical_temperature_k: {number(curve['Tc'])}, a: {numbers(curve['a'])}, "
+        f"n: {numbers(curve['n'])}, temperature_range_k: ({number(lowest)}, {number(highest)}), "
+        f"source: Published({text(papers[curve['BibTeX']])}))),"
+    ]
+
+
+# ---- one fluid ------------------------------------------------------------------------------------------------------
+
+
+def stability(notes):
+    if not notes:
+        return ["stability: [],"]
+    return block("stability: [", [
+        f"(kind: {item['kind']}, note: {text(item['note'])}, source: {source(item)})," for item in notes
+    ], "],")
+
+
+def safety_lines(facts):
+    get = facts.get
+    return block("safety: (", [
+        *optional("group", get("group")),
+        *field("statements", sourced(facts["statements"])),
+        *optional("lower_flammable_limit", get("lower_flammable_limit")),
+        *optional("upper_flammable_limit", get("upper_flammable_limit")),
+        *optional("flash_point_k", get("flash_point_k")),
+        *optional("autoignition_k", get("autoignition_k")),
+        *optional("exposure_limit_ppm", get("exposure_limit_ppm")),
+        *optional("short_term_limit_ppm", get("short_term_limit_ppm")),
+        *optional("immediately_dangerous_ppm", get("immediately_dangerous_ppm")),
+        *optional("consumer_restriction", get("consumer_restriction")),
+        *optional("gwp_100", get("gwp_100")),
+        *stability(get("stability")),
+        *optional("highest_stable_temperature_k", get("highest_stable_temperature_k")),
+    ], "),")
+
+
+def fluid_file(identity, facts, cas, molar_mass, model, tension):
+    also = "[" + ", ".join(text(name) for name in facts["also"]) + "]"
+    body = [
+        "format: 1,",
+        f"id: {text(identity)},",
+        f"name: {text(facts['name'])},",
+        f"also: {also},",
+        f"cas: {text(cas)},",
+        *optional("refrigerant", facts.get("refrigerant"), text),
+        f"formula: {text(facts['formula'])},",
+        f"molar_mass_kg_per_mol: {number(molar_mass)},",
+        f"melting_point_k: {sourced(facts['melting_point_k'])},",
+        *optional("solid_density_kg_per_m3", facts.get("solid_density_kg_per_m3")),
+        *model,
+        *tension,
+        *safety_lines(facts),
+    ]
+    first = "// Written by tests/reference/make_fluids.py; do not edit by hand."
+    return "\n".join([first, *block("(", body, ")")]) + "\n"
+
+
+def main(data):
+    data = pathlib.Path(data)
+    equations = load_equations(data / "fluid-equations.json")
+    facts = json.loads((HERE / "fluid-facts.json").read_text(encoding="utf-8"))
+    papers, tension_papers = facts["papers"], facts["surface_tension_papers"]
+    ASSETS.mkdir(parents=True, exist_ok=True)
+    EQUATIONS.mkdir(parents=True, exist_ok=True)
+
+    for identity, fluid in facts["fluids"].items():
+        if fluid["data"] in equations:
+            record = equations[fluid["data"]]
+            cas, molar_mass = record["INFO"]["CAS"], record["EOS"][0]["molar_mass"]
+            model = block("model: Helmholtz((", equation_lines(record, papers), ")),")
+            tension = surface_tension(record, tension_papers)
+        else:
+            coefficients = json.loads((data / "correlation-coefficients.json").read_text(encoding="utf-8"))[fluid["data"]]
+            cas, molar_mass = coefficients["CAS"], float(f"{coefficients['MW']['value']}e-3")
+            model = block("model: Correlated((", correlated.model_lines(coefficients, number, numbers, text), ")),")
+            tension = correlated.surface_tension_lines(coefficients, number, numbers, text)
+        (ASSETS / f"{identity}.ron").write_text(
+            fluid_file(identity, fluid, cas, molar_mass, model, tension), encoding="utf-8"
+        )
+        print(f"assets/fluids/{identity}.ron")
+
+    for identity, name in TEST_ONLY.items():
+        record = equations[name]
+        first = "// Written by tests/reference/make_fluids.py; do not edit by hand. Read by tests only."
+        lines = [first, *block("(", equation_lines(record, papers), ")")]
+        (EQUATIONS / f"{identity}.ron").write_text("\n".join(lines) + "\n", encoding="utf-8")
+        print(f"tests/reference/equations/{identity}.ron")
+
+
+if __name__ == "__main__":
+    if len(sys.argv) != 2:
+        sys.exit(__doc__)
+    main(sys.argv[1])
