@@ -12,7 +12,7 @@
 //!
 //! Above 0.95 T_c the pieces do not join: refused by name.
 
-use serde::Deserialize;
+use serde::{Deserialize, Deserializer};
 
 use crate::source::Source;
 
@@ -50,6 +50,7 @@ pub struct CorrelatedCritical {
 pub enum VapourPressure {
     /// ln(p/p_c) = (T_c/T)(Aθ + Bθ^1.5 + Cθ^2.5 + Dθ⁵); Wagner, W. 1973, Cryogenics 13, 470.
     Wagner25 {
+        #[serde(deserialize_with = "list")]
         a: [f64; 4],
         critical_temperature_k: f64,
         critical_pressure_pa: f64,
@@ -64,6 +65,7 @@ pub enum VapourPressure {
 pub enum LiquidDensity {
     /// ρ = ρ_c + Aθ^0.35 + Bθ^(2/3) + Cθ + Dθ^(4/3), kg/m³.
     Ppds {
+        #[serde(deserialize_with = "list")]
         a: [f64; 4],
         critical_temperature_k: f64,
         critical_density_kg_per_m3: f64,
@@ -78,6 +80,7 @@ pub enum LiquidDensity {
 pub enum LatentHeat {
     /// h = (R T_c/M)(Aθ^(1/3) + Bθ^(2/3) + Cθ + Dθ² + Eθ⁶).
     Ppds12 {
+        #[serde(deserialize_with = "list")]
         a: [f64; 5],
         critical_temperature_k: f64,
         temperature_range_k: (f64, f64),
@@ -230,4 +233,12 @@ impl LatentHeat {
         let sum: f64 = a.iter().zip(powers).map(|(a, e)| a * theta.powf(e)).sum();
         GAS_CONSTANT * tc / molar_mass * sum
     }
+}
+
+/// Coefficients are written as a list, `[..]`, of just the form's length.
+fn list<'de, D: Deserializer<'de>, const N: usize>(deserializer: D) -> Result<[f64; N], D::Error> {
+    let list = Vec::<f64>::deserialize(deserializer)?;
+    let found = list.len();
+    list.try_into()
+        .map_err(|_| serde::de::Error::custom(format!("{N} coefficients are needed, not {found}")))
 }

@@ -1,0 +1,4 @@
+//! All integration tests, in one binary so that it links once.
+
+mod reference_equations;
+mod tables;
