@@ -1,20 +1,20 @@
 //! Where a figure comes from. A data file without it does not parse.
 
-use serde::{Deserialize, Deserializer};
+use serde::{Deserialize, Deserializer, Serialize};
 
 /// Provenance of one figure.
-#[derive(Debug, Clone, PartialEq)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
 pub enum Source {
     /// A document that can be opened.
-    Published(String),
+    Published(#[serde(deserialize_with = "filled")] String),
     /// From memory of a named document, to be confirmed before it governs.
-    Memory(String),
+    Memory(#[serde(deserialize_with = "filled")] String),
     /// Common practice, no source.
-    Practice(String),
+    Practice(#[serde(deserialize_with = "filled")] String),
 }
 
 /// A value with its source.
-#[derive(Debug, Clone, PartialEq, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
 #[serde(deny_unknown_fields)]
 pub struct Sourced<T> {
     pub value: T,
@@ -79,31 +79,10 @@ impl std::fmt::Display for Citation {
     }
 }
 
-impl<'de> Deserialize<'de> for Source {
-    fn deserialize<D: Deserializer<'de>>(deserializer: D) -> Result<Self, D::Error> {
-        #[derive(Deserialize)]
-        #[serde(rename = "Source")]
-        enum Raw {
-            Published(String),
-            Memory(String),
-            Practice(String),
-        }
-        let source = match Raw::deserialize(deserializer)? {
-            Raw::Published(text) => Self::Published(text),
-            Raw::Memory(text) => Self::Memory(text),
-            Raw::Practice(text) => Self::Practice(text),
-        };
-        if source.text().trim().is_empty() {
-            return Err(serde::de::Error::custom("a source must name a document or practice, not be empty"));
-        }
-        Ok(source)
-    }
-}
-
 fn filled<'de, D: Deserializer<'de>>(deserializer: D) -> Result<String, D::Error> {
     let text = String::deserialize(deserializer)?;
     if text.trim().is_empty() {
-        return Err(serde::de::Error::custom("a citation's text must not be empty"));
+        return Err(serde::de::Error::custom("a source must name a document or practice, not be empty"));
     }
     Ok(text)
 }

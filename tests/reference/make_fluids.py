@@ -1,7 +1,7 @@
 """Writes assets/fluids/<id>.ron from published coefficients and from the facts beside this script.
 
     python3 -m venv target/venv
-    target/venv/bin/pip install coolprop==8.0.0 mpmath==1.3.0 scipy numpy
+    target/venv/bin/pip install mpmath==1.3.0
     target/venv/bin/python tests/reference/make_fluids.py <folder with fluid-equations.json and correlation-coefficients.json>
 
 The coefficients are those that CoolProp 8.0.0 carries (see assets/fluids/NOTICE.txt). What a person has to know and cite
@@ -197,8 +197,8 @@ def highest_density(equation, record, lowest):
     return float(f"{float(max(squeezed, mpf('1.05') * liquid)):.6g}")
 
 
-def equation_lines(record, papers):
-    """The lines inside `Helmholtz(( ... ))`."""
+def equation_lines(record, papers, uncertainty=None):
+    """The lines inside `Helmholtz(( ... ))`; a paper on many fluids states its uncertainty fluid by fluid."""
     state = record["EOS"][0]
     equation = Equation(state)
     paper = papers[state["BibTeX_EOS"]]
@@ -213,7 +213,7 @@ def equation_lines(record, papers):
         f"highest_pressure_pa: {number(state['p_max'])},",
         "// the larger of 1.05 saturated liquid densities at the lower limit and the density at (lower limit, highest pressure)",
         f"highest_density_mol_per_m3: {number(highest_density(equation, record, lowest))},",
-        f"uncertainty: {text(paper['uncertainty'])},",
+        f"uncertainty: {text(uncertainty or paper['uncertainty'])},",
         f"gas_constant_j_per_mol_k: {number(state['gas_constant'])},",
         f"reducing: (temperature_k: {number(equation.reducing_temperature)}, "
         f"density_mol_per_m3: {number(equation.reducing_density)}),",
@@ -309,7 +309,7 @@ def main(data):
         if fluid["data"] in equations:
             record = equations[fluid["data"]]
             cas, molar_mass = record["INFO"]["CAS"], record["EOS"][0]["molar_mass"]
-            model = block("model: Helmholtz((", equation_lines(record, papers), ")),")
+            model = block("model: Helmholtz((", equation_lines(record, papers, fluid.get("uncertainty")), ")),")
             tension = surface_tension(record, tension_papers)
         else:
             coefficients = json.loads((data / "correlation-coefficients.json").read_text(encoding="utf-8"))[fluid["data"]]

@@ -1,7 +1,7 @@
 """Writes the reference tables for the equations of state.
 
     python3 -m venv target/venv
-    target/venv/bin/pip install coolprop==8.0.0 mpmath==1.3.0 scipy numpy
+    target/venv/bin/pip install coolprop==8.0.0 mpmath==1.3.0
     target/venv/bin/python tests/reference/make_tables.py <folder with fluid-equations.json>
 
 Every value is computed twice: by helmholtz.py from the printed form of the equation with fifty digits, which is what is

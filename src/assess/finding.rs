@@ -1,0 +1,110 @@
+//! What an assessment found: data; the words are elsewhere.
+
+use super::figure::Missing;
+use super::window::Requirement;
+use crate::chamber::ChamberFault;
+use crate::conditions::ConditionFault;
+use crate::fluid::StabilityKind;
+use crate::units::{Energy, Mass, Pressure, Temperature, TemperatureDifference};
+
+/// How much a finding weighs; worst first.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash)]
+pub enum Severity {
+    /// The design is not fit.
+    Error,
+    /// Fit, if somebody answers for it.
+    Warning,
+    /// To be known.
+    Note,
+}
+
+/// Where in the design a finding comes from; clicking it leads there.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash)]
+pub enum Section {
+    Conditions,
+    Fluid,
+    Chamber,
+    Charge,
+    Room,
+    Bench,
+}
+
+/// A share of a limit: 1 is the limit, more is beyond.
+pub type Share = f64;
+
+/// One finding.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Finding {
+    pub severity: Severity,
+    pub section: Section,
+    pub kind: FindingKind,
+    /// How much of its limit is used, for a margin bar.
+    pub share: Option<Share>,
+    /// What one click would mend it with.
+    pub remedy: Option<Remedy>,
+}
+
+/// A change of fluid, wall, volume or charge; facts are never changed by a click.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub enum Remedy {
+    SetCharge(Mass),
+}
+
+/// What was found, with its figures.
+#[derive(Debug, Clone, PartialEq)]
+pub enum FindingKind {
+    Chamber(ChamberFault),
+    Conditions(ConditionFault),
+    /// A figure that the verdict needs is not known.
+    NotKnown(Missing),
+    OverAllowable { pressure: Pressure, allowable: Pressure, temperature: Temperature, part: String },
+    LiquidFull { at: Temperature, hottest: Temperature },
+    LiquidFullNear { at: Temperature, hottest: Temperature, needed: TemperatureDifference },
+    Ullage { left: f64, needed: f64, temperature: Temperature },
+    /// Above the critical temperature ullage means nothing; the pressure governs.
+    AboveCritical { hottest: Temperature, critical: Temperature },
+    Dry { at: Temperature, working_high: Temperature },
+    DryAboveWorking { at: Temperature, hottest: Temperature },
+    Freezes { freezing: Temperature, coldest: Temperature },
+    FrozenInWork { freezing: Temperature, working_low: Temperature },
+    FrozenVolume { greatest: Mass, allowed: Mass },
+    EmptyWindow { lower: Requirement, upper: Requirement, lower_mass: Mass, upper_mass: Mass },
+    Incompatible { material: String, reason: String, source: String },
+    PairCaution { material: String, reason: String, source: String },
+    PairNotKnown { material: String },
+    Flammable { ppm: f64, of_limit: f64, source: String },
+    BurnsWithDifficulty { of_limit: f64, source: String },
+    Toxic { ppm: f64, limit_ppm: Option<f64>, dangerous_ppm: Option<f64>, source: String },
+    Corrosive { source: String },
+    Asphyxiant { oxygen: f64 },
+    NoHazardLimits,
+    BrittleGlass { part: String },
+    NotForConsumers { reason: String, source: String },
+    Unstable { kind: StabilityKind, note: String, source: String },
+    TooHotForFluid { stable: Temperature, hottest: Temperature, source: String },
+    FactorsBelowDefault { on_burst: f64, on_yield: f64 },
+    Rupture { energy: Energy },
+    RuptureNotComputed { reason: String },
+    ModelUncertainty { percent: f64 },
+    FromMemory { what: String },
+}
+
+/// The verdict in a word.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash)]
+pub enum Verdict {
+    Fit,
+    /// Fit with warnings that somebody must answer for.
+    FitWithWarnings,
+    NotFit,
+}
+
+impl Verdict {
+    /// The verdict that follows from the findings.
+    pub fn of(findings: &[Finding]) -> Self {
+        match findings.iter().map(|finding| finding.severity).min() {
+            Some(Severity::Error) => Self::NotFit,
+            Some(Severity::Warning) => Self::FitWithWarnings,
+            _ => Self::Fit,
+        }
+    }
+}

@@ -1,0 +1,196 @@
+//! What physics says about a design: pure, total, deterministic.
+//!
+//! [`assess`] always returns. A figure that cannot be had is an `Err` in its
+//! field with the one reason, and a finding.
+
+mod charge;
+mod chart;
+mod figure;
+mod finding;
+mod judge;
+mod window;
+mod worst;
+
+use std::sync::Arc;
+
+use crate::chamber::{Envelope, Materials, Volumes};
+use crate::design::Design;
+use crate::fluid::{Catalog, DomeSide, Fluid};
+use crate::hazard::{EnergyError, Release, release, rupture_energy};
+use crate::units::{Energy, Mass, Pressure, Temperature};
+
+pub use charge::{ChargeFigures, Corners};
+pub use chart::{ChargeMap, Charts, LimitPoint, MapPoint};
+pub use figure::{Figure, Missing};
+pub use finding::{Finding, FindingKind, Remedy, Section, Severity, Verdict};
+pub use window::{Bound, Requirement, Side, Window};
+pub use worst::{Walls, WorstCase};
+
+/// What a design is assessed against.
+#[derive(Debug, Clone)]
+pub struct Library {
+    pub fluids: Catalog,
+    pub materials: Materials,
+}
+
+impl Library {
+    /// The fluids and materials that come with the program.
+    pub fn built_in() -> Self {
+        Self { fluids: Catalog::built_in(), materials: Materials::built_in() }
+    }
+}
+
+/// Something that happens to the sealed unit at one temperature.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Event {
+    pub kind: EventKind,
+    pub temperature: Temperature,
+}
+
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash)]
+pub enum EventKind {
+    Freezing,
+    DryOut,
+    LiquidFull,
+    /// The mean density meets the dome at the critical point.
+    Critical,
+    AllowableReached,
+}
+
+/// All that is known of a design.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Assessment {
+    pub fluid: Arc<Fluid>,
+    pub volumes: Figure<Volumes>,
+    pub envelope: Envelope,
+    pub least_outside: Pressure,
+    pub charge: Figure<ChargeFigures>,
+    /// The nominal unit and its worst corners; answers `state` for any temperature.
+    pub corners: Figure<Corners>,
+    /// Of the nominal unit, ascending, over the whole range of the model.
+    pub events: Figure<Vec<Event>>,
+    /// Liquid-full temperature of the heaviest corner.
+    pub heaviest_full_at: Figure<Option<Temperature>>,
+    /// Dry-out temperature of the lightest corner.
+    pub lightest_dry_at: Figure<Option<Temperature>>,
+    pub worst: Figure<WorstCase>,
+    pub window: Figure<Window>,
+    pub charts: Figure<Charts>,
+    pub release: Figure<Release>,
+    /// Energy set free on rupture at the hottest.
+    pub rupture: Figure<Result<Energy, EnergyError>>,
+    /// Worst first.
+    pub findings: Vec<Finding>,
+    pub verdict: Verdict,
+}
+
+/// What physics says about a design.
+///
+/// # Panics
+/// Never for a design that was read or edited: its fluid id is checked when made.
+pub fn assess(design: &Design, library: &Library) -> Assessment {
+    let fluid = library
+        .fluids
+        .by_id(design.fluid.as_str())
+        .expect("a design's fluid id is checked when it is made");
+    let volumes = design.chamber.volumes().map_err(Missing::from);
+    let envelope = Envelope::new(&design.chamber, &library.materials, design.demands.factors);
+    let walls = Walls {
+        envelope: &envelope,
+        least_outside: design.conditions.least_outside,
+        knots: envelope.knots(),
+    };
+    let charge = volumes.as_ref().map_err(Clone::clone).and_then(|v| charge::charge_figures(design, &fluid, v));
+    let corners = match (&charge, &volumes) {
+        (Ok(charge), Ok(volumes)) => charge::corners(&fluid, charge, volumes),
+        (Err(missing), _) | (_, Err(missing)) => Err(missing.clone()),
+    };
+    let with = |missing: &Missing| missing.clone();
+    let events = corners.as_ref().map_err(with).and_then(|c| events(c, &walls));
+    let heaviest_full_at = corners.as_ref().map_err(with).and_then(|c| side_of(&c.heaviest, DomeSide::Liquid));
+    let lightest_dry_at = corners.as_ref().map_err(with).and_then(|c| match &c.lightest {
+        Some(unit) => side_of(unit, DomeSide::Vapour),
+        // A charge that may be nothing is dry at once.
+        None => Ok(Some(design.conditions.coldest)),
+    });
+    let worst = corners.as_ref().map_err(with).and_then(|c| worst::worst_case(design, c, &walls));
+    let walls_known = match &worst {
+        Ok(case) => case.weakest.as_ref().map(|_| walls.clone()).map_err(|e| Missing::Strength(e.clone())),
+        Err(missing) => Err(missing.clone()),
+    };
+    let window = volumes.as_ref().map_err(with).and_then(|v| window::window(design, &fluid, v, &walls_known));
+    let charts = corners.as_ref().map_err(with).map(|c| {
+        let kinks: Vec<Temperature> = events.iter().flatten().map(|event| event.temperature).collect();
+        chart::charts(&c.nominal, chart::span(design), &kinks, &walls)
+    });
+    let release = charge
+        .as_ref()
+        .map_err(with)
+        .and_then(|c| release(&fluid, c.greatest, &design.room).ok_or(Missing::NoRoom));
+    let rupture = corners.as_ref().map_err(with).map(|c| rupture_energy(&c.heaviest, design.conditions.hottest));
+    let mut assessment = Assessment {
+        fluid,
+        volumes,
+        least_outside: design.conditions.least_outside,
+        charge,
+        corners,
+        events,
+        heaviest_full_at,
+        lightest_dry_at,
+        worst,
+        window,
+        charts,
+        release,
+        rupture,
+        findings: Vec::new(),
+        verdict: Verdict::NotFit,
+        envelope,
+    };
+    assessment.findings = judge::findings(design, library, &assessment);
+    assessment.verdict = Verdict::of(&assessment.findings);
+    assessment
+}
+
+impl Assessment {
+    /// Allowable and burst pressure of the weakest part at a temperature, absolute.
+    pub fn limits_at(&self, temperature: Temperature) -> Option<(Pressure, Option<Pressure>)> {
+        let walls = Walls { envelope: &self.envelope, least_outside: self.least_outside, knots: Vec::new() };
+        let weakest = self.envelope.weakest(temperature).ok()?;
+        let burst = weakest.burst.ok().map(|burst| walls.absolute(burst));
+        Some((walls.absolute(weakest.allowable.pressure), burst))
+    }
+
+    /// The remedy that sets the charge to the window's aim, if there is one.
+    pub fn aim(&self) -> Option<Mass> {
+        self.window.as_ref().ok().and_then(|window| window.aim)
+    }
+}
+
+fn side_of(unit: &crate::sealed::SealedUnit, side: DomeSide) -> Figure<Option<Temperature>> {
+    let crossings = unit.crossings()?;
+    let on_side = crossings.iter().filter(|crossing| crossing.side == side);
+    // The hottest crossing: below it water may touch its liquid line near 4 °C.
+    Ok(on_side.map(|crossing| crossing.temperature).next_back())
+}
+
+fn events(corners: &Corners, walls: &Walls<'_>) -> Figure<Vec<Event>> {
+    let unit = &corners.nominal;
+    let fluid = unit.fluid();
+    let mut events = vec![Event { kind: EventKind::Freezing, temperature: fluid.freezing_point() }];
+    for crossing in unit.crossings()? {
+        let kind = match crossing.side {
+            DomeSide::Vapour => EventKind::DryOut,
+            DomeSide::Liquid => EventKind::LiquidFull,
+            DomeSide::Critical => EventKind::Critical,
+        };
+        events.push(Event { kind, temperature: crossing.temperature });
+    }
+    let (low, high) = fluid.range();
+    let limit = |t: Temperature| walls.allowable_pressure(t).ok();
+    let between = (low.max(fluid.freezing_point()), high);
+    if let Some(temperature) = unit.meets(limit, between, &walls.knots)?.first() {
+        events.push(Event { kind: EventKind::AllowableReached, temperature: *temperature });
+    }
+    events.sort_by(|a, b| a.temperature.kelvin().total_cmp(&b.temperature.kelvin()));
+    Ok(events)
+}

@@ -1,0 +1,221 @@
+//! The window of allowed mass: every requirement is a bound at a temperature.
+
+use super::figure::{Figure, Missing};
+use super::worst::Walls;
+use crate::chamber::Volumes;
+use crate::design::{Design, Duty};
+use crate::fluid::{Fluid, FluidError};
+use crate::units::{Density, Mass, Pressure, Temperature};
+
+/// What a bound on mass comes from.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash)]
+pub enum Requirement {
+    /// Some liquid at the upper end of the working range, in the largest volume.
+    LiquidWhenHot,
+    /// Vapour space left at the hottest, in the smallest volume.
+    Ullage,
+    /// Liquid-full no nearer than the margin above the hottest, in the smallest volume.
+    LiquidFullMargin,
+    /// The frozen fluid must not fill the smallest volume.
+    FrozenVolume,
+    /// The pressure must stay at or below the allowable.
+    AllowablePressure,
+}
+
+/// On which side of the window a bound lies.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash)]
+pub enum Side {
+    AtLeast,
+    AtMost,
+}
+
+/// One bound.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Bound {
+    pub requirement: Requirement,
+    pub side: Side,
+    pub mass: Mass,
+    /// Where it acts.
+    pub temperature: Temperature,
+}
+
+/// The intersection of all bounds on the sealed mass.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Window {
+    /// Highest lower bound; none where nothing asks for liquid.
+    pub lower: Option<Bound>,
+    /// Lowest upper bound.
+    pub upper: Option<Bound>,
+    /// All bounds, lower ones first.
+    pub bounds: Vec<Bound>,
+    /// Where the duty wants the charge; none in an empty window.
+    pub aim: Option<Mass>,
+}
+
+impl Window {
+    /// The two ends collide: no mass meets both.
+    pub fn is_empty(&self) -> bool {
+        matches!((&self.lower, &self.upper), (Some(low), Some(high)) if low.mass >= high.mass)
+    }
+
+    /// Least and greatest mass, where both ends are known.
+    pub fn ends(&self) -> Option<(Mass, Mass)> {
+        let high = self.upper.as_ref()?.mass;
+        let low = self.lower.as_ref().map_or_else(|| Mass::from_kilogram(0.0).ok(), |b| Some(b.mass))?;
+        Some((low, high))
+    }
+}
+
+/// Share of the smallest volume that the frozen fluid may fill.
+const FROZEN_SHARE: f64 = 0.95;
+
+/// Every bound of a design, and their intersection.
+///
+/// # Errors
+/// The first figure a bound needs and does not have.
+pub fn window(design: &Design, fluid: &Fluid, volumes: &Volumes, walls: &Figure<Walls<'_>>) -> Figure<Window> {
+    let mut bounds = Vec::new();
+    if let Some(bound) = liquid_when_hot(design, fluid, volumes)? {
+        bounds.push(bound);
+    }
+    bounds.extend(ullage(design, fluid, volumes)?);
+    bounds.extend(liquid_full_margin(design, fluid, volumes)?);
+    bounds.extend(frozen_volume(design, fluid, volumes));
+    if let Ok(walls) = walls {
+        bounds.extend(allowable(design, fluid, volumes, walls)?);
+    }
+    let end = |side: Side, better: fn(f64, f64) -> bool| {
+        bounds.iter().filter(|bound| bound.side == side).fold(None::<&Bound>, |best, bound| match best {
+            Some(best) if !better(bound.mass.kilogram(), best.mass.kilogram()) => Some(best),
+            _ => Some(bound),
+        })
+    };
+    let lower = end(Side::AtLeast, |a, b| a > b).cloned();
+    let upper = end(Side::AtMost, |a, b| a < b).cloned();
+    let mut window = Window { lower, upper, bounds, aim: None };
+    if !window.is_empty() {
+        window.aim = aim(design, &window);
+    }
+    Ok(window)
+}
+
+/// The duty's place in the window: the lower end plus the tolerance, or the centre.
+/// A window that is narrower than twice the tolerance is aimed at in its centre.
+fn aim(design: &Design, window: &Window) -> Option<Mass> {
+    let (low, high) = window.ends()?;
+    let (low, high) = (low.kilogram(), high.kilogram());
+    let centre = 0.5 * (low + high);
+    let tolerance = design.charge.tolerance.kilogram();
+    let aim = if design.duty.aims_low() && window.lower.is_some() { (low + tolerance).min(centre) } else { centre };
+    Mass::from_kilogram(aim).ok()
+}
+
+fn bound(
+    requirement: Requirement,
+    side: Side,
+    density: f64,
+    volume: f64,
+    temperature: Temperature,
+) -> Option<Bound> {
+    let mass = Mass::from_kilogram(density * volume).ok()?;
+    Some(Bound { requirement, side, mass, temperature })
+}
+
+fn liquid_when_hot(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<Option<Bound>> {
+    if design.duty == Duty::PlainVessel {
+        return Ok(None);
+    }
+    let t = design.conditions.working_high;
+    fluid.saturation_pressure(t)?;
+    let vapour = fluid.curve()?.at(t.kelvin()).vapour_kg_per_m3;
+    Ok(bound(Requirement::LiquidWhenHot, Side::AtLeast, vapour, volumes.greatest.cubic_metre(), t))
+}
+
+/// Undefined above the critical temperature: there the pressure governs.
+fn ullage(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<Option<Bound>> {
+    let t = design.conditions.hottest;
+    let share = design.demands.ullage.fraction();
+    match fluid.saturation_pressure(t) {
+        Ok(_) => {
+            let at = fluid.curve()?.at(t.kelvin());
+            let density = (1.0 - share) * at.liquid_kg_per_m3 + share * at.vapour_kg_per_m3;
+            Ok(bound(Requirement::Ullage, Side::AtMost, density, volumes.least.cubic_metre(), t))
+        }
+        Err(FluidError::NoSaturation { critical, .. }) if t >= critical || is_equation(fluid) => Ok(None),
+        Err(FluidError::Frozen { .. }) => Ok(None),
+        Err(error) => Err(error.into()),
+    }
+}
+
+/// At the temperature `hottest + margin` the mean density may not exceed ρ′. Where
+/// that lies above the critical temperature and the hottest below it, the unit must
+/// dry out and not fill: the critical density. Water's liquid is lightest at one of
+/// the two ends of the range, so both are asked.
+fn liquid_full_margin(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<Option<Bound>> {
+    let conditions = &design.conditions;
+    let t = conditions.hottest.shifted(design.demands.liquid_full_margin);
+    let critical = fluid.critical();
+    let (low, top) = fluid.saturation_range();
+    if conditions.hottest.kelvin() >= critical.temperature_k {
+        return Ok(None);
+    }
+    let density = if t > top && is_equation(fluid) {
+        critical.density_kg_per_m3
+    } else {
+        match fluid.saturation_pressure(t) {
+            Ok(_) => {}
+            Err(FluidError::Frozen { .. }) => return Ok(None),
+            Err(error) => return Err(error.into()),
+        }
+        let curve = fluid.curve()?;
+        let cold = conditions.coldest.max(low).max(fluid.freezing_point()).min(t);
+        curve.at(t.kelvin()).liquid_kg_per_m3.min(curve.at(cold.kelvin()).liquid_kg_per_m3)
+    };
+    Ok(bound(Requirement::LiquidFullMargin, Side::AtMost, density, volumes.least.cubic_metre(), t))
+}
+
+fn frozen_volume(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Option<Bound> {
+    let freezing = fluid.freezing_point();
+    let solid = fluid.solid_density()?;
+    if design.conditions.coldest >= freezing {
+        return None;
+    }
+    bound(
+        Requirement::FrozenVolume,
+        Side::AtMost,
+        FROZEN_SHARE * solid.value,
+        volumes.least.cubic_metre(),
+        freezing,
+    )
+}
+
+/// The mass that stands at the allowable pressure, least over the hottest and every
+/// temperature in range where a strength bends: between those the hottest governs.
+fn allowable(design: &Design, fluid: &Fluid, volumes: &Volumes, walls: &Walls<'_>) -> Figure<Option<Bound>> {
+    let conditions = &design.conditions;
+    let freezing = fluid.freezing_point();
+    let temperatures = walls
+        .knots
+        .iter()
+        .copied()
+        .filter(|t| *t > conditions.coldest && *t < conditions.hottest)
+        .chain([conditions.hottest]);
+    let mut least: Option<(Density, Temperature)> = None;
+    for t in temperatures.filter(|t| *t >= freezing) {
+        let limit = walls.allowable_pressure(t)?.pascal() / (1.0 + fluid.pressure_uncertainty());
+        let Ok(limit) = Pressure::from_pascal(limit) else { continue };
+        if let Some(density) = fluid.density_at(limit, t).map_err(Missing::Fluid)?
+            && least.is_none_or(|(found, _)| density < found)
+        {
+            least = Some((density, t));
+        }
+    }
+    Ok(least.and_then(|(density, t)| {
+        let density = density.kilogram_per_cubic_metre();
+        bound(Requirement::AllowablePressure, Side::AtMost, density, volumes.least.cubic_metre(), t)
+    }))
+}
+
+fn is_equation(fluid: &Fluid) -> bool {
+    matches!(fluid.model(), crate::fluid::Model::Equation(_))
+}

@@ -1,0 +1,99 @@
+//! The worst case: greatest pressure of the worst corner against the weakest wall.
+
+use super::charge::Corners;
+use super::figure::{Figure, Missing};
+use crate::chamber::{Envelope, StrengthUnknown, Weakest};
+use crate::design::Design;
+use crate::fluid::State;
+use crate::units::{Pressure, Temperature};
+
+/// The envelope with the outside pressure it works against.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Walls<'a> {
+    pub envelope: &'a Envelope,
+    pub least_outside: Pressure,
+    /// Temperatures at which a strength bends.
+    pub knots: Vec<Temperature>,
+}
+
+/// One condition's pressure and what the walls say to it.
+#[derive(Debug, Clone, PartialEq)]
+pub struct WorstCase {
+    pub temperature: Temperature,
+    /// Absolute, with the model's uncertainty in it.
+    pub pressure: Pressure,
+    pub state: State,
+    /// Inside minus least outside.
+    pub load: Pressure,
+    pub weakest: Result<Weakest, StrengthUnknown>,
+    /// Load over allowable: 1 is the limit.
+    pub of_allowable: Figure<f64>,
+    /// Load over burst: 1 is bursting; unknown where no burst pressure is known.
+    pub of_burst: Figure<f64>,
+}
+
+impl Walls<'_> {
+    /// Allowable inside pressure, absolute, at a temperature.
+    ///
+    /// # Errors
+    /// [`StrengthUnknown`] names the part and the reason.
+    pub fn allowable_pressure(&self, at: Temperature) -> Result<Pressure, StrengthUnknown> {
+        self.envelope.weakest(at).map(|weakest| self.absolute(weakest.allowable.pressure))
+    }
+
+    /// A load on the wall as an absolute inside pressure.
+    pub fn absolute(&self, load: Pressure) -> Pressure {
+        Pressure::from_pascal(load.pascal() + self.least_outside.pascal()).unwrap_or(load)
+    }
+}
+
+/// The governing condition of the heaviest corner.
+///
+/// Every temperature of the conditions is asked, and every strength knot between
+/// them; the one with the greatest share of the allowable governs, or the greatest
+/// pressure where the strength is not known.
+///
+/// # Errors
+/// The fluid's, where a condition lies outside its model.
+pub fn worst_case(design: &Design, corners: &Corners, walls: &Walls<'_>) -> Figure<WorstCase> {
+    let conditions = &design.conditions;
+    if conditions.hottest < conditions.coldest {
+        return Err(Missing::Conditions);
+    }
+    let knots = walls.knots.iter().copied().filter(|t| *t > conditions.coldest && *t < conditions.hottest);
+    let mut worst: Option<WorstCase> = None;
+    for temperature in [conditions.hottest, conditions.coldest].into_iter().chain(knots) {
+        let case = at_temperature(corners, walls, temperature)?;
+        let worse = match &worst {
+            None => true,
+            Some(worst) => match (&case.of_allowable, &worst.of_allowable) {
+                (Ok(a), Ok(b)) => a > b,
+                // An unknown strength governs over any known one.
+                (Err(_), Ok(_)) => true,
+                (Ok(_), Err(_)) => false,
+                (Err(_), Err(_)) => case.pressure > worst.pressure,
+            },
+        };
+        if worse {
+            worst = Some(case);
+        }
+    }
+    worst.ok_or(Missing::Conditions)
+}
+
+fn at_temperature(corners: &Corners, walls: &Walls<'_>, temperature: Temperature) -> Figure<WorstCase> {
+    let state = corners.heaviest.state(temperature)?;
+    let uncertainty = corners.heaviest.fluid().pressure_uncertainty();
+    let pressure = Pressure::from_pascal(state.pressure.pascal() * (1.0 + uncertainty)).unwrap_or(state.pressure);
+    let load = Pressure::from_pascal(pressure.pascal() - walls.least_outside.pascal()).unwrap_or(pressure);
+    let weakest = walls.envelope.weakest(temperature);
+    // A wall under less inside than outside carries no inside load.
+    let share = |limit: Pressure| (load.pascal() / limit.pascal()).max(0.0);
+    let of_allowable =
+        weakest.as_ref().map(|w| share(w.allowable.pressure)).map_err(|e| Missing::Strength(e.clone()));
+    let of_burst = match &weakest {
+        Ok(weakest) => weakest.burst.as_ref().map(|burst| share(*burst)).map_err(|e| Missing::Strength(e.clone())),
+        Err(error) => Err(Missing::Strength(error.clone())),
+    };
+    Ok(WorstCase { temperature, pressure, state, load, weakest, of_allowable, of_burst })
+}

@@ -1,0 +1,178 @@
+//! A design: what the user decided, and nothing that can be derived from it.
+
+use serde::{Deserialize, Deserializer, Serialize};
+
+use crate::chamber::{Chamber, Factors};
+use crate::conditions::{Conditions, Room};
+use crate::fluid::Catalog;
+use crate::units::{Mass, Ratio, Temperature, TemperatureDifference, Volume};
+
+/// What the user decided.
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[serde(deny_unknown_fields)]
+pub struct Design {
+    pub title: String,
+    #[serde(default)]
+    pub note: String,
+    pub duty: Duty,
+    pub conditions: Conditions,
+    pub fluid: FluidId,
+    pub chamber: Chamber,
+    pub charge: Charge,
+    #[serde(default)]
+    pub demands: Demands,
+    pub room: Room,
+    pub bench: Bench,
+}
+
+/// What the device is for.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, Serialize, Deserialize)]
+pub enum Duty {
+    HeatPipe,
+    Thermosyphon,
+    VapourChamber,
+    PulsatingLoop,
+    SensingBulb,
+    LiquidLift,
+    PlainVessel,
+}
+
+/// Id of a fluid in the catalogue; a design file that names another is refused.
+#[derive(Debug, Clone, PartialEq, Eq, Hash, Serialize)]
+#[serde(transparent)]
+pub struct FluidId(String);
+
+/// How much goes in.
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[serde(deny_unknown_fields)]
+pub struct Charge {
+    pub aim: ChargeAim,
+    /// Greatest deviation of the sealed mass from the aim.
+    #[serde(rename = "tolerance_kg")]
+    pub tolerance: Mass,
+}
+
+/// How the charge is stated.
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[serde(deny_unknown_fields)]
+pub enum ChargeAim {
+    /// Sealed mass of fluid, liquid and vapour together.
+    Mass {
+        #[serde(rename = "mass_kg")]
+        mass: Mass,
+    },
+    /// Liquid volume over the named volume, at a temperature.
+    FillRatio {
+        ratio: Ratio,
+        /// Left out: the bench temperature.
+        #[serde(rename = "temperature_k", default)]
+        temperature: Option<Temperature>,
+        of: NamedVolume,
+    },
+    /// Liquid measured out at bench temperature.
+    Dispensed {
+        #[serde(rename = "volume_m3")]
+        volume: Volume,
+    },
+}
+
+/// Which volume a fill ratio is of.
+#[derive(Debug, Clone, PartialEq, Eq, Serialize, Deserialize)]
+pub enum NamedVolume {
+    /// The whole inside.
+    Inside,
+    /// The part of this name, all of its count.
+    Part(String),
+}
+
+/// What the charge window must keep to.
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[serde(deny_unknown_fields)]
+pub struct Demands {
+    /// Least share of the volume that stays vapour at the hottest temperature.
+    pub ullage: Ratio,
+    /// The liquid-full temperature of the largest charge lies at least this far above the hottest.
+    #[serde(rename = "liquid_full_margin_k")]
+    pub liquid_full_margin: TemperatureDifference,
+    #[serde(default)]
+    pub factors: Factors,
+}
+
+/// What the fill bench can do.
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[serde(deny_unknown_fields)]
+pub struct Bench {
+    /// Greatest error of a weighing by difference.
+    #[serde(rename = "balance_uncertainty_kg")]
+    pub balance: Mass,
+    /// Mass boiled off or purged after dispensing, before the seal.
+    #[serde(rename = "purge_loss_kg")]
+    pub purge_loss: Mass,
+    /// Whether a pressure gauge stays on the sealed unit.
+    pub gauge: bool,
+}
+
+impl FluidId {
+    /// The id of a fluid that the built-in catalogue knows.
+    pub fn new(id: &str) -> Option<Self> {
+        Catalog::built_in().ids().any(|known| known == id).then(|| Self(id.to_owned()))
+    }
+
+    pub fn as_str(&self) -> &str {
+        &self.0
+    }
+}
+
+impl<'de> Deserialize<'de> for FluidId {
+    fn deserialize<D: Deserializer<'de>>(deserializer: D) -> Result<Self, D::Error> {
+        let name = String::deserialize(deserializer)?;
+        match Catalog::built_in().find(&name) {
+            Ok(fluid) => Ok(Self(fluid.id().to_owned())),
+            Err(unknown) => Err(serde::de::Error::custom(unknown)),
+        }
+    }
+}
+
+impl Default for Demands {
+    /// Customary: 5 % ullage and 15 K to liquid-full; physics decides nothing here.
+    fn default() -> Self {
+        Self {
+            ullage: Ratio::from_fraction(0.05).expect("a share"),
+            liquid_full_margin: TemperatureDifference::from_kelvin(15.0).expect("finite"),
+            factors: Factors::default(),
+        }
+    }
+}
+
+impl Duty {
+    pub const ALL: [Self; 7] = [
+        Self::HeatPipe,
+        Self::Thermosyphon,
+        Self::VapourChamber,
+        Self::PulsatingLoop,
+        Self::SensingBulb,
+        Self::LiquidLift,
+        Self::PlainVessel,
+    ];
+
+    pub const fn name(self) -> &'static str {
+        match self {
+            Self::HeatPipe => "heat pipe",
+            Self::Thermosyphon => "thermosyphon",
+            Self::VapourChamber => "vapour chamber",
+            Self::PulsatingLoop => "pulsating loop",
+            Self::SensingBulb => "sensing bulb",
+            Self::LiquidLift => "liquid lift",
+            Self::PlainVessel => "plain sealed vessel",
+        }
+    }
+
+    /// Where in the window the charge belongs: near the lower end where surplus
+    /// liquid only costs, in the centre where both ends harm equally.
+    pub const fn aims_low(self) -> bool {
+        match self {
+            Self::HeatPipe | Self::VapourChamber | Self::Thermosyphon => true,
+            Self::PulsatingLoop | Self::SensingBulb | Self::LiquidLift | Self::PlainVessel => false,
+        }
+    }
+}
