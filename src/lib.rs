@@ -25,3 +25,11 @@ pub mod hazard;
 pub mod design;
 
 pub mod assess;
+
+pub mod words;
+
+pub mod sheet;
+
+pub mod store;
+
+pub mod cli;

@@ -1,1 +1,27 @@
-fn main() {}
+//! The window, or a headless command.
+
+use std::process::ExitCode;
+
+use chargewright::cli::{Arguments, run};
+use clap::Parser;
+
+fn main() -> ExitCode {
+    let arguments = Arguments::parse();
+    match &arguments.command {
+        Some(command) => run(command),
+        None => open_window(arguments.design),
+    }
+}
+
+#[cfg(feature = "window")]
+fn open_window(design: Option<std::path::PathBuf>) -> ExitCode {
+    chargewright::ui::open(design)
+}
+
+#[cfg(not(feature = "window"))]
+fn open_window(_design: Option<std::path::PathBuf>) -> ExitCode {
+    eprintln!(
+        "chargewright: this build has no window; the headless commands are sheet, check, saturation, isochore, fluids"
+    );
+    ExitCode::from(2)
+}

@@ -87,8 +87,13 @@ fn at_temperature(corners: &Corners, walls: &Walls<'_>, temperature: Temperature
     let pressure = Pressure::from_pascal(state.pressure.pascal() * (1.0 + uncertainty)).unwrap_or(state.pressure);
     let load = Pressure::from_pascal(pressure.pascal() - walls.least_outside.pascal()).unwrap_or(pressure);
     let weakest = walls.envelope.weakest(temperature);
-    // A wall under less inside than outside carries no inside load.
-    let share = |limit: Pressure| (load.pascal() / limit.pascal()).max(0.0);
+    // A wall under less inside than outside carries no inside load; a wall that the
+    // tolerances take away altogether carries none at all.
+    let share = |limit: Pressure| match load.pascal().max(0.0) {
+        0.0 => 0.0,
+        load if limit.pascal() <= 0.0 => load * f64::MAX.sqrt(),
+        load => load / limit.pascal(),
+    };
     let of_allowable =
         weakest.as_ref().map(|w| share(w.allowable.pressure)).map_err(|e| Missing::Strength(e.clone()));
     let of_burst = match &weakest {

@@ -1,0 +1,286 @@
+//! The headless commands: each a pure function to text, then one write.
+
+use std::fmt::Write as _;
+use std::io::{self, Write as _};
+use std::path::{Path, PathBuf};
+use std::process::ExitCode;
+
+use clap::{Parser, Subcommand};
+
+use crate::assess::{Library, Verdict, assess};
+use crate::design::Design;
+use crate::fluid::{Catalog, Fluid, FluidError, Regime, UnknownFluid};
+use crate::sheet::{Head, render};
+use crate::store::{self, StoreError};
+use crate::units::{
+    Density, Kind, ParseError, Quantity, QuantityError, Temperature, Units, parse_si, unit_named,
+};
+use crate::words;
+
+/// Fluid, charge and envelope of sealed two-phase devices.
+#[derive(Debug, Parser)]
+#[command(name = "chargewright", version, args_conflicts_with_subcommands = true)]
+pub struct Arguments {
+    /// Design to open in the window.
+    pub design: Option<PathBuf>,
+    #[command(subcommand)]
+    pub command: Option<Headless>,
+}
+
+#[derive(Debug, Subcommand)]
+pub enum Headless {
+    /// Print the charge sheet of a design.
+    Sheet {
+        design: PathBuf,
+        /// Write to this file instead.
+        #[arg(long, value_name = "FILE")]
+        out: Option<PathBuf>,
+    },
+    /// List what was found in a design, worst first; exit 0 fit, 1 not fit.
+    Check { design: PathBuf },
+    /// Saturation states as CSV.
+    Saturation {
+        /// Id, CAS number or refrigerant number.
+        fluid: String,
+        /// Temperatures, comma-separated; kelvin without a unit.
+        #[arg(long, value_name = "T1,T2,…", allow_hyphen_values = true)]
+        at: String,
+    },
+    /// States of a sealed mean density as CSV.
+    Isochore {
+        /// Id, CAS number or refrigerant number.
+        fluid: String,
+        /// Mean density; kg/m³ without a unit.
+        #[arg(long, value_name = "D", allow_hyphen_values = true)]
+        density: String,
+        /// Temperatures, comma-separated; kelvin without a unit.
+        #[arg(long, value_name = "T1,T2,…", allow_hyphen_values = true)]
+        at: String,
+    },
+    /// List the fluids.
+    Fluids,
+}
+
+/// Why a command did nothing.
+#[derive(Debug, thiserror::Error)]
+pub enum CliError {
+    #[error(transparent)]
+    Store(#[from] StoreError),
+    #[error(transparent)]
+    UnknownFluid(#[from] UnknownFluid),
+    #[error(transparent)]
+    Fluid(#[from] FluidError),
+    #[error("--{option} {text}: {cause}")]
+    Number { option: &'static str, text: String, cause: ParseError },
+    #[error("--{option} {text}: {cause}")]
+    Quantity { option: &'static str, text: String, cause: QuantityError },
+    #[error("the output cannot be written: {0}")]
+    Output(io::Error),
+}
+
+/// What a command printed and how it ends.
+#[derive(Debug, PartialEq, Eq)]
+pub struct Outcome {
+    pub text: String,
+    pub code: u8,
+}
+
+/// Runs a headless command: exit 0 or 1 with output, or 2 with one line on stderr.
+pub fn run(command: &Headless) -> ExitCode {
+    let outcome = answer(command).and_then(|outcome| print(&outcome.text).map(|()| outcome.code));
+    match outcome {
+        Ok(code) => ExitCode::from(code),
+        Err(error) => {
+            eprintln!("chargewright: {}", one_line(&error.to_string()));
+            ExitCode::from(2)
+        }
+    }
+}
+
+/// A command's answer; writes a file only for `sheet --out`.
+///
+/// # Errors
+/// [`CliError`] where input is unreadable or out of range; nothing was printed then.
+pub fn answer(command: &Headless) -> Result<Outcome, CliError> {
+    match command {
+        Headless::Sheet { design, out } => sheet(design, out.as_deref()),
+        Headless::Check { design } => check(design),
+        Headless::Saturation { fluid, at } => saturation(fluid, at),
+        Headless::Isochore { fluid, density, at } => isochore(fluid, density, at),
+        Headless::Fluids => Ok(fluids()),
+    }
+}
+
+/// The sheet of a design file, in the metric system: a file's sheet has the same
+/// bytes on every bench.
+pub fn sheet_text(design: &Design, file_name: Option<String>) -> String {
+    let assessment = assess(design, &Library::built_in());
+    let head = Head { file_name, fingerprint: store::fingerprint(design) };
+    render(design, &assessment, &Units::default(), &head)
+}
+
+fn sheet(path: &Path, out: Option<&Path>) -> Result<Outcome, CliError> {
+    let design = store::load(path)?;
+    let name = path.file_name().map(|name| name.to_string_lossy().into_owned());
+    let text = sheet_text(&design, name);
+    match out {
+        Some(out) => {
+            store::write_text(out, &text)?;
+            Ok(Outcome { text: String::new(), code: 0 })
+        }
+        None => Ok(Outcome { text, code: 0 }),
+    }
+}
+
+fn check(path: &Path) -> Result<Outcome, CliError> {
+    let design = store::load(path)?;
+    let assessment = assess(&design, &Library::built_in());
+    let units = Units::default();
+    let mut text = String::new();
+    for finding in &assessment.findings {
+        let said = words::finding(finding, Some(&design.chamber), &units);
+        let line = format!("{}: {}: {}", words::severity(finding.severity), said.title, said.detail);
+        text.push_str(&one_line(&line));
+        text.push('\n');
+    }
+    Ok(Outcome { text, code: u8::from(assessment.verdict == Verdict::NotFit) })
+}
+
+fn saturation(name: &str, at: &str) -> Result<Outcome, CliError> {
+    let fluid = Catalog::built_in().find(name)?;
+    let mut text = String::from(
+        "temperature_k,pressure_pa,liquid_density_kg_per_m3,vapour_density_kg_per_m3,\
+         latent_heat_j_per_kg,slope_pa_per_k,surface_tension_n_per_m,liquid_viscosity_pa_s,vapour_viscosity_pa_s\n",
+    );
+    for t in temperatures(at)? {
+        let state = fluid.saturation(t)?;
+        let cells = [
+            Some(t.kelvin()),
+            Some(state.pressure_pa),
+            Some(state.liquid_kg_per_m3),
+            Some(state.vapour_kg_per_m3),
+            Some(state.latent_heat_j_per_kg),
+            Some(state.slope_pa_per_k),
+            fluid.surface_tension(t),
+            None,
+            None,
+        ];
+        push_row(&mut text, cells.map(|cell| cell.map_or_else(String::new, digits)));
+    }
+    Ok(Outcome { text, code: 0 })
+}
+
+fn isochore(name: &str, density: &str, at: &str) -> Result<Outcome, CliError> {
+    let fluid = Catalog::built_in().find(name)?;
+    let density: Density = quantity("density", density, unit_named(Kind::Density, "kg/m³").symbol)?;
+    let mut text =
+        String::from("temperature_k,density_kg_per_m3,regime,pressure_pa,liquid_share,vapour_quality\n");
+    for t in temperatures(at)? {
+        push_row(&mut text, isochore_row(&fluid, density, t)?);
+    }
+    Ok(Outcome { text, code: 0 })
+}
+
+fn isochore_row(fluid: &Fluid, density: Density, t: Temperature) -> Result<[String; 6], CliError> {
+    let state = fluid.state(density, t)?;
+    let cell = |value: Option<f64>| value.map_or_else(String::new, digits);
+    // A frozen fluid's pressure is only bounded: the cell stays empty.
+    let pressure = (state.regime != Regime::Frozen).then(|| state.pressure.pascal());
+    Ok([
+        digits(t.kelvin()),
+        digits(density.kilogram_per_cubic_metre()),
+        words::regime_key(state.regime).to_owned(),
+        cell(pressure),
+        cell(state.liquid_share),
+        cell(state.quality),
+    ])
+}
+
+fn fluids() -> Outcome {
+    let mut text = String::from("id,name,cas,refrigerant,model,lowest_k,highest_k\n");
+    for fluid in Catalog::built_in().iter() {
+        let (low, high) = fluid.range();
+        push_row(
+            &mut text,
+            [
+                fluid.id().to_owned(),
+                fluid.name().to_owned(),
+                fluid.cas().to_owned(),
+                fluid.refrigerant().unwrap_or_default().to_owned(),
+                fluid.model_kind().to_owned(),
+                digits(low.kelvin()),
+                digits(high.kelvin()),
+            ],
+        );
+    }
+    Outcome { text, code: 0 }
+}
+
+/// Every temperature of a list, or the first that is wrong.
+fn temperatures(list: &str) -> Result<Vec<Temperature>, CliError> {
+    list.split(',').map(|text| quantity("at", text, "K")).collect()
+}
+
+fn quantity<Q: Quantity>(option: &'static str, text: &str, default: &str) -> Result<Q, CliError> {
+    let si = parse_si(text, Q::KIND, unit_named(Q::KIND, default))
+        .map_err(|cause| CliError::Number { option, text: text.to_owned(), cause })?;
+    Q::from_si(si).map_err(|cause| CliError::Quantity { option, text: text.to_owned(), cause })
+}
+
+fn push_row<const N: usize>(text: &mut String, cells: [String; N]) {
+    writeln!(text, "{}", cells.join(",")).expect("writing to a string");
+}
+
+/// Twelve significant digits, without trailing zeros.
+fn digits(value: f64) -> String {
+    let scientific = format!("{value:.11e}");
+    let (mantissa, exponent) = scientific.split_once('e').unwrap_or((&scientific, "0"));
+    let exponent: i32 = exponent.parse().unwrap_or(0);
+    if (-5..12).contains(&exponent) {
+        let decimals = (11 - exponent).max(0) as usize;
+        let plain = format!("{value:.decimals$}");
+        if plain.contains('.') { plain.trim_end_matches('0').trim_end_matches('.').to_owned() } else { plain }
+    } else {
+        let mantissa =
+            if mantissa.contains('.') { mantissa.trim_end_matches('0').trim_end_matches('.') } else { mantissa };
+        format!("{mantissa}e{exponent}")
+    }
+}
+
+fn one_line(text: &str) -> String {
+    text.replace('\u{a0}', " ").split_whitespace().collect::<Vec<_>>().join(" ")
+}
+
+/// One write; a reader that has gone away is no error.
+fn print(text: &str) -> Result<(), CliError> {
+    let mut out = io::stdout().lock();
+    match out.write_all(text.as_bytes()).and_then(|()| out.flush()) {
+        Err(error) if error.kind() != io::ErrorKind::BrokenPipe => Err(CliError::Output(error)),
+        _ => Ok(()),
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn twelve_digits_without_padding() {
+        assert_eq!(digits(298.15), "298.15");
+        assert_eq!(digits(1.0 / 3.0), "0.333333333333");
+        assert_eq!(digits(1.5e-9), "1.5e-9");
+        assert_eq!(digits(2_257_000.0), "2257000");
+        assert_eq!(digits(1.234_567_890_123_45e15), "1.23456789012e15");
+        assert_eq!(digits(0.0), "0");
+    }
+
+    #[test]
+    fn one_bad_temperature_refuses_the_list() {
+        let ask = |at: &str| saturation("water", at);
+        assert_eq!(ask("300,-5degC,25 °C").map(|o| o.text).map_err(|e| e.to_string()).is_ok(), false);
+        assert!(ask("300,25degC").is_ok());
+        assert!(matches!(ask("300,nan"), Err(CliError::Number { .. })));
+        assert!(matches!(ask("300,-1"), Err(CliError::Quantity { .. })));
+        assert!(matches!(ask("300,700"), Err(CliError::Fluid(FluidError::NoSaturation { .. }))));
+    }
+}

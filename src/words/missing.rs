@@ -1,0 +1,154 @@
+//! Why a figure is not known, and what contradicts itself, in the user's units.
+
+use crate::assess::Missing;
+use crate::chamber::{Chamber, ChamberError, ChamberFault, StrengthGap};
+use crate::conditions::ConditionFault;
+use crate::fluid::FluidError;
+use crate::units::{Kind, Units};
+
+/// A sentence for a missing figure.
+pub fn missing(missing: &Missing, units: &Units) -> String {
+    match missing {
+        Missing::Fluid(error) => fluid_error(error, units),
+        Missing::Strength(unknown) => {
+            let at = units.show(unknown.temperature);
+            let why = match &unknown.reason {
+                StrengthGap::TooCold { coldest } => {
+                    format!("its values start at {}", units.show(*coldest))
+                }
+                StrengthGap::TooHot { hottest } => {
+                    format!("its service ends at {}", units.show(*hottest))
+                }
+                other => other.to_string(),
+            };
+            format!("The strength of {} ({}) at {at} is not known: {why}.", unknown.name, unknown.material)
+        }
+        Missing::Chamber(error) => chamber_error(error, units),
+        Missing::Overfull { share } => {
+            format!("The liquid would fill {:.1} times the inside volume. Lower the fill ratio.", share)
+        }
+        other => format!("{}.", upper(&other.to_string())),
+    }
+}
+
+fn fluid_error(error: &FluidError, units: &Units) -> String {
+    match error {
+        FluidError::Frozen { fluid, temperature, melting } => format!(
+            "{} is frozen at {}: it melts at {}.",
+            upper(fluid),
+            units.show(*temperature),
+            units.show(*melting)
+        ),
+        FluidError::TooCold { fluid, temperature, low } => format!(
+            "{} is outside the equation of {fluid}, which starts at {}.",
+            units.show(*temperature),
+            units.show(*low)
+        ),
+        FluidError::TooHot { fluid, temperature, high } => format!(
+            "{} is outside the model of {fluid}, which ends at {}.",
+            units.show(*temperature),
+            units.show(*high)
+        ),
+        FluidError::NoSaturation { fluid, temperature, high, critical } => format!(
+            "{fluid} has no vapour pressure at {}: its saturation is given up to {} (critical point {}).",
+            units.show(*temperature),
+            units.show(*high),
+            units.show(*critical)
+        ),
+        FluidError::TooDense { fluid, density, high } => format!(
+            "A mean density of {} is beyond the model of {fluid}, which ends at {}: far too much fluid for the volume.",
+            units.show(*density),
+            units.show(*high)
+        ),
+        FluidError::PressureTooHigh { fluid, high } => format!(
+            "The pressure would be above {} abs, where the model of {fluid} ends: the unit is liquid-full.",
+            units.show(*high)
+        ),
+        other => format!("{}.", upper(&other.to_string())),
+    }
+}
+
+fn chamber_error(error: &ChamberError, units: &Units) -> String {
+    match error {
+        ChamberError::NoParts => "The chamber has no parts. Add one.".to_owned(),
+        ChamberError::ZeroVolume => "The parts enclose no volume.".to_owned(),
+        ChamberError::InsertsTooLarge { cavity_m3, inserts_m3 } => format!(
+            "The inserts take {} out of a cavity of {}.",
+            units.show_si(Kind::Volume, *inserts_m3, 4),
+            units.show_si(Kind::Volume, *cavity_m3, 4)
+        ),
+        ChamberError::TooLarge { volume_m3 } => {
+            format!("A volume of {} is beyond all measure.", units.show_si(Kind::Volume, *volume_m3, 3))
+        }
+    }
+}
+
+/// A sentence for a chamber's contradiction; parts are named.
+pub fn chamber_fault(fault: &ChamberFault, chamber: Option<&Chamber>, units: &Units) -> String {
+    let part = |index: &usize| {
+        chamber.and_then(|chamber| chamber.parts.get(*index)).map_or_else(
+            || format!("part {}", index + 1),
+            |part| format!("“{}”", part.name),
+        )
+    };
+    match fault {
+        ChamberFault::NoParts => "The parts list is empty. Add a part with a wall.".to_owned(),
+        ChamberFault::ZeroVolume => "The parts enclose no volume.".to_owned(),
+        ChamberFault::InsertsTooLarge { cavity_m3, inserts_m3 } => chamber_error(
+            &ChamberError::InsertsTooLarge { cavity_m3: *cavity_m3, inserts_m3: *inserts_m3 },
+            units,
+        ),
+        ChamberFault::TooLarge { volume_m3 } => {
+            chamber_error(&ChamberError::TooLarge { volume_m3: *volume_m3 }, units)
+        }
+        ChamberFault::NothingLeftAtWorst => {
+            "At the worst corner of the tolerances no inside volume is left. Tighten the tolerances.".to_owned()
+        }
+        ChamberFault::CountZero { part: p } => format!("{} occurs no times. Set its count to 1 or remove it.", upper(&part(p))),
+        ChamberFault::ZeroDimension { part: p, dimension } => {
+            format!("The {dimension} of {} is zero.", part(p))
+        }
+        ChamberFault::ToleranceLargerThanDimension { part: p, dimension } => {
+            format!("The tolerance of the {dimension} of {} is larger than the {dimension} itself.", part(p))
+        }
+        ChamberFault::WallMissing { part: p } => format!("{} has no wall. Give it a material and a thickness.", upper(&part(p))),
+        ChamberFault::WallOnInsert { part: p } => format!("{} is a solid insert and cannot have a wall.", upper(&part(p))),
+        ChamberFault::WallThickerThanBore { part: p } => format!("The wall of {} is thicker than its bore is wide.", part(p)),
+        ChamberFault::UnknownMaterial { part: p, material } => {
+            format!("{} has a wall of “{material}”, which is no material here.", upper(&part(p)))
+        }
+    }
+}
+
+/// A sentence for contradicting conditions.
+pub fn condition_fault(fault: &ConditionFault, units: &Units) -> String {
+    match fault {
+        ConditionFault::HottestBelowColdest { hottest, coldest } => format!(
+            "The hottest temperature, {}, is below the coldest, {}. Change one of them.",
+            units.show(*hottest),
+            units.show(*coldest)
+        ),
+        ConditionFault::WorkingRangeReversed { low, high } => format!(
+            "The working range ends at {}, below its start at {}. Change one of them.",
+            units.show(*high),
+            units.show(*low)
+        ),
+        ConditionFault::WorkingOutsideExtremes { low, high, coldest, hottest } => format!(
+            "The working range, {} to {}, reaches outside coldest to hottest, {} to {}. Widen the extremes.",
+            units.show(*low),
+            units.show(*high),
+            units.show(*coldest),
+            units.show(*hottest)
+        ),
+        ConditionFault::OutsideBelowZero { pressure } => {
+            format!("An outside pressure of {} abs is below zero. Use 0 for space.", units.show(*pressure))
+        }
+        ConditionFault::NoRoom => "The room has no volume.".to_owned(),
+    }
+}
+
+/// The first letter in upper case.
+pub(super) fn upper(text: &str) -> String {
+    let mut chars = text.chars();
+    chars.next().map_or_else(String::new, |first| first.to_uppercase().chain(chars).collect())
+}

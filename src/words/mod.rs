@@ -1,0 +1,127 @@
+//! What is said: findings, regimes, requirements, events, in sentences with units.
+//!
+//! Window, sheet and command line all speak through this room.
+
+mod finding;
+mod missing;
+
+pub use finding::{Said, finding};
+pub use missing::{chamber_fault, condition_fault, missing};
+
+use crate::assess::{EventKind, Requirement, Severity, Verdict};
+use crate::chamber::AllowableBasis;
+use crate::fluid::Regime;
+
+/// The care that is always said.
+pub const CAUTIONS: &[&str] = &[
+    "These are calculated figures for a designer to check. Local codes and licensed practice decide.",
+    "A sealed unit in a fire will burst. Nothing here covers a fire.",
+    "Well-mixed room figures are never a pass: near the break it is worse.",
+];
+
+pub const fn regime(regime: Regime) -> &'static str {
+    match regime {
+        Regime::TwoPhase => "two-phase",
+        Regime::AllVapour => "all vapour",
+        Regime::LiquidFull => "liquid-full",
+        Regime::Supercritical => "supercritical",
+        Regime::Frozen => "frozen",
+    }
+}
+
+/// The word of a regime in tables for machines.
+pub const fn regime_key(regime: Regime) -> &'static str {
+    match regime {
+        Regime::TwoPhase => "two_phase",
+        Regime::AllVapour => "all_vapour",
+        Regime::LiquidFull => "liquid_full",
+        Regime::Supercritical => "supercritical",
+        Regime::Frozen => "frozen",
+    }
+}
+
+pub const fn requirement(requirement: Requirement) -> &'static str {
+    match requirement {
+        Requirement::LiquidWhenHot => "liquid at the upper working temperature",
+        Requirement::Ullage => "ullage at the hottest",
+        Requirement::LiquidFullMargin => "temperature margin to liquid-full",
+        Requirement::FrozenVolume => "room for the frozen fluid",
+        Requirement::AllowablePressure => "allowable pressure",
+    }
+}
+
+pub const fn event(event: EventKind) -> &'static str {
+    match event {
+        EventKind::Freezing => "freezes",
+        EventKind::DryOut => "dries out",
+        EventKind::LiquidFull => "goes liquid-full",
+        EventKind::Critical => "passes the critical point",
+        EventKind::AllowableReached => "reaches the allowable pressure",
+    }
+}
+
+pub const fn severity(severity: Severity) -> &'static str {
+    match severity {
+        Severity::Error => "not fit",
+        Severity::Warning => "warning",
+        Severity::Note => "note",
+    }
+}
+
+pub const fn verdict(verdict: Verdict) -> &'static str {
+    match verdict {
+        Verdict::Fit => "Fit to fill, as far as this program judges",
+        Verdict::FitWithWarnings => "Fit to fill if the warnings are answered for",
+        Verdict::NotFit => "Not fit: do not fill",
+    }
+}
+
+/// What an allowable pressure rests on.
+pub const fn basis(basis: AllowableBasis) -> &'static str {
+    match basis {
+        AllowableBasis::Burst => "burst pressure over its factor",
+        AllowableBasis::Yield => "yield pressure over its factor",
+        AllowableBasis::CodeForm => "code-form allowable stress",
+        AllowableBasis::Permissible => "permissible tensile stress of glass",
+        AllowableBasis::BurstAtMost => "burst pressure over its factor, last known cooler",
+        AllowableBasis::YieldAtMost => "yield pressure over its factor, last known cooler",
+        AllowableBasis::CodeFormAtMost => "code-form allowable stress, last known cooler",
+    }
+}
+
+/// What a GHS hazard statement code says, shortened.
+pub fn statement(code: &str) -> &'static str {
+    match code.get(..4).unwrap_or(code) {
+        "H220" => "extremely flammable gas",
+        "H221" => "flammable gas",
+        "H224" => "extremely flammable liquid and vapour",
+        "H225" => "highly flammable liquid and vapour",
+        "H226" => "flammable liquid and vapour",
+        "H280" => "gas under pressure; may explode if heated",
+        "H281" => "refrigerated gas; cold burns",
+        "H301" => "toxic if swallowed",
+        "H302" => "harmful if swallowed",
+        "H304" => "may be fatal if swallowed and enters airways",
+        "H311" => "toxic in contact with skin",
+        "H314" => "severe skin burns and eye damage",
+        "H315" => "skin irritation",
+        "H318" => "serious eye damage",
+        "H319" => "serious eye irritation",
+        "H331" => "toxic if inhaled",
+        "H332" => "harmful if inhaled",
+        "H335" => "may irritate the airways",
+        "H336" => "may cause drowsiness or dizziness",
+        "H351" => "suspected of causing cancer",
+        "H361" => "suspected of damaging fertility or the unborn child",
+        "H370" => "damages organs",
+        "H372" => "damages organs through long exposure",
+        "H373" => "may damage organs through long exposure",
+        "H400" => "very toxic to aquatic life",
+        "H410" => "very toxic to aquatic life with lasting effects",
+        "H411" => "toxic to aquatic life with lasting effects",
+        "H412" => "harmful to aquatic life with lasting effects",
+        "H420" => "harms the ozone layer",
+        "EUH0" => "see its safety data sheet",
+        _ => "see its safety data sheet",
+    }
+}
