@@ -167,12 +167,13 @@ impl Duty {
         }
     }
 
-    /// Where in the window the charge belongs: near the lower end where surplus
-    /// liquid only costs, in the centre where both ends harm equally.
-    pub const fn aims_low(self) -> bool {
+    /// Whether both ends of the charge window harm equally, so that its centre is the
+    /// place to aim at. The others aim at the inventory of their wick or film, which
+    /// is not computed here: they have no aim, only a window.
+    pub const fn aims_at_centre(self) -> bool {
         match self {
-            Self::HeatPipe | Self::VapourChamber | Self::Thermosyphon => true,
-            Self::PulsatingLoop | Self::SensingBulb | Self::LiquidLift | Self::PlainVessel => false,
+            Self::HeatPipe | Self::VapourChamber | Self::Thermosyphon => false,
+            Self::PulsatingLoop | Self::SensingBulb | Self::LiquidLift | Self::PlainVessel => true,
         }
     }
 }

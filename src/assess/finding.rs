@@ -69,6 +69,8 @@ pub enum FindingKind {
     FrozenInWork { freezing: Temperature, working_low: Temperature },
     FrozenVolume { greatest: Mass, allowed: Mass },
     EmptyWindow { lower: Requirement, upper: Requirement, lower_mass: Mass, upper_mass: Mass },
+    /// Guard bands on both sides would leave no scale reading.
+    BalanceTooCoarse { balance: Mass, tolerance: Mass },
     Incompatible { material: String, reason: String, source: String },
     PairCaution { material: String, reason: String, source: String },
     PairNotKnown { material: String },

@@ -24,6 +24,7 @@ pub fn findings(design: &Design, library: &Library, a: &Assessment) -> Vec<Findi
     judge.dry_out();
     judge.freezing();
     judge.window();
+    judge.balance();
     judge.pair();
     judge.stability();
     judge.fire();
@@ -49,7 +50,7 @@ impl Judge<'_> {
 
     fn add_share(&mut self, severity: Severity, section: Section, kind: FindingKind, share: f64) {
         let remedy = (severity == Severity::Error && section == Section::Charge)
-            .then(|| self.a.aim().map(Remedy::SetCharge))
+            .then(|| self.a.nearest_charge(self.design.charge.tolerance).map(Remedy::SetCharge))
             .flatten();
         self.found.push(Finding { severity, section, kind, share: Some(share), remedy });
     }
@@ -117,7 +118,7 @@ impl Judge<'_> {
                 temperature: case.temperature,
                 part: weakest.name.to_string(),
             };
-            // Whether less charge helps is the window's to say: its aim is the remedy.
+            // Whether less charge helps is the window's to say: its nearest charge is the remedy.
             self.add_share(Severity::Error, Section::Charge, kind, *share);
         }
         if self.design.demands.factors.below_default() {
@@ -224,6 +225,21 @@ impl Judge<'_> {
                 upper_mass: upper.mass,
             };
             self.add(Severity::Error, Section::Chamber, kind);
+        }
+    }
+
+    fn balance(&mut self) {
+        let (balance, tolerance) = (self.design.bench.balance, self.design.charge.tolerance);
+        if balance >= tolerance {
+            let share = balance.kilogram() / tolerance.kilogram().max(f64::MIN_POSITIVE);
+            let kind = FindingKind::BalanceTooCoarse { balance, tolerance };
+            self.found.push(Finding {
+                severity: Severity::Error,
+                section: Section::Bench,
+                kind,
+                share: Some(share.min(f64::MAX.sqrt())),
+                remedy: None,
+            });
         }
     }
 

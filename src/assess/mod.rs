@@ -160,9 +160,10 @@ impl Assessment {
         Some((walls.absolute(weakest.allowable.pressure), burst))
     }
 
-    /// The remedy that sets the charge to the window's aim, if there is one.
-    pub fn aim(&self) -> Option<Mass> {
-        self.window.as_ref().ok().and_then(|window| window.aim)
+    /// The charge nearest to the present one that the window allows.
+    pub fn nearest_charge(&self, tolerance: Mass) -> Option<Mass> {
+        let (window, charge) = (self.window.as_ref().ok()?, self.charge.as_ref().ok()?);
+        window.nearest(charge.nominal, tolerance)
     }
 }
 

@@ -5,7 +5,7 @@ use super::worst::Walls;
 use crate::chamber::Volumes;
 use crate::design::{Design, Duty};
 use crate::fluid::{Fluid, FluidError};
-use crate::units::{Density, Mass, Pressure, Temperature};
+use crate::units::{Density, Mass, Pressure, Temperature, careful_down, careful_up};
 
 /// What a bound on mass comes from.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Hash)]
@@ -48,7 +48,8 @@ pub struct Window {
     pub upper: Option<Bound>,
     /// All bounds, lower ones first.
     pub bounds: Vec<Bound>,
-    /// Where the duty wants the charge; none in an empty window.
+    /// Where the duty wants the charge; none in an empty window, and none where the
+    /// duty aims at an inventory that is not computed.
     pub aim: Option<Mass>,
 }
 
@@ -56,6 +57,15 @@ impl Window {
     /// The two ends collide: no mass meets both.
     pub fn is_empty(&self) -> bool {
         matches!((&self.lower, &self.upper), (Some(low), Some(high)) if low.mass >= high.mass)
+    }
+
+    /// The charge nearest to `nominal` that keeps its tolerance inside the window,
+    /// rounded away from the ends; none where the window is too narrow for it.
+    pub fn nearest(&self, nominal: Mass, tolerance: Mass) -> Option<Mass> {
+        let (low, high) = self.ends()?;
+        let low = careful_up(low.kilogram() + tolerance.kilogram(), 4);
+        let high = careful_down(high.kilogram() - tolerance.kilogram(), 4);
+        (low <= high).then(|| Mass::from_kilogram(nominal.kilogram().clamp(low, high)).ok()).flatten()
     }
 
     /// Least and greatest mass, where both ends are known.
@@ -99,15 +109,10 @@ pub fn window(design: &Design, fluid: &Fluid, volumes: &Volumes, walls: &Figure<
     Ok(window)
 }
 
-/// The duty's place in the window: the lower end plus the tolerance, or the centre.
-/// A window that is narrower than twice the tolerance is aimed at in its centre.
+/// The duty's place in the window.
 fn aim(design: &Design, window: &Window) -> Option<Mass> {
-    let (low, high) = window.ends()?;
-    let (low, high) = (low.kilogram(), high.kilogram());
-    let centre = 0.5 * (low + high);
-    let tolerance = design.charge.tolerance.kilogram();
-    let aim = if design.duty.aims_low() && window.lower.is_some() { (low + tolerance).min(centre) } else { centre };
-    Mass::from_kilogram(aim).ok()
+    let (low, high) = window.ends().filter(|_| design.duty.aims_at_centre())?;
+    Mass::from_kilogram(0.5 * (low.kilogram() + high.kilogram())).ok()
 }
 
 fn bound(

@@ -3,7 +3,7 @@
 /// Widest line.
 pub const WIDTH: usize = 78;
 /// Width of the label column of a row.
-const LABEL: usize = 26;
+const LABEL: usize = 30;
 
 /// Lines of a sheet, wrapped as they are added.
 #[derive(Debug, Default)]

@@ -148,6 +148,15 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
             ),
         )
         .try_this("More volume, a stronger wall or another fluid."),
+        FindingKind::BalanceTooCoarse { balance, tolerance } => say(
+            "Balance too coarse",
+            format!(
+                "The balance is uncertain by {}; the charge may deviate by {} only, so no scale reading would prove it.",
+                units.show_to(*balance, 2),
+                units.show_to(*tolerance, 3)
+            ),
+        )
+        .try_this("A finer balance or a wider tolerance."),
         FindingKind::Incompatible { material, reason, source } => {
             say("Fluid attacks the wall", format!("{material}: {reason}.")).try_this("Another wall or another fluid.").source(source)
         }
