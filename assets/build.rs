@@ -15,15 +15,27 @@ fn main() {
         let folder = Path::new(&root).join(folder);
         println!("cargo:rerun-if-changed={}", folder.display());
         let mut paths: Vec<_> = fs::read_dir(&folder)
-            .map(|entries| entries.filter_map(Result::ok).map(|entry| entry.path()).collect())
+            .map(|entries| {
+                entries
+                    .filter_map(Result::ok)
+                    .map(|entry| entry.path())
+                    .collect()
+            })
             .unwrap_or_default();
         paths.retain(|path| path.extension().is_some_and(|ext| ext == "ron"));
         paths.sort();
         let mut text = format!("pub(crate) static {constant}: &[(&str, &str)] = &[\n");
         for path in &paths {
-            let stem = path.file_stem().and_then(|stem| stem.to_str()).expect("asset names are plain text");
-            writeln!(text, "    ({stem:?}, include_str!({:?})),", path.display().to_string())
-                .expect("writing to a string");
+            let stem = path
+                .file_stem()
+                .and_then(|stem| stem.to_str())
+                .expect("asset names are plain text");
+            writeln!(
+                text,
+                "    ({stem:?}, include_str!({:?})),",
+                path.display().to_string()
+            )
+            .expect("writing to a string");
         }
         text.push_str("];\n");
         fs::write(Path::new(&out).join(file), text).expect("the build folder can be written");

@@ -71,9 +71,17 @@ pub enum CliError {
     #[error(transparent)]
     Fluid(#[from] FluidError),
     #[error("--{option} {text}: {cause}")]
-    Number { option: &'static str, text: String, cause: ParseError },
+    Number {
+        option: &'static str,
+        text: String,
+        cause: ParseError,
+    },
     #[error("--{option} {text}: {cause}")]
-    Quantity { option: &'static str, text: String, cause: QuantityError },
+    Quantity {
+        option: &'static str,
+        text: String,
+        cause: QuantityError,
+    },
     #[error("the output cannot be written: {0}")]
     Output(io::Error),
 }
@@ -115,18 +123,26 @@ pub fn answer(command: &Headless) -> Result<Outcome, CliError> {
 /// bytes on every bench.
 pub fn sheet_text(design: &Design, file_name: Option<String>) -> String {
     let assessment = assess(design, &Library::built_in());
-    let head = Head { file_name, fingerprint: store::fingerprint(design) };
+    let head = Head {
+        file_name,
+        fingerprint: store::fingerprint(design),
+    };
     render(design, &assessment, &Units::default(), &head)
 }
 
 fn sheet(path: &Path, out: Option<&Path>) -> Result<Outcome, CliError> {
     let design = store::load(path)?;
-    let name = path.file_name().map(|name| name.to_string_lossy().into_owned());
+    let name = path
+        .file_name()
+        .map(|name| name.to_string_lossy().into_owned());
     let text = sheet_text(&design, name);
     match out {
         Some(out) => {
             store::write_text(out, &text)?;
-            Ok(Outcome { text: String::new(), code: 0 })
+            Ok(Outcome {
+                text: String::new(),
+                code: 0,
+            })
         }
         None => Ok(Outcome { text, code: 0 }),
     }
@@ -139,11 +155,19 @@ fn check(path: &Path) -> Result<Outcome, CliError> {
     let mut text = String::new();
     for finding in &assessment.findings {
         let said = words::finding(finding, Some(&design.chamber), &units);
-        let line = format!("{}: {}: {}", words::severity(finding.severity), said.title, said.detail);
+        let line = format!(
+            "{}: {}: {}",
+            words::severity(finding.severity),
+            said.title,
+            said.detail
+        );
         text.push_str(&one_line(&line));
         text.push('\n');
     }
-    Ok(Outcome { text, code: u8::from(assessment.verdict == Verdict::NotFit) })
+    Ok(Outcome {
+        text,
+        code: u8::from(assessment.verdict == Verdict::NotFit),
+    })
 }
 
 fn saturation(name: &str, at: &str) -> Result<Outcome, CliError> {
@@ -165,16 +189,24 @@ fn saturation(name: &str, at: &str) -> Result<Outcome, CliError> {
             None,
             None,
         ];
-        push_row(&mut text, cells.map(|cell| cell.map_or_else(String::new, digits)));
+        push_row(
+            &mut text,
+            cells.map(|cell| cell.map_or_else(String::new, digits)),
+        );
     }
     Ok(Outcome { text, code: 0 })
 }
 
 fn isochore(name: &str, density: &str, at: &str) -> Result<Outcome, CliError> {
     let fluid = Catalog::built_in().find(name)?;
-    let density: Density = quantity("density", density, unit_named(Kind::Density, "kg/m³").symbol)?;
-    let mut text =
-        String::from("temperature_k,density_kg_per_m3,regime,pressure_pa,liquid_share,vapour_quality\n");
+    let density: Density = quantity(
+        "density",
+        density,
+        unit_named(Kind::Density, "kg/m³").symbol,
+    )?;
+    let mut text = String::from(
+        "temperature_k,density_kg_per_m3,regime,pressure_pa,liquid_share,vapour_quality\n",
+    );
     for t in temperatures(at)? {
         push_row(&mut text, isochore_row(&fluid, density, t)?);
     }
@@ -218,13 +250,24 @@ fn fluids() -> Outcome {
 
 /// Every temperature of a list, or the first that is wrong.
 fn temperatures(list: &str) -> Result<Vec<Temperature>, CliError> {
-    list.split(',').map(|text| quantity("at", text, "K")).collect()
+    list.split(',')
+        .map(|text| quantity("at", text, "K"))
+        .collect()
 }
 
 fn quantity<Q: Quantity>(option: &'static str, text: &str, default: &str) -> Result<Q, CliError> {
-    let si = parse_si(text, Q::KIND, unit_named(Q::KIND, default))
-        .map_err(|cause| CliError::Number { option, text: text.to_owned(), cause })?;
-    Q::from_si(si).map_err(|cause| CliError::Quantity { option, text: text.to_owned(), cause })
+    let si = parse_si(text, Q::KIND, unit_named(Q::KIND, default)).map_err(|cause| {
+        CliError::Number {
+            option,
+            text: text.to_owned(),
+            cause,
+        }
+    })?;
+    Q::from_si(si).map_err(|cause| CliError::Quantity {
+        option,
+        text: text.to_owned(),
+        cause,
+    })
 }
 
 fn push_row<const N: usize>(text: &mut String, cells: [String; N]) {
@@ -239,16 +282,26 @@ fn digits(value: f64) -> String {
     if (-5..12).contains(&exponent) {
         let decimals = (11 - exponent).max(0) as usize;
         let plain = format!("{value:.decimals$}");
-        if plain.contains('.') { plain.trim_end_matches('0').trim_end_matches('.').to_owned() } else { plain }
+        if plain.contains('.') {
+            plain.trim_end_matches('0').trim_end_matches('.').to_owned()
+        } else {
+            plain
+        }
     } else {
-        let mantissa =
-            if mantissa.contains('.') { mantissa.trim_end_matches('0').trim_end_matches('.') } else { mantissa };
+        let mantissa = if mantissa.contains('.') {
+            mantissa.trim_end_matches('0').trim_end_matches('.')
+        } else {
+            mantissa
+        };
         format!("{mantissa}e{exponent}")
     }
 }
 
 fn one_line(text: &str) -> String {
-    text.replace('\u{a0}', " ").split_whitespace().collect::<Vec<_>>().join(" ")
+    text.replace('\u{a0}', " ")
+        .split_whitespace()
+        .collect::<Vec<_>>()
+        .join(" ")
 }
 
 /// One write; a reader that has gone away is no error.
@@ -277,10 +330,19 @@ mod tests {
     #[test]
     fn one_bad_temperature_refuses_the_list() {
         let ask = |at: &str| saturation("water", at);
-        assert_eq!(ask("300,-5degC,25 °C").map(|o| o.text).map_err(|e| e.to_string()).is_ok(), false);
+        assert_eq!(
+            ask("300,-5degC,25 °C")
+                .map(|o| o.text)
+                .map_err(|e| e.to_string())
+                .is_ok(),
+            false
+        );
         assert!(ask("300,25degC").is_ok());
         assert!(matches!(ask("300,nan"), Err(CliError::Number { .. })));
         assert!(matches!(ask("300,-1"), Err(CliError::Quantity { .. })));
-        assert!(matches!(ask("300,700"), Err(CliError::Fluid(FluidError::NoSaturation { .. }))));
+        assert!(matches!(
+            ask("300,700"),
+            Err(CliError::Fluid(FluidError::NoSaturation { .. }))
+        ));
     }
 }

@@ -48,11 +48,19 @@ pub struct Room {
 #[derive(Debug, Clone, Copy, PartialEq, thiserror::Error)]
 pub enum ConditionFault {
     #[error("the hottest temperature is below the coldest")]
-    HottestBelowColdest { hottest: Temperature, coldest: Temperature },
+    HottestBelowColdest {
+        hottest: Temperature,
+        coldest: Temperature,
+    },
     #[error("the upper end of the working range is below its lower end")]
     WorkingRangeReversed { low: Temperature, high: Temperature },
     #[error("the working range reaches outside coldest to hottest")]
-    WorkingOutsideExtremes { low: Temperature, high: Temperature, coldest: Temperature, hottest: Temperature },
+    WorkingOutsideExtremes {
+        low: Temperature,
+        high: Temperature,
+        coldest: Temperature,
+        hottest: Temperature,
+    },
     #[error("a pressure outside the wall is below zero")]
     OutsideBelowZero { pressure: Pressure },
     #[error("the room has no volume")]
@@ -71,7 +79,12 @@ impl Conditions {
         if high < low {
             faults.push(ConditionFault::WorkingRangeReversed { low, high });
         } else if hottest >= coldest && (low < coldest || high > hottest) {
-            faults.push(ConditionFault::WorkingOutsideExtremes { low, high, coldest, hottest });
+            faults.push(ConditionFault::WorkingOutsideExtremes {
+                low,
+                high,
+                coldest,
+                hottest,
+            });
         }
         for pressure in [self.least_outside, self.barometer] {
             if pressure.pascal() < 0.0 {

@@ -115,7 +115,10 @@ pub struct Bench {
 impl FluidId {
     /// The id of a fluid that the built-in catalogue knows.
     pub fn new(id: &str) -> Option<Self> {
-        Catalog::built_in().ids().any(|known| known == id).then(|| Self(id.to_owned()))
+        Catalog::built_in()
+            .ids()
+            .any(|known| known == id)
+            .then(|| Self(id.to_owned()))
     }
 
     pub fn as_str(&self) -> &str {

@@ -33,3 +33,6 @@ pub mod sheet;
 pub mod store;
 
 pub mod cli;
+
+#[cfg(feature = "window")]
+pub mod ui;

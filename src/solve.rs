@@ -25,7 +25,13 @@ pub fn bracketed_root(
     high: f64,
     tolerance: f64,
 ) -> Result<f64, SolveError> {
-    let checked = |x: f64, y: f64| if y.is_nan() { Err(SolveError::NotANumber { at: x }) } else { Ok(y) };
+    let checked = |x: f64, y: f64| {
+        if y.is_nan() {
+            Err(SolveError::NotANumber { at: x })
+        } else {
+            Ok(y)
+        }
+    };
     let (mut a, mut b) = (low, high);
     let mut fa = checked(a, f(a))?;
     let mut fb = checked(b, f(b))?;
@@ -71,7 +77,11 @@ pub fn bracketed_root(
                 p = s * (2.0 * half * t * (t - r) - (b - a) * (r - 1.0));
                 q = (t - 1.0) * (r - 1.0) * (s - 1.0);
             }
-            if p > 0.0 { q = -q } else { p = -p }
+            if p > 0.0 {
+                q = -q
+            } else {
+                p = -p
+            }
             if 2.0 * p < (3.0 * half * q - (tol * q).abs()).min((before_last * q).abs()) {
                 before_last = step;
                 step = p / q;
@@ -81,7 +91,11 @@ pub fn bracketed_root(
             }
         }
         (a, fa) = (b, fb);
-        b += if step.abs() > tol { step } else { tol.copysign(half) };
+        b += if step.abs() > tol {
+            step
+        } else {
+            tol.copysign(half)
+        };
         fb = checked(b, f(b))?;
     }
     Ok(b)
@@ -122,8 +136,14 @@ mod tests {
 
     #[test]
     fn no_sign_change_and_nan_are_refused() {
-        assert!(matches!(bracketed_root(|x| x * x + 1.0, -1.0, 1.0, 0.0), Err(SolveError::NotBracketed { .. })));
-        assert!(matches!(bracketed_root(|_| f64::NAN, -1.0, 1.0, 0.0), Err(SolveError::NotANumber { .. })));
+        assert!(matches!(
+            bracketed_root(|x| x * x + 1.0, -1.0, 1.0, 0.0),
+            Err(SolveError::NotBracketed { .. })
+        ));
+        assert!(matches!(
+            bracketed_root(|_| f64::NAN, -1.0, 1.0, 0.0),
+            Err(SolveError::NotANumber { .. })
+        ));
     }
 
     #[test]

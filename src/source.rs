@@ -71,7 +71,11 @@ impl std::fmt::Display for Source {
 
 impl std::fmt::Display for Citation {
     fn fmt(&self, f: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
-        write!(f, "{} {}, {}, {}", self.authors, self.year, self.title, self.publication)?;
+        write!(
+            f,
+            "{} {}, {}, {}",
+            self.authors, self.year, self.title, self.publication
+        )?;
         match &self.doi {
             Some(doi) => write!(f, ", doi {doi}"),
             None => Ok(()),
@@ -82,7 +86,9 @@ impl std::fmt::Display for Citation {
 fn filled<'de, D: Deserializer<'de>>(deserializer: D) -> Result<String, D::Error> {
     let text = String::deserialize(deserializer)?;
     if text.trim().is_empty() {
-        return Err(serde::de::Error::custom("a source must name a document or practice, not be empty"));
+        return Err(serde::de::Error::custom(
+            "a source must name a document or practice, not be empty",
+        ));
     }
     Ok(text)
 }

@@ -38,7 +38,12 @@ pub enum StoreError {
 #[derive(Debug, Clone, PartialEq, thiserror::Error)]
 pub enum ParseError {
     #[error("line {line}, column {column}: {}{what}", .field.as_ref().map(|field| format!("{field}: ")).unwrap_or_default())]
-    At { line: usize, column: usize, field: Option<String>, what: String },
+    At {
+        line: usize,
+        column: usize,
+        field: Option<String>,
+        what: String,
+    },
     #[error("format {found} is newer than this program reads, {FORMAT}: use a newer version")]
     NewerFormat { found: u32 },
 }
@@ -59,8 +64,14 @@ struct FormatOnly {
 
 /// A design's text: the same bytes for the same design.
 pub fn to_text(design: &Design) -> String {
-    let config = ron::ser::PrettyConfig::new().indentor("  ").new_line("\n").struct_names(false);
-    let file = DesignFile { format: FORMAT, design: design.clone() };
+    let config = ron::ser::PrettyConfig::new()
+        .indentor("  ")
+        .new_line("\n")
+        .struct_names(false);
+    let file = DesignFile {
+        format: FORMAT,
+        design: design.clone(),
+    };
     let mut text = ron::ser::to_string_pretty(&file, config).expect("a design is plain data");
     text.push('\n');
     text
@@ -77,28 +88,44 @@ pub fn from_text(text: &str) -> Result<Design, ParseError> {
         return Err(ParseError::NewerFormat { found: format });
     }
     let mut deserializer = ron::Deserializer::from_str(text).map_err(|error| at(&error, None))?;
-    let file: DesignFile = serde_path_to_error::deserialize(&mut deserializer).map_err(|error| {
-        let field = error.path().to_string();
-        let field = (field != "." && !field.is_empty()).then_some(field);
-        at(&deserializer.span_error(error.into_inner()), field)
-    })?;
-    deserializer.end().map_err(|error| at(&deserializer.span_error(error), None))?;
+    let file: DesignFile =
+        serde_path_to_error::deserialize(&mut deserializer).map_err(|error| {
+            let field = error.path().to_string();
+            let field = (field != "." && !field.is_empty()).then_some(field);
+            at(&deserializer.span_error(error.into_inner()), field)
+        })?;
+    deserializer
+        .end()
+        .map_err(|error| at(&deserializer.span_error(error), None))?;
     Ok(file.design)
 }
 
 fn at(error: &ron::error::SpannedError, field: Option<String>) -> ParseError {
     // An error within a value is found where the value starts.
     let position = error.span.start;
-    ParseError::At { line: position.line, column: position.col, field, what: error.code.to_string() }
+    ParseError::At {
+        line: position.line,
+        column: position.col,
+        field,
+        what: error.code.to_string(),
+    }
 }
 
 /// Fingerprint of a design's content: FNV-1a, 64 bits, of its text. It tells
 /// versions of a sheet apart; it is no protection against forgery.
 pub fn fingerprint(design: &Design) -> String {
-    let hash = to_text(design).bytes().fold(0xcbf2_9ce4_8422_2325_u64, |hash, byte| {
-        (hash ^ u64::from(byte)).wrapping_mul(0x0100_0000_01b3)
-    });
-    format!("{:04x}-{:04x}-{:04x}-{:04x}", hash >> 48, hash >> 32 & 0xffff, hash >> 16 & 0xffff, hash & 0xffff)
+    let hash = to_text(design)
+        .bytes()
+        .fold(0xcbf2_9ce4_8422_2325_u64, |hash, byte| {
+            (hash ^ u64::from(byte)).wrapping_mul(0x0100_0000_01b3)
+        });
+    format!(
+        "{:04x}-{:04x}-{:04x}-{:04x}",
+        hash >> 48,
+        hash >> 32 & 0xffff,
+        hash >> 16 & 0xffff,
+        hash & 0xffff
+    )
 }
 
 /// Reads a design file.
@@ -107,7 +134,10 @@ pub fn fingerprint(design: &Design) -> String {
 /// [`StoreError`] says what is wrong with it.
 pub fn load(path: &Path) -> Result<Design, StoreError> {
     let text = read_text(path)?;
-    from_text(&text).map_err(|error| StoreError::Parse { path: path.to_owned(), error })
+    from_text(&text).map_err(|error| StoreError::Parse {
+        path: path.to_owned(),
+        error,
+    })
 }
 
 fn read_text(path: &Path) -> Result<String, StoreError> {
@@ -115,20 +145,28 @@ fn read_text(path: &Path) -> Result<String, StoreError> {
     let failed = |cause: io::Error| match cause.kind() {
         io::ErrorKind::NotFound => StoreError::Missing { path: named() },
         io::ErrorKind::IsADirectory => StoreError::Folder { path: named() },
-        _ => StoreError::Read { path: named(), cause },
+        _ => StoreError::Read {
+            path: named(),
+            cause,
+        },
     };
     let metadata = fs::metadata(path).map_err(failed)?;
     if metadata.is_dir() {
         return Err(StoreError::Folder { path: named() });
     }
-    let too_large = |bytes: u64| StoreError::TooLarge { path: named(), mebibytes: bytes >> 20 };
+    let too_large = |bytes: u64| StoreError::TooLarge {
+        path: named(),
+        mebibytes: bytes >> 20,
+    };
     if metadata.len() > LARGEST_BYTES {
         return Err(too_large(metadata.len()));
     }
     let mut bytes = Vec::new();
     // A pipe or a file that grows has no length to trust: read one byte more than allowed.
     let file = File::open(path).map_err(failed)?;
-    file.take(LARGEST_BYTES + 1).read_to_end(&mut bytes).map_err(failed)?;
+    file.take(LARGEST_BYTES + 1)
+        .read_to_end(&mut bytes)
+        .map_err(failed)?;
     if bytes.len() as u64 > LARGEST_BYTES {
         return Err(too_large(bytes.len() as u64));
     }
@@ -150,18 +188,27 @@ pub fn save(path: &Path, design: &Design) -> Result<(), StoreError> {
 /// # Errors
 /// [`StoreError::Write`]; the file that was there is still whole.
 pub fn write_text(path: &Path, text: &str) -> Result<(), StoreError> {
-    let failed = |cause: io::Error| StoreError::Write { path: path.to_owned(), cause };
+    let failed = |cause: io::Error| StoreError::Write {
+        path: path.to_owned(),
+        cause,
+    };
     if path.is_dir() {
-        return Err(StoreError::Folder { path: path.to_owned() });
+        return Err(StoreError::Folder {
+            path: path.to_owned(),
+        });
     }
     // A link to a file that is not there yet has no canonical path: its own target is used.
-    let target = fs::canonicalize(path).or_else(|_| fs::read_link(path).map(|link| beside(path, link)));
+    let target =
+        fs::canonicalize(path).or_else(|_| fs::read_link(path).map(|link| beside(path, link)));
     let target = target.unwrap_or_else(|_| path.to_owned());
     let folder = match target.parent() {
         Some(folder) if !folder.as_os_str().is_empty() => folder.to_owned(),
         _ => PathBuf::from("."),
     };
-    let name = target.file_name().map(|name| name.to_string_lossy().into_owned()).unwrap_or_default();
+    let name = target
+        .file_name()
+        .map(|name| name.to_string_lossy().into_owned())
+        .unwrap_or_default();
     let temporary = folder.join(format!(".{name}.{}.part", std::process::id()));
     let written = write_and_rename(&temporary, &target, text);
     if written.is_err() {
@@ -177,7 +224,10 @@ fn write_and_rename(temporary: &Path, target: &Path, text: &str) -> io::Result<(
     let mut file = File::create(temporary)?;
     if let Ok(metadata) = fs::metadata(target) {
         if metadata.permissions().readonly() {
-            return Err(io::Error::new(io::ErrorKind::PermissionDenied, "it is read-only"));
+            return Err(io::Error::new(
+                io::ErrorKind::PermissionDenied,
+                "it is read-only",
+            ));
         }
         file.set_permissions(metadata.permissions())?;
     }
@@ -205,7 +255,10 @@ fn flush_folder(folder: &Path) {
 /// Name and text of the ready designs, in order of their file names.
 pub fn presets() -> impl Iterator<Item = (&'static str, Design)> {
     PRESET_FILES.iter().map(|(name, text)| {
-        (*name, from_text(text).unwrap_or_else(|error| panic!("the ready design {name}: {error}")))
+        (
+            *name,
+            from_text(text).unwrap_or_else(|error| panic!("the ready design {name}: {error}")),
+        )
     })
 }
 
@@ -216,7 +269,9 @@ pub fn preset_names() -> impl Iterator<Item = &'static str> {
 
 /// One ready design by its file name.
 pub fn preset(name: &str) -> Option<Design> {
-    presets().find(|(known, _)| *known == name).map(|(_, design)| design)
+    presets()
+        .find(|(known, _)| *known == name)
+        .map(|(_, design)| design)
 }
 
 /// Modification time and length: whether a file changed on disk.
@@ -229,12 +284,19 @@ pub struct Stamp {
 /// The stamp of a file, if it is there.
 pub fn stamp(path: &Path) -> Option<Stamp> {
     let metadata = fs::metadata(path).ok()?;
-    Some(Stamp { modified: metadata.modified().ok(), bytes: metadata.len() })
+    Some(Stamp {
+        modified: metadata.modified().ok(),
+        bytes: metadata.len(),
+    })
 }
 
 /// The program's own folder for settings and the unsaved draft.
 pub fn settings_folder() -> Option<PathBuf> {
-    let from = |variable: &str| std::env::var_os(variable).map(PathBuf::from).filter(|path| path.is_absolute());
+    let from = |variable: &str| {
+        std::env::var_os(variable)
+            .map(PathBuf::from)
+            .filter(|path| path.is_absolute())
+    };
     let base = if cfg!(windows) {
         from("APPDATA")
     } else if cfg!(target_os = "macos") {
@@ -256,14 +318,36 @@ pub fn read_own<T: for<'de> Deserialize<'de>>(path: &Path) -> Option<T> {
 /// [`StoreError::Write`].
 pub fn write_own<T: Serialize>(path: &Path, value: &T) -> Result<(), StoreError> {
     if let Some(folder) = path.parent() {
-        fs::create_dir_all(folder).map_err(|cause| StoreError::Write { path: folder.to_owned(), cause })?;
+        fs::create_dir_all(folder).map_err(|cause| StoreError::Write {
+            path: folder.to_owned(),
+            cause,
+        })?;
     }
-    let text = ron::ser::to_string_pretty(value, ron::ser::PrettyConfig::default())
-        .map_err(|error| StoreError::Write { path: path.to_owned(), cause: io::Error::other(error) })?;
+    let text =
+        ron::ser::to_string_pretty(value, ron::ser::PrettyConfig::default()).map_err(|error| {
+            StoreError::Write {
+                path: path.to_owned(),
+                cause: io::Error::other(error),
+            }
+        })?;
     write_text(path, &text)
 }
 
 /// Removes a file of the program's own; that it is not there is fine.
 pub fn remove_own(path: &Path) {
     let _ = fs::remove_file(path);
+}
+
+/// Files of a folder of the program's own, by name.
+pub fn files_in(folder: &Path) -> Vec<PathBuf> {
+    let mut paths: Vec<_> = fs::read_dir(folder)
+        .map(|entries| {
+            entries
+                .filter_map(Result::ok)
+                .map(|entry| entry.path())
+                .collect()
+        })
+        .unwrap_or_default();
+    paths.sort();
+    paths
 }

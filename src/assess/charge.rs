@@ -40,15 +40,18 @@ pub fn charge_figures(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figu
     let bench = design.conditions.bench;
     let nominal = sealed_mass(design, fluid, volumes, bench)?;
     let tolerance = design.charge.tolerance.kilogram();
-    let mass = |kilogram: f64| Mass::from_kilogram(kilogram.max(0.0)).map_err(|_| Missing::NoCharge);
+    let mass =
+        |kilogram: f64| Mass::from_kilogram(kilogram.max(0.0)).map_err(|_| Missing::NoCharge);
     let dispensed = mass(nominal.kilogram() + design.bench.purge_loss.kilogram())?;
     let liquid = fluid.saturation(bench).map_err(Missing::Fluid);
     let dispensed_volume = liquid.clone().and_then(|at| {
-        Volume::from_cubic_metre(dispensed.kilogram() / at.liquid_kg_per_m3).map_err(|_| Missing::NoCharge)
+        Volume::from_cubic_metre(dispensed.kilogram() / at.liquid_kg_per_m3)
+            .map_err(|_| Missing::NoCharge)
     });
     let density = nominal.kilogram() / volumes.nominal.cubic_metre();
     let bench_fill = liquid.map(|at| {
-        ((density - at.vapour_kg_per_m3) / (at.liquid_kg_per_m3 - at.vapour_kg_per_m3)).clamp(0.0, 1.0)
+        ((density - at.vapour_kg_per_m3) / (at.liquid_kg_per_m3 - at.vapour_kg_per_m3))
+            .clamp(0.0, 1.0)
     });
     Ok(ChargeFigures {
         nominal,
@@ -62,7 +65,9 @@ pub fn charge_figures(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figu
 
 /// The corners as sealed units.
 pub fn corners(fluid: &Arc<Fluid>, charge: &ChargeFigures, volumes: &Volumes) -> Figure<Corners> {
-    let unit = |mass, volume| SealedUnit::new(Arc::clone(fluid), mass, volume).map_err(|_| Missing::NoCharge);
+    let unit = |mass, volume| {
+        SealedUnit::new(Arc::clone(fluid), mass, volume).map_err(|_| Missing::NoCharge)
+    };
     Ok(Corners {
         nominal: unit(charge.nominal, volumes.nominal)?,
         heaviest: unit(charge.greatest, volumes.least)?,
@@ -70,9 +75,17 @@ pub fn corners(fluid: &Arc<Fluid>, charge: &ChargeFigures, volumes: &Volumes) ->
     })
 }
 
-fn sealed_mass(design: &Design, fluid: &Fluid, volumes: &Volumes, bench: Temperature) -> Figure<Mass> {
+fn sealed_mass(
+    design: &Design,
+    fluid: &Fluid,
+    volumes: &Volumes,
+    bench: Temperature,
+) -> Figure<Mass> {
     let checked = |kilogram: f64| {
-        Mass::from_kilogram(kilogram).ok().filter(|m| m.kilogram() > 0.0).ok_or(Missing::NoCharge)
+        Mass::from_kilogram(kilogram)
+            .ok()
+            .filter(|m| m.kilogram() > 0.0)
+            .ok_or(Missing::NoCharge)
     };
     match &design.charge.aim {
         ChargeAim::Mass { mass } => checked(mass.kilogram()),
@@ -80,7 +93,11 @@ fn sealed_mass(design: &Design, fluid: &Fluid, volumes: &Volumes, bench: Tempera
             let at = fluid.saturation(bench)?;
             checked(volume.cubic_metre() * at.liquid_kg_per_m3 - design.bench.purge_loss.kilogram())
         }
-        ChargeAim::FillRatio { ratio, temperature, of } => {
+        ChargeAim::FillRatio {
+            ratio,
+            temperature,
+            of,
+        } => {
             let at = fluid.saturation(temperature.unwrap_or(bench))?;
             let inside = volumes.nominal.cubic_metre();
             let named = match of {
@@ -95,7 +112,9 @@ fn sealed_mass(design: &Design, fluid: &Fluid, volumes: &Volumes, bench: Tempera
             };
             let liquid = ratio.fraction() * named;
             if liquid > inside {
-                return Err(Missing::Overfull { share: liquid / inside });
+                return Err(Missing::Overfull {
+                    share: liquid / inside,
+                });
             }
             checked(at.liquid_kg_per_m3 * liquid + at.vapour_kg_per_m3 * (inside - liquid))
         }

@@ -64,7 +64,8 @@ pub fn span(design: &Design) -> (Temperature, Temperature) {
     let low = conditions.coldest.min(conditions.hottest).kelvin();
     let high = conditions.hottest.max(conditions.coldest).kelvin();
     let pad = (0.125 * (high - low)).max(10.0);
-    let kelvin = |t: f64| Temperature::from_kelvin(t.max(1.0)).expect("near the design's temperatures");
+    let kelvin =
+        |t: f64| Temperature::from_kelvin(t.max(1.0)).expect("near the design's temperatures");
     (kelvin(low - pad), kelvin(high + pad))
 }
 
@@ -99,14 +100,23 @@ fn limits(fluid: &Fluid, span: (Temperature, Temperature), walls: &Walls<'_>) ->
             LimitPoint {
                 temperature,
                 saturation: fluid.saturation_pressure(temperature).ok(),
-                allowable: weakest.as_ref().map(|w| walls.absolute(w.allowable.pressure)),
-                burst: weakest.and_then(|w| w.burst.ok()).map(|burst| walls.absolute(burst)),
+                allowable: weakest
+                    .as_ref()
+                    .map(|w| walls.absolute(w.allowable.pressure)),
+                burst: weakest
+                    .and_then(|w| w.burst.ok())
+                    .map(|burst| walls.absolute(burst)),
             }
         })
         .collect()
 }
 
-fn charge_map(fluid: &Fluid, volume: Volume, span: (Temperature, Temperature), walls: &Walls<'_>) -> ChargeMap {
+fn charge_map(
+    fluid: &Fluid,
+    volume: Volume,
+    span: (Temperature, Temperature),
+    walls: &Walls<'_>,
+) -> ChargeMap {
     let mut map = ChargeMap::default();
     let (low, high) = fluid.saturation_range();
     let freezing = fluid.freezing_point();
@@ -122,7 +132,8 @@ fn charge_map(fluid: &Fluid, volume: Volume, span: (Temperature, Temperature), w
         for temperature in temperatures((from, to), []) {
             let point = curve.at(temperature.kelvin());
             map.dry_out.extend(at(point.vapour_kg_per_m3, temperature));
-            map.liquid_full.extend(at(point.liquid_kg_per_m3, temperature));
+            map.liquid_full
+                .extend(at(point.liquid_kg_per_m3, temperature));
         }
     }
     if let Ok(t) = Temperature::from_kelvin(critical.temperature_k)
@@ -153,7 +164,9 @@ fn allowable_line(
     let mut line = Vec::new();
     let curve = fluid.curve()?;
     let gap = |t: f64| -> f64 {
-        let Ok(t) = Temperature::from_kelvin(t) else { return f64::NAN };
+        let Ok(t) = Temperature::from_kelvin(t) else {
+            return f64::NAN;
+        };
         match (fluid.saturation_pressure(t), walls.allowable_pressure(t)) {
             (Ok(p), Ok(limit)) => p.pascal() - limit.pascal(),
             _ => f64::NAN,
@@ -195,11 +208,15 @@ fn on_contour(
     temperature: Temperature,
     walls: &Walls<'_>,
 ) -> Figure<Option<MapPoint>> {
-    let Ok(limit) = walls.allowable_pressure(temperature) else { return Ok(None) };
+    let Ok(limit) = walls.allowable_pressure(temperature) else {
+        return Ok(None);
+    };
     let density = fluid.density_at(limit, temperature)?;
     Ok(density.and_then(|density| {
         let kilogram = density.kilogram_per_cubic_metre() * volume.cubic_metre();
-        Mass::from_kilogram(kilogram).ok().map(|mass| MapPoint { mass, temperature })
+        Mass::from_kilogram(kilogram)
+            .ok()
+            .map(|mass| MapPoint { mass, temperature })
     }))
 }
 
@@ -211,9 +228,15 @@ fn temperatures(
     let (low, high) = (low.kelvin(), high.kelvin());
     let mut all: Vec<f64> = (0..MAP_POINTS)
         .map(|i| low + (high - low) * i as f64 / (MAP_POINTS - 1) as f64)
-        .chain(knots.into_iter().map(|t| t.kelvin()).filter(|t| *t > low && *t < high))
+        .chain(
+            knots
+                .into_iter()
+                .map(|t| t.kelvin())
+                .filter(|t| *t > low && *t < high),
+        )
         .collect();
     all.sort_by(f64::total_cmp);
     all.dedup();
-    all.into_iter().filter_map(|t| Temperature::from_kelvin(t).ok())
+    all.into_iter()
+        .filter_map(|t| Temperature::from_kelvin(t).ok())
 }

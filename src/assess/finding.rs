@@ -57,38 +57,130 @@ pub enum FindingKind {
     Conditions(ConditionFault),
     /// A figure that the verdict needs is not known.
     NotKnown(Missing),
-    OverAllowable { pressure: Pressure, allowable: Pressure, temperature: Temperature, part: String },
-    LiquidFull { at: Temperature, hottest: Temperature },
-    LiquidFullNear { at: Temperature, hottest: Temperature, needed: TemperatureDifference },
-    Ullage { left: f64, needed: f64, temperature: Temperature },
+    OverAllowable {
+        pressure: Pressure,
+        allowable: Pressure,
+        temperature: Temperature,
+        part: String,
+    },
+    LiquidFull {
+        at: Temperature,
+        hottest: Temperature,
+    },
+    LiquidFullNear {
+        at: Temperature,
+        hottest: Temperature,
+        needed: TemperatureDifference,
+    },
+    Ullage {
+        left: f64,
+        needed: f64,
+        temperature: Temperature,
+    },
     /// Above the critical temperature ullage means nothing; the pressure governs.
-    AboveCritical { hottest: Temperature, critical: Temperature },
-    Dry { at: Temperature, working_high: Temperature },
-    DryAboveWorking { at: Temperature, hottest: Temperature },
-    Freezes { freezing: Temperature, coldest: Temperature },
-    FrozenInWork { freezing: Temperature, working_low: Temperature },
-    FrozenVolume { greatest: Mass, allowed: Mass },
-    EmptyWindow { lower: Requirement, upper: Requirement, lower_mass: Mass, upper_mass: Mass },
+    AboveCritical {
+        hottest: Temperature,
+        critical: Temperature,
+    },
+    Dry {
+        at: Temperature,
+        working_high: Temperature,
+    },
+    DryAboveWorking {
+        at: Temperature,
+        hottest: Temperature,
+    },
+    Freezes {
+        freezing: Temperature,
+        coldest: Temperature,
+    },
+    FrozenInWork {
+        freezing: Temperature,
+        working_low: Temperature,
+    },
+    FrozenVolume {
+        greatest: Mass,
+        allowed: Mass,
+    },
+    EmptyWindow {
+        lower: Requirement,
+        upper: Requirement,
+        lower_mass: Mass,
+        upper_mass: Mass,
+    },
     /// Guard bands on both sides would leave no scale reading.
-    BalanceTooCoarse { balance: Mass, tolerance: Mass },
-    Incompatible { material: String, reason: String, source: String },
-    PairCaution { material: String, reason: String, source: String },
-    PairNotKnown { material: String },
-    Flammable { ppm: f64, of_limit: f64, source: String },
-    BurnsWithDifficulty { of_limit: f64, source: String },
-    Toxic { ppm: f64, limit_ppm: Option<f64>, dangerous_ppm: Option<f64>, source: String },
-    Corrosive { source: String },
-    Asphyxiant { oxygen: f64 },
+    BalanceTooCoarse {
+        balance: Mass,
+        tolerance: Mass,
+    },
+    Incompatible {
+        material: String,
+        reason: String,
+        source: String,
+    },
+    PairCaution {
+        material: String,
+        reason: String,
+        source: String,
+    },
+    PairNotKnown {
+        material: String,
+    },
+    Flammable {
+        ppm: f64,
+        of_limit: f64,
+        source: String,
+    },
+    BurnsWithDifficulty {
+        of_limit: f64,
+        source: String,
+    },
+    Toxic {
+        ppm: f64,
+        limit_ppm: Option<f64>,
+        dangerous_ppm: Option<f64>,
+        source: String,
+    },
+    Corrosive {
+        source: String,
+    },
+    Asphyxiant {
+        oxygen: f64,
+    },
     NoHazardLimits,
-    BrittleGlass { part: String },
-    NotForConsumers { reason: String, source: String },
-    Unstable { kind: StabilityKind, note: String, source: String },
-    TooHotForFluid { stable: Temperature, hottest: Temperature, source: String },
-    FactorsBelowDefault { on_burst: f64, on_yield: f64 },
-    Rupture { energy: Energy },
-    RuptureNotComputed { reason: String },
-    ModelUncertainty { percent: f64 },
-    FromMemory { what: String },
+    BrittleGlass {
+        part: String,
+    },
+    NotForConsumers {
+        reason: String,
+        source: String,
+    },
+    Unstable {
+        kind: StabilityKind,
+        note: String,
+        source: String,
+    },
+    TooHotForFluid {
+        stable: Temperature,
+        hottest: Temperature,
+        source: String,
+    },
+    FactorsBelowDefault {
+        on_burst: f64,
+        on_yield: f64,
+    },
+    Rupture {
+        energy: Energy,
+    },
+    RuptureNotComputed {
+        reason: String,
+    },
+    ModelUncertainty {
+        percent: f64,
+    },
+    FromMemory {
+        what: String,
+    },
 }
 
 /// The verdict in a word.

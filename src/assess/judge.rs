@@ -16,7 +16,12 @@ const LEAST_OXYGEN: f64 = 0.195;
 
 /// Every finding, worst first; within a severity in the order of the questions.
 pub fn findings(design: &Design, library: &Library, a: &Assessment) -> Vec<Finding> {
-    let mut judge = Judge { design, library, a, found: Vec::new() };
+    let mut judge = Judge {
+        design,
+        library,
+        a,
+        found: Vec::new(),
+    };
     judge.contradictions();
     judge.not_known();
     judge.pressure();
@@ -45,22 +50,46 @@ struct Judge<'a> {
 
 impl Judge<'_> {
     fn add(&mut self, severity: Severity, section: Section, kind: FindingKind) {
-        self.found.push(Finding { severity, section, kind, share: None, remedy: None });
+        self.found.push(Finding {
+            severity,
+            section,
+            kind,
+            share: None,
+            remedy: None,
+        });
     }
 
     fn add_share(&mut self, severity: Severity, section: Section, kind: FindingKind, share: f64) {
         let remedy = (severity == Severity::Error && section == Section::Charge)
-            .then(|| self.a.nearest_charge(self.design.charge.tolerance).map(Remedy::SetCharge))
+            .then(|| {
+                self.a
+                    .nearest_charge(self.design.charge.tolerance)
+                    .map(Remedy::SetCharge)
+            })
             .flatten();
-        self.found.push(Finding { severity, section, kind, share: Some(share), remedy });
+        self.found.push(Finding {
+            severity,
+            section,
+            kind,
+            share: Some(share),
+            remedy,
+        });
     }
 
     fn contradictions(&mut self) {
         for fault in self.design.chamber.faults(&self.library.materials) {
-            self.add(Severity::Error, Section::Chamber, FindingKind::Chamber(fault));
+            self.add(
+                Severity::Error,
+                Section::Chamber,
+                FindingKind::Chamber(fault),
+            );
         }
         for fault in self.design.conditions.faults() {
-            self.add(Severity::Error, Section::Conditions, FindingKind::Conditions(fault));
+            self.add(
+                Severity::Error,
+                Section::Conditions,
+                FindingKind::Conditions(fault),
+            );
         }
     }
 
@@ -92,12 +121,18 @@ impl Judge<'_> {
                 Missing::Chamber(_)
                     | Missing::Conditions
                     | Missing::Strength(crate::chamber::StrengthUnknown {
-                        reason: StrengthGap::NoSize | StrengthGap::UnknownMaterial | StrengthGap::NoWall,
+                        reason: StrengthGap::NoSize
+                            | StrengthGap::UnknownMaterial
+                            | StrengthGap::NoWall,
                         part: Some(_),
                         ..
                     })
             );
-            let already = told && self.found.iter().any(|finding| finding.severity == Severity::Error);
+            let already = told
+                && self
+                    .found
+                    .iter()
+                    .any(|finding| finding.severity == Severity::Error);
             if already {
                 continue;
             }
@@ -107,11 +142,14 @@ impl Judge<'_> {
 
     fn pressure(&mut self) {
         let Ok(case) = &self.a.worst else { return };
-        let (Ok(weakest), Ok(share)) = (&case.weakest, &case.of_allowable) else { return };
+        let (Ok(weakest), Ok(share)) = (&case.weakest, &case.of_allowable) else {
+            return;
+        };
         if *share > 1.0 {
             let outside = self.design.conditions.least_outside.pascal();
-            let allowable = crate::units::Pressure::from_pascal(weakest.allowable.pressure.pascal() + outside)
-                .unwrap_or(weakest.allowable.pressure);
+            let allowable =
+                crate::units::Pressure::from_pascal(weakest.allowable.pressure.pascal() + outside)
+                    .unwrap_or(weakest.allowable.pressure);
             let kind = FindingKind::OverAllowable {
                 pressure: case.pressure,
                 allowable,
@@ -135,7 +173,9 @@ impl Judge<'_> {
     }
 
     fn liquid_full(&mut self) {
-        let (Ok(corners), Ok(full_at)) = (&self.a.corners, &self.a.heaviest_full_at) else { return };
+        let (Ok(corners), Ok(full_at)) = (&self.a.corners, &self.a.heaviest_full_at) else {
+            return;
+        };
         let hottest = self.design.conditions.hottest;
         let fluid = &self.a.fluid;
         let critical = fluid.critical();
@@ -156,8 +196,17 @@ impl Judge<'_> {
             }
             let left = (at - hottest).kelvin();
             if left < needed.kelvin() {
-                let kind = FindingKind::LiquidFullNear { at, hottest, needed };
-                self.add_share(Severity::Error, Section::Charge, kind, needed.kelvin() / left);
+                let kind = FindingKind::LiquidFullNear {
+                    at,
+                    hottest,
+                    needed,
+                };
+                self.add_share(
+                    Severity::Error,
+                    Section::Charge,
+                    kind,
+                    needed.kelvin() / left,
+                );
             }
         }
         if let Ok(state) = state
@@ -166,7 +215,11 @@ impl Judge<'_> {
         {
             let (left, needed) = (1.0 - liquid, self.design.demands.ullage.fraction());
             if left < needed {
-                let kind = FindingKind::Ullage { left, needed, temperature: hottest };
+                let kind = FindingKind::Ullage {
+                    left,
+                    needed,
+                    temperature: hottest,
+                };
                 self.add_share(Severity::Error, Section::Charge, kind, needed / left);
             }
         }
@@ -176,7 +229,9 @@ impl Judge<'_> {
         if self.design.duty == Duty::PlainVessel {
             return;
         }
-        let (Ok(dry_at), true) = (&self.a.lightest_dry_at, self.a.charge.is_ok()) else { return };
+        let (Ok(dry_at), true) = (&self.a.lightest_dry_at, self.a.charge.is_ok()) else {
+            return;
+        };
         let Some(at) = *dry_at else { return };
         let conditions = &self.design.conditions;
         let working_high = conditions.working_high;
@@ -184,7 +239,10 @@ impl Judge<'_> {
             let kind = FindingKind::Dry { at, working_high };
             self.add_share(Severity::Error, Section::Charge, kind, 1.0);
         } else if at < conditions.hottest {
-            let kind = FindingKind::DryAboveWorking { at, hottest: conditions.hottest };
+            let kind = FindingKind::DryAboveWorking {
+                at,
+                hottest: conditions.hottest,
+            };
             self.add(Severity::Note, Section::Charge, kind);
         }
     }
@@ -196,18 +254,32 @@ impl Judge<'_> {
             return;
         }
         if conditions.working_low < freezing {
-            let kind = FindingKind::FrozenInWork { freezing, working_low: conditions.working_low };
+            let kind = FindingKind::FrozenInWork {
+                freezing,
+                working_low: conditions.working_low,
+            };
             self.add(Severity::Error, Section::Conditions, kind);
         } else {
-            let kind = FindingKind::Freezes { freezing, coldest: conditions.coldest };
+            let kind = FindingKind::Freezes {
+                freezing,
+                coldest: conditions.coldest,
+            };
             self.add(Severity::Warning, Section::Conditions, kind);
         }
-        let (Ok(charge), Ok(window)) = (&self.a.charge, &self.a.window) else { return };
-        let frozen = window.bounds.iter().find(|bound| bound.requirement == Requirement::FrozenVolume);
+        let (Ok(charge), Ok(window)) = (&self.a.charge, &self.a.window) else {
+            return;
+        };
+        let frozen = window
+            .bounds
+            .iter()
+            .find(|bound| bound.requirement == Requirement::FrozenVolume);
         if let Some(bound) = frozen
             && charge.greatest > bound.mass
         {
-            let kind = FindingKind::FrozenVolume { greatest: charge.greatest, allowed: bound.mass };
+            let kind = FindingKind::FrozenVolume {
+                greatest: charge.greatest,
+                allowed: bound.mass,
+            };
             let share = charge.greatest.kilogram() / bound.mass.kilogram();
             self.add_share(Severity::Error, Section::Charge, kind, share);
         }
@@ -246,17 +318,29 @@ impl Judge<'_> {
     fn pair(&mut self) {
         let table = CompatibilityTable::built_in();
         let mut seen: Vec<&str> = Vec::new();
-        for wall in self.design.chamber.parts.iter().filter_map(|part| part.wall.as_ref()) {
+        for wall in self
+            .design
+            .chamber
+            .parts
+            .iter()
+            .filter_map(|part| part.wall.as_ref())
+        {
             let id = wall.material.as_str();
             if seen.contains(&id) {
                 continue;
             }
             seen.push(id);
-            let Some(material) = self.library.materials.get(id) else { continue };
+            let Some(material) = self.library.materials.get(id) else {
+                continue;
+            };
             let material = material.name.clone();
             match table.of(self.a.fluid.id(), id) {
                 None => {
-                    self.add(Severity::Warning, Section::Fluid, FindingKind::PairNotKnown { material });
+                    self.add(
+                        Severity::Warning,
+                        Section::Fluid,
+                        FindingKind::PairNotKnown { material },
+                    );
                 }
                 Some(pair) => {
                     let (reason, source) = (pair.reason.clone(), pair.source.to_string());
@@ -265,12 +349,20 @@ impl Judge<'_> {
                         PairVerdict::Caution => self.add(
                             Severity::Warning,
                             Section::Fluid,
-                            FindingKind::PairCaution { material, reason, source },
+                            FindingKind::PairCaution {
+                                material,
+                                reason,
+                                source,
+                            },
                         ),
                         PairVerdict::Never => self.add(
                             Severity::Error,
                             Section::Fluid,
-                            FindingKind::Incompatible { material, reason, source },
+                            FindingKind::Incompatible {
+                                material,
+                                reason,
+                                source,
+                            },
                         ),
                     }
                 }
@@ -317,13 +409,19 @@ impl Judge<'_> {
     fn fire(&mut self) {
         let safety = self.a.fluid.safety();
         let Ok(release) = &self.a.release else { return };
-        let (Some(of_limit), Some(limit)) = (release.of_lower_flammable_limit, &safety.lower_flammable_limit)
-        else {
+        let (Some(of_limit), Some(limit)) = (
+            release.of_lower_flammable_limit,
+            &safety.lower_flammable_limit,
+        ) else {
             return;
         };
         let source = limit.source.to_string();
         if safety.is_flammable() {
-            let kind = FindingKind::Flammable { ppm: release.ppm, of_limit, source };
+            let kind = FindingKind::Flammable {
+                ppm: release.ppm,
+                of_limit,
+                source,
+            };
             self.add_share(Severity::Warning, Section::Room, kind, of_limit);
         } else if safety.burns_with_difficulty() {
             let kind = FindingKind::BurnsWithDifficulty { of_limit, source };
@@ -336,7 +434,9 @@ impl Judge<'_> {
         let Ok(release) = &self.a.release else { return };
         let limit = safety.exposure_limit_ppm.as_ref();
         let dangerous = safety.immediately_dangerous_ppm.as_ref();
-        let source = limit.or(dangerous).map_or_else(String::new, |limit| limit.source.to_string());
+        let source = limit
+            .or(dangerous)
+            .map_or_else(String::new, |limit| limit.source.to_string());
         let above = release.of_exposure_limit.is_some_and(|share| share > 1.0);
         if safety.is_toxic() || above {
             let kind = FindingKind::Toxic {
@@ -345,7 +445,9 @@ impl Judge<'_> {
                 dangerous_ppm: dangerous.map(|limit| limit.value),
                 source,
             };
-            let share = release.of_immediately_dangerous.or(release.of_exposure_limit);
+            let share = release
+                .of_immediately_dangerous
+                .or(release.of_exposure_limit);
             match share {
                 Some(share) => self.add_share(Severity::Warning, Section::Room, kind, share),
                 None => self.add(Severity::Warning, Section::Room, kind),
@@ -353,16 +455,32 @@ impl Judge<'_> {
         }
         if safety.is_corrosive() {
             let source = safety.statements.source.to_string();
-            self.add(Severity::Warning, Section::Fluid, FindingKind::Corrosive { source });
+            self.add(
+                Severity::Warning,
+                Section::Fluid,
+                FindingKind::Corrosive { source },
+            );
         }
         if release.oxygen < LEAST_OXYGEN {
-            let kind = FindingKind::Asphyxiant { oxygen: release.oxygen };
-            self.add_share(Severity::Warning, Section::Room, kind, LEAST_OXYGEN / release.oxygen);
+            let kind = FindingKind::Asphyxiant {
+                oxygen: release.oxygen,
+            };
+            self.add_share(
+                Severity::Warning,
+                Section::Room,
+                kind,
+                LEAST_OXYGEN / release.oxygen,
+            );
         } else if !self.harmless_on_release() {
-            let kind = FindingKind::Asphyxiant { oxygen: release.oxygen };
+            let kind = FindingKind::Asphyxiant {
+                oxygen: release.oxygen,
+            };
             self.add(Severity::Note, Section::Room, kind);
         }
-        if limit.is_none() && dangerous.is_none() && safety.statements.value.is_empty() && self.a.fluid.id() != "water"
+        if limit.is_none()
+            && dangerous.is_none()
+            && safety.statements.value.is_empty()
+            && self.a.fluid.id() != "water"
         {
             self.add(Severity::Note, Section::Fluid, FindingKind::NoHazardLimits);
         }
@@ -370,7 +488,10 @@ impl Judge<'_> {
 
     /// Vapour too thin at room temperature to push out a thousandth of the air.
     fn harmless_on_release(&self) -> bool {
-        self.a.release.as_ref().is_ok_and(|release| release.ppm < 1_000.0 || release.capped)
+        self.a
+            .release
+            .as_ref()
+            .is_ok_and(|release| release.ppm < 1_000.0 || release.capped)
     }
 
     fn glass(&mut self) {
@@ -380,17 +501,27 @@ impl Judge<'_> {
             matches!(material.kind, MaterialKind::Glass(_)).then(|| part.name.clone())
         });
         if let Some(part) = glass.into_iter().next() {
-            self.add(Severity::Warning, Section::Chamber, FindingKind::BrittleGlass { part });
+            self.add(
+                Severity::Warning,
+                Section::Chamber,
+                FindingKind::BrittleGlass { part },
+            );
         }
     }
 
     fn rupture(&mut self) {
         match &self.a.rupture {
             Ok(Ok(energy)) if energy.joule() > 0.0 => {
-                self.add(Severity::Note, Section::Chamber, FindingKind::Rupture { energy: *energy });
+                self.add(
+                    Severity::Note,
+                    Section::Chamber,
+                    FindingKind::Rupture { energy: *energy },
+                );
             }
             Ok(Err(error)) => {
-                let kind = FindingKind::RuptureNotComputed { reason: error.to_string() };
+                let kind = FindingKind::RuptureNotComputed {
+                    reason: error.to_string(),
+                };
                 self.add(Severity::Warning, Section::Chamber, kind);
             }
             _ => {}
@@ -400,27 +531,53 @@ impl Judge<'_> {
     fn provenance(&mut self) {
         if let Model::Correlated(model) = self.a.fluid.model() {
             let percent = 100.0 * model.pressure_uncertainty();
-            self.add(Severity::Note, Section::Fluid, FindingKind::ModelUncertainty { percent });
+            self.add(
+                Severity::Note,
+                Section::Fluid,
+                FindingKind::ModelUncertainty { percent },
+            );
         }
         let mut from_memory: Vec<String> = Vec::new();
         if let Ok(case) = &self.a.worst
             && let Ok(weakest) = &case.weakest
-            && self.a.envelope.sources(weakest.part, weakest.allowable.basis).iter().any(|s| !s.is_confirmed())
+            && self
+                .a
+                .envelope
+                .sources(weakest.part, weakest.allowable.basis)
+                .iter()
+                .any(|s| !s.is_confirmed())
         {
             from_memory.push(format!("strength of {}", weakest.name));
         }
         let safety = self.a.fluid.safety();
         for (what, confirmed) in [
-            ("lower flammable limit", safety.lower_flammable_limit.as_ref().map(|s| s.source.is_confirmed())),
-            ("exposure limit", safety.exposure_limit_ppm.as_ref().map(|s| s.source.is_confirmed())),
-            ("hazard statements", Some(safety.statements.source.is_confirmed())),
+            (
+                "lower flammable limit",
+                safety
+                    .lower_flammable_limit
+                    .as_ref()
+                    .map(|s| s.source.is_confirmed()),
+            ),
+            (
+                "exposure limit",
+                safety
+                    .exposure_limit_ppm
+                    .as_ref()
+                    .map(|s| s.source.is_confirmed()),
+            ),
+            (
+                "hazard statements",
+                Some(safety.statements.source.is_confirmed()),
+            ),
         ] {
             if confirmed == Some(false) {
                 from_memory.push(what.to_owned());
             }
         }
         if !from_memory.is_empty() {
-            let kind = FindingKind::FromMemory { what: from_memory.join(", ") };
+            let kind = FindingKind::FromMemory {
+                what: from_memory.join(", "),
+            };
             self.add(Severity::Note, Section::Fluid, kind);
         }
     }

@@ -36,7 +36,10 @@ pub struct Library {
 impl Library {
     /// The fluids and materials that come with the program.
     pub fn built_in() -> Self {
-        Self { fluids: Catalog::built_in(), materials: Materials::built_in() }
+        Self {
+            fluids: Catalog::built_in(),
+            materials: Materials::built_in(),
+        }
     }
 }
 
@@ -100,34 +103,63 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         least_outside: design.conditions.least_outside,
         knots: envelope.knots(),
     };
-    let charge = volumes.as_ref().map_err(Clone::clone).and_then(|v| charge::charge_figures(design, &fluid, v));
+    let charge = volumes
+        .as_ref()
+        .map_err(Clone::clone)
+        .and_then(|v| charge::charge_figures(design, &fluid, v));
     let corners = match (&charge, &volumes) {
         (Ok(charge), Ok(volumes)) => charge::corners(&fluid, charge, volumes),
         (Err(missing), _) | (_, Err(missing)) => Err(missing.clone()),
     };
     let with = |missing: &Missing| missing.clone();
-    let events = corners.as_ref().map_err(with).and_then(|c| events(c, &walls));
-    let heaviest_full_at = corners.as_ref().map_err(with).and_then(|c| side_of(&c.heaviest, DomeSide::Liquid));
-    let lightest_dry_at = corners.as_ref().map_err(with).and_then(|c| match &c.lightest {
-        Some(unit) => side_of(unit, DomeSide::Vapour),
-        // A charge that may be nothing is dry at once.
-        None => Ok(Some(design.conditions.coldest)),
-    });
-    let worst = corners.as_ref().map_err(with).and_then(|c| worst::worst_case(design, c, &walls));
+    let events = corners
+        .as_ref()
+        .map_err(with)
+        .and_then(|c| events(c, &walls));
+    let heaviest_full_at = corners
+        .as_ref()
+        .map_err(with)
+        .and_then(|c| side_of(&c.heaviest, DomeSide::Liquid));
+    let lightest_dry_at = corners
+        .as_ref()
+        .map_err(with)
+        .and_then(|c| match &c.lightest {
+            Some(unit) => side_of(unit, DomeSide::Vapour),
+            // A charge that may be nothing is dry at once.
+            None => Ok(Some(design.conditions.coldest)),
+        });
+    let worst = corners
+        .as_ref()
+        .map_err(with)
+        .and_then(|c| worst::worst_case(design, c, &walls));
     let walls_known = match &worst {
-        Ok(case) => case.weakest.as_ref().map(|_| walls.clone()).map_err(|e| Missing::Strength(e.clone())),
+        Ok(case) => case
+            .weakest
+            .as_ref()
+            .map(|_| walls.clone())
+            .map_err(|e| Missing::Strength(e.clone())),
         Err(missing) => Err(missing.clone()),
     };
-    let window = volumes.as_ref().map_err(with).and_then(|v| window::window(design, &fluid, v, &walls_known));
+    let window = volumes
+        .as_ref()
+        .map_err(with)
+        .and_then(|v| window::window(design, &fluid, v, &walls_known));
     let charts = corners.as_ref().map_err(with).map(|c| {
-        let kinks: Vec<Temperature> = events.iter().flatten().map(|event| event.temperature).collect();
+        let kinks: Vec<Temperature> = events
+            .iter()
+            .flatten()
+            .map(|event| event.temperature)
+            .collect();
         chart::charts(&c.nominal, chart::span(design), &kinks, &walls)
     });
     let release = charge
         .as_ref()
         .map_err(with)
         .and_then(|c| release(&fluid, c.greatest, &design.room).ok_or(Missing::NoRoom));
-    let rupture = corners.as_ref().map_err(with).map(|c| rupture_energy(&c.heaviest, design.conditions.hottest));
+    let rupture = corners
+        .as_ref()
+        .map_err(with)
+        .map(|c| rupture_energy(&c.heaviest, design.conditions.hottest));
     let mut assessment = Assessment {
         fluid,
         volumes,
@@ -154,7 +186,11 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
 impl Assessment {
     /// Allowable and burst pressure of the weakest part at a temperature, absolute.
     pub fn limits_at(&self, temperature: Temperature) -> Option<(Pressure, Option<Pressure>)> {
-        let walls = Walls { envelope: &self.envelope, least_outside: self.least_outside, knots: Vec::new() };
+        let walls = Walls {
+            envelope: &self.envelope,
+            least_outside: self.least_outside,
+            knots: Vec::new(),
+        };
         let weakest = self.envelope.weakest(temperature).ok()?;
         let burst = weakest.burst.ok().map(|burst| walls.absolute(burst));
         Some((walls.absolute(weakest.allowable.pressure), burst))
@@ -177,20 +213,29 @@ fn side_of(unit: &crate::sealed::SealedUnit, side: DomeSide) -> Figure<Option<Te
 fn events(corners: &Corners, walls: &Walls<'_>) -> Figure<Vec<Event>> {
     let unit = &corners.nominal;
     let fluid = unit.fluid();
-    let mut events = vec![Event { kind: EventKind::Freezing, temperature: fluid.freezing_point() }];
+    let mut events = vec![Event {
+        kind: EventKind::Freezing,
+        temperature: fluid.freezing_point(),
+    }];
     for crossing in unit.crossings()? {
         let kind = match crossing.side {
             DomeSide::Vapour => EventKind::DryOut,
             DomeSide::Liquid => EventKind::LiquidFull,
             DomeSide::Critical => EventKind::Critical,
         };
-        events.push(Event { kind, temperature: crossing.temperature });
+        events.push(Event {
+            kind,
+            temperature: crossing.temperature,
+        });
     }
     let (low, high) = fluid.range();
     let limit = |t: Temperature| walls.allowable_pressure(t).ok();
     let between = (low.max(fluid.freezing_point()), high);
     if let Some(temperature) = unit.meets(limit, between, &walls.knots)?.first() {
-        events.push(Event { kind: EventKind::AllowableReached, temperature: *temperature });
+        events.push(Event {
+            kind: EventKind::AllowableReached,
+            temperature: *temperature,
+        });
     }
     events.sort_by(|a, b| a.temperature.kelvin().total_cmp(&b.temperature.kelvin()));
     Ok(events)

@@ -65,13 +65,18 @@ impl Window {
         let (low, high) = self.ends()?;
         let low = careful_up(low.kilogram() + tolerance.kilogram(), 4);
         let high = careful_down(high.kilogram() - tolerance.kilogram(), 4);
-        (low <= high).then(|| Mass::from_kilogram(nominal.kilogram().clamp(low, high)).ok()).flatten()
+        (low <= high)
+            .then(|| Mass::from_kilogram(nominal.kilogram().clamp(low, high)).ok())
+            .flatten()
     }
 
     /// Least and greatest mass, where both ends are known.
     pub fn ends(&self) -> Option<(Mass, Mass)> {
         let high = self.upper.as_ref()?.mass;
-        let low = self.lower.as_ref().map_or_else(|| Mass::from_kilogram(0.0).ok(), |b| Some(b.mass))?;
+        let low = self
+            .lower
+            .as_ref()
+            .map_or_else(|| Mass::from_kilogram(0.0).ok(), |b| Some(b.mass))?;
         Some((low, high))
     }
 }
@@ -83,7 +88,12 @@ const FROZEN_SHARE: f64 = 0.95;
 ///
 /// # Errors
 /// The first figure a bound needs and does not have.
-pub fn window(design: &Design, fluid: &Fluid, volumes: &Volumes, walls: &Figure<Walls<'_>>) -> Figure<Window> {
+pub fn window(
+    design: &Design,
+    fluid: &Fluid,
+    volumes: &Volumes,
+    walls: &Figure<Walls<'_>>,
+) -> Figure<Window> {
     let mut bounds = Vec::new();
     if let Some(bound) = liquid_when_hot(design, fluid, volumes)? {
         bounds.push(bound);
@@ -95,14 +105,22 @@ pub fn window(design: &Design, fluid: &Fluid, volumes: &Volumes, walls: &Figure<
         bounds.extend(allowable(design, fluid, volumes, walls)?);
     }
     let end = |side: Side, better: fn(f64, f64) -> bool| {
-        bounds.iter().filter(|bound| bound.side == side).fold(None::<&Bound>, |best, bound| match best {
-            Some(best) if !better(bound.mass.kilogram(), best.mass.kilogram()) => Some(best),
-            _ => Some(bound),
-        })
+        bounds
+            .iter()
+            .filter(|bound| bound.side == side)
+            .fold(None::<&Bound>, |best, bound| match best {
+                Some(best) if !better(bound.mass.kilogram(), best.mass.kilogram()) => Some(best),
+                _ => Some(bound),
+            })
     };
     let lower = end(Side::AtLeast, |a, b| a > b).cloned();
     let upper = end(Side::AtMost, |a, b| a < b).cloned();
-    let mut window = Window { lower, upper, bounds, aim: None };
+    let mut window = Window {
+        lower,
+        upper,
+        bounds,
+        aim: None,
+    };
     if !window.is_empty() {
         window.aim = aim(design, &window);
     }
@@ -123,7 +141,12 @@ fn bound(
     temperature: Temperature,
 ) -> Option<Bound> {
     let mass = Mass::from_kilogram(density * volume).ok()?;
-    Some(Bound { requirement, side, mass, temperature })
+    Some(Bound {
+        requirement,
+        side,
+        mass,
+        temperature,
+    })
 }
 
 fn liquid_when_hot(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<Option<Bound>> {
@@ -133,7 +156,13 @@ fn liquid_when_hot(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<
     let t = design.conditions.working_high;
     fluid.saturation_pressure(t)?;
     let vapour = fluid.curve()?.at(t.kelvin()).vapour_kg_per_m3;
-    Ok(bound(Requirement::LiquidWhenHot, Side::AtLeast, vapour, volumes.greatest.cubic_metre(), t))
+    Ok(bound(
+        Requirement::LiquidWhenHot,
+        Side::AtLeast,
+        vapour,
+        volumes.greatest.cubic_metre(),
+        t,
+    ))
 }
 
 /// Undefined above the critical temperature: there the pressure governs.
@@ -144,9 +173,17 @@ fn ullage(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<Option<Bo
         Ok(_) => {
             let at = fluid.curve()?.at(t.kelvin());
             let density = (1.0 - share) * at.liquid_kg_per_m3 + share * at.vapour_kg_per_m3;
-            Ok(bound(Requirement::Ullage, Side::AtMost, density, volumes.least.cubic_metre(), t))
+            Ok(bound(
+                Requirement::Ullage,
+                Side::AtMost,
+                density,
+                volumes.least.cubic_metre(),
+                t,
+            ))
         }
-        Err(FluidError::NoSaturation { critical, .. }) if t >= critical || is_equation(fluid) => Ok(None),
+        Err(FluidError::NoSaturation { critical, .. }) if t >= critical || is_equation(fluid) => {
+            Ok(None)
+        }
         Err(FluidError::Frozen { .. }) => Ok(None),
         Err(error) => Err(error.into()),
     }
@@ -158,7 +195,9 @@ fn ullage(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<Option<Bo
 /// the two ends of the range, so both are asked.
 fn liquid_full_margin(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<Option<Bound>> {
     let conditions = &design.conditions;
-    let t = conditions.hottest.shifted(design.demands.liquid_full_margin);
+    let t = conditions
+        .hottest
+        .shifted(design.demands.liquid_full_margin);
     let critical = fluid.critical();
     let (low, top) = fluid.saturation_range();
     if conditions.hottest.kelvin() >= critical.temperature_k {
@@ -173,10 +212,23 @@ fn liquid_full_margin(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figu
             Err(error) => return Err(error.into()),
         }
         let curve = fluid.curve()?;
-        let cold = conditions.coldest.max(low).max(fluid.freezing_point()).min(t);
-        curve.at(t.kelvin()).liquid_kg_per_m3.min(curve.at(cold.kelvin()).liquid_kg_per_m3)
+        let cold = conditions
+            .coldest
+            .max(low)
+            .max(fluid.freezing_point())
+            .min(t);
+        curve
+            .at(t.kelvin())
+            .liquid_kg_per_m3
+            .min(curve.at(cold.kelvin()).liquid_kg_per_m3)
     };
-    Ok(bound(Requirement::LiquidFullMargin, Side::AtMost, density, volumes.least.cubic_metre(), t))
+    Ok(bound(
+        Requirement::LiquidFullMargin,
+        Side::AtMost,
+        density,
+        volumes.least.cubic_metre(),
+        t,
+    ))
 }
 
 fn frozen_volume(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Option<Bound> {
@@ -196,7 +248,12 @@ fn frozen_volume(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Option<Bo
 
 /// The mass that stands at the allowable pressure, least over the hottest and every
 /// temperature in range where a strength bends: between those the hottest governs.
-fn allowable(design: &Design, fluid: &Fluid, volumes: &Volumes, walls: &Walls<'_>) -> Figure<Option<Bound>> {
+fn allowable(
+    design: &Design,
+    fluid: &Fluid,
+    volumes: &Volumes,
+    walls: &Walls<'_>,
+) -> Figure<Option<Bound>> {
     let conditions = &design.conditions;
     let freezing = fluid.freezing_point();
     let temperatures = walls
@@ -208,7 +265,9 @@ fn allowable(design: &Design, fluid: &Fluid, volumes: &Volumes, walls: &Walls<'_
     let mut least: Option<(Density, Temperature)> = None;
     for t in temperatures.filter(|t| *t >= freezing) {
         let limit = walls.allowable_pressure(t)?.pascal() / (1.0 + fluid.pressure_uncertainty());
-        let Ok(limit) = Pressure::from_pascal(limit) else { continue };
+        let Ok(limit) = Pressure::from_pascal(limit) else {
+            continue;
+        };
         if let Some(density) = fluid.density_at(limit, t).map_err(Missing::Fluid)?
             && least.is_none_or(|(found, _)| density < found)
         {
@@ -217,7 +276,13 @@ fn allowable(design: &Design, fluid: &Fluid, volumes: &Volumes, walls: &Walls<'_
     }
     Ok(least.and_then(|(density, t)| {
         let density = density.kilogram_per_cubic_metre();
-        bound(Requirement::AllowablePressure, Side::AtMost, density, volumes.least.cubic_metre(), t)
+        bound(
+            Requirement::AllowablePressure,
+            Side::AtMost,
+            density,
+            volumes.least.cubic_metre(),
+            t,
+        )
     }))
 }
 

@@ -38,7 +38,9 @@ impl Walls<'_> {
     /// # Errors
     /// [`StrengthUnknown`] names the part and the reason.
     pub fn allowable_pressure(&self, at: Temperature) -> Result<Pressure, StrengthUnknown> {
-        self.envelope.weakest(at).map(|weakest| self.absolute(weakest.allowable.pressure))
+        self.envelope
+            .weakest(at)
+            .map(|weakest| self.absolute(weakest.allowable.pressure))
     }
 
     /// A load on the wall as an absolute inside pressure.
@@ -60,9 +62,16 @@ pub fn worst_case(design: &Design, corners: &Corners, walls: &Walls<'_>) -> Figu
     if conditions.hottest < conditions.coldest {
         return Err(Missing::Conditions);
     }
-    let knots = walls.knots.iter().copied().filter(|t| *t > conditions.coldest && *t < conditions.hottest);
+    let knots = walls
+        .knots
+        .iter()
+        .copied()
+        .filter(|t| *t > conditions.coldest && *t < conditions.hottest);
     let mut worst: Option<WorstCase> = None;
-    for temperature in [conditions.hottest, conditions.coldest].into_iter().chain(knots) {
+    for temperature in [conditions.hottest, conditions.coldest]
+        .into_iter()
+        .chain(knots)
+    {
         let case = at_temperature(corners, walls, temperature)?;
         let worse = match &worst {
             None => true,
@@ -81,11 +90,17 @@ pub fn worst_case(design: &Design, corners: &Corners, walls: &Walls<'_>) -> Figu
     worst.ok_or(Missing::Conditions)
 }
 
-fn at_temperature(corners: &Corners, walls: &Walls<'_>, temperature: Temperature) -> Figure<WorstCase> {
+fn at_temperature(
+    corners: &Corners,
+    walls: &Walls<'_>,
+    temperature: Temperature,
+) -> Figure<WorstCase> {
     let state = corners.heaviest.state(temperature)?;
     let uncertainty = corners.heaviest.fluid().pressure_uncertainty();
-    let pressure = Pressure::from_pascal(state.pressure.pascal() * (1.0 + uncertainty)).unwrap_or(state.pressure);
-    let load = Pressure::from_pascal(pressure.pascal() - walls.least_outside.pascal()).unwrap_or(pressure);
+    let pressure = Pressure::from_pascal(state.pressure.pascal() * (1.0 + uncertainty))
+        .unwrap_or(state.pressure);
+    let load =
+        Pressure::from_pascal(pressure.pascal() - walls.least_outside.pascal()).unwrap_or(pressure);
     let weakest = walls.envelope.weakest(temperature);
     // A wall under less inside than outside carries no inside load; a wall that the
     // tolerances take away altogether carries none at all.
@@ -94,11 +109,25 @@ fn at_temperature(corners: &Corners, walls: &Walls<'_>, temperature: Temperature
         load if limit.pascal() <= 0.0 => load * f64::MAX.sqrt(),
         load => load / limit.pascal(),
     };
-    let of_allowable =
-        weakest.as_ref().map(|w| share(w.allowable.pressure)).map_err(|e| Missing::Strength(e.clone()));
+    let of_allowable = weakest
+        .as_ref()
+        .map(|w| share(w.allowable.pressure))
+        .map_err(|e| Missing::Strength(e.clone()));
     let of_burst = match &weakest {
-        Ok(weakest) => weakest.burst.as_ref().map(|burst| share(*burst)).map_err(|e| Missing::Strength(e.clone())),
+        Ok(weakest) => weakest
+            .burst
+            .as_ref()
+            .map(|burst| share(*burst))
+            .map_err(|e| Missing::Strength(e.clone())),
         Err(error) => Err(Missing::Strength(error.clone())),
     };
-    Ok(WorstCase { temperature, pressure, state, load, weakest, of_allowable, of_burst })
+    Ok(WorstCase {
+        temperature,
+        pressure,
+        state,
+        load,
+        weakest,
+        of_allowable,
+        of_burst,
+    })
 }

@@ -70,13 +70,16 @@ pub enum FluidFileError {
 pub fn parse(text: &str) -> Result<Fluid, FluidFileError> {
     // Option fields may be given bare or in Some(..).
     let options = ron::Options::default();
-    let file: FluidFile = options.from_str(text).map_err(|e| FluidFileError::Syntax(Box::new(e)))?;
+    let file: FluidFile = options
+        .from_str(text)
+        .map_err(|e| FluidFileError::Syntax(Box::new(e)))?;
     if file.format != FORMAT {
         return Err(FluidFileError::Format { found: file.format });
     }
-    for (field, value) in
-        [("molar_mass_kg_per_mol", file.molar_mass_kg_per_mol), ("melting_point_k", file.melting_point_k.value)]
-    {
+    for (field, value) in [
+        ("molar_mass_kg_per_mol", file.molar_mass_kg_per_mol),
+        ("melting_point_k", file.melting_point_k.value),
+    ] {
         if !(value.is_finite() && value > 0.0) {
             return Err(FluidFileError::NotPositive { field, value });
         }

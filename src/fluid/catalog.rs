@@ -31,9 +31,18 @@ impl Catalog {
     /// The fluids that come with the program.
     pub fn built_in() -> Self {
         static SLOTS: LazyLock<Arc<[Slot]>> = LazyLock::new(|| {
-            FLUID_FILES.iter().map(|(id, text)| Slot { id, text, fluid: OnceLock::new() }).collect()
+            FLUID_FILES
+                .iter()
+                .map(|(id, text)| Slot {
+                    id,
+                    text,
+                    fluid: OnceLock::new(),
+                })
+                .collect()
         });
-        Self { slots: Arc::clone(&SLOTS) }
+        Self {
+            slots: Arc::clone(&SLOTS),
+        }
     }
 
     /// The fluid with this id.
@@ -47,7 +56,10 @@ impl Catalog {
     /// [`UnknownFluid`], with the nearest name that is known.
     pub fn find(&self, name: &str) -> Result<Arc<Fluid>, UnknownFluid> {
         let wanted = folded(name);
-        if let Some(fluid) = self.by_id(name).or_else(|| self.iter().find(|fluid| answers_to(fluid, &wanted))) {
+        if let Some(fluid) = self
+            .by_id(name)
+            .or_else(|| self.iter().find(|fluid| answers_to(fluid, &wanted)))
+        {
             return Ok(fluid);
         }
         let near = self
@@ -57,7 +69,10 @@ impl Catalog {
             .min_by_key(|(distance, _)| *distance)
             .filter(|(distance, _)| *distance <= 1 + wanted.chars().count() / 4)
             .map(|(_, known)| known);
-        Err(UnknownFluid { name: name.to_owned(), near })
+        Err(UnknownFluid {
+            name: name.to_owned(),
+            near,
+        })
     }
 
     /// Every fluid, by id.
@@ -73,20 +88,27 @@ impl Catalog {
 
 impl Slot {
     fn get(&self) -> Arc<Fluid> {
-        let read = || Arc::new(asset::parse(self.text).expect("a test parses every fluid compiled in"));
+        let read =
+            || Arc::new(asset::parse(self.text).expect("a test parses every fluid compiled in"));
         Arc::clone(self.fluid.get_or_init(read))
     }
 }
 
 fn answers_to(fluid: &Fluid, wanted: &str) -> bool {
     let names = [fluid.id(), fluid.name(), fluid.cas()];
-    names.into_iter().chain(fluid.refrigerant()).any(|name| folded(name) == wanted)
+    names
+        .into_iter()
+        .chain(fluid.refrigerant())
+        .any(|name| folded(name) == wanted)
         || fluid.also().iter().any(|name| folded(name) == wanted)
 }
 
 /// Case, spaces and hyphens do not tell fluids apart: "R134a", "r-134a".
 fn folded(name: &str) -> String {
-    name.chars().filter(|c| !matches!(c, ' ' | '-' | '_')).flat_map(char::to_lowercase).collect()
+    name.chars()
+        .filter(|c| !matches!(c, ' ' | '-' | '_'))
+        .flat_map(char::to_lowercase)
+        .collect()
 }
 
 /// Number of single-letter edits between two words (Levenshtein).
@@ -97,7 +119,9 @@ fn distance(a: &str, b: &str) -> usize {
         let mut diagonal = row[0];
         row[0] = i + 1;
         for (j, y) in b.iter().enumerate() {
-            let next = (diagonal + usize::from(x != *y)).min(row[j] + 1).min(row[j + 1] + 1);
+            let next = (diagonal + usize::from(x != *y))
+                .min(row[j] + 1)
+                .min(row[j + 1] + 1);
             diagonal = row[j + 1];
             row[j + 1] = next;
         }

@@ -116,17 +116,32 @@ pub struct CorrelatedPair {
 impl Correlated {
     /// Temperatures at which every form holds, K.
     pub fn temperature_range_k(&self) -> (f64, f64) {
-        let VapourPressure::Wagner25 { temperature_range_k: p, .. } = &self.vapour_pressure;
-        let LiquidDensity::Ppds { temperature_range_k: rho, .. } = &self.liquid_density;
-        let LatentHeat::Ppds12 { temperature_range_k: h, .. } = &self.latent_heat;
+        let VapourPressure::Wagner25 {
+            temperature_range_k: p,
+            ..
+        } = &self.vapour_pressure;
+        let LiquidDensity::Ppds {
+            temperature_range_k: rho,
+            ..
+        } = &self.liquid_density;
+        let LatentHeat::Ppds12 {
+            temperature_range_k: h,
+            ..
+        } = &self.latent_heat;
         let low = p.0.max(rho.0).max(h.0);
-        let high = p.1.min(rho.1).min(h.1).min(HIGHEST_REDUCED_TEMPERATURE * self.critical.temperature_k);
+        let high =
+            p.1.min(rho.1)
+                .min(h.1)
+                .min(HIGHEST_REDUCED_TEMPERATURE * self.critical.temperature_k);
         (low, high)
     }
 
     /// Largest stated uncertainty of the vapour pressure, as a fraction.
     pub fn pressure_uncertainty(&self) -> f64 {
-        let VapourPressure::Wagner25 { uncertainty_percent, .. } = &self.vapour_pressure;
+        let VapourPressure::Wagner25 {
+            uncertainty_percent,
+            ..
+        } = &self.vapour_pressure;
         uncertainty_percent / 100.0
     }
 
@@ -135,7 +150,8 @@ impl Correlated {
         let VapourPressure::Wagner25 { source: p, .. } = &self.vapour_pressure;
         let LiquidDensity::Ppds { source: rho, .. } = &self.liquid_density;
         let LatentHeat::Ppds12 { source: h, .. } = &self.latent_heat;
-        let CompressedLiquid::ThomsonBrobstHankinson { source: compressed } = &self.compressed_liquid;
+        let CompressedLiquid::ThomsonBrobstHankinson { source: compressed } =
+            &self.compressed_liquid;
         [
             ("vapour pressure", p),
             ("liquid density", rho),
@@ -154,12 +170,17 @@ impl Correlated {
         let clapeyron = |t: f64| {
             let (p, slope) = self.vapour_pressure.at(t);
             let latent = self.latent_heat.at(t, molar_mass);
-            (p, 1.0 / (1.0 / self.liquid_density.at(t) + latent / (t * slope)))
+            (
+                p,
+                1.0 / (1.0 / self.liquid_density.at(t) + latent / (t * slope)),
+            )
         };
         let vapour = if pressure >= lowest_pressure_pa {
             clapeyron(temperature).1
         } else {
-            let joint = self.vapour_pressure.temperature_at(lowest_pressure_pa, self.temperature_range_k());
+            let joint = self
+                .vapour_pressure
+                .temperature_at(lowest_pressure_pa, self.temperature_range_k());
             let (p1, rho1) = clapeyron(joint);
             let z1 = p1 / (rho1 * specific * joint);
             let z = 1.0 - (1.0 - z1) * (pressure / p1) * (joint / temperature);
@@ -167,7 +188,13 @@ impl Correlated {
         };
         // Consistent with the densities above by Clausius and Clapeyron, whichever branch.
         let latent_heat = temperature * slope * (1.0 / vapour - 1.0 / liquid);
-        CorrelatedPair { pressure, liquid, vapour, slope, latent_heat }
+        CorrelatedPair {
+            pressure,
+            liquid,
+            vapour,
+            slope,
+            latent_heat,
+        }
     }
 
     /// Pressure of vapour at ρ ≤ ρ″, Pa.
@@ -192,7 +219,8 @@ impl Correlated {
         let omega = self.acentric_factor;
         let theta = 1.0 - temperature / self.critical.temperature_k;
         let e = (4.79594 + 0.250047 * omega + 1.14188 * omega * omega).exp();
-        let b = -1.0 - 9.070217 * theta.cbrt() + 62.45326 * theta.powf(2.0 / 3.0) - 135.1102 * theta
+        let b = -1.0 - 9.070217 * theta.cbrt() + 62.45326 * theta.powf(2.0 / 3.0)
+            - 135.1102 * theta
             + e * theta.powf(4.0 / 3.0);
         (self.critical.pressure_pa * b, 0.0861488 + 0.0344483 * omega)
     }
@@ -201,33 +229,56 @@ impl Correlated {
 impl VapourPressure {
     /// Pressure and its slope, Pa and Pa/K.
     fn at(&self, temperature: f64) -> (f64, f64) {
-        let Self::Wagner25 { a, critical_temperature_k: tc, critical_pressure_pa: pc, .. } = self;
+        let Self::Wagner25 {
+            a,
+            critical_temperature_k: tc,
+            critical_pressure_pa: pc,
+            ..
+        } = self;
         let theta = 1.0 - temperature / tc;
         let powers = [1.0, 1.5, 2.5, 5.0];
         let sum: f64 = a.iter().zip(powers).map(|(a, e)| a * theta.powf(e)).sum();
-        let sum_slope: f64 = a.iter().zip(powers).map(|(a, e)| a * e * theta.powf(e - 1.0)).sum();
+        let sum_slope: f64 = a
+            .iter()
+            .zip(powers)
+            .map(|(a, e)| a * e * theta.powf(e - 1.0))
+            .sum();
         let ln = tc / temperature * sum;
         let p = pc * ln.exp();
         (p, p * (-ln / temperature - sum_slope / temperature))
     }
 
     fn temperature_at(&self, pressure: f64, (low, high): (f64, f64)) -> f64 {
-        crate::solve::bracketed_root(|t| self.at(t).0.ln() - pressure.ln(), low, high, 1e-12).unwrap_or(low)
+        crate::solve::bracketed_root(|t| self.at(t).0.ln() - pressure.ln(), low, high, 1e-12)
+            .unwrap_or(low)
     }
 }
 
 impl LiquidDensity {
     fn at(&self, temperature: f64) -> f64 {
-        let Self::Ppds { a, critical_temperature_k: tc, critical_density_kg_per_m3: rc, .. } = self;
+        let Self::Ppds {
+            a,
+            critical_temperature_k: tc,
+            critical_density_kg_per_m3: rc,
+            ..
+        } = self;
         let theta = 1.0 - temperature / tc;
         let powers = [0.35, 2.0 / 3.0, 1.0, 4.0 / 3.0];
-        rc + a.iter().zip(powers).map(|(a, e)| a * theta.powf(e)).sum::<f64>()
+        rc + a
+            .iter()
+            .zip(powers)
+            .map(|(a, e)| a * theta.powf(e))
+            .sum::<f64>()
     }
 }
 
 impl LatentHeat {
     fn at(&self, temperature: f64, molar_mass: f64) -> f64 {
-        let Self::Ppds12 { a, critical_temperature_k: tc, .. } = self;
+        let Self::Ppds12 {
+            a,
+            critical_temperature_k: tc,
+            ..
+        } = self;
         let theta = 1.0 - temperature / tc;
         let powers = [1.0 / 3.0, 2.0 / 3.0, 1.0, 2.0, 6.0];
         let sum: f64 = a.iter().zip(powers).map(|(a, e)| a * theta.powf(e)).sum();

@@ -67,7 +67,12 @@ impl SaturationCurve {
                 open.push((low, middle));
             }
         }
-        let mut curve = Self { critical_temperature_k, range_k, pieces, turning_points: Vec::new() };
+        let mut curve = Self {
+            critical_temperature_k,
+            range_k,
+            pieces,
+            turning_points: Vec::new(),
+        };
         curve.turning_points = curve.find_turning_points();
         Ok(curve)
     }
@@ -89,12 +94,21 @@ impl SaturationCurve {
 
     /// The state at a temperature inside [`Self::range_k`].
     pub fn at(&self, temperature_k: f64) -> CurvePoint {
-        let x = (1.0 - temperature_k / self.critical_temperature_k).max(0.0).sqrt();
-        let index = self.pieces.partition_point(|piece| piece.high < x).min(self.pieces.len() - 1);
+        let x = (1.0 - temperature_k / self.critical_temperature_k)
+            .max(0.0)
+            .sqrt();
+        let index = self
+            .pieces
+            .partition_point(|piece| piece.high < x)
+            .min(self.pieces.len() - 1);
         let piece = &self.pieces[index];
         let u = ((2.0 * x - piece.low - piece.high) / (piece.high - piece.low)).clamp(-1.0, 1.0);
         let [p, liquid, vapour] = piece.coefficients.each_ref().map(|c| clenshaw(c, u));
-        CurvePoint { pressure_pa: p.exp(), liquid_kg_per_m3: liquid, vapour_kg_per_m3: vapour.exp() }
+        CurvePoint {
+            pressure_pa: p.exp(),
+            liquid_kg_per_m3: liquid,
+            vapour_kg_per_m3: vapour.exp(),
+        }
     }
 }
 
@@ -120,8 +134,15 @@ impl SaturationCurve {
             };
             let (mut a, mut b) = (t(i - 1), t(i + 1));
             for _ in 0..GOLDEN_STEPS {
-                let (c, d) = (b - 0.618_033_988_749_895 * (b - a), a + 0.618_033_988_749_895 * (b - a));
-                if sign * density(c) > sign * density(d) { b = d } else { a = c }
+                let (c, d) = (
+                    b - 0.618_033_988_749_895 * (b - a),
+                    a + 0.618_033_988_749_895 * (b - a),
+                );
+                if sign * density(c) > sign * density(d) {
+                    b = d
+                } else {
+                    a = c
+                }
             }
             points.push(0.5 * (a + b));
         }
@@ -150,7 +171,8 @@ impl Piece {
                     .iter()
                     .enumerate()
                     .map(|(k, v)| {
-                        v * (std::f64::consts::PI * j as f64 * (k as f64 + 0.5) / NODES as f64).cos()
+                        v * (std::f64::consts::PI * j as f64 * (k as f64 + 0.5) / NODES as f64)
+                            .cos()
                     })
                     .sum();
                 *c = sum * 2.0 / NODES as f64;
@@ -158,7 +180,11 @@ impl Piece {
             c[0] *= 0.5;
             c
         });
-        Ok(Self { low, high, coefficients })
+        Ok(Self {
+            low,
+            high,
+            coefficients,
+        })
     }
 
     /// The tail of each expansion is below the noise of the solve.

@@ -112,9 +112,11 @@ impl Fluid {
     pub fn model_sources(&self) -> Vec<String> {
         match &self.model {
             Model::Equation(equation) => vec![equation.data().source.to_string()],
-            Model::Correlated(model) => {
-                model.sources().iter().map(|(what, source)| format!("{what}: {source}")).collect()
-            }
+            Model::Correlated(model) => model
+                .sources()
+                .iter()
+                .map(|(what, source)| format!("{what}: {source}"))
+                .collect(),
         }
     }
 
@@ -123,7 +125,10 @@ impl Fluid {
         match &self.model {
             Model::Equation(equation) => equation.data().uncertainty.clone(),
             Model::Correlated(model) => {
-                format!("vapour pressure within {:.1} %", 100.0 * model.pressure_uncertainty())
+                format!(
+                    "vapour pressure within {:.1} %",
+                    100.0 * model.pressure_uncertainty()
+                )
             }
         }
     }
@@ -160,7 +165,11 @@ impl Fluid {
     pub fn freezing_point(&self) -> Temperature {
         let melting = self.melting_point.value;
         let low = self.model.range_k().0;
-        let point = if low > melting && low - melting <= 0.05 { low } else { melting };
+        let point = if low > melting && low - melting <= 0.05 {
+            low
+        } else {
+            melting
+        };
         Temperature::from_kelvin(point).expect("a fluid file's melting point is checked when read")
     }
 
@@ -172,7 +181,10 @@ impl Fluid {
         self.saturation_allowed(temperature)?;
         self.model
             .saturation(temperature.kelvin(), self.molar_mass)
-            .map_err(|_| FluidError::NotConverged { fluid: self.name.clone(), temperature })
+            .map_err(|_| FluidError::NotConverged {
+                fluid: self.name.clone(),
+                temperature,
+            })
     }
 
     /// Saturation expansions over the whole range, built on first use.
@@ -215,7 +227,13 @@ impl Fluid {
             return None;
         }
         let theta = 1.0 - t / form.critical_temperature_k;
-        (theta > 0.0).then(|| form.a.iter().zip(&form.n).map(|(a, n)| a * theta.powf(*n)).sum())
+        (theta > 0.0).then(|| {
+            form.a
+                .iter()
+                .zip(&form.n)
+                .map(|(a, n)| a * theta.powf(*n))
+                .sum()
+        })
     }
 
     /// Greatest density given, kg/m³, and greatest pressure.
@@ -230,14 +248,27 @@ impl Fluid {
     fn saturation_allowed(&self, temperature: Temperature) -> Result<(), FluidError> {
         let (low, high) = self.saturation_range();
         if temperature < self.freezing_point() {
-            return Err(FluidError::Frozen { fluid: self.name.clone(), temperature, melting: self.freezing_point() });
+            return Err(FluidError::Frozen {
+                fluid: self.name.clone(),
+                temperature,
+                melting: self.freezing_point(),
+            });
         }
         if temperature < low {
-            return Err(FluidError::TooCold { fluid: self.name.clone(), temperature, low });
+            return Err(FluidError::TooCold {
+                fluid: self.name.clone(),
+                temperature,
+                low,
+            });
         }
         if temperature > high {
             let critical = clamped(self.critical().temperature_k);
-            return Err(FluidError::NoSaturation { fluid: self.name.clone(), temperature, high, critical });
+            return Err(FluidError::NoSaturation {
+                fluid: self.name.clone(),
+                temperature,
+                high,
+                critical,
+            });
         }
         Ok(())
     }

@@ -62,7 +62,10 @@ impl Model {
             Self::Equation(equation) => {
                 let data = equation.data();
                 let top = CLOSEST_TO_CRITICAL * data.critical.temperature_k;
-                (data.temperature_range_k.0, top.min(data.temperature_range_k.1))
+                (
+                    data.temperature_range_k.0,
+                    top.min(data.temperature_range_k.1),
+                )
             }
             Self::Correlated(model) => model.temperature_range_k(),
         }
@@ -73,7 +76,10 @@ impl Model {
         match self {
             Self::Equation(equation) => {
                 let data = equation.data();
-                (data.highest_pressure_pa, data.highest_density_mol_per_m3 * molar_mass)
+                (
+                    data.highest_pressure_pa,
+                    data.highest_density_mol_per_m3 * molar_mass,
+                )
             }
             // The compressed-liquid form was fitted to 69 MPa (10 000 psi); source there.
             Self::Correlated(_) => (69e6, f64::INFINITY),

@@ -63,7 +63,8 @@ pub enum StabilityKind {
 impl Safety {
     /// GHS statements H220 to H226: flammable gas or liquid.
     pub fn is_flammable(&self) -> bool {
-        self.lower_flammable_limit.is_some() && self.has_statement(&["H220", "H221", "H224", "H225", "H226", "H206"])
+        self.lower_flammable_limit.is_some()
+            && self.has_statement(&["H220", "H221", "H224", "H225", "H226", "H206"])
     }
 
     /// Burns only under conditions: a flammable range without a flammable classification.
@@ -74,8 +75,8 @@ impl Safety {
     /// GHS statements of acute or chronic poisoning, or of cancer.
     pub fn is_toxic(&self) -> bool {
         self.has_statement(&[
-            "H300", "H301", "H302", "H310", "H311", "H330", "H331", "H332", "H340", "H341", "H350", "H351",
-            "H360", "H361", "H370", "H371", "H372", "H373",
+            "H300", "H301", "H302", "H310", "H311", "H330", "H331", "H332", "H340", "H341", "H350",
+            "H351", "H360", "H361", "H370", "H371", "H372", "H373",
         ])
     }
 
@@ -85,6 +86,9 @@ impl Safety {
     }
 
     fn has_statement(&self, codes: &[&str]) -> bool {
-        self.statements.value.iter().any(|s| codes.iter().any(|code| s.starts_with(code)))
+        self.statements
+            .value
+            .iter()
+            .any(|s| codes.iter().any(|code| s.starts_with(code)))
     }
 }

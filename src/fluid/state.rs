@@ -58,10 +58,18 @@ impl Fluid {
         }
         let (low, high) = self.range();
         if temperature < low {
-            return Err(FluidError::TooCold { fluid: self.name.clone(), temperature, low });
+            return Err(FluidError::TooCold {
+                fluid: self.name.clone(),
+                temperature,
+                low,
+            });
         }
         if temperature > high {
-            return Err(FluidError::TooHot { fluid: self.name.clone(), temperature, high });
+            return Err(FluidError::TooHot {
+                fluid: self.name.clone(),
+                temperature,
+                high,
+            });
         }
         let critical = self.critical();
         if t >= critical.temperature_k {
@@ -84,7 +92,8 @@ impl Fluid {
             let (l, v) = (at.liquid_kg_per_m3, at.vapour_kg_per_m3);
             Ok(State {
                 regime: Regime::TwoPhase,
-                pressure: Pressure::from_pascal(at.pressure_pa).expect("a vapour pressure is finite"),
+                pressure: Pressure::from_pascal(at.pressure_pa)
+                    .expect("a vapour pressure is finite"),
                 liquid_share: Some((rho - v) / (l - v)),
                 quality: Some((1.0 / rho - 1.0 / l) / (1.0 / v - 1.0 / l)),
             })
@@ -108,21 +117,40 @@ impl Fluid {
         let mut found = Vec::new();
         let tolerance = 1e-11 * critical.temperature_k;
         let knots: Vec<f64> = std::iter::once(from)
-            .chain(curve.turning_points().iter().copied().filter(|t| *t > from && *t < high))
+            .chain(
+                curve
+                    .turning_points()
+                    .iter()
+                    .copied()
+                    .filter(|t| *t > from && *t < high),
+            )
             .chain([high])
             .collect();
         if rho >= critical.density_kg_per_m3 {
             for t in roots_between(|t| curve.at(t).liquid_kg_per_m3 - rho, &knots, tolerance) {
-                found.push(Crossing { temperature: clamped(t), side: DomeSide::Liquid });
+                found.push(Crossing {
+                    temperature: clamped(t),
+                    side: DomeSide::Liquid,
+                });
             }
         } else {
-            for t in roots_between(|t| curve.at(t).vapour_kg_per_m3 - rho, &[from, high], tolerance) {
-                found.push(Crossing { temperature: clamped(t), side: DomeSide::Vapour });
+            for t in roots_between(
+                |t| curve.at(t).vapour_kg_per_m3 - rho,
+                &[from, high],
+                tolerance,
+            ) {
+                found.push(Crossing {
+                    temperature: clamped(t),
+                    side: DomeSide::Vapour,
+                });
             }
         }
         let inside_at_top = rho < top.liquid_kg_per_m3 && rho > top.vapour_kg_per_m3;
         if inside_at_top && matches!(self.model, Model::Equation(_)) {
-            found.push(Crossing { temperature: clamped(critical.temperature_k), side: DomeSide::Critical });
+            found.push(Crossing {
+                temperature: clamped(critical.temperature_k),
+                side: DomeSide::Critical,
+            });
         }
         Ok(found)
     }
@@ -136,16 +164,32 @@ impl Fluid {
     ///
     /// # Errors
     /// [`FluidError`] outside the model's temperatures, or frozen.
-    pub fn density_at(&self, pressure: Pressure, temperature: Temperature) -> Result<Option<Density>, FluidError> {
+    pub fn density_at(
+        &self,
+        pressure: Pressure,
+        temperature: Temperature,
+    ) -> Result<Option<Density>, FluidError> {
         let (low, high) = self.range();
         if temperature < self.freezing_point() {
-            return Err(FluidError::Frozen { fluid: self.name.clone(), temperature, melting: self.freezing_point() });
+            return Err(FluidError::Frozen {
+                fluid: self.name.clone(),
+                temperature,
+                melting: self.freezing_point(),
+            });
         }
         if temperature < low {
-            return Err(FluidError::TooCold { fluid: self.name.clone(), temperature, low });
+            return Err(FluidError::TooCold {
+                fluid: self.name.clone(),
+                temperature,
+                low,
+            });
         }
         if temperature > high {
-            return Err(FluidError::TooHot { fluid: self.name.clone(), temperature, high });
+            return Err(FluidError::TooHot {
+                fluid: self.name.clone(),
+                temperature,
+                high,
+            });
         }
         let t = temperature.kelvin();
         let p = pressure.pascal();
@@ -156,7 +200,11 @@ impl Fluid {
             let at = self.curve()?.at(t.min(top.kelvin()));
             if p > at.pressure_pa {
                 // A correlated liquid has no stated densest state: twice ρ′ is beyond its pressure limit.
-                (at.liquid_kg_per_m3, most.min(2.0 * at.liquid_kg_per_m3), true)
+                (
+                    at.liquid_kg_per_m3,
+                    most.min(2.0 * at.liquid_kg_per_m3),
+                    true,
+                )
             } else {
                 (1e-9 * at.vapour_kg_per_m3, at.vapour_kg_per_m3, false)
             }
@@ -170,8 +218,12 @@ impl Fluid {
         if isotherm(from) >= p {
             return Ok(Density::from_kilogram_per_cubic_metre(from).ok());
         }
-        let root = bracketed_root(|rho| isotherm(rho) - p, from, to, 1e-13 * to)
-            .map_err(|_| FluidError::NotConverged { fluid: self.name.clone(), temperature })?;
+        let root = bracketed_root(|rho| isotherm(rho) - p, from, to, 1e-13 * to).map_err(|_| {
+            FluidError::NotConverged {
+                fluid: self.name.clone(),
+                temperature,
+            }
+        })?;
         Ok(Density::from_kilogram_per_cubic_metre(root).ok())
     }
 
@@ -187,15 +239,23 @@ impl Fluid {
         match &self.model {
             Model::Equation(equation) => {
                 let c = equation.caloric(temperature.kelvin(), density_kg_per_m3 / self.molar_mass);
-                Ok((c.internal_energy / self.molar_mass, c.entropy / self.molar_mass))
+                Ok((
+                    c.internal_energy / self.molar_mass,
+                    c.entropy / self.molar_mass,
+                ))
             }
-            Model::Correlated(_) => Err(FluidError::NoEnergy { fluid: self.name.clone() }),
+            Model::Correlated(_) => Err(FluidError::NoEnergy {
+                fluid: self.name.clone(),
+            }),
         }
     }
 
     fn frozen_state(&self) -> Result<State, FluidError> {
         let (low, _) = self.saturation_range();
-        let pressure = self.curve()?.at(self.freezing_point().max(low).kelvin()).pressure_pa;
+        let pressure = self
+            .curve()?
+            .at(self.freezing_point().max(low).kelvin())
+            .pressure_pa;
         Ok(State {
             regime: Regime::Frozen,
             pressure: Pressure::from_pascal(pressure).expect("a vapour pressure is finite"),
@@ -217,20 +277,39 @@ impl Fluid {
         if rho > most_density {
             let high = Density::from_kilogram_per_cubic_metre(most_density)
                 .expect("a fluid file's limits are checked when read");
-            return Err(FluidError::TooDense { fluid: fluid(), density, high });
+            return Err(FluidError::TooDense {
+                fluid: fluid(),
+                density,
+                high,
+            });
         }
-        let p = self.model.isotherm(temperature.kelvin(), self.molar_mass, regime == Regime::LiquidFull)(rho);
+        let p = self.model.isotherm(
+            temperature.kelvin(),
+            self.molar_mass,
+            regime == Regime::LiquidFull,
+        )(rho);
         if p.is_nan() || p > most_pressure {
-            let high = Pressure::from_pascal(most_pressure).expect("a fluid file's limits are checked when read");
-            return Err(FluidError::PressureTooHigh { fluid: fluid(), high });
+            let high = Pressure::from_pascal(most_pressure)
+                .expect("a fluid file's limits are checked when read");
+            return Err(FluidError::PressureTooHigh {
+                fluid: fluid(),
+                high,
+            });
         }
-        let pressure = Pressure::from_pascal(p)
-            .map_err(|_| FluidError::NotConverged { fluid: fluid(), temperature })?;
+        let pressure = Pressure::from_pascal(p).map_err(|_| FluidError::NotConverged {
+            fluid: fluid(),
+            temperature,
+        })?;
         let quality = match regime {
             Regime::LiquidFull => Some(0.0),
             Regime::AllVapour => Some(1.0),
             _ => None,
         };
-        Ok(State { regime, pressure, liquid_share, quality })
+        Ok(State {
+            regime,
+            pressure,
+            liquid_share,
+            quality,
+        })
     }
 }

@@ -39,7 +39,8 @@ impl CompatibilityTable {
     /// The table that comes with the program.
     pub fn built_in() -> &'static Self {
         static TABLE: LazyLock<CompatibilityTable> = LazyLock::new(|| {
-            ron::from_str(include_str!("../../assets/compatibility.ron")).expect("a test parses the table")
+            ron::from_str(include_str!("../../assets/compatibility.ron"))
+                .expect("a test parses the table")
         });
         &TABLE
     }
@@ -55,14 +56,19 @@ impl CompatibilityTable {
             .iter()
             .filter(|row| {
                 row.fluids.iter().any(|id| id == fluid)
-                    && row.materials.iter().any(|id| material.starts_with(id.as_str()))
+                    && row
+                        .materials
+                        .iter()
+                        .any(|id| material.starts_with(id.as_str()))
             })
             .max_by_key(|row| rank(row.verdict))
     }
 
     /// Every fluid id the table names.
     pub fn fluids(&self) -> impl Iterator<Item = &str> {
-        self.0.iter().flat_map(|row| row.fluids.iter().map(String::as_str))
+        self.0
+            .iter()
+            .flat_map(|row| row.fluids.iter().map(String::as_str))
     }
 }
 
@@ -77,11 +83,23 @@ mod tests {
         let table = CompatibilityTable::built_in();
         let verdict = |fluid, material| table.of(fluid, material).map(|row| row.verdict);
         assert_eq!(verdict("water", "aluminium-6061-t6"), Some(Verdict::Never));
-        assert_eq!(verdict("water", "copper-c12200-annealed"), Some(Verdict::Good));
-        assert_eq!(verdict("ammonia", "copper-c12200-drawn"), Some(Verdict::Never));
+        assert_eq!(
+            verdict("water", "copper-c12200-annealed"),
+            Some(Verdict::Good)
+        );
+        assert_eq!(
+            verdict("ammonia", "copper-c12200-drawn"),
+            Some(Verdict::Never)
+        );
         assert_eq!(verdict("ammonia", "aluminium-6061-t6"), Some(Verdict::Good));
-        assert_eq!(verdict("dichloromethane", "aluminium-6061-t6"), Some(Verdict::Never));
-        assert_eq!(verdict("methanol", "aluminium-6061-t6"), Some(Verdict::Never));
+        assert_eq!(
+            verdict("dichloromethane", "aluminium-6061-t6"),
+            Some(Verdict::Never)
+        );
+        assert_eq!(
+            verdict("methanol", "aluminium-6061-t6"),
+            Some(Verdict::Never)
+        );
         assert_eq!(verdict("nitrogen", "unobtainium"), None);
     }
 

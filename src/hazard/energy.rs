@@ -44,7 +44,10 @@ pub fn rupture_energy(unit: &SealedUnit, temperature: Temperature) -> Result<Ene
     let u2 = energy_at_one_atmosphere(fluid, s, temperature)?;
     let joule = (unit.mass().kilogram() * (u1 - u2)).max(0.0);
     Energy::from_joule(joule).map_err(|_| {
-        EnergyError::Fluid(FluidError::NotConverged { fluid: fluid.name().to_owned(), temperature })
+        EnergyError::Fluid(FluidError::NotConverged {
+            fluid: fluid.name().to_owned(),
+            temperature,
+        })
     })
 }
 
@@ -58,7 +61,9 @@ fn energy_at_one_atmosphere(fluid: &Fluid, s: f64, from: Temperature) -> Result<
     let boiling = bracketed_root(excess, low.kelvin(), high.kelvin(), 1e-9)
         .ok()
         .and_then(|t| Temperature::from_kelvin(t).ok())
-        .ok_or_else(|| EnergyError::FreezesOnExpansion { fluid: fluid.name().to_owned() })?;
+        .ok_or_else(|| EnergyError::FreezesOnExpansion {
+            fluid: fluid.name().to_owned(),
+        })?;
     let at = fluid.saturation(boiling)?;
     let (ul, sl) = fluid.energy_and_entropy(at.liquid_kg_per_m3, boiling)?;
     let (uv, sv) = fluid.energy_and_entropy(at.vapour_kg_per_m3, boiling)?;
@@ -69,7 +74,9 @@ fn energy_at_one_atmosphere(fluid: &Fluid, s: f64, from: Temperature) -> Result<
     let single = |t: f64| -> Option<(f64, f64)> {
         let t = Temperature::from_kelvin(t).ok()?;
         let rho = fluid.density_at(p0, t).ok()??;
-        fluid.energy_and_entropy(rho.kilogram_per_cubic_metre(), t).ok()
+        fluid
+            .energy_and_entropy(rho.kilogram_per_cubic_metre(), t)
+            .ok()
     };
     // A step off the boiling point keeps the density solve on one side of the dome.
     let (t1, t2) = if s < sl {
@@ -77,7 +84,12 @@ fn energy_at_one_atmosphere(fluid: &Fluid, s: f64, from: Temperature) -> Result<
     } else {
         (boiling.kelvin() * (1.0 + 1e-9), from.kelvin())
     };
-    let found = bracketed_root(|t| single(t).map_or(f64::NAN, |(_, found)| found - s), t1, t2, 1e-9);
+    let found = bracketed_root(
+        |t| single(t).map_or(f64::NAN, |(_, found)| found - s),
+        t1,
+        t2,
+        1e-9,
+    );
     match found.ok().and_then(single) {
         Some((u, _)) => Ok(u),
         // Between the saturated entropy and the first step off it: the boundary itself.
@@ -105,7 +117,10 @@ mod tests {
         )
         .expect("unit");
         let found = rupture_energy(&unit, t).expect("energy").joule();
-        assert!((found / expected_j - 1.0).abs() < 2e-3, "{id}: {found} J, expected {expected_j} J");
+        assert!(
+            (found / expected_j - 1.0).abs() < 2e-3,
+            "{id}: {found} J, expected {expected_j} J"
+        );
     }
 
     #[test]

@@ -40,7 +40,8 @@ pub fn release(fluid: &Fluid, mass: Mass, room: &Room) -> Option<Release> {
         return None;
     }
     let t = room.temperature.kelvin();
-    let mole_ratio = mass.kilogram() * GAS_CONSTANT * t / (fluid.molar_mass() * STANDARD_ATMOSPHERE_PA * volume);
+    let mole_ratio =
+        mass.kilogram() * GAS_CONSTANT * t / (fluid.molar_mass() * STANDARD_ATMOSPHERE_PA * volume);
     let ceiling = fluid
         .saturation_pressure(room.temperature)
         .map_or(f64::INFINITY, |p| p.pascal() / STANDARD_ATMOSPHERE_PA);
@@ -48,12 +49,16 @@ pub fn release(fluid: &Fluid, mass: Mass, room: &Room) -> Option<Release> {
     let fraction = if capped { ceiling } else { mole_ratio };
     let ppm = 1e6 * fraction;
     let safety = fluid.safety();
-    let over = |limit: &Option<crate::source::Sourced<f64>>| limit.as_ref().map(|limit| ppm / limit.value);
+    let over =
+        |limit: &Option<crate::source::Sourced<f64>>| limit.as_ref().map(|limit| ppm / limit.value);
     Some(Release {
         ppm,
         capped,
         mg_per_m3: 1e6 * mass.kilogram() / volume,
-        of_lower_flammable_limit: safety.lower_flammable_limit.as_ref().map(|limit| fraction / limit.value),
+        of_lower_flammable_limit: safety
+            .lower_flammable_limit
+            .as_ref()
+            .map(|limit| fraction / limit.value),
         of_exposure_limit: over(&safety.exposure_limit_ppm),
         of_immediately_dangerous: over(&safety.immediately_dangerous_ppm),
         oxygen: OXYGEN / (1.0 + fraction),
@@ -73,8 +78,18 @@ mod tests {
             temperature: Temperature::from_celsius(25.0).expect("temperature"),
             consumers: false,
         };
-        let found = release(&fluid, Mass::from_kilogram(gram * 1e-3).expect("mass"), &room).expect("a room");
-        assert!((found.ppm / expected_ppm - 1.0).abs() < 3e-3, "{}: {}", fluid.id(), found.ppm);
+        let found = release(
+            &fluid,
+            Mass::from_kilogram(gram * 1e-3).expect("mass"),
+            &room,
+        )
+        .expect("a room");
+        assert!(
+            (found.ppm / expected_ppm - 1.0).abs() < 3e-3,
+            "{}: {}",
+            fluid.id(),
+            found.ppm
+        );
     }
 
     /// Hand-worked with the molar volume 24.465 L at 25 °C and 1 atm (OSHA's and
@@ -97,7 +112,8 @@ mod tests {
             temperature: Temperature::from_celsius(25.0).expect("temperature"),
             consumers: false,
         };
-        let found = release(&water, Mass::from_kilogram(5.0).expect("mass"), &room).expect("a room");
+        let found =
+            release(&water, Mass::from_kilogram(5.0).expect("mass"), &room).expect("a room");
         // 3169.9 Pa at 25 °C (IAPWS-95) over one atmosphere.
         assert!(found.capped && (found.ppm - 1e6 * 3169.9 / 101_325.0).abs() < 2.0);
         assert!((found.mg_per_m3 - 5e6).abs() < 1e-6);

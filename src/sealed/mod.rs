@@ -38,9 +38,15 @@ impl SealedUnit {
         if volume.cubic_metre() <= 0.0 {
             return Err(SealedError::NoVolume);
         }
-        let density = Density::from_kilogram_per_cubic_metre(mass.kilogram() / volume.cubic_metre())
-            .map_err(|_| SealedError::NoCharge)?;
-        Ok(Self { fluid, mass, volume, density })
+        let density =
+            Density::from_kilogram_per_cubic_metre(mass.kilogram() / volume.cubic_metre())
+                .map_err(|_| SealedError::NoCharge)?;
+        Ok(Self {
+            fluid,
+            mass,
+            volume,
+            density,
+        })
     }
 
     pub fn fluid(&self) -> &Arc<Fluid> {
@@ -105,7 +111,11 @@ impl SealedUnit {
         let (low, high) = (low.kelvin(), high.kelvin());
         let mut all: Vec<f64> = (0..=SAMPLES)
             .map(|i| low + (high - low) * i as f64 / SAMPLES as f64)
-            .chain(knots.iter().flat_map(|t| [t.kelvin() - 1e-9, t.kelvin(), t.kelvin() + 1e-9]))
+            .chain(
+                knots
+                    .iter()
+                    .flat_map(|t| [t.kelvin() - 1e-9, t.kelvin(), t.kelvin() + 1e-9]),
+            )
             .chain(self.crossings()?.iter().map(|c| c.temperature.kelvin()))
             .filter(|t| (low..=high).contains(t))
             .collect();

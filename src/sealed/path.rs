@@ -23,12 +23,20 @@ pub fn path(
     let steps = points.max(2) - 1;
     let mut at: Vec<f64> = (0..=steps)
         .map(|i| low + (high - low) * i as f64 / steps as f64)
-        .chain(kinks.iter().map(|t| t.kelvin()).filter(|t| (low..=high).contains(t)))
+        .chain(
+            kinks
+                .iter()
+                .map(|t| t.kelvin())
+                .filter(|t| (low..=high).contains(t)),
+        )
         .collect();
     at.sort_by(f64::total_cmp);
     at.dedup();
     at.into_iter()
         .filter_map(|t| Temperature::from_kelvin(t).ok())
-        .map(|temperature| PathPoint { temperature, state: unit.state(temperature) })
+        .map(|temperature| PathPoint {
+            temperature,
+            state: unit.state(temperature),
+        })
         .collect()
 }

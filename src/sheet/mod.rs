@@ -50,7 +50,11 @@ pub fn render(design: &Design, a: &Assessment, units: &Units, head: &Head) -> St
 fn do_not_fill(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
     page.rule('#');
     page.paragraph("DO NOT FILL. This design is not fit, for these reasons:");
-    for finding in a.findings.iter().filter(|finding| finding.severity == Severity::Error) {
+    for finding in a
+        .findings
+        .iter()
+        .filter(|finding| finding.severity == Severity::Error)
+    {
         let said = words::finding(finding, Some(&design.chamber), units);
         page.item("  *", &format!("{}: {}", said.title, said.detail));
     }

@@ -93,7 +93,10 @@ impl Page {
             // A word longer than a line is broken: no line is wider than the page.
             while line.chars().count() + word.chars().count() > WIDTH {
                 let room = WIDTH - line.chars().count();
-                let cut = word.char_indices().nth(room).map_or(word.len(), |(at, _)| at);
+                let cut = word
+                    .char_indices()
+                    .nth(room)
+                    .map_or(word.len(), |(at, _)| at);
                 line.push_str(&word[..cut]);
                 self.push(&line);
                 line = rest.to_owned();
@@ -125,8 +128,14 @@ mod tests {
         page.item("[ ]", &"step ".repeat(40));
         page.to_fill_side_by_side(&["Date", "Serial", "Lot"]);
         let text = page.finish();
-        assert!(text.lines().all(|line| line.chars().count() <= WIDTH), "{text}");
-        assert!(!text.lines().any(|line| line.trim_start().starts_with("°C")), "{text}");
+        assert!(
+            text.lines().all(|line| line.chars().count() <= WIDTH),
+            "{text}"
+        );
+        assert!(
+            !text.lines().any(|line| line.trim_start().starts_with("°C")),
+            "{text}"
+        );
         assert!(!text.contains('\u{a0}'));
     }
 }

@@ -27,7 +27,10 @@ pub fn head(page: &mut Page, design: &Design, head: &Head) {
     }
     page.row("File", head.file_name.as_deref().unwrap_or("not saved"));
     page.row("Content fingerprint", &head.fingerprint);
-    page.row("Written by", concat!("Chargewright ", env!("CARGO_PKG_VERSION")));
+    page.row(
+        "Written by",
+        concat!("Chargewright ", env!("CARGO_PKG_VERSION")),
+    );
     page.row("Duty", design.duty.name());
     page.blank();
     page.to_fill_side_by_side(&["Date", "Serial", "Lot"]);
@@ -53,7 +56,10 @@ pub fn fluid(page: &mut Page, a: &Assessment) {
         page.row("Refrigerant number", number);
     }
     if let Some(group) = &fluid.safety().group {
-        page.row("Safety group", &format!("{} ({})", group.value, group.source));
+        page.row(
+            "Safety group",
+            &format!("{} ({})", group.value, group.source),
+        );
     }
     page.to_fill("Grade and moisture");
     page.to_fill("Stabiliser");
@@ -63,9 +69,16 @@ pub fn fluid(page: &mut Page, a: &Assessment) {
 pub fn before_filling(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
     page.heading("BEFORE FILLING");
     match &design.chamber.measured {
-        Some(MeasuredVolume { volume, uncertainty }) => page.row(
+        Some(MeasuredVolume {
+            volume,
+            uncertainty,
+        }) => page.row(
             "Inside volume",
-            &format!("{} +/- {}, measured", units.show(*volume), units.show_to(*uncertainty, 2)),
+            &format!(
+                "{} +/- {}, measured",
+                units.show(*volume),
+                units.show_to(*uncertainty, 2)
+            ),
         ),
         None => {
             if let Ok(volumes) = &a.volumes {
@@ -101,12 +114,19 @@ pub fn weighing(page: &mut Page, design: &Design, a: &Assessment, units: &Units)
     page.row("Charge stated as", &stated(design, units));
     page.row(
         "Sealed mass aimed at",
-        &format!("{} +/- {}", units.show(charge.nominal), units.show_to(design.charge.tolerance, 3)),
+        &format!(
+            "{} +/- {}",
+            units.show(charge.nominal),
+            units.show_to(design.charge.tolerance, 3)
+        ),
     );
     let balance = design.bench.balance.kilogram();
     let purge = design.bench.purge_loss.kilogram();
     // Both ends move inwards by the balance's uncertainty and round inwards.
-    let (mut low, mut high) = (charge.least.kilogram() + balance, charge.greatest.kilogram() - balance);
+    let (mut low, mut high) = (
+        charge.least.kilogram() + balance,
+        charge.greatest.kilogram() - balance,
+    );
     if let Ok(window) = &a.window
         && let Some((least, greatest)) = window.ends()
     {
@@ -117,12 +137,20 @@ pub fn weighing(page: &mut Page, design: &Design, a: &Assessment, units: &Units)
     let reading = |kilogram: f64, down: bool| {
         let number = unit.number_of(kilogram);
         let digits = 5;
-        let careful = if down { careful_down(number, digits) } else { careful_up(number, digits) };
+        let careful = if down {
+            careful_down(number, digits)
+        } else {
+            careful_up(number, digits)
+        };
         format!("{} {}", figures(careful, digits as usize), unit.symbol)
     };
     page.row(
         "1  Dispense, scale shows",
-        &format!("from {} to {}", reading(low + purge, false), reading(high + purge, true)),
+        &format!(
+            "from {} to {}",
+            reading(low + purge, false),
+            reading(high + purge, true)
+        ),
     );
     page.row(
         "2  Sealed mass after purge",
@@ -136,12 +164,19 @@ pub fn weighing(page: &mut Page, design: &Design, a: &Assessment, units: &Units)
         ),
     );
     if purge > 0.0 {
-        page.row("Purge loss counted on", &units.show(design.bench.purge_loss));
+        page.row(
+            "Purge loss counted on",
+            &units.show(design.bench.purge_loss),
+        );
     }
     if let Ok(volume) = &charge.dispensed_volume {
         page.row(
             "Dispensed liquid",
-            &format!("{} at the liquid's own {}", units.show(*volume), units.show(design.conditions.bench)),
+            &format!(
+                "{} at the liquid's own {}",
+                units.show(*volume),
+                units.show(design.conditions.bench)
+            ),
         );
     }
     window_rows(page, a, units);
@@ -174,14 +209,24 @@ fn window_rows(page: &mut Page, a: &Assessment, units: &Units) {
             )
         })
     };
-    page.row("Window, least", &end(Side::AtLeast, window).unwrap_or_else(|| "none asked for".to_owned()));
-    page.row("Window, greatest", &end(Side::AtMost, window).unwrap_or_else(|| "none found".to_owned()));
+    page.row(
+        "Window, least",
+        &end(Side::AtLeast, window).unwrap_or_else(|| "none asked for".to_owned()),
+    );
+    page.row(
+        "Window, greatest",
+        &end(Side::AtMost, window).unwrap_or_else(|| "none found".to_owned()),
+    );
 }
 
 fn stated(design: &Design, units: &Units) -> String {
     match &design.charge.aim {
         ChargeAim::Mass { .. } => "mass".to_owned(),
-        ChargeAim::FillRatio { ratio, temperature, of } => {
+        ChargeAim::FillRatio {
+            ratio,
+            temperature,
+            of,
+        } => {
             let of = match of {
                 NamedVolume::Inside => "the inside volume".to_owned(),
                 NamedVolume::Part(name) => format!("“{name}”"),
@@ -193,7 +238,11 @@ fn stated(design: &Design, units: &Units) -> String {
             )
         }
         ChargeAim::Dispensed { volume } => {
-            format!("{} of liquid dispensed at {}", units.show(*volume), units.show(design.conditions.bench))
+            format!(
+                "{} of liquid dispensed at {}",
+                units.show(*volume),
+                units.show(design.conditions.bench)
+            )
         }
     }
 }
@@ -204,7 +253,10 @@ pub fn steps(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
     let bench = design.conditions.bench;
     let pressure = |t: Temperature| fluid.saturation_pressure(t).ok();
     let show = |p: Pressure| format!("{} abs", units.show(p));
-    page.item("[ ]", "Evacuate the clean, proven unit; close the valve; read the tare.");
+    page.item(
+        "[ ]",
+        "Evacuate the clean, proven unit; close the valve; read the tare.",
+    );
     let gas_at_bench = pressure(bench).is_none_or(|p| p.pascal() > STANDARD_ATMOSPHERE_PA);
     match pressure(bench) {
         Some(p) if gas_at_bench => page.item(
@@ -236,14 +288,22 @@ pub fn steps(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
     let verdicts: Vec<String> = baths
         .iter()
         .map(|(bath, kelvin)| {
-            let verb = if *kelvin < freezing.kelvin() { "freezes" } else { "does not freeze" };
+            let verb = if *kelvin < freezing.kelvin() {
+                "freezes"
+            } else {
+                "does not freeze"
+            };
             let at = units.show_si(Kind::Temperature, *kelvin, 4);
             format!("{bath} ({at}) {verb} it")
         })
         .collect();
     page.item(
         "[ ]",
-        &format!("Freeze, evacuate, thaw, repeat; or boil off the purge loss. It melts at {}: {}.", units.show(freezing), verdicts.join("; ")),
+        &format!(
+            "Freeze, evacuate, thaw, repeat; or boil off the purge loss. It melts at {}: {}.",
+            units.show(freezing),
+            verdicts.join("; ")
+        ),
     );
     if freezing.kelvin() > LIQUID_NITROGEN_K && freezing.kelvin() < DRY_ICE_K {
         page.item(
@@ -257,12 +317,23 @@ pub fn steps(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
     page.item(" ! ", "Never plunge glass into a cold bath; cool slowly. Thaw from the top, so that the melt has room.");
     page.item(" ! ", "If gas has condensed in the unit, do not seal it.");
     if fluid.safety().is_flammable() {
-        page.item(" ! ", "Flammable vapour: no flame, no hot seal, until no vapour is near the joint.");
+        page.item(
+            " ! ",
+            "Flammable vapour: no flame, no hot seal, until no vapour is near the joint.",
+        );
     }
-    if fluid.safety().stability.iter().any(|s| s.kind == StabilityKind::AcidInFlame) {
+    if fluid
+        .safety()
+        .stability
+        .iter()
+        .any(|s| s.kind == StabilityKind::AcidInFlame)
+    {
         page.item(" ! ", "Its vapour in a flame makes acid, and chlorinated vapour phosgene: purge the seal first.");
     }
-    page.item("[ ]", "Seal. Weigh unit and stub: the sealed mass must be inside row 2.");
+    page.item(
+        "[ ]",
+        "Seal. Weigh unit and stub: the sealed mass must be inside row 2.",
+    );
 }
 
 pub fn afterwards(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
@@ -274,7 +345,11 @@ pub fn afterwards(page: &mut Page, design: &Design, a: &Assessment, units: &Unit
             "Expected pressure once the whole unit stands at one temperature (gauge against a barometer of {}):",
             units.show(conditions.barometer)
         ));
-        for t in [conditions.working_low, conditions.bench, conditions.working_high] {
+        for t in [
+            conditions.working_low,
+            conditions.bench,
+            conditions.working_high,
+        ] {
             let text = match corners.nominal.state(t) {
                 Ok(state) if state.regime == Regime::Frozen => "frozen".to_owned(),
                 Ok(state) => {
@@ -287,7 +362,10 @@ pub fn afterwards(page: &mut Page, design: &Design, a: &Assessment, units: &Unit
                 }
                 Err(_) => "not known".to_owned(),
             };
-            page.row(&format!("  at {}", units.show(t).replace('\u{a0}', " ")), &text);
+            page.row(
+                &format!("  at {}", units.show(t).replace('\u{a0}', " ")),
+                &text,
+            );
         }
         page.paragraph("A higher reading is gas in the unit or a wrong fluid: do not release it.");
     } else {
@@ -305,8 +383,14 @@ pub fn afterwards(page: &mut Page, design: &Design, a: &Assessment, units: &Unit
             ),
         );
     }
-    page.item("[ ]", "Re-weigh after a soak at the bench: a loss is a leak.");
-    page.item("[ ]", "Under- or overfilled: recover the fluid into its vessel. Never boil it off into the room.");
+    page.item(
+        "[ ]",
+        "Re-weigh after a soak at the bench: a loss is a leak.",
+    );
+    page.item(
+        "[ ]",
+        "Under- or overfilled: recover the fluid into its vessel. Never boil it off into the room.",
+    );
     page.to_fill("Mass after soak, days");
 }
 
@@ -336,18 +420,31 @@ pub fn worst_case(page: &mut Page, design: &Design, a: &Assessment, units: &Unit
                     page.row("Weakest part", &weakest.name);
                     page.row(
                         "Allowable load",
-                        &format!("{} ({})", units.show(weakest.allowable.pressure), words::basis(weakest.allowable.basis)),
+                        &format!(
+                            "{} ({})",
+                            units.show(weakest.allowable.pressure),
+                            words::basis(weakest.allowable.basis)
+                        ),
                     );
                     if let Ok(share) = &case.of_allowable {
-                        page.row("Used of the allowable", &format!("{} %", figures(100.0 * share, 3)));
+                        page.row(
+                            "Used of the allowable",
+                            &format!("{} %", figures(100.0 * share, 3)),
+                        );
                     }
                     match (&weakest.burst, &case.of_burst) {
                         (Ok(burst), Ok(share)) if *share > 0.0 => page.row(
                             "Burst load",
-                            &format!("{}, {} times the load", units.show(*burst), figures(1.0 / share, 3)),
+                            &format!(
+                                "{}, {} times the load",
+                                units.show(*burst),
+                                figures(1.0 / share, 3)
+                            ),
                         ),
                         (Ok(burst), _) => page.row("Burst load", &units.show(*burst)),
-                        (Err(unknown), _) => page.row("Burst load", &format!("not known: {}", unknown.reason)),
+                        (Err(unknown), _) => {
+                            page.row("Burst load", &format!("not known: {}", unknown.reason))
+                        }
                     }
                 }
                 Err(unknown) => page.row("Weakest part", &format!("not known: {unknown}")),
@@ -360,22 +457,39 @@ pub fn worst_case(page: &mut Page, design: &Design, a: &Assessment, units: &Unit
         for event in events.iter().filter(|event| event.temperature < high) {
             let what = words::event(event.kind);
             // Freezing belongs to the fluid, not to this charge.
-            let prefix = if event.kind == EventKind::Freezing { "Fluid" } else { "Unit" };
-            page.row(&format!("{prefix} {what}"), &format!("at {}", units.show(event.temperature)));
+            let prefix = if event.kind == EventKind::Freezing {
+                "Fluid"
+            } else {
+                "Unit"
+            };
+            page.row(
+                &format!("{prefix} {what}"),
+                &format!("at {}", units.show(event.temperature)),
+            );
         }
     }
 }
 
 pub fn warnings(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
-    let spoken: Vec<_> = a.findings.iter().filter(|f| f.severity != Severity::Error).collect();
+    let spoken: Vec<_> = a
+        .findings
+        .iter()
+        .filter(|f| f.severity != Severity::Error)
+        .collect();
     if spoken.is_empty() {
         return;
     }
     page.heading("WARNINGS AND NOTES");
     for finding in spoken {
         let said = words::finding(finding, Some(&design.chamber), units);
-        let mark = if finding.severity == Severity::Warning { "!" } else { "-" };
-        let advice = said.try_this.map_or_else(String::new, |text| format!(" {text}"));
+        let mark = if finding.severity == Severity::Warning {
+            "!"
+        } else {
+            "-"
+        };
+        let advice = said
+            .try_this
+            .map_or_else(String::new, |text| format!(" {text}"));
         page.item(mark, &format!("{}: {}{advice}", said.title, said.detail));
     }
 }
@@ -391,7 +505,11 @@ pub fn basis(page: &mut Page, design: &Design, a: &Assessment) {
     if let Ok(case) = &a.worst
         && let Ok(weakest) = &case.weakest
     {
-        let material = design.chamber.parts.get(weakest.part).and_then(|part| part.wall.as_ref());
+        let material = design
+            .chamber
+            .parts
+            .get(weakest.part)
+            .and_then(|part| part.wall.as_ref());
         let material = material.map_or("", |wall| wall.material.as_str());
         for source in a.envelope.sources(weakest.part, weakest.allowable.basis) {
             unconfirmed |= !source.is_confirmed();
@@ -400,9 +518,18 @@ pub fn basis(page: &mut Page, design: &Design, a: &Assessment) {
     }
     let safety = a.fluid.safety();
     for (what, source) in [
-        ("Flammable limit", safety.lower_flammable_limit.as_ref().map(|s| &s.source)),
-        ("Exposure limit", safety.exposure_limit_ppm.as_ref().map(|s| &s.source)),
-        ("Dangerous concentration", safety.immediately_dangerous_ppm.as_ref().map(|s| &s.source)),
+        (
+            "Flammable limit",
+            safety.lower_flammable_limit.as_ref().map(|s| &s.source),
+        ),
+        (
+            "Exposure limit",
+            safety.exposure_limit_ppm.as_ref().map(|s| &s.source),
+        ),
+        (
+            "Dangerous concentration",
+            safety.immediately_dangerous_ppm.as_ref().map(|s| &s.source),
+        ),
         ("Hazard statements", Some(&safety.statements.source)),
     ] {
         if let Some(source) = source {
@@ -421,14 +548,26 @@ pub fn care(page: &mut Page, a: &Assessment) {
     for code in &safety.statements.value {
         page.row(code, words::statement(code));
     }
-    page.item("-", "Eye protection and a shield at every pressurised or evacuated unit; gloves against cold.");
+    page.item(
+        "-",
+        "Eye protection and a shield at every pressurised or evacuated unit; gloves against cold.",
+    );
     if safety.is_flammable() {
-        page.item("-", "No ignition source; earthed vessels; ventilation at the floor and at the joint.");
+        page.item(
+            "-",
+            "No ignition source; earthed vessels; ventilation at the floor and at the joint.",
+        );
     }
     if safety.is_toxic() || safety.is_corrosive() {
-        page.item("-", "Work under an extraction hood; keep what the safety data sheet asks for at hand.");
+        page.item(
+            "-",
+            "Work under an extraction hood; keep what the safety data sheet asks for at hand.",
+        );
     }
-    page.item("-", "Spill and disposal: as the safety data sheet and the local rules say.");
+    page.item(
+        "-",
+        "Spill and disposal: as the safety data sheet and the local rules say.",
+    );
     for caution in words::CAUTIONS {
         page.item("-", caution);
     }
@@ -437,7 +576,12 @@ pub fn care(page: &mut Page, a: &Assessment) {
 pub fn label(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
     let Ok(charge) = &a.charge else { return };
     page.heading("UNIT LABEL");
-    page.paragraph(&format!("{}, {} (CAS {})", design.title, a.fluid.name(), a.fluid.cas()));
+    page.paragraph(&format!(
+        "{}, {} (CAS {})",
+        design.title,
+        a.fluid.name(),
+        a.fluid.cas()
+    ));
     page.paragraph(&format!(
         "Sealed charge {}. Highest temperature {}.",
         units.show(charge.nominal),

@@ -8,8 +8,10 @@ pub fn figures(value: f64, digits: usize) -> String {
         return "0".to_owned();
     }
     let rounded = format!("{:.*e}", digits.saturating_sub(1), value);
-    let exponent: i32 =
-        rounded.split_once('e').and_then(|(_, exponent)| exponent.parse().ok()).unwrap_or(0);
+    let exponent: i32 = rounded
+        .split_once('e')
+        .and_then(|(_, exponent)| exponent.parse().ok())
+        .unwrap_or(0);
     let digits = digits as i32;
     if exponent < -4 || exponent >= digits.max(6) {
         return rounded;
@@ -43,8 +45,11 @@ fn stepped(value: f64, digits: i32, round: fn(f64) -> f64) -> f64 {
         (value / scale, |x, s| x * s)
     };
     let nearest = scaled.round();
-    let stepped =
-        if (scaled - nearest).abs() <= 4.0 * f64::EPSILON * nearest.abs() { nearest } else { round(scaled) };
+    let stepped = if (scaled - nearest).abs() <= 4.0 * f64::EPSILON * nearest.abs() {
+        nearest
+    } else {
+        round(scaled)
+    };
     back(stepped, scale)
 }
 

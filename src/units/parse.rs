@@ -42,9 +42,19 @@ pub fn parse_si(text: &str, kind: Kind, default: &Unit) -> Result<f64, ParseErro
     let (number, unit) = cleaned.split_at(split);
     let number = number_value(number, text)?;
     let unit = unit.trim();
-    let unit = if unit.is_empty() { default } else { find_unit(unit, kind)? };
+    let unit = if unit.is_empty() {
+        default
+    } else {
+        find_unit(unit, kind)?
+    };
     let si = unit.to_si(number);
-    if si.is_finite() { Ok(si) } else { Err(ParseError::TooLarge { text: text.to_owned() }) }
+    if si.is_finite() {
+        Ok(si)
+    } else {
+        Err(ParseError::TooLarge {
+            text: text.to_owned(),
+        })
+    }
 }
 
 /// Byte index where the leading number ends (digits, one sign, marks, exponent).
@@ -73,7 +83,9 @@ fn number_end(text: &str) -> usize {
 
 fn number_value(number: &str, whole: &str) -> Result<f64, ParseError> {
     if !number.bytes().any(|b| b.is_ascii_digit()) {
-        return Err(ParseError::NoNumber { text: whole.trim().to_owned() });
+        return Err(ParseError::NoNumber {
+            text: whole.trim().to_owned(),
+        });
     }
     let commas = number.matches(',').count();
     let plain = match commas {
@@ -90,7 +102,9 @@ fn number_value(number: &str, whole: &str) -> Result<f64, ParseError> {
         .parse::<f64>()
         .ok()
         .filter(|value| value.is_finite())
-        .ok_or_else(|| ParseError::NoNumber { text: whole.trim().to_owned() })
+        .ok_or_else(|| ParseError::NoNumber {
+            text: whole.trim().to_owned(),
+        })
 }
 
 /// One to three digits, a comma, exactly three digits, and not a leading zero.
@@ -121,11 +135,15 @@ fn find_unit(name: &str, kind: Kind) -> Result<&'static Unit, ParseError> {
         return Ok(unit);
     }
     // Case is forgiven only where a single unit is meant: mPa and MPa are not the same.
-    let loose: Vec<_> =
-        of_kind().filter(|unit| spelled(unit, &|s| s.to_lowercase() == lower)).collect();
+    let loose: Vec<_> = of_kind()
+        .filter(|unit| spelled(unit, &|s| s.to_lowercase() == lower))
+        .collect();
     match loose.as_slice() {
         [one] if lower != "mpa" => Ok(one),
-        _ => Err(ParseError::UnknownUnit { unit: squeezed, known: known_units(kind) }),
+        _ => Err(ParseError::UnknownUnit {
+            unit: squeezed,
+            known: known_units(kind),
+        }),
     }
 }
 
@@ -135,7 +153,11 @@ fn known_units(kind: Kind) -> String {
         .filter(|unit| unit.kind == kind && !unit.symbol.is_empty())
         .map(|unit| unit.symbol)
         .collect();
-    if symbols.is_empty() { "none (a bare number)".to_owned() } else { symbols.join(", ") }
+    if symbols.is_empty() {
+        "none (a bare number)".to_owned()
+    } else {
+        symbols.join(", ")
+    }
 }
 
 #[cfg(test)]
@@ -145,13 +167,21 @@ mod tests {
 
     fn check(text: &str, kind: Kind, default: &str, expected: f64) {
         let value = parse_si(text, kind, unit_named(kind, default)).expect(text);
-        assert!((value - expected).abs() <= 1e-12 * expected.abs(), "{text}: {value} {expected}");
+        assert!(
+            (value - expected).abs() <= 1e-12 * expected.abs(),
+            "{text}: {value} {expected}"
+        );
     }
 
     #[test]
     fn units_are_understood() {
         check("2 in", Kind::Length, "mm", 0.0508);
-        check("150psi", Kind::Pressure, "bar", 150.0 * 6_894.757_293_168_361);
+        check(
+            "150psi",
+            Kind::Pressure,
+            "bar",
+            150.0 * 6_894.757_293_168_361,
+        );
         check("70 degF", Kind::Temperature, "°C", 294.261_111_111_111_1);
         check("-5degC", Kind::Temperature, "K", 268.15);
         check("\u{2212}5", Kind::Temperature, "°C", 268.15);
@@ -162,22 +192,60 @@ mod tests {
         check("40 %", Kind::Ratio, "%", 0.4);
         check("12 BAR", Kind::Pressure, "Pa", 12e5);
         check("3 MPa", Kind::Pressure, "bar", 3e6);
-        check("62,4 lb/ft3", Kind::Density, "kg/m³", 62.4 * 16.018_463_373_960_14);
+        check(
+            "62,4 lb/ft3",
+            Kind::Density,
+            "kg/m³",
+            62.4 * 16.018_463_373_960_14,
+        );
     }
 
     #[test]
     fn nonsense_is_refused_with_a_word() {
         let parse = |text, kind, unit| parse_si(text, kind, unit_named(kind, unit));
-        assert!(matches!(parse("1,000", Kind::Mass, "g"), Err(ParseError::Ambiguous { .. })));
-        assert!(matches!(parse("1,234.5", Kind::Mass, "g"), Err(ParseError::Ambiguous { .. })));
-        assert!(matches!(parse("nan", Kind::Mass, "g"), Err(ParseError::NoNumber { .. })));
-        assert!(matches!(parse("inf", Kind::Mass, "g"), Err(ParseError::NoNumber { .. })));
-        assert!(matches!(parse("1e999", Kind::Mass, "g"), Err(ParseError::NoNumber { .. })));
-        assert!(matches!(parse("1e308 kPa", Kind::Pressure, "Pa"), Err(ParseError::TooLarge { .. })));
-        assert!(matches!(parse("3 mPa", Kind::Pressure, "bar"), Err(ParseError::UnknownUnit { .. })));
-        assert!(matches!(parse("3 furlong", Kind::Length, "m"), Err(ParseError::UnknownUnit { .. })));
-        assert!(matches!(parse("2 barg", Kind::Pressure, "bar"), Err(ParseError::Gauge { .. })));
-        assert!(matches!(parse("1.2.3", Kind::Mass, "g"), Err(ParseError::NoNumber { .. })));
-        assert!(matches!(parse("  ", Kind::Mass, "g"), Err(ParseError::Empty)));
+        assert!(matches!(
+            parse("1,000", Kind::Mass, "g"),
+            Err(ParseError::Ambiguous { .. })
+        ));
+        assert!(matches!(
+            parse("1,234.5", Kind::Mass, "g"),
+            Err(ParseError::Ambiguous { .. })
+        ));
+        assert!(matches!(
+            parse("nan", Kind::Mass, "g"),
+            Err(ParseError::NoNumber { .. })
+        ));
+        assert!(matches!(
+            parse("inf", Kind::Mass, "g"),
+            Err(ParseError::NoNumber { .. })
+        ));
+        assert!(matches!(
+            parse("1e999", Kind::Mass, "g"),
+            Err(ParseError::NoNumber { .. })
+        ));
+        assert!(matches!(
+            parse("1e308 kPa", Kind::Pressure, "Pa"),
+            Err(ParseError::TooLarge { .. })
+        ));
+        assert!(matches!(
+            parse("3 mPa", Kind::Pressure, "bar"),
+            Err(ParseError::UnknownUnit { .. })
+        ));
+        assert!(matches!(
+            parse("3 furlong", Kind::Length, "m"),
+            Err(ParseError::UnknownUnit { .. })
+        ));
+        assert!(matches!(
+            parse("2 barg", Kind::Pressure, "bar"),
+            Err(ParseError::Gauge { .. })
+        ));
+        assert!(matches!(
+            parse("1.2.3", Kind::Mass, "g"),
+            Err(ParseError::NoNumber { .. })
+        ));
+        assert!(matches!(
+            parse("  ", Kind::Mass, "g"),
+            Err(ParseError::Empty)
+        ));
     }
 }

@@ -10,9 +10,19 @@ pub enum QuantityError {
     #[error("{quantity} must be a finite number, not {value}")]
     NotFinite { quantity: &'static str, value: f64 },
     #[error("{quantity} of {value} {unit} is below the least allowed, {low} {unit}")]
-    Below { quantity: &'static str, value: f64, low: f64, unit: &'static str },
+    Below {
+        quantity: &'static str,
+        value: f64,
+        low: f64,
+        unit: &'static str,
+    },
     #[error("{quantity} of {value} {unit} is above the greatest allowed, {high} {unit}")]
-    Above { quantity: &'static str, value: f64, high: f64, unit: &'static str },
+    Above {
+        quantity: &'static str,
+        value: f64,
+        high: f64,
+        unit: &'static str,
+    },
 }
 
 /// What every quantity can do: read and give its SI value, name its kind.
@@ -37,10 +47,20 @@ fn checked(
         return Err(QuantityError::NotFinite { quantity, value });
     }
     if value < low {
-        return Err(QuantityError::Below { quantity, value, low, unit });
+        return Err(QuantityError::Below {
+            quantity,
+            value,
+            low,
+            unit,
+        });
     }
     if value > high {
-        return Err(QuantityError::Above { quantity, value, high, unit });
+        return Err(QuantityError::Above {
+            quantity,
+            value,
+            high,
+            unit,
+        });
     }
     Ok(value + 0.0) // turns −0 into 0
 }
@@ -160,10 +180,16 @@ mod tests {
     #[test]
     fn nan_infinity_and_out_of_range_are_refused_by_name() {
         for bad in [f64::NAN, f64::INFINITY, f64::NEG_INFINITY] {
-            assert!(matches!(Length::from_metre(bad), Err(QuantityError::NotFinite { .. })));
+            assert!(matches!(
+                Length::from_metre(bad),
+                Err(QuantityError::NotFinite { .. })
+            ));
         }
         let text = Length::from_metre(-0.001).map_err(|e| e.to_string());
-        assert_eq!(text, Err("a length of -0.001 m is below the least allowed, 0 m".to_owned()));
+        assert_eq!(
+            text,
+            Err("a length of -0.001 m is below the least allowed, 0 m".to_owned())
+        );
         assert!(Temperature::from_celsius(-274.0).is_err());
         assert!(Ratio::from_fraction(1.01).is_err());
     }

@@ -36,7 +36,10 @@ impl Units {
     pub fn unit_for(&self, kind: Kind, si: f64) -> &'static Unit {
         let size = si.abs();
         let pick = |steps: &[(f64, &'static str)], last: &'static str| {
-            let symbol = steps.iter().find(|(below, _)| size < *below).map_or(last, |(_, s)| s);
+            let symbol = steps
+                .iter()
+                .find(|(below, _)| size < *below)
+                .map_or(last, |(_, s)| s);
             unit_named(kind, symbol)
         };
         match (kind, self.system) {
@@ -68,10 +71,18 @@ impl Units {
     pub fn number(&self, kind: Kind, si: f64, unit: &Unit, digits: usize) -> String {
         let number = unit.number_of(si);
         if kind == Kind::Temperature {
-            let decimals = if self.system == UnitSystem::Kelvin { 2 } else { 1 };
+            let decimals = if self.system == UnitSystem::Kelvin {
+                2
+            } else {
+                1
+            };
             let text = format!("{number:.decimals$}");
             // "-0.0" reads like a mistake.
-            if text.trim_start_matches('-').chars().all(|c| matches!(c, '0' | '.')) {
+            if text
+                .trim_start_matches('-')
+                .chars()
+                .all(|c| matches!(c, '0' | '.'))
+            {
                 return text.trim_start_matches('-').to_owned();
             }
             return text;
@@ -83,7 +94,11 @@ impl Units {
     pub fn show_si(&self, kind: Kind, si: f64, digits: usize) -> String {
         let unit = self.unit_for(kind, si);
         let number = self.number(kind, si, unit, digits);
-        if unit.symbol.is_empty() { number } else { format!("{number}{NBSP}{}", unit.symbol) }
+        if unit.symbol.is_empty() {
+            number
+        } else {
+            format!("{number}{NBSP}{}", unit.symbol)
+        }
     }
 
     /// A quantity with its unit, to `digits` significant figures.

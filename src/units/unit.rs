@@ -57,7 +57,13 @@ const fn unit(
     aliases: &'static [&'static str],
     scale: f64,
 ) -> Unit {
-    Unit { kind, symbol, aliases, scale, offset: 0.0 }
+    Unit {
+        kind,
+        symbol,
+        aliases,
+        scale,
+        offset: 0.0,
+    }
 }
 
 const INCH: f64 = 0.0254;
@@ -70,7 +76,13 @@ const US_GALLON: f64 = 231.0 * INCH * INCH * INCH;
 /// inch, pound and the conventional millimetres of mercury are exact there.
 pub static UNITS: &[Unit] = &[
     unit(Kind::Temperature, "K", &["kelvin"], 1.0),
-    Unit { kind: Kind::Temperature, symbol: "°C", aliases: &["degC", "C", "celsius", "ºC", "deg C"], scale: 1.0, offset: 273.15 },
+    Unit {
+        kind: Kind::Temperature,
+        symbol: "°C",
+        aliases: &["degC", "C", "celsius", "ºC", "deg C"],
+        scale: 1.0,
+        offset: 273.15,
+    },
     Unit {
         kind: Kind::Temperature,
         symbol: "°F",
@@ -78,9 +90,24 @@ pub static UNITS: &[Unit] = &[
         scale: 5.0 / 9.0,
         offset: 459.67 * 5.0 / 9.0,
     },
-    unit(Kind::Temperature, "°R", &["degR", "R", "rankine"], 5.0 / 9.0),
-    unit(Kind::TemperatureDifference, "K", &["kelvin", "°C", "degC", "C", "celsius"], 1.0),
-    unit(Kind::TemperatureDifference, "°F", &["degF", "F", "°R", "R"], 5.0 / 9.0),
+    unit(
+        Kind::Temperature,
+        "°R",
+        &["degR", "R", "rankine"],
+        5.0 / 9.0,
+    ),
+    unit(
+        Kind::TemperatureDifference,
+        "K",
+        &["kelvin", "°C", "degC", "C", "celsius"],
+        1.0,
+    ),
+    unit(
+        Kind::TemperatureDifference,
+        "°F",
+        &["degF", "F", "°R", "R"],
+        5.0 / 9.0,
+    ),
     unit(Kind::TemperatureDifference, "mK", &[], 1e-3),
     unit(Kind::Pressure, "Pa", &["pascal"], 1.0),
     unit(Kind::Pressure, "hPa", &[], 100.0),
@@ -104,12 +131,37 @@ pub static UNITS: &[Unit] = &[
     unit(Kind::Length, "mil", &["thou"], INCH / 1000.0),
     unit(Kind::Length, "ft", &["foot", "feet", "'"], FOOT),
     unit(Kind::Volume, "m³", &["m3", "m^3"], 1.0),
-    unit(Kind::Volume, "L", &["l", "litre", "liter", "dm3", "dm³"], 1e-3),
-    unit(Kind::Volume, "mL", &["ml", "cc", "cm3", "cm³", "cm^3"], 1e-6),
+    unit(
+        Kind::Volume,
+        "L",
+        &["l", "litre", "liter", "dm3", "dm³"],
+        1e-3,
+    ),
+    unit(
+        Kind::Volume,
+        "mL",
+        &["ml", "cc", "cm3", "cm³", "cm^3"],
+        1e-6,
+    ),
     unit(Kind::Volume, "µL", &["ul", "uL", "mm3", "mm³", "μL"], 1e-9),
-    unit(Kind::Volume, "in³", &["in3", "in^3", "cu in", "cuin"], INCH * INCH * INCH),
-    unit(Kind::Volume, "ft³", &["ft3", "ft^3", "cu ft", "cuft"], FOOT * FOOT * FOOT),
-    unit(Kind::Volume, "fl oz", &["floz", "US fl oz"], US_GALLON / 128.0),
+    unit(
+        Kind::Volume,
+        "in³",
+        &["in3", "in^3", "cu in", "cuin"],
+        INCH * INCH * INCH,
+    ),
+    unit(
+        Kind::Volume,
+        "ft³",
+        &["ft3", "ft^3", "cu ft", "cuft"],
+        FOOT * FOOT * FOOT,
+    ),
+    unit(
+        Kind::Volume,
+        "fl oz",
+        &["floz", "US fl oz"],
+        US_GALLON / 128.0,
+    ),
     unit(Kind::Volume, "gal", &["US gal"], US_GALLON),
     unit(Kind::Mass, "kg", &["kilogram"], 1.0),
     unit(Kind::Mass, "g", &["gram", "grams"], 1e-3),
@@ -118,11 +170,26 @@ pub static UNITS: &[Unit] = &[
     unit(Kind::Mass, "lb", &["lbs", "pound", "lbm"], POUND),
     unit(Kind::Mass, "oz", &["ounce"], POUND / 16.0),
     unit(Kind::Mass, "gr", &["grain"], POUND / 7000.0),
-    unit(Kind::Density, "kg/m³", &["kg/m3", "kg/m^3", "g/L", "g/l"], 1.0),
-    unit(Kind::Density, "kg/L", &["kg/l", "g/mL", "g/ml", "g/cc", "g/cm3", "g/cm³"], 1e3),
+    unit(
+        Kind::Density,
+        "kg/m³",
+        &["kg/m3", "kg/m^3", "g/L", "g/l"],
+        1.0,
+    ),
+    unit(
+        Kind::Density,
+        "kg/L",
+        &["kg/l", "g/mL", "g/ml", "g/cc", "g/cm3", "g/cm³"],
+        1e3,
+    ),
     unit(Kind::Density, "mg/m³", &["mg/m3"], 1e-6),
     unit(Kind::Density, "g/m³", &["g/m3"], 1e-3),
-    unit(Kind::Density, "lb/ft³", &["lb/ft3"], POUND / (FOOT * FOOT * FOOT)),
+    unit(
+        Kind::Density,
+        "lb/ft³",
+        &["lb/ft3"],
+        POUND / (FOOT * FOOT * FOOT),
+    ),
     unit(Kind::Ratio, "%", &["percent", "pct"], 1e-2),
     unit(Kind::Ratio, "", &[], 1.0),
     unit(Kind::Energy, "J", &[], 1.0),

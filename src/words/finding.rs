@@ -32,7 +32,13 @@ pub fn finding(finding: &Finding, chamber: Option<&Chamber>, units: &Units) -> S
 }
 
 fn say(title: &str, detail: String) -> Said {
-    Said { title: title.to_owned(), detail, try_this: None, button: None, source: None }
+    Said {
+        title: title.to_owned(),
+        detail,
+        try_this: None,
+        button: None,
+        source: None,
+    }
 }
 
 impl Said {
@@ -268,4 +274,3 @@ fn percent(share: f64) -> String {
 fn ppm_text(ppm: f64) -> String {
     format!("{}\u{a0}ppm", figures(ppm, 3))
 }
-

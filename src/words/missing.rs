@@ -21,11 +21,17 @@ pub fn missing(missing: &Missing, units: &Units) -> String {
                 }
                 other => other.to_string(),
             };
-            format!("The strength of {} ({}) at {at} is not known: {why}.", unknown.name, unknown.material)
+            format!(
+                "The strength of {} ({}) at {at} is not known: {why}.",
+                unknown.name, unknown.material
+            )
         }
         Missing::Chamber(error) => chamber_error(error, units),
         Missing::Overfull { share } => {
-            format!("The liquid would fill {:.1} times the inside volume. Lower the fill ratio.", share)
+            format!(
+                "The liquid would fill {:.1} times the inside volume. Lower the fill ratio.",
+                share
+            )
         }
         other => format!("{}.", upper(&other.to_string())),
     }
@@ -33,29 +39,50 @@ pub fn missing(missing: &Missing, units: &Units) -> String {
 
 fn fluid_error(error: &FluidError, units: &Units) -> String {
     match error {
-        FluidError::Frozen { fluid, temperature, melting } => format!(
+        FluidError::Frozen {
+            fluid,
+            temperature,
+            melting,
+        } => format!(
             "{} is frozen at {}: it melts at {}.",
             upper(fluid),
             units.show(*temperature),
             units.show(*melting)
         ),
-        FluidError::TooCold { fluid, temperature, low } => format!(
+        FluidError::TooCold {
+            fluid,
+            temperature,
+            low,
+        } => format!(
             "{} is outside the equation of {fluid}, which starts at {}.",
             units.show(*temperature),
             units.show(*low)
         ),
-        FluidError::TooHot { fluid, temperature, high } => format!(
+        FluidError::TooHot {
+            fluid,
+            temperature,
+            high,
+        } => format!(
             "{} is outside the model of {fluid}, which ends at {}.",
             units.show(*temperature),
             units.show(*high)
         ),
-        FluidError::NoSaturation { fluid, temperature, high, critical } => format!(
+        FluidError::NoSaturation {
+            fluid,
+            temperature,
+            high,
+            critical,
+        } => format!(
             "{fluid} has no vapour pressure at {}: its saturation is given up to {} (critical point {}).",
             units.show(*temperature),
             units.show(*high),
             units.show(*critical)
         ),
-        FluidError::TooDense { fluid, density, high } => format!(
+        FluidError::TooDense {
+            fluid,
+            density,
+            high,
+        } => format!(
             "A mean density of {} is beyond the model of {fluid}, which ends at {}: far too much fluid for the volume.",
             units.show(*density),
             units.show(*high)
@@ -72,13 +99,19 @@ fn chamber_error(error: &ChamberError, units: &Units) -> String {
     match error {
         ChamberError::NoParts => "The chamber has no parts. Add one.".to_owned(),
         ChamberError::ZeroVolume => "The parts enclose no volume.".to_owned(),
-        ChamberError::InsertsTooLarge { cavity_m3, inserts_m3 } => format!(
+        ChamberError::InsertsTooLarge {
+            cavity_m3,
+            inserts_m3,
+        } => format!(
             "The inserts take {} out of a cavity of {}.",
             units.show_si(Kind::Volume, *inserts_m3, 4),
             units.show_si(Kind::Volume, *cavity_m3, 4)
         ),
         ChamberError::TooLarge { volume_m3 } => {
-            format!("A volume of {} is beyond all measure.", units.show_si(Kind::Volume, *volume_m3, 3))
+            format!(
+                "A volume of {} is beyond all measure.",
+                units.show_si(Kind::Volume, *volume_m3, 3)
+            )
         }
     }
 }
@@ -86,10 +119,12 @@ fn chamber_error(error: &ChamberError, units: &Units) -> String {
 /// A sentence for a chamber's contradiction; parts are named.
 pub fn chamber_fault(fault: &ChamberFault, chamber: Option<&Chamber>, units: &Units) -> String {
     let part = |index: &usize| {
-        chamber.and_then(|chamber| chamber.parts.get(*index)).map_or_else(
-            || format!("part {}", index + 1),
-            |part| format!("“{}”", part.name),
-        )
+        chamber
+            .and_then(|chamber| chamber.parts.get(*index))
+            .map_or_else(
+                || format!("part {}", index + 1),
+                |part| format!("“{}”", part.name),
+            )
     };
     match fault {
         ChamberFault::NoParts => "The parts list is empty. Add a part with a wall.".to_owned(),
@@ -133,7 +168,12 @@ pub fn condition_fault(fault: &ConditionFault, units: &Units) -> String {
             units.show(*high),
             units.show(*low)
         ),
-        ConditionFault::WorkingOutsideExtremes { low, high, coldest, hottest } => format!(
+        ConditionFault::WorkingOutsideExtremes {
+            low,
+            high,
+            coldest,
+            hottest,
+        } => format!(
             "The working range, {} to {}, reaches outside coldest to hottest, {} to {}. Widen the extremes.",
             units.show(*low),
             units.show(*high),
@@ -141,7 +181,10 @@ pub fn condition_fault(fault: &ConditionFault, units: &Units) -> String {
             units.show(*hottest)
         ),
         ConditionFault::OutsideBelowZero { pressure } => {
-            format!("An outside pressure of {} abs is below zero. Use 0 for space.", units.show(*pressure))
+            format!(
+                "An outside pressure of {} abs is below zero. Use 0 for space.",
+                units.show(*pressure)
+            )
         }
         ConditionFault::NoRoom => "The room has no volume.".to_owned(),
     }
@@ -150,5 +193,7 @@ pub fn condition_fault(fault: &ConditionFault, units: &Units) -> String {
 /// The first letter in upper case.
 pub(super) fn upper(text: &str) -> String {
     let mut chars = text.chars();
-    chars.next().map_or_else(String::new, |first| first.to_uppercase().chain(chars).collect())
+    chars.next().map_or_else(String::new, |first| {
+        first.to_uppercase().chain(chars).collect()
+    })
 }

@@ -24,12 +24,19 @@ fn saturation_of_the_catalogue_agrees_with_the_reference_to_1e_9() {
     let mut worst = Worst::default();
     let mut curve_worst = Worst::default();
     for row in rows("saturation.csv") {
-        let fluid = catalog.by_id(&row.name).expect("a table names fluids of the catalogue");
-        let [t, p, liquid, vapour, latent, slope] = row.values[..] else { panic!("six columns") };
+        let fluid = catalog
+            .by_id(&row.name)
+            .expect("a table names fluids of the catalogue");
+        let [t, p, liquid, vapour, latent, slope] = row.values[..] else {
+            panic!("six columns")
+        };
         let place = || format!("{} at {t} K", row.name);
         // The model itself: some equations reach a few hundredths of a kelvin below
         // the published melting point, where the fluid's door says "frozen".
-        let found = fluid.model().saturation(t, fluid.molar_mass()).expect(&row.name);
+        let found = fluid
+            .model()
+            .saturation(t, fluid.molar_mass())
+            .expect(&row.name);
         worst.see("pressure", found.pressure_pa, p, place);
         worst.see("liquid density", found.liquid_kg_per_m3, liquid, place);
         worst.see("vapour density", found.vapour_kg_per_m3, vapour, place);
@@ -49,8 +56,12 @@ fn single_phase_states_of_the_catalogue_agree_with_the_reference_to_1e_9() {
     let catalog = Catalog::built_in();
     let mut worst = Worst::default();
     for row in rows("single-phase.csv") {
-        let fluid = catalog.by_id(&row.name).expect("a table names fluids of the catalogue");
-        let [t, rho, p, cv, cp, sound] = row.values[..] else { panic!("six columns") };
+        let fluid = catalog
+            .by_id(&row.name)
+            .expect("a table names fluids of the catalogue");
+        let [t, rho, p, cv, cp, sound] = row.values[..] else {
+            panic!("six columns")
+        };
         let place = || format!("{} at {t} K, {rho} kg/m3", row.name);
         let m = fluid.molar_mass();
         let equation = equation(&fluid);
@@ -58,7 +69,12 @@ fn single_phase_states_of_the_catalogue_agree_with_the_reference_to_1e_9() {
         worst.see("pressure", equation.isotherm(t).pressure(rho / m), p, place);
         worst.see("cv", caloric.heat_capacity_v / m, cv, place);
         worst.see("cp", caloric.heat_capacity_p / m, cp, place);
-        worst.see("speed of sound", (caloric.sound_speed_squared_molar / m).sqrt(), sound, place);
+        worst.see(
+            "speed of sound",
+            (caloric.sound_speed_squared_molar / m).sqrt(),
+            sound,
+            place,
+        );
     }
     worst.check("single phase", 1e-9);
 }
@@ -76,7 +92,9 @@ fn every_published_term_form_agrees_with_the_reference() {
     };
     let mut worst = Worst::default();
     for row in rows("extra-saturation.csv") {
-        let [t, p, liquid, vapour, latent, slope] = row.values[..] else { panic!("six columns") };
+        let [t, p, liquid, vapour, latent, slope] = row.values[..] else {
+            panic!("six columns")
+        };
         let place = || format!("{} at {t} K", row.name);
         let found = equation_of(&row.name).saturation(t).expect(&row.name);
         worst.see("pressure", found.pressure, p, place);
@@ -86,11 +104,18 @@ fn every_published_term_form_agrees_with_the_reference() {
         worst.see("slope", found.slope, slope, place);
     }
     for row in rows("extra-single-phase.csv") {
-        let [t, rho, p, cv, cp, sound] = row.values[..] else { panic!("six columns") };
+        let [t, rho, p, cv, cp, sound] = row.values[..] else {
+            panic!("six columns")
+        };
         let place = || format!("{} at {t} K, {rho} mol/m3", row.name);
         let equation = equation_of(&row.name);
         let caloric = equation.caloric(t, rho);
-        worst.see("single-phase pressure", equation.isotherm(t).pressure(rho), p, place);
+        worst.see(
+            "single-phase pressure",
+            equation.isotherm(t).pressure(rho),
+            p,
+            place,
+        );
         worst.see("cv", caloric.heat_capacity_v, cv, place);
         worst.see("cp", caloric.heat_capacity_p, cp, place);
         let _ = sound; // needs the molar mass, which these test-only files do not carry
@@ -114,17 +139,25 @@ fn iapws_95_verification_values() {
         (900.0, 0.241, 0.100_062_559),
     ] {
         let p = equation.isotherm(t).pressure(rho / m) * 1e-6;
-        assert_eq!(format!("{p:.8e}"), format!("{p_mpa:.8e}"), "{t} K, {rho} kg/m3");
+        assert_eq!(
+            format!("{p:.8e}"),
+            format!("{p_mpa:.8e}"),
+            "{t} K, {rho} kg/m3"
+        );
     }
     for (t, p_mpa, liquid, vapour) in [
         (275.0, 0.698_451_167e-3, 999.887_406, 0.550_664_919e-2),
         (450.0, 0.932_203_564, 890.341_250, 4.812_003_60),
         (625.0, 16.908_269_3, 567.090_385, 118.290_280),
     ] {
-        let s = water.saturation(Temperature::from_kelvin(t).expect("table")).expect("in range");
-        for (found, table) in
-            [(s.pressure_pa * 1e-6, p_mpa), (s.liquid_kg_per_m3, liquid), (s.vapour_kg_per_m3, vapour)]
-        {
+        let s = water
+            .saturation(Temperature::from_kelvin(t).expect("table"))
+            .expect("in range");
+        for (found, table) in [
+            (s.pressure_pa * 1e-6, p_mpa),
+            (s.liquid_kg_per_m3, liquid),
+            (s.vapour_kg_per_m3, vapour),
+        ] {
             assert_eq!(format!("{found:.8e}"), format!("{table:.8e}"), "{t} K");
         }
     }

@@ -9,7 +9,9 @@ pub struct Row {
 }
 
 pub fn reference(file: &str) -> PathBuf {
-    Path::new(env!("CARGO_MANIFEST_DIR")).join("tests/reference").join(file)
+    Path::new(env!("CARGO_MANIFEST_DIR"))
+        .join("tests/reference")
+        .join(file)
 }
 
 /// Rows of a table whose first column is a name.
@@ -37,7 +39,13 @@ pub struct Worst {
 }
 
 impl Worst {
-    pub fn see(&mut self, column: &'static str, found: f64, expected: f64, place: impl Fn() -> String) {
+    pub fn see(
+        &mut self,
+        column: &'static str,
+        found: f64,
+        expected: f64,
+        place: impl Fn() -> String,
+    ) {
         let error = ((found - expected) / expected).abs();
         let error = if error.is_nan() { f64::INFINITY } else { error };
         match self.columns.iter_mut().find(|(name, _, _)| *name == column) {
@@ -53,7 +61,10 @@ impl Worst {
             println!("{title}: {column} within {error:.1e} (at {place})");
         }
         for (column, error, place) in &self.columns {
-            assert!(*error <= tolerance, "{title}: {column} is off by {error:.2e} at {place}");
+            assert!(
+                *error <= tolerance,
+                "{title}: {column} is off by {error:.2e} at {place}"
+            );
         }
     }
 }

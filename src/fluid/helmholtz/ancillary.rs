@@ -38,8 +38,17 @@ impl Ancillary {
     /// it is the reducing value.
     pub fn at(&self, temperature_k: f64) -> f64 {
         let theta = (1.0 - temperature_k / self.reducing_temperature_k).max(0.0);
-        let sum: f64 = self.n.iter().zip(&self.t).map(|(n, t)| n * theta.powf(*t)).sum();
-        let sum = if self.tau_first { sum * self.reducing_temperature_k / temperature_k } else { sum };
+        let sum: f64 = self
+            .n
+            .iter()
+            .zip(&self.t)
+            .map(|(n, t)| n * theta.powf(*t))
+            .sum();
+        let sum = if self.tau_first {
+            sum * self.reducing_temperature_k / temperature_k
+        } else {
+            sum
+        };
         match self.form {
             Form::Linear => self.reducing * (1.0 + sum),
             Form::Exponential => self.reducing * sum.exp(),

@@ -21,11 +21,27 @@ use serde::Deserialize;
 #[derive(Debug, Clone, PartialEq, Deserialize)]
 #[serde(deny_unknown_fields)]
 pub enum IdealTerms {
-    Lead { a1: f64, a2: f64 },
-    LogTau { a: f64 },
-    Power { n: Vec<f64>, t: Vec<f64> },
-    PlanckEinstein { n: Vec<f64>, theta: Vec<f64> },
-    PlanckEinsteinGeneral { n: Vec<f64>, theta: Vec<f64>, c: Vec<f64>, d: Vec<f64> },
+    Lead {
+        a1: f64,
+        a2: f64,
+    },
+    LogTau {
+        a: f64,
+    },
+    Power {
+        n: Vec<f64>,
+        t: Vec<f64>,
+    },
+    PlanckEinstein {
+        n: Vec<f64>,
+        theta: Vec<f64>,
+    },
+    PlanckEinsteinGeneral {
+        n: Vec<f64>,
+        theta: Vec<f64>,
+        c: Vec<f64>,
+        d: Vec<f64>,
+    },
     PlanckEinsteinKelvin {
         n: Vec<f64>,
         v_k: Vec<f64>,
@@ -33,7 +49,11 @@ pub enum IdealTerms {
         #[serde(default)]
         gas_constant: Option<f64>,
     },
-    HeatCapacityConstant { cp_over_r: f64, critical_temperature_k: f64, t0_k: f64 },
+    HeatCapacityConstant {
+        cp_over_r: f64,
+        critical_temperature_k: f64,
+        t0_k: f64,
+    },
     HeatCapacityPoly {
         c: Vec<f64>,
         t: Vec<f64>,
@@ -42,8 +62,15 @@ pub enum IdealTerms {
         #[serde(default)]
         gas_constant: Option<f64>,
     },
-    HeatCapacityAlyLee { c: Vec<f64>, critical_temperature_k: f64, t0_k: f64 },
-    Offset { a1: f64, a2: f64 },
+    HeatCapacityAlyLee {
+        c: Vec<f64>,
+        critical_temperature_k: f64,
+        t0_k: f64,
+    },
+    Offset {
+        a1: f64,
+        a2: f64,
+    },
 }
 
 /// α⁰ without ln δ, and τα⁰_τ, τ²α⁰_ττ.
@@ -67,47 +94,83 @@ impl IdealTerms {
                 let x = n * tau.powf(*t);
                 [x, x * t, x * t * (t - 1.0)]
             })),
-            Self::PlanckEinstein { n, theta } => {
-                fold(n.iter().zip(theta).map(|(n, theta)| planck_einstein(*n, theta * tau)))
-            }
-            Self::PlanckEinsteinKelvin { n, v_k, critical_temperature_k, gas_constant: own } => {
+            Self::PlanckEinstein { n, theta } => fold(
+                n.iter()
+                    .zip(theta)
+                    .map(|(n, theta)| planck_einstein(*n, theta * tau)),
+            ),
+            Self::PlanckEinsteinKelvin {
+                n,
+                v_k,
+                critical_temperature_k,
+                gas_constant: own,
+            } => {
                 let scale = own.map_or(1.0, |own| own / gas_constant);
-                fold(n.iter().zip(v_k).map(|(n, v)| {
-                    planck_einstein(scale * n, v / critical_temperature_k * tau)
-                }))
+                fold(
+                    n.iter()
+                        .zip(v_k)
+                        .map(|(n, v)| planck_einstein(scale * n, v / critical_temperature_k * tau)),
+                )
             }
-            Self::PlanckEinsteinGeneral { n, theta, c, d } => {
-                fold(n.iter().zip(theta).zip(c.iter().zip(d)).map(|((n, theta), (c, d))| {
-                    let x = theta * tau;
-                    let e = x.exp();
-                    let bottom = c + d * e;
-                    [n * bottom.ln(), n * x * d * e / bottom, n * x * x * c * d * e / (bottom * bottom)]
-                }))
-            }
-            Self::HeatCapacityConstant { cp_over_r, critical_temperature_k, t0_k } => {
-                heat_capacity_power(*cp_over_r, 0.0, critical_temperature_k / tau, *t0_k)
-            }
-            Self::HeatCapacityPoly { c, t, critical_temperature_k, t0_k, gas_constant: own } => {
+            Self::PlanckEinsteinGeneral { n, theta, c, d } => fold(
+                n.iter()
+                    .zip(theta)
+                    .zip(c.iter().zip(d))
+                    .map(|((n, theta), (c, d))| {
+                        let x = theta * tau;
+                        let e = x.exp();
+                        let bottom = c + d * e;
+                        [
+                            n * bottom.ln(),
+                            n * x * d * e / bottom,
+                            n * x * x * c * d * e / (bottom * bottom),
+                        ]
+                    }),
+            ),
+            Self::HeatCapacityConstant {
+                cp_over_r,
+                critical_temperature_k,
+                t0_k,
+            } => heat_capacity_power(*cp_over_r, 0.0, critical_temperature_k / tau, *t0_k),
+            Self::HeatCapacityPoly {
+                c,
+                t,
+                critical_temperature_k,
+                t0_k,
+                gas_constant: own,
+            } => {
                 let scale = own.map_or(1.0, |own| own / gas_constant);
                 let temperature = critical_temperature_k / tau;
-                fold(c.iter().zip(t).map(|(c, t)| heat_capacity_power(scale * c, *t, temperature, *t0_k)))
+                fold(
+                    c.iter()
+                        .zip(t)
+                        .map(|(c, t)| heat_capacity_power(scale * c, *t, temperature, *t0_k)),
+                )
             }
-            Self::HeatCapacityAlyLee { c, critical_temperature_k, t0_k } => {
-                aly_lee(c, critical_temperature_k / tau, *t0_k)
-            }
+            Self::HeatCapacityAlyLee {
+                c,
+                critical_temperature_k,
+                t0_k,
+            } => aly_lee(c, critical_temperature_k / tau, *t0_k),
         }
     }
 }
 
 fn fold(parts: impl Iterator<Item = [f64; 3]>) -> [f64; 3] {
-    parts.fold([0.0; 3], |sum, x| [sum[0] + x[0], sum[1] + x[1], sum[2] + x[2]])
+    parts.fold([0.0; 3], |sum, x| {
+        [sum[0] + x[0], sum[1] + x[1], sum[2] + x[2]]
+    })
 }
 
 fn planck_einstein(n: f64, x: f64) -> [f64; 3] {
     // ln(1 − e⁻ˣ) keeps its digits for small x by expm1.
     let e = (-x).exp();
     let bottom = -(-x).exp_m1();
-    [n * bottom.ln(), n * x * e / bottom, -n * x * x * e / (bottom * bottom)]
+    [
+        n * bottom.ln(),
+        n * x * e / bottom,
+        -n * x * x * e / (bottom * bottom),
+    ]
 }
 
 /// The contribution of c_p⁰/R = c·Tᵗ: with h/RT = (1/T)∫c_p⁰/R dT and
@@ -129,11 +192,19 @@ fn heat_capacity_power(c: f64, t: f64, temperature: f64, t0: f64) -> [f64; 3] {
 
 /// Aly, F. A.; Lee, L. L. 1981, Fluid Phase Equilib. 6, 169–179.
 fn aly_lee(c: &[f64], temperature: f64, t0: f64) -> [f64; 3] {
-    let [a, b, cc, d, e] = *c else { return [f64::NAN; 3] };
+    let [a, b, cc, d, e] = *c else {
+        return [f64::NAN; 3];
+    };
     let coth = |x: f64| 1.0 / x.tanh();
     let cp = |t: f64| {
         let (x, y) = (cc / t, e / t);
-        let hyperbolic = |top: f64, bottom: f64| if bottom.is_finite() { (top / bottom).powi(2) } else { 0.0 };
+        let hyperbolic = |top: f64, bottom: f64| {
+            if bottom.is_finite() {
+                (top / bottom).powi(2)
+            } else {
+                0.0
+            }
+        };
         a + b * hyperbolic(x, x.sinh()) + d * hyperbolic(y, y.cosh())
     };
     let h = |t: f64| a * t + b * cc * coth(cc / t) - d * e * (e / t).tanh();

@@ -102,7 +102,9 @@ impl Equation {
     pub fn new(data: EquationData) -> Result<Self, EquationError> {
         let residual = Residual::new(&data.residual)?;
         if residual.distinct_exponents() > EXPONENT_LIMIT {
-            return Err(EquationError::TooManyExponents { limit: EXPONENT_LIMIT });
+            return Err(EquationError::TooManyExponents {
+                limit: EXPONENT_LIMIT,
+            });
         }
         let (low, high) = data.temperature_range_k;
         if low.partial_cmp(&high) != Some(std::cmp::Ordering::Less) {
@@ -111,12 +113,21 @@ impl Equation {
         for (field, value) in [
             ("temperature_range_k", low),
             ("highest_pressure_pa", data.highest_pressure_pa),
-            ("highest_density_mol_per_m3", data.highest_density_mol_per_m3),
+            (
+                "highest_density_mol_per_m3",
+                data.highest_density_mol_per_m3,
+            ),
             ("gas_constant_j_per_mol_k", data.gas_constant_j_per_mol_k),
             ("reducing.temperature_k", data.reducing.temperature_k),
-            ("reducing.density_mol_per_m3", data.reducing.density_mol_per_m3),
+            (
+                "reducing.density_mol_per_m3",
+                data.reducing.density_mol_per_m3,
+            ),
             ("critical.temperature_k", data.critical.temperature_k),
-            ("critical.density_mol_per_m3", data.critical.density_mol_per_m3),
+            (
+                "critical.density_mol_per_m3",
+                data.critical.density_mol_per_m3,
+            ),
             ("critical.pressure_pa", data.critical.pressure_pa),
         ] {
             if !(value.is_finite() && value > 0.0) {
@@ -177,7 +188,10 @@ impl Isotherm<'_> {
     /// Pressure in Pa and its slope ∂p/∂ρ in Pa m³/mol at a density in mol/m³.
     pub fn pressure_and_slope(&self, density: f64) -> (f64, f64) {
         let [_, d1, d2] = self.residual.at(density / self.reducing_density);
-        (density * self.rt * (1.0 + d1), self.rt * (1.0 + 2.0 * d1 + d2))
+        (
+            density * self.rt * (1.0 + d1),
+            self.rt * (1.0 + 2.0 * d1 + d2),
+        )
     }
 
     /// Pressure in Pa at a density in mol/m³.

@@ -22,8 +22,19 @@ use serde::Deserialize;
 #[derive(Debug, Clone, PartialEq, Deserialize)]
 #[serde(deny_unknown_fields)]
 pub enum ResidualTerms {
-    Power { n: Vec<f64>, t: Vec<f64>, d: Vec<f64>, l: Vec<f64> },
-    Exponential { n: Vec<f64>, t: Vec<f64>, d: Vec<f64>, g: Vec<f64>, l: Vec<f64> },
+    Power {
+        n: Vec<f64>,
+        t: Vec<f64>,
+        d: Vec<f64>,
+        l: Vec<f64>,
+    },
+    Exponential {
+        n: Vec<f64>,
+        t: Vec<f64>,
+        d: Vec<f64>,
+        g: Vec<f64>,
+        l: Vec<f64>,
+    },
     Gaussian {
         n: Vec<f64>,
         t: Vec<f64>,
@@ -62,7 +73,13 @@ pub enum ResidualTerms {
         gt: Vec<f64>,
         lt: Vec<f64>,
     },
-    Lemmon2005 { n: Vec<f64>, t: Vec<f64>, d: Vec<f64>, l: Vec<f64>, m: Vec<f64> },
+    Lemmon2005 {
+        n: Vec<f64>,
+        t: Vec<f64>,
+        d: Vec<f64>,
+        l: Vec<f64>,
+        m: Vec<f64>,
+    },
 }
 
 /// Scaled derivatives of αʳ: `d1 = δ·∂αʳ/∂δ`, `d2 = δ²·∂²αʳ/∂δ²`, and with τ
@@ -82,11 +99,21 @@ pub struct Derivatives {
 enum TauFactor {
     One,
     /// exp(−β(τ−γ)²)
-    Bell { beta: f64, gamma: f64 },
+    Bell {
+        beta: f64,
+        gamma: f64,
+    },
     /// exp(1/(b + β(τ−γ)²))
-    GaoB { b: f64, beta: f64, gamma: f64 },
+    GaoB {
+        b: f64,
+        beta: f64,
+        gamma: f64,
+    },
     /// exp(−g τˡ)
-    Decay { g: f64, l: f64 },
+    Decay {
+        g: f64,
+        l: f64,
+    },
 }
 
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -169,7 +196,11 @@ impl Residual {
                 residual.add(terms, i, &mut decays);
             }
         }
-        decays.sort_by(|x, y| (x.1, x.0).partial_cmp(&(y.1, y.0)).unwrap_or(std::cmp::Ordering::Equal));
+        decays.sort_by(|x, y| {
+            (x.1, x.0)
+                .partial_cmp(&(y.1, y.0))
+                .unwrap_or(std::cmp::Ordering::Equal)
+        });
         for (g, l, d, tau) in decays {
             let slot = match residual.exponents.iter().position(|known| *known == d) {
                 Some(slot) => slot,
@@ -183,14 +214,22 @@ impl Residual {
             residual.decay_tau.push(tau);
             match residual.decays.last_mut() {
                 Some(last) if last.g == g && last.l == l => last.range.1 = index + 1,
-                _ => residual.decays.push(DecayBlock { g, l, range: (index, index + 1) }),
+                _ => residual.decays.push(DecayBlock {
+                    g,
+                    l,
+                    range: (index, index + 1),
+                }),
             }
         }
         Ok(residual)
     }
 
     fn add(&mut self, terms: &ResidualTerms, i: usize, decays: &mut Vec<(f64, f64, f64, TauTerm)>) {
-        let plain = |n: f64, t: f64| TauTerm { n, t, factor: TauFactor::One };
+        let plain = |n: f64, t: f64| TauTerm {
+            n,
+            t,
+            factor: TauFactor::One,
+        };
         match terms {
             ResidualTerms::Power { n, t, d, l } => {
                 let g = if l[i] == 0.0 { 0.0 } else { 1.0 };
@@ -199,28 +238,106 @@ impl Residual {
             ResidualTerms::Exponential { n, t, d, g, l } => {
                 decays.push((g[i], l[i], d[i], plain(n[i], t[i])));
             }
-            ResidualTerms::DoubleExponential { n, t, d, gd, ld, gt, lt } => {
+            ResidualTerms::DoubleExponential {
+                n,
+                t,
+                d,
+                gd,
+                ld,
+                gt,
+                lt,
+            } => {
                 let factor = TauFactor::Decay { g: gt[i], l: lt[i] };
-                decays.push((gd[i], ld[i], d[i], TauTerm { n: n[i], t: t[i], factor }));
+                decays.push((
+                    gd[i],
+                    ld[i],
+                    d[i],
+                    TauTerm {
+                        n: n[i],
+                        t: t[i],
+                        factor,
+                    },
+                ));
             }
             ResidualTerms::Lemmon2005 { n, t, d, l, m } => {
                 let g = if l[i] == 0.0 { 0.0 } else { 1.0 };
-                let factor =
-                    if m[i] == 0.0 { TauFactor::One } else { TauFactor::Decay { g: 1.0, l: m[i] } };
-                decays.push((g, l[i], d[i], TauTerm { n: n[i], t: t[i], factor }));
+                let factor = if m[i] == 0.0 {
+                    TauFactor::One
+                } else {
+                    TauFactor::Decay { g: 1.0, l: m[i] }
+                };
+                decays.push((
+                    g,
+                    l[i],
+                    d[i],
+                    TauTerm {
+                        n: n[i],
+                        t: t[i],
+                        factor,
+                    },
+                ));
             }
-            ResidualTerms::Gaussian { n, t, d, eta, epsilon, beta, gamma } => {
-                self.bells.push(Bell { d: d[i], eta: eta[i], epsilon: epsilon[i] });
-                let factor = TauFactor::Bell { beta: beta[i], gamma: gamma[i] };
-                self.bell_tau.push(TauTerm { n: n[i], t: t[i], factor });
+            ResidualTerms::Gaussian {
+                n,
+                t,
+                d,
+                eta,
+                epsilon,
+                beta,
+                gamma,
+            } => {
+                self.bells.push(Bell {
+                    d: d[i],
+                    eta: eta[i],
+                    epsilon: epsilon[i],
+                });
+                let factor = TauFactor::Bell {
+                    beta: beta[i],
+                    gamma: gamma[i],
+                };
+                self.bell_tau.push(TauTerm {
+                    n: n[i],
+                    t: t[i],
+                    factor,
+                });
             }
-            ResidualTerms::GaoB { n, t, d, eta, epsilon, beta, gamma, b } => {
+            ResidualTerms::GaoB {
+                n,
+                t,
+                d,
+                eta,
+                epsilon,
+                beta,
+                gamma,
+                b,
+            } => {
                 // Published with exp(+η(δ−ε)²) and η negative.
-                self.bells.push(Bell { d: d[i], eta: -eta[i], epsilon: epsilon[i] });
-                let factor = TauFactor::GaoB { b: b[i], beta: beta[i], gamma: gamma[i] };
-                self.bell_tau.push(TauTerm { n: n[i], t: t[i], factor });
+                self.bells.push(Bell {
+                    d: d[i],
+                    eta: -eta[i],
+                    epsilon: epsilon[i],
+                });
+                let factor = TauFactor::GaoB {
+                    b: b[i],
+                    beta: beta[i],
+                    gamma: gamma[i],
+                };
+                self.bell_tau.push(TauTerm {
+                    n: n[i],
+                    t: t[i],
+                    factor,
+                });
             }
-            ResidualTerms::NonAnalytic { n, a, b, beta, big_a, big_b, big_c, big_d } => {
+            ResidualTerms::NonAnalytic {
+                n,
+                a,
+                b,
+                beta,
+                big_a,
+                big_b,
+                big_c,
+                big_d,
+            } => {
                 self.non_analytic.push(NonAnalytic {
                     n: n[i],
                     a: a[i],
@@ -238,7 +355,8 @@ impl Residual {
     /// The terms' τ-factors at one reduced inverse temperature τ = T_r/T.
     pub fn isotherm(&self, tau: f64) -> ResidualIsotherm<'_> {
         let ln_tau = tau.ln();
-        let factors = |terms: &[TauTerm]| terms.iter().map(|term| term.value(tau, ln_tau)).collect();
+        let factors =
+            |terms: &[TauTerm]| terms.iter().map(|term| term.value(tau, ln_tau)).collect();
         ResidualIsotherm {
             terms: self,
             tau,
@@ -252,13 +370,21 @@ impl Residual {
         let ln_tau = tau.ln();
         let mut by_order = [(); 3].map(|()| (Vec::new(), Vec::new()));
         for (order, (decay, bell)) in by_order.iter_mut().enumerate() {
-            let scaled = |term: &TauTerm| term.value(tau, ln_tau) * term.log_derivatives(tau)[order];
+            let scaled =
+                |term: &TauTerm| term.value(tau, ln_tau) * term.log_derivatives(tau)[order];
             decay.extend(self.decay_tau.iter().map(scaled));
             bell.extend(self.bell_tau.iter().map(scaled));
         }
         let powers = self.powers(delta);
         let [s0, s1, s2] = by_order.map(|(decay, bell)| self.sum(&decay, &bell, delta, &powers));
-        let mut total = Derivatives { a: s0[0], d1: s0[1], d2: s0[2], t1: s1[0], t2: s2[0], d1t1: s1[1] };
+        let mut total = Derivatives {
+            a: s0[0],
+            d1: s0[1],
+            d2: s0[2],
+            t1: s1[0],
+            t2: s2[0],
+            d1t1: s1[1],
+        };
         for term in &self.non_analytic {
             let x = term.derivatives(tau, delta);
             total.a += x.a;
@@ -280,7 +406,13 @@ impl Residual {
     }
 
     /// (αʳ, δαʳ_δ, δ²αʳ_δδ) of the separable terms for given τ-factors.
-    fn sum(&self, decay: &[f64], bell: &[f64], delta: f64, powers: &[f64; MOST_EXPONENTS]) -> [f64; 3] {
+    fn sum(
+        &self,
+        decay: &[f64],
+        bell: &[f64],
+        delta: f64,
+        powers: &[f64; MOST_EXPONENTS],
+    ) -> [f64; 3] {
         let (mut a, mut d1, mut d2) = (0.0, 0.0, 0.0);
         for block in &self.decays {
             let (mut s0, mut s1, mut s2) = (0.0, 0.0, 0.0);
@@ -359,16 +491,50 @@ impl ResidualTerms {
         match self {
             Self::Power { n, t, d, l } => vec![n, t, d, l],
             Self::Exponential { n, t, d, g, l } => vec![n, t, d, g, l],
-            Self::Gaussian { n, t, d, eta, epsilon, beta, gamma } => {
+            Self::Gaussian {
+                n,
+                t,
+                d,
+                eta,
+                epsilon,
+                beta,
+                gamma,
+            } => {
                 vec![n, t, d, eta, epsilon, beta, gamma]
             }
-            Self::NonAnalytic { n, a, b, beta, big_a, big_b, big_c, big_d } => {
+            Self::NonAnalytic {
+                n,
+                a,
+                b,
+                beta,
+                big_a,
+                big_b,
+                big_c,
+                big_d,
+            } => {
                 vec![n, a, b, beta, big_a, big_b, big_c, big_d]
             }
-            Self::GaoB { n, t, d, eta, epsilon, beta, gamma, b } => {
+            Self::GaoB {
+                n,
+                t,
+                d,
+                eta,
+                epsilon,
+                beta,
+                gamma,
+                b,
+            } => {
                 vec![n, t, d, eta, epsilon, beta, gamma, b]
             }
-            Self::DoubleExponential { n, t, d, gd, ld, gt, lt } => vec![n, t, d, gd, ld, gt, lt],
+            Self::DoubleExponential {
+                n,
+                t,
+                d,
+                gd,
+                ld,
+                gt,
+                lt,
+            } => vec![n, t, d, gd, ld, gt, lt],
             Self::Lemmon2005 { n, t, d, l, m } => vec![n, t, d, l, m],
         }
     }
@@ -380,7 +546,9 @@ impl TauTerm {
         let exponent = match self.factor {
             TauFactor::One => exponent,
             TauFactor::Bell { beta, gamma } => exponent - beta * (tau - gamma).powi(2),
-            TauFactor::GaoB { b, beta, gamma } => exponent + 1.0 / (b + beta * (tau - gamma).powi(2)),
+            TauFactor::GaoB { b, beta, gamma } => {
+                exponent + 1.0 / (b + beta * (tau - gamma).powi(2))
+            }
             TauFactor::Decay { g, l } => exponent - g * raise(tau, l),
         };
         self.n * exponent.exp()
@@ -399,7 +567,10 @@ impl TauTerm {
                 let v = b + beta * off * off;
                 let v1 = 2.0 * beta * off;
                 let v2 = 2.0 * beta;
-                (-tau * v1 / (v * v), tau * tau * (2.0 * v1 * v1 / v - v2) / (v * v))
+                (
+                    -tau * v1 / (v * v),
+                    tau * tau * (2.0 * v1 * v1 / v - v2) / (v * v),
+                )
             }
             TauFactor::Decay { g, l } => {
                 let x = g * raise(tau, l);
@@ -416,8 +587,21 @@ impl NonAnalytic {
     fn derivatives(&self, tau: f64, delta: f64) -> Derivatives {
         // (δ−1)² stands under a root: at δ = 1 the second derivative does not
         // exist. A step far below a double's resolution of any density moves off it.
-        let off = if (delta - 1.0).abs() < 1e-14 { 1e-14 } else { delta - 1.0 };
-        let Self { n, a, b, beta, big_a, big_b, big_c, big_d } = *self;
+        let off = if (delta - 1.0).abs() < 1e-14 {
+            1e-14
+        } else {
+            delta - 1.0
+        };
+        let Self {
+            n,
+            a,
+            b,
+            beta,
+            big_a,
+            big_b,
+            big_c,
+            big_d,
+        } = *self;
         let square = off * off;
         let root = square.powf(0.5 / beta);
         let theta = (1.0 - tau) + big_a * root;
@@ -477,5 +661,9 @@ impl NonAnalytic {
 /// xᵉ, by multiplication where the exponent is a small whole number.
 fn raise(x: f64, exponent: f64) -> f64 {
     let whole = exponent as i32;
-    if f64::from(whole) == exponent { x.powi(whole) } else { x.powf(exponent) }
+    if f64::from(whole) == exponent {
+        x.powi(whole)
+    } else {
+        x.powf(exponent)
+    }
 }

@@ -41,22 +41,32 @@ impl Equation {
     pub fn saturated_densities(&self, temperature_k: f64) -> Result<(f64, f64), NotConverged> {
         let isotherm = self.isotherm(temperature_k);
         let ancillary = &self.data.ancillary;
-        let guess =
-            (ancillary.liquid_density.at(temperature_k), ancillary.vapour_density.at(temperature_k));
+        let guess = (
+            ancillary.liquid_density.at(temperature_k),
+            ancillary.vapour_density.at(temperature_k),
+        );
         if let Some(pair) = self.equilibrium(&isotherm, guess, temperature_k) {
             return Ok(pair);
         }
-        self.walk_to(temperature_k).ok_or(NotConverged { temperature_k })
+        self.walk_to(temperature_k)
+            .ok_or(NotConverged { temperature_k })
     }
 
     /// The pair and what follows from it.
     fn pair(&self, temperature_k: f64, liquid: f64, vapour: f64) -> SaturatedPair {
         // The liquid side loses digits at low pressure: p from the vapour.
         let pressure = self.isotherm(temperature_k).pressure(vapour);
-        let entropy = self.caloric(temperature_k, vapour).entropy - self.caloric(temperature_k, liquid).entropy;
+        let entropy = self.caloric(temperature_k, vapour).entropy
+            - self.caloric(temperature_k, liquid).entropy;
         let latent_heat = temperature_k * entropy;
         let slope = entropy / (1.0 / vapour - 1.0 / liquid);
-        SaturatedPair { pressure, liquid, vapour, slope, latent_heat }
+        SaturatedPair {
+            pressure,
+            liquid,
+            vapour,
+            slope,
+            latent_heat,
+        }
     }
 
     /// Steps from 0.98 T_c towards `temperature_k`, each guess scaled from the
@@ -71,7 +81,10 @@ impl Equation {
         let at = |theta: f64| critical.temperature_k * (1.0 - theta);
         let start = at(theta);
         let ancillary = &self.data.ancillary;
-        let guess = (ancillary.liquid_density.at(start), ancillary.vapour_density.at(start));
+        let guess = (
+            ancillary.liquid_density.at(start),
+            ancillary.vapour_density.at(start),
+        );
         let (mut liquid, mut vapour) = self.equilibrium(&self.isotherm(start), guess, start)?;
         let mut exponent = 0.4;
         loop {
@@ -79,11 +92,17 @@ impl Equation {
             let shrink = (next / theta).powf(exponent);
             // Half the difference follows the power law, the mean is a straight line in θ.
             let mean = 0.5 * (liquid + vapour);
-            let mean = critical.density_mol_per_m3 + (mean - critical.density_mol_per_m3) * next / theta;
+            let mean =
+                critical.density_mol_per_m3 + (mean - critical.density_mol_per_m3) * next / theta;
             let half = 0.5 * (liquid - vapour) * shrink;
             let temperature = at(next);
-            let found = self.equilibrium(&self.isotherm(temperature), (mean + half, mean - half), temperature)?;
-            exponent = (((found.0 - found.1) / (liquid - vapour)).ln() / (next / theta).ln()).clamp(0.3, 0.6);
+            let found = self.equilibrium(
+                &self.isotherm(temperature),
+                (mean + half, mean - half),
+                temperature,
+            )?;
+            exponent = (((found.0 - found.1) / (liquid - vapour)).ln() / (next / theta).ln())
+                .clamp(0.3, 0.6);
             (liquid, vapour) = found;
             theta = next;
             if theta <= target {
@@ -126,7 +145,11 @@ impl Equation {
             let step_l = liquid * (dj - vapour * dk) / (squeeze_l * spread);
             let step_v = vapour * (dj - liquid * dk) / (squeeze_v * spread);
             // A vapour guess may be far off in scale at low pressure: hold it positive.
-            let damp = if near_critical { (0.25 * spread / step_l.abs().max(step_v.abs())).min(1.0) } else { 1.0 };
+            let damp = if near_critical {
+                (0.25 * spread / step_l.abs().max(step_v.abs())).min(1.0)
+            } else {
+                1.0
+            };
             liquid += damp * step_l;
             let next = vapour + damp * step_v;
             vapour = if next > 0.0 { next } else { 0.1 * vapour };

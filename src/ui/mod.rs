@@ -1,0 +1,20 @@
+//! The window: the only room that knows egui, the only one that opens dialogs.
+
+mod app;
+mod command;
+mod desk;
+mod dialogs;
+mod history;
+mod panels;
+mod plots;
+mod settings;
+mod start;
+mod theme;
+mod widgets;
+
+pub use app::App;
+pub use command::Command;
+pub use desk::Desk;
+pub use settings::Settings;
+pub use start::open;
+pub use theme::{Palette, Theme};

@@ -1,0 +1,247 @@
+//! The middle column: the pictures, the scrubber, and the sheet's preview.
+
+use eframe::egui::{RichText, ScrollArea, TextStyle, Ui, vec2};
+
+use crate::assess::Assessment;
+use crate::design::Design;
+use crate::ui::command::Command;
+use crate::ui::plots::{
+    Picture, PlotState, charge_map_ui, liquid_share_ui, pressure_ui, scrubber_ui,
+};
+use crate::ui::theme::Palette;
+use crate::units::{Mass, Temperature, Units};
+
+/// View-only state of the column.
+#[derive(Debug)]
+pub struct Behaviour {
+    tab: Tab,
+    /// The picture beside the charge map where there is room for two only.
+    second: Picture,
+    /// One picture that fills the column, by double click.
+    alone: Option<Picture>,
+    scrubber: Option<Temperature>,
+    plots: PlotState,
+    /// The sheet of this design, made when it was last asked for.
+    sheet: Option<(Design, String)>,
+}
+
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+enum Tab {
+    Behaviour,
+    Sheet,
+}
+
+/// At this width the middle column shows three pictures.
+const WIDE: f32 = 900.0;
+
+impl Default for Behaviour {
+    fn default() -> Self {
+        Self {
+            tab: Tab::Behaviour,
+            second: Picture::Pressure,
+            alone: None,
+            scrubber: None,
+            plots: PlotState::default(),
+            sheet: None,
+        }
+    }
+}
+
+impl Behaviour {
+    /// The temperature all pictures share; at first the hottest.
+    pub fn scrubber(&self, design: &Design) -> Temperature {
+        self.scrubber.unwrap_or(design.conditions.hottest)
+    }
+
+    /// Another design is on the desk: start from its own temperatures.
+    pub fn forget(&mut self) {
+        self.scrubber = None;
+        self.plots = PlotState::default();
+    }
+}
+
+/// Shows how it behaves; `Some` is the mass the user dragged the charge to.
+pub fn behaviour_ui(
+    ui: &mut Ui,
+    design: &Design,
+    a: &Assessment,
+    units: &Units,
+    sheet_of: impl FnOnce() -> String,
+    state: &mut Behaviour,
+    out: &mut Vec<Command>,
+) -> Option<Mass> {
+    let mut dragged = None;
+    ui.horizontal(|ui| {
+        ui.selectable_value(&mut state.tab, Tab::Behaviour, "Behaviour");
+        ui.selectable_value(&mut state.tab, Tab::Sheet, "Sheet");
+        if state.tab == Tab::Behaviour {
+            ui.separator();
+            picture_selector(ui, state);
+        }
+    });
+    match state.tab {
+        Tab::Behaviour => dragged = pictures_ui(ui, design, a, units, state),
+        Tab::Sheet => sheet_ui(ui, design, sheet_of, state, out),
+    }
+    dragged
+}
+
+fn picture_selector(ui: &mut Ui, state: &mut Behaviour) {
+    if ui.available_width() > WIDE && state.alone.is_none() {
+        return;
+    }
+    for picture in [Picture::Pressure, Picture::LiquidShare] {
+        if ui
+            .selectable_label(
+                state.second == picture && state.alone.is_none(),
+                picture.name(),
+            )
+            .clicked()
+        {
+            state.second = picture;
+            state.alone = None;
+        }
+    }
+    if ui
+        .selectable_label(state.alone == Some(Picture::ChargeMap), "Map alone")
+        .clicked()
+    {
+        let alone = state.alone == Some(Picture::ChargeMap);
+        state.alone = (!alone).then_some(Picture::ChargeMap);
+    }
+}
+
+fn pictures_ui(
+    ui: &mut Ui,
+    design: &Design,
+    a: &Assessment,
+    units: &Units,
+    state: &mut Behaviour,
+) -> Option<Mass> {
+    const SCRUBBER_HEIGHT: f32 = 62.0;
+    let mut scrubber = state.scrubber(design);
+    let size = ui.available_size();
+    let height = (size.y - SCRUBBER_HEIGHT).max(120.0);
+    let spacing = ui.spacing().item_spacing;
+    let mut dragged = None;
+    let mut show = |ui: &mut Ui,
+                    picture: Picture,
+                    state: &mut PlotState,
+                    scrubber: &mut Temperature| {
+        let palette = Palette::in_use(ui);
+        match picture {
+            Picture::ChargeMap => {
+                dragged = charge_map_ui(ui, design, a, units, palette, scrubber, state)
+            }
+            Picture::Pressure => pressure_ui(ui, design, a, units, palette, scrubber, state),
+            Picture::LiquidShare => liquid_share_ui(ui, design, a, units, palette, scrubber, state),
+        }
+    };
+    let mut cell = |ui: &mut Ui,
+                    size: eframe::egui::Vec2,
+                    picture,
+                    state: &mut PlotState,
+                    scrubber: &mut Temperature| {
+        ui.allocate_ui(size, |ui| {
+            ui.set_min_size(size);
+            ui.set_max_size(size);
+            show(ui, picture, state, scrubber);
+        });
+    };
+    if let Some(picture) = state.alone {
+        cell(
+            ui,
+            vec2(size.x, height),
+            picture,
+            &mut state.plots,
+            &mut scrubber,
+        );
+    } else if size.x > WIDE {
+        let left = (0.56 * size.x).floor();
+        let right = size.x - left - spacing.x;
+        ui.horizontal_top(|ui| {
+            cell(
+                ui,
+                vec2(left, height),
+                Picture::ChargeMap,
+                &mut state.plots,
+                &mut scrubber,
+            );
+            ui.vertical(|ui| {
+                let half = 0.5 * (height - spacing.y);
+                cell(
+                    ui,
+                    vec2(right, half),
+                    Picture::Pressure,
+                    &mut state.plots,
+                    &mut scrubber,
+                );
+                cell(
+                    ui,
+                    vec2(right, half),
+                    Picture::LiquidShare,
+                    &mut state.plots,
+                    &mut scrubber,
+                );
+            });
+        });
+    } else {
+        let upper = (0.56 * (height - spacing.y)).floor();
+        cell(
+            ui,
+            vec2(size.x, upper),
+            Picture::ChargeMap,
+            &mut state.plots,
+            &mut scrubber,
+        );
+        cell(
+            ui,
+            vec2(size.x, height - spacing.y - upper),
+            state.second,
+            &mut state.plots,
+            &mut scrubber,
+        );
+    }
+    scrubber_ui(ui, design, a, units, &mut scrubber);
+    if scrubber != state.scrubber(design) {
+        state.scrubber = Some(scrubber);
+    }
+    dragged
+}
+
+fn sheet_ui(
+    ui: &mut Ui,
+    design: &Design,
+    sheet_of: impl FnOnce() -> String,
+    state: &mut Behaviour,
+    out: &mut Vec<Command>,
+) {
+    ui.horizontal(|ui| {
+        for command in [Command::CopySheet, Command::ExportSheet] {
+            if ui
+                .button(command.text())
+                .on_hover_text(command.tooltip())
+                .clicked()
+            {
+                out.push(command);
+            }
+        }
+        ui.label(
+            RichText::new("Exactly the text that is exported.")
+                .color(Palette::in_use(ui).text_faint),
+        );
+    });
+    let fresh = matches!(&state.sheet, Some((of, _)) if of == design);
+    if !fresh {
+        state.sheet = Some((design.clone(), sheet_of()));
+    }
+    let Some((_, text)) = &state.sheet else {
+        return;
+    };
+    ScrollArea::both()
+        .id_salt("sheet")
+        .auto_shrink(false)
+        .show(ui, |ui| {
+            ui.label(RichText::new(text).text_style(TextStyle::Monospace));
+        });
+}

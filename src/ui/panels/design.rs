@@ -1,0 +1,147 @@
+//! The left column: what goes in, section by section in the order of the job.
+
+use eframe::egui::{ComboBox, Id, Role, TextEdit, Ui, WidgetInfo};
+
+use super::section::{column_ui, section_ui};
+use super::{chamber, charge, conditions, fluid};
+use crate::assess::{Assessment, Library, Section};
+use crate::design::{Design, Duty};
+use crate::ui::widgets::QuantityField;
+use crate::units::Units;
+
+/// View-only state of the column.
+#[derive(Debug, Default)]
+pub struct DesignPanel {
+    /// A section to open and scroll to in the next frame.
+    pub show_next: Option<Section>,
+    /// What is typed into the fluid search.
+    fluid_search: String,
+}
+
+/// Edits the design. The assessment only supplies the decisions that closed
+/// sections show and the marks on faulty parts.
+pub fn design_ui(
+    ui: &mut Ui,
+    design: &mut Design,
+    a: &Assessment,
+    library: &Library,
+    units: &Units,
+    panel: &mut DesignPanel,
+) {
+    let wanted = panel.show_next.take();
+    let show = |section| wanted == Some(section);
+    column_ui(ui, "design", |ui| {
+        section_ui(ui, "Duty", design.duty.name(), false, false, |ui| {
+            duty_ui(ui, design)
+        });
+        let decision = conditions::decision(design, units);
+        section_ui(
+            ui,
+            "Conditions",
+            &decision,
+            true,
+            show(Section::Conditions),
+            |ui| {
+                conditions::conditions_ui(ui, design, units);
+            },
+        );
+        let decision = fluid::decision(a);
+        section_ui(ui, "Fluid", &decision, true, show(Section::Fluid), |ui| {
+            fluid::fluid_ui(ui, design, a, library, &mut panel.fluid_search);
+        });
+        let decision = chamber::decision(a, units);
+        section_ui(
+            ui,
+            "Chamber",
+            &decision,
+            true,
+            show(Section::Chamber),
+            |ui| {
+                chamber::chamber_ui(ui, &mut design.chamber, a, library, units);
+            },
+        );
+        let decision = charge::decision(a, units);
+        section_ui(ui, "Charge", &decision, true, show(Section::Charge), |ui| {
+            charge::charge_ui(ui, design, a, units);
+        });
+        let decision = format!("balance {}", units.show_to(design.bench.balance, 2));
+        section_ui(ui, "Bench", &decision, false, show(Section::Bench), |ui| {
+            bench_ui(ui, design, units)
+        });
+        let decision = units.show_to(design.room.volume, 3);
+        section_ui(ui, "Room", &decision, false, show(Section::Room), |ui| {
+            room_ui(ui, design, units)
+        });
+    });
+}
+
+fn duty_ui(ui: &mut Ui, design: &mut Design) {
+    text_ui(ui, "Title", &mut design.title, false);
+    text_ui(ui, "Note", &mut design.note, true);
+    let combo = ComboBox::from_id_salt("duty")
+        .width(ui.available_width() - 8.0)
+        .selected_text(design.duty.name());
+    let response = combo
+        .show_ui(ui, |ui| {
+            for duty in Duty::ALL {
+                ui.selectable_value(&mut design.duty, duty, duty.name());
+            }
+        })
+        .response;
+    name(&response, "Duty of the device");
+}
+
+fn text_ui(ui: &mut Ui, label: &str, text: &mut String, long: bool) {
+    let field = if long {
+        TextEdit::multiline(text).desired_rows(2)
+    } else {
+        TextEdit::singleline(text)
+    };
+    let id = Id::unique(("text", label));
+    let response = ui.add(field.id(id).hint_text(label).desired_width(f32::INFINITY));
+    // A text is one undo step, not one a letter.
+    if response.has_focus() {
+        ui.data_mut(|data| data.insert_temp(editing_text_id(), ui.ctx().cumulative_pass_nr()));
+    }
+    response.widget_info(|| WidgetInfo::labeled(Role::TextInput, true, label));
+}
+
+/// Where a focused text leaves the number of the frame it was edited in.
+pub fn editing_text_id() -> Id {
+    Id::unique("editing a text")
+}
+
+fn bench_ui(ui: &mut Ui, design: &mut Design, units: &Units) {
+    let bench = &mut design.bench;
+    QuantityField::new("Balance", &mut bench.balance, units)
+        .slider(1e-7, 1e-2)
+        .logarithmic()
+        .digits(2)
+        .hover("Greatest error of a weighing by difference")
+        .show(ui);
+    QuantityField::new("Purge loss", &mut bench.purge_loss, units)
+        .slider(0.0, 0.01)
+        .digits(3)
+        .hover("Mass boiled off or purged after dispensing, before the seal")
+        .show(ui);
+    ui.checkbox(&mut bench.gauge, "A pressure gauge stays on the unit");
+}
+
+fn room_ui(ui: &mut Ui, design: &mut Design, units: &Units) {
+    let room = &mut design.room;
+    QuantityField::new("Room volume", &mut room.volume, units)
+        .slider(1.0, 1000.0)
+        .logarithmic()
+        .digits(3)
+        .hover("Closed room in which the unit may break")
+        .show(ui);
+    QuantityField::new("Room temperature", &mut room.temperature, units)
+        .slider(263.15, 313.15)
+        .show(ui);
+    ui.checkbox(&mut room.consumers, "The public holds it");
+}
+
+/// Gives a widget its accessible name.
+pub fn name(response: &eframe::egui::Response, label: &str) {
+    response.widget_info(|| WidgetInfo::labeled(Role::ComboBox, true, label));
+}

@@ -1,0 +1,123 @@
+//! The fluid picker: search, facts, choice.
+
+use eframe::egui::{Grid, RichText, Role, ScrollArea, TextEdit, Ui, WidgetInfo};
+
+use crate::assess::{Assessment, Library};
+use crate::design::{Design, FluidId};
+use crate::fluid::Fluid;
+use crate::ui::theme::Palette;
+
+pub fn decision(a: &Assessment) -> String {
+    format!("{}, {}", a.fluid.name(), nature(&a.fluid))
+}
+
+pub fn fluid_ui(
+    ui: &mut Ui,
+    design: &mut Design,
+    a: &Assessment,
+    library: &Library,
+    search: &mut String,
+) {
+    let response = ui.add(
+        TextEdit::singleline(search)
+            .hint_text("name, CAS or refrigerant number")
+            .desired_width(f32::INFINITY),
+    );
+    response.widget_info(|| WidgetInfo::labeled(Role::TextInput, true, "Search fluids"));
+    let wanted = search.to_lowercase();
+    ScrollArea::vertical()
+        .id_salt("fluids")
+        .max_height(132.0)
+        .auto_shrink([false, true])
+        .show(ui, |ui| {
+            let mut any = false;
+            for fluid in library
+                .fluids
+                .iter()
+                .filter(|fluid| matches(fluid, &wanted))
+            {
+                any = true;
+                let chosen = fluid.id() == design.fluid.as_str();
+                let label = format!("{}   {}", fluid.name(), nature(&fluid));
+                if ui.selectable_label(chosen, label).clicked()
+                    && let Some(id) = FluidId::new(fluid.id())
+                {
+                    design.fluid = id;
+                }
+            }
+            if !any {
+                ui.label(RichText::new(format!("No fluid here answers to “{search}”.")).weak());
+            }
+        });
+    facts_ui(ui, &a.fluid);
+}
+
+fn facts_ui(ui: &mut Ui, fluid: &Fluid) {
+    let faint = Palette::in_use(ui).text_faint;
+    ui.add_space(4.0);
+    Grid::new("fluid facts")
+        .num_columns(2)
+        .spacing([10.0, 2.0])
+        .show(ui, |ui| {
+            let mut row = |what: &str, value: String, hover: Option<String>| {
+                ui.label(RichText::new(what).color(faint));
+                let label = ui.label(value);
+                if let Some(hover) = hover {
+                    label.on_hover_text(hover);
+                }
+                ui.end_row();
+            };
+            row("CAS", fluid.cas().to_owned(), None);
+            row("Formula", fluid.formula().to_owned(), None);
+            if let Some(number) = fluid.refrigerant() {
+                let group = fluid.safety().group.as_ref();
+                let text = group.map_or_else(
+                    || number.to_owned(),
+                    |group| format!("{number}, group {}", group.value),
+                );
+                row(
+                    "Refrigerant",
+                    text,
+                    group.map(|group| group.source.to_string()),
+                );
+            }
+            row(
+                "Model",
+                fluid.model_kind().to_owned(),
+                Some(fluid.model_sources().join("\n")),
+            );
+        });
+}
+
+/// What it does to people, in a few words.
+fn nature(fluid: &Fluid) -> String {
+    let safety = fluid.safety();
+    let mut words = Vec::new();
+    if safety.is_flammable() {
+        words.push("flammable");
+    }
+    if safety.is_toxic() {
+        words.push("harmful");
+    }
+    if safety.is_corrosive() {
+        words.push("corrosive");
+    }
+    if words.is_empty() {
+        "no fire or poison class".to_owned()
+    } else {
+        words.join(", ")
+    }
+}
+
+fn matches(fluid: &Fluid, wanted: &str) -> bool {
+    if wanted.is_empty() {
+        return true;
+    }
+    let hit = |text: &str| text.to_lowercase().contains(wanted);
+    hit(fluid.id())
+        || hit(fluid.name())
+        || hit(fluid.cas())
+        || hit(fluid.formula())
+        || fluid.refrigerant().is_some_and(hit)
+        || fluid.also().iter().any(|name| hit(name))
+}

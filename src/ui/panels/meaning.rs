@@ -1,0 +1,160 @@
+//! The right column: the verdict, the window, the worst case, the findings.
+
+use eframe::egui::{Grid, RichText, Ui};
+
+use super::findings::findings_ui;
+use super::section::{column_ui, subheading_ui};
+use crate::assess::{Assessment, Missing, Window};
+use crate::design::Design;
+use crate::ui::command::Command;
+use crate::ui::theme::Palette;
+use crate::ui::widgets::{Badge, WindowBar, WindowBarLabels, verdict_badge, window_bar};
+use crate::units::{Kind, Units, careful_down, careful_up, figures};
+use crate::words;
+
+/// Shows what it means; orders leave through `out`.
+pub fn meaning_ui(
+    ui: &mut Ui,
+    design: &Design,
+    a: &Assessment,
+    units: &Units,
+    out: &mut Vec<Command>,
+) {
+    verdict_badge(ui, Badge::from(a.verdict), words::verdict(a.verdict));
+    ui.add_space(4.0);
+    column_ui(ui, "meaning", |ui| {
+        charge_ui(ui, design, a, units);
+        worst_ui(ui, a, units);
+        subheading_ui(ui, "Findings, worst first");
+        findings_ui(ui, &a.findings, &design.chamber, units, out);
+        cautions_ui(ui);
+    });
+}
+
+fn charge_ui(ui: &mut Ui, design: &Design, a: &Assessment, units: &Units) {
+    let (Ok(charge), Ok(window)) = (&a.charge, &a.window) else {
+        let reason: Option<&Missing> = a.charge.as_ref().err().or(a.window.as_ref().err());
+        if let Some(reason) = reason {
+            ui.label(words::missing(reason, units));
+        }
+        return;
+    };
+    let stated = format!(
+        "Charge {} ± {}",
+        units.show(charge.nominal),
+        units.show_to(design.charge.tolerance, 3)
+    );
+    ui.label(RichText::new(&stated).strong());
+    let Some(upper) = &window.upper else {
+        ui.label("Nothing bounds the charge from above.");
+        return;
+    };
+    let (low_text, high_text) = ends_text(window, units);
+    let description = format!("{stated}; window {low_text} to {high_text}");
+    let bar = WindowBar {
+        lower: window.lower.as_ref().map(|bound| bound.mass.kilogram()),
+        upper: upper.mass.kilogram(),
+        least: charge.least.kilogram(),
+        nominal: charge.nominal.kilogram(),
+        greatest: charge.greatest.kilogram(),
+        aim: window.aim.map(|mass| mass.kilogram()),
+    };
+    let labels = WindowBarLabels {
+        lower: &low_text,
+        upper: &high_text,
+        charge: &units.show(charge.nominal),
+        description: &description,
+    };
+    window_bar(ui, &bar, &labels);
+    let faint = Palette::in_use(ui).text_faint;
+    let end = |what: &str, requirement| {
+        RichText::new(format!("{what}: {}", words::requirement(requirement)))
+            .small()
+            .color(faint)
+    };
+    if let Some(lower) = &window.lower {
+        ui.label(end("lower end", lower.requirement));
+    }
+    ui.label(end("upper end", upper.requirement));
+}
+
+/// The ends, rounded into the window.
+fn ends_text(window: &Window, units: &Units) -> (String, String) {
+    let mass = |kilogram: f64| units.show_si(Kind::Mass, kilogram, 4);
+    let low = window.lower.as_ref().map_or_else(
+        || "0".to_owned(),
+        |b| mass(careful_up(b.mass.kilogram(), 4)),
+    );
+    let high = window.upper.as_ref().map_or_else(
+        || "–".to_owned(),
+        |b| mass(careful_down(b.mass.kilogram(), 4)),
+    );
+    (low, high)
+}
+
+fn worst_ui(ui: &mut Ui, a: &Assessment, units: &Units) {
+    subheading_ui(ui, "Worst case");
+    let case = match &a.worst {
+        Ok(case) => case,
+        Err(reason) => {
+            ui.label(words::missing(reason, units));
+            return;
+        }
+    };
+    let faint = Palette::in_use(ui).text_faint;
+    Grid::new("worst case")
+        .num_columns(2)
+        .spacing([10.0, 3.0])
+        .show(ui, |ui| {
+            let mut row = |what: &str, value: String| {
+                ui.label(RichText::new(what).color(faint));
+                ui.label(value);
+                ui.end_row();
+            };
+            row(
+                "Governing",
+                format!(
+                    "{}, {}",
+                    units.show(case.temperature),
+                    words::regime(case.state.regime)
+                ),
+            );
+            row("Pressure", format!("{} abs", units.show(case.pressure)));
+            match &case.weakest {
+                Ok(weakest) => {
+                    row("Weakest part", weakest.name.to_string());
+                    row("Allowable load", units.show(weakest.allowable.pressure));
+                    let times = |share: &Result<f64, Missing>| match share {
+                        Ok(share) if *share > 0.0 => {
+                            format!("{} times the load", figures(1.0 / share, 3))
+                        }
+                        Ok(_) => "no load".to_owned(),
+                        Err(_) => "–".to_owned(),
+                    };
+                    row("Margin", times(&case.of_allowable));
+                    match &weakest.burst {
+                        Ok(burst) => row(
+                            "Burst load",
+                            format!("{}, {}", units.show(*burst), times(&case.of_burst)),
+                        ),
+                        Err(_) => row("Burst load", "not known there".to_owned()),
+                    }
+                }
+                Err(_) => row("Weakest part", "not known".to_owned()),
+            }
+            if let Ok(Some(at)) = &a.heaviest_full_at {
+                row("Liquid-full", format!("at {}", units.show(*at)));
+            }
+            if let Ok(Some(at)) = &a.lightest_dry_at {
+                row("Dry", format!("at {}", units.show(*at)));
+            }
+        });
+}
+
+fn cautions_ui(ui: &mut Ui) {
+    let faint = Palette::in_use(ui).text_faint;
+    for caution in words::CAUTIONS {
+        ui.label(RichText::new(*caution).color(faint));
+        ui.add_space(2.0);
+    }
+}

@@ -1,0 +1,150 @@
+//! The pictures of the middle column. They pick, convert units and paint; whatever
+//! is physical was computed in the [`Assessment`](crate::assess::Assessment) or is
+//! asked of its sealed unit.
+
+mod axis;
+mod canvas;
+mod charge_map;
+mod charge_mark;
+mod grip;
+mod labels;
+mod liquid_share;
+mod map_areas;
+mod pressure;
+mod say;
+mod scrubber;
+mod table;
+#[cfg(test)]
+mod tests;
+
+use eframe::egui::{Align, Button, Layout, RichText, Ui};
+use serde::{Deserialize, Serialize};
+
+use self::axis::Home;
+use self::canvas::View;
+use crate::assess::Missing;
+use crate::ui::theme::Palette;
+use crate::units::Units;
+use crate::words;
+
+pub use charge_map::charge_map_ui;
+pub use liquid_share::liquid_share_ui;
+pub use pressure::pressure_ui;
+pub use scrubber::scrubber_ui;
+
+/// The pictures to choose from.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, Default, Serialize, Deserialize)]
+pub enum Picture {
+    #[default]
+    ChargeMap,
+    Pressure,
+    LiquidShare,
+}
+
+/// How pressure is drawn over temperature.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, Default, Serialize, Deserialize)]
+pub enum PressureScale {
+    Linear,
+    /// The default: vacuum when cold and the strength of the wall both show.
+    #[default]
+    Logarithm,
+    /// ln p over 1/T, in which a vapour pressure is nearly straight.
+    Reciprocal,
+}
+
+/// What belongs to the view alone: scale, zoom, and what is being dragged.
+#[derive(Debug, Clone, PartialEq, Default)]
+pub struct PlotState {
+    pub scale: PressureScale,
+    /// The picture that fills the column, if one does.
+    pub enlarged: Option<Picture>,
+    map_view: View,
+    pressure_view: View,
+    share_view: View,
+    /// Distance of the pointer from the charge's line since it was seized.
+    charge_held: Option<f32>,
+    /// Whole ranges as last shown at rest: they stand still while the charge is dragged.
+    map_home: Option<Home>,
+    pressure_home: Option<Home>,
+}
+
+impl Picture {
+    pub const ALL: [Self; 3] = [Self::ChargeMap, Self::Pressure, Self::LiquidShare];
+
+    pub const fn name(self) -> &'static str {
+        match self {
+            Self::ChargeMap => "Charge map",
+            Self::Pressure => "Pressure",
+            Self::LiquidShare => "Liquid share",
+        }
+    }
+}
+
+impl PressureScale {
+    pub const ALL: [Self; 3] = [Self::Linear, Self::Logarithm, Self::Reciprocal];
+
+    pub const fn name(self) -> &'static str {
+        match self {
+            Self::Linear => "linear",
+            Self::Logarithm => "logarithmic",
+            Self::Reciprocal => "ln p over 1/T",
+        }
+    }
+}
+
+impl PlotState {
+    /// Whether the charge is being dragged; no undo point belongs in between.
+    pub fn dragging(&self) -> bool {
+        self.charge_held.is_some()
+    }
+
+    /// Fills the column with a picture, or gives the room back.
+    pub fn toggle_enlarged(&mut self, picture: Picture) {
+        self.enlarged = if self.enlarged == Some(picture) {
+            None
+        } else {
+            Some(picture)
+        };
+    }
+}
+
+/// The line above a picture: its name, what belongs beside it, and its buttons.
+/// True when the picture is to be copied as a table.
+fn header_ui(
+    ui: &mut Ui,
+    picture: Picture,
+    state: &mut PlotState,
+    palette: &Palette,
+    beside: impl FnOnce(&mut Ui, &mut PlotState),
+) -> bool {
+    let mut copy = false;
+    ui.horizontal(|ui| {
+        ui.label(RichText::new(picture.name()).strong().color(palette.text));
+        beside(ui, state);
+        ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
+            copy = ui
+                .add(Button::new("Copy as table").small())
+                .on_hover_text("Values with their units, separated by tabs, for a spreadsheet")
+                .clicked();
+            let word = if state.enlarged == Some(picture) {
+                "Restore"
+            } else {
+                "Enlarge"
+            };
+            let enlarge = ui
+                .add(Button::new(word).small())
+                .on_hover_text("Double click on the picture does the same");
+            if enlarge.clicked() {
+                state.toggle_enlarged(picture);
+            }
+        });
+    });
+    copy
+}
+
+/// In the place of a picture that cannot be drawn: which, and why.
+fn missing_ui(ui: &mut Ui, picture: Picture, missing: &Missing, units: &Units, palette: &Palette) {
+    ui.label(RichText::new(picture.name()).strong().color(palette.text));
+    let sentence = format!("Nothing to draw. {}", words::missing(missing, units));
+    ui.label(RichText::new(sentence).color(palette.text_faint));
+}

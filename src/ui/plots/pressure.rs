@@ -1,0 +1,455 @@
+//! Pressure over temperature: the saturation line, the sealed unit that leaves it,
+//! and what the weakest wall bears.
+
+use eframe::egui::{Align2, Color32, Pos2, Rect, Stroke, Ui, pos2, vec2};
+
+use super::axis::{Home, Scale};
+use super::canvas::{Canvas, EndLabel, Margins, widest};
+use super::grip::scrub_line;
+use super::labels::Taken;
+use super::{Picture, PlotState, PressureScale, header_ui, missing_ui, say, table};
+use crate::assess::{Assessment, Charts, LimitPoint};
+use crate::design::Design;
+use crate::fluid::{Regime, State};
+use crate::sealed::PathPoint;
+use crate::ui::theme::Palette;
+use crate::units::{Kind, Pressure, Temperature, Units};
+use crate::words;
+
+/// Paints pressure over temperature in all the room there is.
+pub fn pressure_ui(
+    ui: &mut Ui,
+    design: &Design,
+    a: &Assessment,
+    units: &Units,
+    palette: &Palette,
+    scrubber: &mut Temperature,
+    state: &mut PlotState,
+) {
+    let charts = match &a.charts {
+        Ok(charts) => charts,
+        Err(missing) => return missing_ui(ui, Picture::Pressure, missing, units, palette),
+    };
+    ui.push_id(Picture::Pressure.name(), |ui| {
+        let copy = header_ui(ui, Picture::Pressure, state, palette, |ui, state| {
+            for scale in PressureScale::ALL {
+                if ui
+                    .selectable_label(state.scale == scale, scale.name())
+                    .clicked()
+                    && state.scale != scale
+                {
+                    state.scale = scale;
+                    state.pressure_view = Default::default();
+                    state.pressure_home = None;
+                }
+            }
+        });
+        if copy {
+            ui.ctx().copy_text(table::pressure(a, charts, units));
+        }
+        plot_ui(ui, (design, a, charts), units, palette, scrubber, state);
+    });
+}
+
+fn plot_ui(
+    ui: &mut Ui,
+    (design, a, charts): (&Design, &Assessment, &Charts),
+    units: &Units,
+    palette: &Palette,
+    scrubber: &mut Temperature,
+    state: &mut PlotState,
+) {
+    let (low, high) = (charts.span.0.kelvin(), charts.span.1.kelvin());
+    let scale = if state.scale == PressureScale::Reciprocal {
+        Scale::Reciprocal
+    } else {
+        Scale::Linear
+    };
+    let across = Home { scale, low, high };
+    let found = upward(design, a, charts, state.scale);
+    let up = if state.dragging() {
+        state.pressure_home.unwrap_or(found)
+    } else {
+        found
+    };
+    state.pressure_home = Some(up);
+    let pressure = units.unit_for(Kind::Pressure, up.high);
+    let degree = units.unit_for(Kind::Temperature, high);
+    let across_name = format!("inside, {}", degree.symbol);
+    let names = [
+        "saturation",
+        "this unit",
+        "allowable",
+        "burst",
+        across_name.as_str(),
+    ];
+    let margins = Margins {
+        left: 56.0,
+        right: widest(ui, names) + 22.0,
+        top: 24.0,
+        bottom: 24.0,
+    };
+    let mut canvas = Canvas::new(ui, (across, up), margins, &mut state.pressure_view, palette);
+    if canvas.response.double_clicked() && state.pressure_view == Default::default() {
+        state.toggle_enlarged(Picture::Pressure);
+    }
+    canvas.describe(|| sentence(design, a, units));
+    canvas.leave_room(true, scrubber.kelvin());
+    canvas.y_axis(pressure, &format!("{} abs", pressure.symbol));
+    canvas.x_axis(degree, &across_name, 0.0);
+    paint_conditions(&canvas, design, units);
+    let mut ends = Vec::new();
+    let mut taken = Taken::default();
+    let lines = Lines {
+        canvas: &canvas,
+        charts,
+    };
+    let of = |pick: fn(&LimitPoint) -> Option<Pressure>| lines.runs(pick);
+    let mut end = |runs: &[Vec<Pos2>], text: &str, color: Color32, taken: &mut Taken| {
+        name_line(&canvas, runs, text, color, &mut ends, taken);
+    };
+    // A rail and what runs on it: the unit's line stays visible where both are one.
+    let saturation = of(|point| point.saturation);
+    for run in &saturation {
+        canvas.inside.line(
+            run.clone(),
+            Stroke::new(6.0, palette.saturation.gamma_multiply(0.45)),
+        );
+    }
+    let frozen = lines.path(|state| state.regime == Regime::Frozen);
+    for run in &frozen {
+        canvas.dashed(run, Stroke::new(2.0, palette.path), 3.0, 4.0);
+    }
+    let path = lines.path(|state| state.regime != Regime::Frozen);
+    for run in &path {
+        canvas
+            .inside
+            .line(run.clone(), Stroke::new(2.5, palette.path));
+    }
+    let allowable = of(|point| point.allowable);
+    for run in &allowable {
+        canvas.dashed(run, Stroke::new(2.0, palette.allowable), 8.0, 4.0);
+    }
+    let burst = of(|point| point.burst);
+    for run in &burst {
+        canvas.dashed(run, Stroke::new(2.0, palette.burst), 2.0, 4.0);
+    }
+    end(&saturation, "saturation", palette.saturation, &mut taken);
+    end(&path, "this unit", palette.path, &mut taken);
+    end(&allowable, "allowable", palette.allowable, &mut taken);
+    end(&burst, "burst", palette.burst, &mut taken);
+    paint_events(&canvas, a, units, &mut taken);
+    paint_unknown(&canvas, (design, a), &up, units, &taken);
+    scrub_line(ui, &canvas, true, units, charts.span, scrubber);
+    canvas.border();
+    canvas.end_labels(ends);
+    if let Some(pointer) = canvas.resting_pointer(ui)
+        && let Ok(at) = Temperature::from_kelvin(canvas.x.si(pointer.x))
+        && let Ok(corners) = &a.corners
+    {
+        let text = match corners.nominal.state(at) {
+            Ok(state) => say::pressure(state.pressure, units, 4),
+            Err(error) => say::fluid(&error, units),
+        };
+        canvas.read_out(
+            pointer,
+            &format!("at {}: {text}", say::temperature(at, units)),
+        );
+    }
+}
+
+/// From which to which pressure to draw, so that both the saturation and the strength
+/// can be read and a liquid-full unit does not press them flat.
+fn upward(design: &Design, a: &Assessment, charts: &Charts, scale: PressureScale) -> Home {
+    let conditions = &design.conditions;
+    let lived = |t: Temperature| t >= conditions.coldest && t <= conditions.hottest;
+    let greatest = |pick: fn(&LimitPoint) -> Option<Pressure>| {
+        charts
+            .limits
+            .iter()
+            .filter(|p| lived(p.temperature))
+            .filter_map(pick)
+            .map(Pressure::pascal)
+            .fold(0.0, f64::max)
+    };
+    let saturation = greatest(|p| p.saturation);
+    let allowable = greatest(|p| p.allowable);
+    let burst = greatest(|p| p.burst);
+    let worst = a
+        .worst
+        .as_ref()
+        .map_or(0.0, |worst| worst.pressure.pascal());
+    let own = charts
+        .path
+        .iter()
+        .filter_map(|p| p.state.as_ref().ok())
+        .map(|s| s.pressure.pascal());
+    let (least, most) = own.fold((f64::INFINITY, 0.0), |(least, most): (f64, f64), p| {
+        (if p > 0.0 { least.min(p) } else { least }, most.max(p))
+    });
+    let known = saturation.max(allowable);
+    let bounded = |worst: f64, times: f64| {
+        if known > 0.0 {
+            worst.min(times * known)
+        } else {
+            worst.max(most)
+        }
+    };
+    match scale {
+        PressureScale::Linear => {
+            let vapour = saturation.max(bounded(worst, 2.0));
+            // A wall far stronger than needed would press the curve flat: it is then told in words.
+            let top = if allowable < 8.0 * vapour {
+                allowable.max(vapour)
+            } else {
+                vapour
+            };
+            Home {
+                scale: Scale::Linear,
+                low: 0.0,
+                high: 1.3 * top.max(1.0),
+            }
+        }
+        PressureScale::Logarithm | PressureScale::Reciprocal => {
+            let top = known
+                .max(bounded(worst, 5.0))
+                .max(burst.min(20.0 * known))
+                .max(1.0);
+            let low = charts
+                .limits
+                .iter()
+                .filter_map(|p| p.saturation)
+                .map(Pressure::pascal)
+                .fold(least, f64::min);
+            let low = if low.is_finite() && low > 0.0 {
+                low
+            } else {
+                1e-3 * top
+            };
+            Home {
+                scale: Scale::Logarithm,
+                low: (0.6 * low).max(1e-7 * top),
+                high: 2.0 * top,
+            }
+        }
+    }
+}
+
+/// The lines as runs of points; a run ends where a value is not known.
+struct Lines<'a> {
+    canvas: &'a Canvas<'a>,
+    charts: &'a Charts,
+}
+
+impl Lines<'_> {
+    fn runs(&self, pick: fn(&LimitPoint) -> Option<Pressure>) -> Vec<Vec<Pos2>> {
+        let points = self.charts.limits.iter().map(|p| (p.temperature, pick(p)));
+        self.collect(points)
+    }
+
+    fn path(&self, which: fn(&State) -> bool) -> Vec<Vec<Pos2>> {
+        let pressure = |p: &PathPoint| {
+            p.state
+                .as_ref()
+                .ok()
+                .filter(|state| which(state))
+                .map(|state| state.pressure)
+        };
+        let points = self
+            .charts
+            .path
+            .iter()
+            .map(|p| (p.temperature, pressure(p)));
+        self.collect(points)
+    }
+
+    fn collect(
+        &self,
+        points: impl Iterator<Item = (Temperature, Option<Pressure>)>,
+    ) -> Vec<Vec<Pos2>> {
+        let mut runs = vec![Vec::new()];
+        for (temperature, pressure) in points {
+            match (pressure, runs.last_mut()) {
+                (Some(p), Some(run)) => run.push(self.canvas.at(temperature.kelvin(), p.pascal())),
+                (None, Some(run)) if !run.is_empty() => runs.push(Vec::new()),
+                _ => {}
+            }
+        }
+        runs.retain(|run| run.len() > 1);
+        runs
+    }
+}
+
+/// A line's name: in the gutter where it reaches it, else where it leaves the frame.
+fn name_line(
+    canvas: &Canvas<'_>,
+    runs: &[Vec<Pos2>],
+    text: &str,
+    color: Color32,
+    ends: &mut Vec<EndLabel>,
+    taken: &mut Taken,
+) {
+    let frame = canvas.frame;
+    let Some(last) = runs
+        .iter()
+        .flatten()
+        .filter(|p| frame.expand(0.5).contains(**p))
+        .next_back()
+    else {
+        return;
+    };
+    if last.x >= frame.right() - 14.0 {
+        ends.push(EndLabel {
+            y: last.y,
+            text: text.to_owned(),
+            color,
+        });
+        return;
+    }
+    let galley = canvas.galley(text, color);
+    let size = galley.size();
+    let places = [
+        pos2(last.x - size.x - 8.0, last.y + 4.0),
+        pos2(last.x + 8.0, last.y + 4.0),
+        pos2(last.x + 8.0, last.y - size.y - 4.0),
+        pos2(last.x - size.x - 8.0, last.y + 20.0),
+    ];
+    if let Some(rect) = taken.first_free(
+        places.map(|at| Rect::from_min_size(at, size)),
+        frame.shrink(2.0),
+    ) {
+        canvas.backed(rect, galley, canvas.palette.ground.gamma_multiply(0.85));
+    }
+}
+
+/// Coldest, working range and hottest as upright lines, named above the frame.
+pub(super) fn paint_conditions(canvas: &Canvas<'_>, design: &Design, units: &Units) {
+    let color = canvas.palette.condition;
+    let mut labels = Vec::with_capacity(4);
+    for (t, name) in say::conditions(&design.conditions) {
+        let x = canvas.inside.round_to_pixel_center(canvas.x.px(t.kelvin()));
+        canvas
+            .inside
+            .vline(x, canvas.frame.y_range(), canvas.condition_stroke());
+        labels.push((x, format!("{name} {}", say::temperature(t, units))));
+    }
+    canvas.top_labels(&labels, color);
+}
+
+/// A dot and a name where the unit's behaviour changes.
+fn paint_events(canvas: &Canvas<'_>, a: &Assessment, units: &Units, taken: &mut Taken) {
+    let (Ok(events), Ok(corners)) = (&a.events, &a.corners) else {
+        return;
+    };
+    for event in events {
+        let Ok(state) = corners.nominal.state(event.temperature) else {
+            continue;
+        };
+        let at = canvas.at(event.temperature.kelvin(), state.pressure.pascal());
+        let text = format!(
+            "{} {}",
+            words::event(event.kind),
+            say::temperature(event.temperature, units)
+        );
+        mark_event(canvas, at, &text, taken);
+    }
+}
+
+/// One dot with its name beside it, where there is room.
+pub(super) fn mark_event(canvas: &Canvas<'_>, at: Pos2, text: &str, taken: &mut Taken) {
+    if !canvas.frame.expand(1.0).contains(at) {
+        return;
+    }
+    let palette = canvas.palette;
+    canvas
+        .inside
+        .circle(at, 4.0, palette.ground, Stroke::new(2.0, palette.path));
+    let galley = canvas.galley(text, palette.text);
+    let size = galley.size();
+    let places = [
+        at + vec2(9.0, 5.0),
+        at + vec2(-9.0 - size.x, -size.y - 5.0),
+        at + vec2(9.0, -size.y - 5.0),
+        at + vec2(-9.0 - size.x, 5.0),
+        at + vec2(9.0, 10.0 + size.y),
+        at + vec2(-9.0 - size.x, -2.0 * size.y - 10.0),
+    ];
+    let room = canvas.frame.shrink(3.0);
+    if let Some(rect) = taken.first_free(places.map(|min| Rect::from_min_size(min, size)), room) {
+        canvas.backed(rect, galley, palette.ground.gamma_multiply(0.85));
+    }
+}
+
+/// In words, at the lower right: strengths that are not known or lie above the picture.
+fn paint_unknown(
+    canvas: &Canvas<'_>,
+    (design, a): (&Design, &Assessment),
+    up: &Home,
+    units: &Units,
+    taken: &Taken,
+) {
+    let hottest = design.conditions.hottest;
+    let mut lines: Vec<String> = Vec::new();
+    let above = |name: &str, p: Pressure| {
+        (p.pascal() > up.high)
+            .then(|| format!("{name}: {}, above the picture", say::pressure(p, units, 3)))
+    };
+    match (a.envelope.weakest(hottest), a.limits_at(hottest)) {
+        (Ok(weakest), Some((allowable, burst))) => {
+            lines.extend(above("allowable", allowable));
+            match (weakest.burst, burst) {
+                (Err(unknown), _) => {
+                    lines.push(format!("burst: {}", say::strength(&unknown, units)))
+                }
+                (Ok(_), Some(burst)) => lines.extend(above("burst", burst)),
+                (Ok(_), None) => {}
+            }
+        }
+        (Err(unknown), _) => lines.push(format!(
+            "allowable and burst: {}",
+            say::strength(&unknown, units)
+        )),
+        (Ok(_), None) => {}
+    }
+    let mut bottom = canvas.frame.bottom() - 6.0;
+    for line in lines.iter().rev() {
+        let galley = canvas.galley(line, canvas.palette.text);
+        let mut rect = Align2::RIGHT_BOTTOM
+            .anchor_size(pos2(canvas.frame.right() - 8.0, bottom), galley.size());
+        if !taken.is_free(rect) {
+            rect = Align2::LEFT_BOTTOM
+                .anchor_size(pos2(canvas.frame.left() + 8.0, bottom), galley.size());
+        }
+        canvas.backed(rect, galley, canvas.palette.ground.gamma_multiply(0.85));
+        bottom = rect.top() - 2.0;
+    }
+}
+
+fn sentence(design: &Design, a: &Assessment, units: &Units) -> String {
+    let hottest = design.conditions.hottest;
+    let mut text = format!(
+        "Pressure over temperature: at the hottest, {}",
+        say::temperature(hottest, units)
+    );
+    match a
+        .corners
+        .as_ref()
+        .map(|corners| corners.nominal.state(hottest))
+    {
+        Ok(Ok(state)) => {
+            text += &format!(
+                ", the unit stands at {}",
+                say::pressure(state.pressure, units, 4)
+            )
+        }
+        Ok(Err(error)) => text += &format!(", {}", say::fluid(&error, units)),
+        Err(_) => {}
+    }
+    if let Some((allowable, _)) = a.limits_at(hottest) {
+        text += &format!(
+            "; the weakest part may bear {}",
+            say::pressure(allowable, units, 3)
+        );
+    }
+    text + "."
+}
