@@ -157,12 +157,13 @@ impl Piece {
         mut solve: impl FnMut(f64) -> Result<CurvePoint, E>,
     ) -> Result<Self, E> {
         let mut values = [[0.0; NODES]; WHAT];
-        for k in 0..NODES {
+        let [p, liquid, vapour] = &mut values;
+        for (k, ((p, liquid), vapour)) in p.iter_mut().zip(liquid).zip(vapour).enumerate() {
             let u = (std::f64::consts::PI * (k as f64 + 0.5) / NODES as f64).cos();
             let point = solve(0.5 * (low + high) + 0.5 * (high - low) * u)?;
-            values[0][k] = point.pressure_pa.ln();
-            values[1][k] = point.liquid_kg_per_m3;
-            values[2][k] = point.vapour_kg_per_m3.ln();
+            *p = point.pressure_pa.ln();
+            *liquid = point.liquid_kg_per_m3;
+            *vapour = point.vapour_kg_per_m3.ln();
         }
         let coefficients = values.map(|values| {
             let mut c = [0.0; NODES];

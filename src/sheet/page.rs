@@ -47,13 +47,13 @@ impl Page {
     }
 
     /// A label and a line to write on.
-    pub fn to_fill(&mut self, label: &str) {
+    pub fn blank_row(&mut self, label: &str) {
         let line = "_".repeat(WIDTH - LABEL);
         self.text.push_str(&format!("{label:<LABEL$}{line}\n"));
     }
 
     /// Several labels with lines to write on, side by side.
-    pub fn to_fill_side_by_side(&mut self, labels: &[&str]) {
+    pub fn blanks_side_by_side(&mut self, labels: &[&str]) {
         let cell = WIDTH / labels.len().max(1);
         let mut line = String::new();
         for label in labels {
@@ -126,7 +126,7 @@ mod tests {
         page.row("a label that is far wider than its column", "value");
         page.paragraph(&"x".repeat(200));
         page.item("[ ]", &"step ".repeat(40));
-        page.to_fill_side_by_side(&["Date", "Serial", "Lot"]);
+        page.blanks_side_by_side(&["Date", "Serial", "Lot"]);
         let text = page.finish();
         assert!(
             text.lines().all(|line| line.chars().count() <= WIDTH),

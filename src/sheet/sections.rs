@@ -33,14 +33,14 @@ pub fn head(page: &mut Page, design: &Design, head: &Head) {
     );
     page.row("Duty", design.duty.name());
     page.blank();
-    page.to_fill_side_by_side(&["Date", "Serial", "Lot"]);
+    page.blanks_side_by_side(&["Date", "Serial", "Lot"]);
 }
 
 pub fn release(page: &mut Page, fit: bool) {
     page.blank();
     if fit {
-        page.to_fill("Released before filling");
-        page.to_fill("Checked by a second person");
+        page.blank_row("Released before filling");
+        page.blank_row("Checked by a second person");
     } else {
         page.paragraph("Not to be released. No scale readings are given.");
     }
@@ -61,9 +61,9 @@ pub fn fluid(page: &mut Page, a: &Assessment) {
             &format!("{} ({})", group.value, group.source),
         );
     }
-    page.to_fill("Grade and moisture");
-    page.to_fill("Stabiliser");
-    page.to_fill("Lot of the fluid");
+    page.blank_row("Grade and moisture");
+    page.blank_row("Stabiliser");
+    page.blank_row("Lot of the fluid");
 }
 
 pub fn before_filling(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
@@ -95,10 +95,10 @@ pub fn before_filling(page: &mut Page, design: &Design, a: &Assessment, units: &
         }
     }
     page.row("Bench temperature", &units.show(design.conditions.bench));
-    page.to_fill("Cleaned as");
-    page.to_fill("Bake-out, temperature, hours");
-    page.to_fill("Proof test, medium, pressure");
-    page.to_fill("Leak test, limit, result");
+    page.blank_row("Cleaned as");
+    page.blank_row("Bake-out, temperature, hours");
+    page.blank_row("Proof test, medium, pressure");
+    page.blank_row("Leak test, limit, result");
     page.paragraph(
         "Prove and leak-test before charging. The wall's strength under outside pressure while evacuated \
          and hot is not judged here: ask for it before a hot bake-out.",
@@ -180,10 +180,10 @@ pub fn weighing(page: &mut Page, design: &Design, a: &Assessment, units: &Units)
         );
     }
     window_rows(page, a, units);
-    page.to_fill("Tare, evacuated");
-    page.to_fill("Gross after dispensing");
-    page.to_fill("Gross after purge and seal");
-    page.to_fill("Stub after pinch-off");
+    page.blank_row("Tare, evacuated");
+    page.blank_row("Gross after dispensing");
+    page.blank_row("Gross after purge and seal");
+    page.blank_row("Stub after pinch-off");
     page.paragraph("After pinch-off weigh unit and stub together: the stub's mass is not fluid.");
 }
 
@@ -391,7 +391,7 @@ pub fn afterwards(page: &mut Page, design: &Design, a: &Assessment, units: &Unit
         "[ ]",
         "Under- or overfilled: recover the fluid into its vessel. Never boil it off into the room.",
     );
-    page.to_fill("Mass after soak, days");
+    page.blank_row("Mass after soak, days");
 }
 
 pub fn worst_case(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
@@ -538,7 +538,7 @@ pub fn basis(page: &mut Page, design: &Design, a: &Assessment) {
         }
     }
     if unconfirmed {
-        page.to_fill("To be confirmed by");
+        page.blank_row("To be confirmed by");
     }
 }
 

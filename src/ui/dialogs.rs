@@ -1,6 +1,6 @@
 //! What stands in front of the window: a path to type, a question, a message.
 
-use std::path::PathBuf;
+use std::path::{Path, PathBuf};
 use std::sync::Arc;
 use std::sync::mpsc::{Receiver, TryRecvError, channel};
 use std::task::{Context, Poll, Wake, Waker};
@@ -298,7 +298,7 @@ fn loss_ui(ui: &mut Ui, after: &Command, name: &str) -> Option<Decision> {
     decision
 }
 
-fn restore_ui(ui: &mut Ui, file: &mut PathBuf, draft: &mut Draft) -> Option<Decision> {
+fn restore_ui(ui: &mut Ui, file: &Path, draft: &Draft) -> Option<Decision> {
     ui.set_width(400.0);
     ui.heading("An unsaved design was found");
     let of = draft.path.as_ref().map_or_else(
@@ -311,12 +311,14 @@ fn restore_ui(ui: &mut Ui, file: &mut PathBuf, draft: &mut Draft) -> Option<Deci
     ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
         if ui.button("Bring it back").clicked() {
             decision = Some(Decision::Restore {
-                file: file.clone(),
+                file: file.to_owned(),
                 draft: draft.clone(),
             });
         }
         if ui.button("Throw it away").clicked() {
-            decision = Some(Decision::DropDraft { file: file.clone() });
+            decision = Some(Decision::DropDraft {
+                file: file.to_owned(),
+            });
         }
     });
     decision

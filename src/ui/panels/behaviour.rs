@@ -17,8 +17,6 @@ pub struct Behaviour {
     tab: Tab,
     /// The picture beside the charge map where there is room for two only.
     second: Picture,
-    /// One picture that fills the column, by double click.
-    alone: Option<Picture>,
     scrubber: Option<Temperature>,
     plots: PlotState,
     /// The sheet of this design, made when it was last asked for.
@@ -33,13 +31,14 @@ enum Tab {
 
 /// At this width the middle column shows three pictures.
 const WIDE: f32 = 900.0;
+/// Width of the tabs before the selector.
+const SELECTOR: f32 = 180.0;
 
 impl Default for Behaviour {
     fn default() -> Self {
         Self {
             tab: Tab::Behaviour,
             second: Picture::Pressure,
-            alone: None,
             scrubber: None,
             plots: PlotState::default(),
             sheet: None,
@@ -86,28 +85,19 @@ pub fn behaviour_ui(
     dragged
 }
 
+/// Where there is room for two pictures only, the second is chosen here; an enlarged
+/// one stands alone.
 fn picture_selector(ui: &mut Ui, state: &mut Behaviour) {
-    if ui.available_width() > WIDE && state.alone.is_none() {
+    let alone = state.plots.enlarged;
+    if ui.available_width() > WIDE - SELECTOR && alone.is_none() {
+        return;
+    }
+    if let Some(picture) = alone {
+        ui.label(picture.name());
         return;
     }
     for picture in [Picture::Pressure, Picture::LiquidShare] {
-        if ui
-            .selectable_label(
-                state.second == picture && state.alone.is_none(),
-                picture.name(),
-            )
-            .clicked()
-        {
-            state.second = picture;
-            state.alone = None;
-        }
-    }
-    if ui
-        .selectable_label(state.alone == Some(Picture::ChargeMap), "Map alone")
-        .clicked()
-    {
-        let alone = state.alone == Some(Picture::ChargeMap);
-        state.alone = (!alone).then_some(Picture::ChargeMap);
+        ui.selectable_value(&mut state.second, picture, picture.name());
     }
 }
 
@@ -148,7 +138,7 @@ fn pictures_ui(
             show(ui, picture, state, scrubber);
         });
     };
-    if let Some(picture) = state.alone {
+    if let Some(picture) = state.plots.enlarged {
         cell(
             ui,
             vec2(size.x, height),

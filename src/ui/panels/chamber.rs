@@ -174,11 +174,8 @@ fn body_ui(
     }
     match &mut part.wall {
         Some(wall) => wall_ui(ui, wall, library, units),
-        None if !part.shape.is_insert() => {
-            if ui.button("Give it a wall").clicked() {
-                part.wall = default_wall(library);
-            }
-        }
+        None if part.shape.is_insert() => {}
+        None if ui.button("Give it a wall").clicked() => part.wall = default_wall(library),
         None => {}
     }
 }

@@ -69,6 +69,7 @@ pub struct PlotState {
 }
 
 impl Picture {
+    #[cfg(test)]
     pub const ALL: [Self; 3] = [Self::ChargeMap, Self::Pressure, Self::LiquidShare];
 
     pub const fn name(self) -> &'static str {

@@ -293,8 +293,7 @@ fn name_line(
     let Some(last) = runs
         .iter()
         .flatten()
-        .filter(|p| frame.expand(0.5).contains(**p))
-        .next_back()
+        .rfind(|p| frame.expand(0.5).contains(**p))
     else {
         return;
     };

@@ -1,8 +1,8 @@
 //! A text field whose text is only a draft until Enter, Tab or a click elsewhere.
 
 use eframe::egui::{
-    Align2, Context, Id, Key, Margin, Rect, Response, Stroke, StrokeKind, TextEdit, Ui, UiBuilder,
-    accesskit, text::CCursorRange,
+    Align2, Context, Id, Key, Margin, Rect, Stroke, StrokeKind, TextEdit, Ui, UiBuilder, accesskit,
+    text::CCursorRange,
 };
 
 use crate::units::{Kind, NBSP, Unit, Units, figures, parse_si};
@@ -57,7 +57,6 @@ impl Script<'_> {
 
 /// What a field did in this frame.
 pub(super) struct Typed {
-    pub response: Response,
     /// A new value.
     pub si: Option<f64>,
     /// Why the text in the field is not a value.
@@ -188,7 +187,6 @@ pub(super) fn draft_ui(
         None => data.remove::<Draft>(id),
     });
     Typed {
-        response,
         si: new_si,
         refused,
     }

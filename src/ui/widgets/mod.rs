@@ -15,5 +15,5 @@ mod tests;
 pub use badge::{Badge, badge_mark, verdict_badge};
 pub use bars::margin_bar;
 pub use draft::is_typing;
-pub use quantity::{NumberField, QuantityField, quantity_with_tolerance_row};
+pub use quantity::{QuantityField, quantity_with_tolerance_row};
 pub use window_bar::{WindowBar, WindowBarLabels, window_bar};

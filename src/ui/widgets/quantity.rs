@@ -3,7 +3,7 @@
 use eframe::egui::Ui;
 
 use super::draft::Script;
-use super::row::{Row, Tolerance, compact_ui, row_ui};
+use super::row::{Row, Tolerance, row_ui};
 use super::slider::Reach;
 use crate::units::{Kind, Quantity, QuantityError, Unit, Units};
 
@@ -57,12 +57,6 @@ impl<'a, Q: Quantity> QuantityField<'a, Q> {
         self
     }
 
-    /// Only a short field, in the layout around it; the label stays its accessible name.
-    pub fn compact(mut self) -> Self {
-        self.form.compact = true;
-        self
-    }
-
     /// Draws the row; true where the value changed.
     pub fn show(self, ui: &mut Ui) -> bool {
         let Self { value, units, form } = self;
@@ -74,95 +68,11 @@ impl<'a, Q: Quantity> QuantityField<'a, Q> {
             units,
             unit,
             digits: form.digits,
-            trim: form.compact,
+            trim: false,
             check: &check,
         };
         let new = form.show(ui, si, script);
         set(value, new)
-    }
-}
-
-/// A row for a bare number between two bounds, such as a factor.
-#[must_use = "a field does nothing until it is shown"]
-pub struct NumberField<'a> {
-    value: &'a mut f64,
-    bounds: (f64, f64),
-    form: Form<'a>,
-}
-
-impl<'a> NumberField<'a> {
-    /// The slider spans the bounds; nothing outside them is taken.
-    pub fn new(label: &'a str, value: &'a mut f64, least: f64, greatest: f64) -> Self {
-        let form = Form {
-            range: Some((least, greatest)),
-            ..Form::new(label, 4)
-        };
-        Self {
-            value,
-            bounds: (least, greatest),
-            form,
-        }
-    }
-
-    /// Equal ratios take equal way on the slider; for bounds above zero.
-    pub fn logarithmic(mut self) -> Self {
-        self.form.logarithmic = true;
-        self
-    }
-
-    /// Significant figures shown at most; four where not said.
-    pub fn digits(mut self, digits: usize) -> Self {
-        self.form.digits = digits;
-        self
-    }
-
-    /// What the number means, as a tooltip and accessible description.
-    pub fn hover(mut self, text: &'a str) -> Self {
-        self.form.hover = Some(text);
-        self
-    }
-
-    /// Where two rows of one panel share a label, something that tells them apart.
-    pub fn id_salt(mut self, salt: usize) -> Self {
-        self.form.salt = salt;
-        self
-    }
-
-    /// Only a short field, in the layout around it.
-    pub fn compact(mut self) -> Self {
-        self.form.compact = true;
-        self
-    }
-
-    /// Draws the row; true where the number changed.
-    pub fn show(self, ui: &mut Ui) -> bool {
-        let Self {
-            value,
-            bounds: (least, greatest),
-            form,
-        } = self;
-        let check = |number: f64| {
-            if (least..=greatest).contains(&number) {
-                Ok(number + 0.0)
-            } else {
-                Err(format!("{number} is not between {least} and {greatest}"))
-            }
-        };
-        let units = Units::default();
-        let unit = units.unit_for(Kind::Number, *value);
-        let script = Script {
-            kind: Kind::Number,
-            units: &units,
-            unit,
-            digits: form.digits,
-            trim: true,
-            check: &check,
-        };
-        let new = form.show(ui, *value, script);
-        new.is_some_and(|number| {
-            *value = number;
-            true
-        })
     }
 }
 
@@ -221,7 +131,6 @@ struct Form<'a> {
     logarithmic: bool,
     digits: usize,
     salt: usize,
-    compact: bool,
 }
 
 impl<'a> Form<'a> {
@@ -233,7 +142,6 @@ impl<'a> Form<'a> {
             logarithmic: false,
             digits,
             salt: 0,
-            compact: false,
         }
     }
 
@@ -258,12 +166,7 @@ impl<'a> Form<'a> {
     }
 
     fn show(&self, ui: &mut Ui, si: f64, script: Script<'a>) -> Option<f64> {
-        let row = self.row(ui, si, script);
-        if self.compact {
-            compact_ui(ui, &row)
-        } else {
-            row_ui(ui, &row, None).si
-        }
+        row_ui(ui, &self.row(ui, si, script), None).si
     }
 }
 

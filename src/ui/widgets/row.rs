@@ -112,19 +112,6 @@ pub(super) fn row_ui(ui: &mut Ui, row: &Row<'_>, tolerance: Option<&Tolerance<'_
     changes
 }
 
-/// Only the field, without label or slider, in the layout of `ui`; its refusal shows on hover.
-pub(super) fn compact_ui(ui: &mut Ui, row: &Row<'_>) -> Option<f64> {
-    let (rect, _) = ui.allocate_exact_size(vec2(COMPACT, FIELD), Sense::hover());
-    let typed = field_ui(ui, row.id, rect, row.label, row.hover, row.si, &row.script);
-    if let Some(reason) = typed.refused {
-        typed.response.show_tooltip_ui(|ui| refusal_ui(ui, &reason));
-    }
-    typed.si
-}
-
-/// Width of a field on its own.
-const COMPACT: f32 = 84.0;
-
 fn label_ui(ui: &mut Ui, row: &Row<'_>, rect: Rect) {
     let text = WidgetText::from(RichText::new(row.label).text_style(TextStyle::Body));
     let galley = text.into_galley(

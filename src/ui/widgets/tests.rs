@@ -4,15 +4,16 @@ use eframe::egui::{Key, Modifiers, Role, Ui};
 use egui_kittest::{Harness, kittest::Queryable};
 
 use super::*;
+use crate::chamber::Factor;
 use crate::ui::theme::{self, Theme};
-use crate::units::{Length, Pressure, Temperature, UnitSystem, Units};
+use crate::units::{Length, Pressure, Quantity, Temperature, UnitSystem, Units};
 
 struct Bench {
     length: Length,
     tolerance: Length,
     pressure: Pressure,
     temperature: Temperature,
-    factor: f64,
+    factor: Factor,
     units: Units,
     changes: usize,
 }
@@ -24,7 +25,7 @@ impl Bench {
             tolerance: Length::from_metre(0.0).unwrap(),
             pressure: Pressure::from_pascal(1e5).unwrap(),
             temperature: Temperature::from_celsius(25.0).unwrap(),
-            factor: 3.5,
+            factor: Factor::from_si(3.5).unwrap(),
             units: Units::new(UnitSystem::Metric),
             changes: 0,
         }
@@ -42,8 +43,11 @@ impl Bench {
         self.changes += usize::from(pressure.show(ui));
         let temperature = QuantityField::new("Hottest", &mut self.temperature, &units);
         self.changes += usize::from(temperature.slider(233.15, 433.15).show(ui));
-        self.changes +=
-            usize::from(NumberField::new("Factor", &mut self.factor, 1.0, 20.0).show(ui));
+        self.changes += usize::from(
+            QuantityField::new("Factor", &mut self.factor, &units)
+                .slider(1.0, 20.0)
+                .show(ui),
+        );
     }
 }
 
@@ -158,9 +162,9 @@ fn a_refused_text_waits_until_the_value_changes() {
     type_into(&mut harness, "Factor", "99");
     harness.key_press(Key::Tab);
     harness.run();
-    assert_eq!(harness.state().factor, 3.5);
+    assert_eq!(harness.state().factor.number(), 3.5);
     harness.get_by_label_contains("99 is not between 1 and 20");
-    harness.state_mut().factor = 4.0;
+    harness.state_mut().factor = Factor::from_si(4.0).unwrap();
     harness.run();
     assert_eq!(shown(&harness, "Factor"), "4");
     assert!(harness.query_by_label_contains("not between").is_none());
