@@ -1,6 +1,6 @@
 //! The middle column: the pictures, the scrubber, and the sheet's preview.
 
-use eframe::egui::{RichText, ScrollArea, TextStyle, Ui, vec2};
+use eframe::egui::{Align, Layout, RichText, ScrollArea, TextStyle, Ui, vec2};
 
 use crate::assess::Assessment;
 use crate::design::Design;
@@ -132,7 +132,7 @@ fn pictures_ui(
                     picture,
                     state: &mut PlotState,
                     scrubber: &mut Temperature| {
-        ui.allocate_ui(size, |ui| {
+        ui.allocate_ui_with_layout(size, Layout::top_down(Align::Min), |ui| {
             ui.set_min_size(size);
             ui.set_max_size(size);
             show(ui, picture, state, scrubber);
