@@ -7,7 +7,7 @@ use super::{Assessment, Library};
 use crate::chamber::{MaterialKind, StrengthGap};
 use crate::design::{Design, Duty};
 use crate::fluid::{Model, Regime, StabilityKind};
-use crate::hazard::{CompatibilityTable, PairVerdict};
+use crate::hazard::{Compatibility, CompatibilityTable, PairVerdict};
 use crate::units::Temperature;
 
 /// Oxygen below which a room is dangerous to enter: 19.5 %, OSHA 29 CFR 1910.134
@@ -317,7 +317,8 @@ impl Judge<'_> {
 
     fn pair(&mut self) {
         let table = CompatibilityTable::built_in();
-        let mut seen: Vec<&str> = Vec::new();
+        // A row of the table may hold for several walls: it is said once, of all of them.
+        let mut told: Vec<(Option<&Compatibility>, Vec<&str>)> = Vec::new();
         for wall in self
             .design
             .chamber
@@ -325,46 +326,44 @@ impl Judge<'_> {
             .iter()
             .filter_map(|part| part.wall.as_ref())
         {
-            let id = wall.material.as_str();
-            if seen.contains(&id) {
-                continue;
-            }
-            seen.push(id);
-            let Some(material) = self.library.materials.get(id) else {
+            let Some(material) = self.library.materials.get(&wall.material) else {
                 continue;
             };
-            let material = material.name.clone();
-            match table.of(self.a.fluid.id(), id) {
-                None => {
-                    self.add(
-                        Severity::Warning,
-                        Section::Fluid,
-                        FindingKind::PairNotKnown { material },
-                    );
+            let pair = table.of(self.a.fluid.id(), &wall.material);
+            match told.iter_mut().find(|(known, _)| *known == pair) {
+                Some((_, names)) if names.contains(&material.name.as_str()) => {}
+                Some((_, names)) => names.push(&material.name),
+                None => told.push((pair, vec![&material.name])),
+            }
+        }
+        for (pair, names) in told {
+            let material = names.join(", ");
+            let Some(pair) = pair else {
+                self.add(
+                    Severity::Warning,
+                    Section::Fluid,
+                    FindingKind::PairNotKnown { material },
+                );
+                continue;
+            };
+            let (reason, source) = (pair.reason.clone(), pair.source.to_string());
+            match pair.verdict {
+                PairVerdict::Good => {}
+                PairVerdict::Caution => {
+                    let kind = FindingKind::PairCaution {
+                        material,
+                        reason,
+                        source,
+                    };
+                    self.add(Severity::Warning, Section::Fluid, kind);
                 }
-                Some(pair) => {
-                    let (reason, source) = (pair.reason.clone(), pair.source.to_string());
-                    match pair.verdict {
-                        PairVerdict::Good => {}
-                        PairVerdict::Caution => self.add(
-                            Severity::Warning,
-                            Section::Fluid,
-                            FindingKind::PairCaution {
-                                material,
-                                reason,
-                                source,
-                            },
-                        ),
-                        PairVerdict::Never => self.add(
-                            Severity::Error,
-                            Section::Fluid,
-                            FindingKind::Incompatible {
-                                material,
-                                reason,
-                                source,
-                            },
-                        ),
-                    }
+                PairVerdict::Never => {
+                    let kind = FindingKind::Incompatible {
+                        material,
+                        reason,
+                        source,
+                    };
+                    self.add(Severity::Error, Section::Fluid, kind);
                 }
             }
         }

@@ -14,7 +14,7 @@ mod widgets;
 
 pub use app::App;
 pub use command::Command;
-pub use desk::Desk;
+pub use desk::{Desk, Draft};
 pub use settings::Settings;
 pub use start::open;
 pub use theme::{Palette, Theme};

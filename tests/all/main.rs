@@ -2,3 +2,5 @@
 
 mod reference_equations;
 mod tables;
+#[cfg(feature = "window")]
+mod window;
