@@ -6,12 +6,12 @@
 use eframe::egui::text::Galley;
 use eframe::egui::{
     Align2, Color32, CornerRadius, FontId, Painter, Pos2, Rangef, Rect, Response, Role, Sense,
-    Shape, Stroke, StrokeKind, TextStyle, Ui, Vec2, WidgetInfo, pos2, vec2,
+    Shape, Stroke, StrokeKind, TextStyle, Ui, WidgetInfo, pos2, vec2,
 };
 use std::sync::Arc;
 
 use super::axis::{Axis, Home};
-use super::labels::spread;
+use super::view::{View, turn_view};
 use crate::ui::theme::Palette;
 use crate::units::Unit;
 
@@ -24,28 +24,13 @@ pub(super) struct Margins {
     pub bottom: f32,
 }
 
-/// The part of the whole that is in sight, as shares of it: it outlives a change of
-/// unit and of design.
-#[derive(Debug, Clone, Copy, PartialEq)]
-pub(super) struct View {
-    pub x: (f64, f64),
-    pub y: (f64, f64),
-}
-
-impl Default for View {
-    fn default() -> Self {
-        Self {
-            x: (0.0, 1.0),
-            y: (0.0, 1.0),
-        }
-    }
-}
-
 pub(super) struct Canvas<'a> {
     pub x: Axis,
     pub y: Axis,
     pub frame: Rect,
     pub response: Response,
+    /// A double click on the whole picture asks for more room.
+    pub to_enlarge: bool,
     /// Paints inside the frame only.
     pub inside: Painter,
     /// Paints on the gutters as well.
@@ -57,13 +42,6 @@ pub(super) struct Canvas<'a> {
     pub font: FontId,
     /// Of the names of areas.
     pub name_font: FontId,
-}
-
-/// A name at the right end of a line.
-pub(super) struct EndLabel {
-    pub y: f32,
-    pub text: String,
-    pub color: Color32,
 }
 
 impl<'a> Canvas<'a> {
@@ -90,7 +68,7 @@ impl<'a> Canvas<'a> {
             ui.scope_id().with("frame"),
             Sense::CLICK | Sense::DRAG,
         );
-        turn_view(ui, &response, frame, view);
+        let to_enlarge = turn_view(ui, &response, frame, view);
         let outside = ui.painter_at(rect.expand(2.0));
         let inside = ui.painter_at(frame);
         inside.rect_filled(frame, CornerRadius::ZERO, palette.ground);
@@ -101,6 +79,7 @@ impl<'a> Canvas<'a> {
             y: Axis::new(homes.1, view.y, (frame.bottom(), frame.top())),
             frame,
             response,
+            to_enlarge,
             inside,
             outside,
             palette,
@@ -120,10 +99,11 @@ impl<'a> Canvas<'a> {
             .widget_info(|| WidgetInfo::labeled(Role::Image, true, sentence()));
     }
 
-    /// Grid lines and numbers of the upright axis; its unit stands above the numbers.
-    pub fn y_axis(&self, unit: &Unit, unit_text: &str) {
+    /// Grid lines and numbers of the upright axis, at least `spacing` points apart; its
+    /// unit stands above the numbers.
+    pub fn y_axis(&self, unit: &Unit, unit_text: &str, spacing: f32) {
         let left = self.frame.left() - 7.0;
-        for tick in self.y.ticks(unit, 22.0) {
+        for tick in self.y.ticks(unit, spacing) {
             let y = self.inside.round_to_pixel_center(self.y.px(tick.si));
             self.inside.hline(self.frame.x_range(), y, self.grid());
             self.outside.hline(
@@ -196,7 +176,7 @@ impl<'a> Canvas<'a> {
 
     /// Lines of the conditions: clear, but behind the lines of the fluid.
     pub fn condition_stroke(&self) -> Stroke {
-        Stroke::new(1.0, self.palette.condition.gamma_multiply(0.55))
+        Stroke::new(1.0, self.palette.condition.gamma_multiply(0.45))
     }
 
     pub fn axis_stroke(&self) -> Stroke {
@@ -234,137 +214,12 @@ impl<'a> Canvas<'a> {
         );
     }
 
-    /// Names in the right gutter, moved apart, each with a hair to its line.
-    pub fn end_labels(&self, mut labels: Vec<EndLabel>) {
-        let within = Rangef::new(self.frame.top() - 4.0, self.frame.bottom() + 6.0);
-        labels.retain(|label| self.frame.y_range().expand(1.0).contains(label.y));
-        labels.sort_by(|a, b| a.y.total_cmp(&b.y));
-        let galleys: Vec<_> = labels
-            .iter()
-            .map(|label| self.galley(&label.text, label.color))
-            .collect();
-        let mut places: Vec<(f32, f32)> = labels
-            .iter()
-            .zip(&galleys)
-            .map(|(label, galley)| (label.y, galley.size().y))
-            .collect();
-        spread(&mut places, within);
-        for ((label, galley), (y, height)) in labels.iter().zip(galleys).zip(places) {
-            let from = pos2(self.frame.right() + 1.0, label.y);
-            let to = pos2(self.frame.right() + 10.0, y);
-            self.outside.line_segment(
-                [from, to],
-                Stroke::new(1.0, label.color.gamma_multiply(0.7)),
-            );
-            self.outside
-                .galley(pos2(to.x + 3.0, y - 0.5 * height), galley, label.color);
-        }
-    }
-
-    /// Names above upright lines, moved apart.
-    pub fn top_labels(&self, labels: &[(f32, String)], color: Color32) {
-        let mut seen: Vec<(f32, Arc<Galley>)> = labels
-            .iter()
-            .filter(|(x, _)| self.frame.x_range().expand(1.0).contains(*x))
-            .map(|(x, text)| (*x, self.galley(text, color)))
-            .collect();
-        seen.sort_by(|a, b| a.0.total_cmp(&b.0));
-        let mut places: Vec<(f32, f32)> = seen
-            .iter()
-            .map(|(x, galley)| (*x, galley.size().x + 12.0))
-            .collect();
-        spread(
-            &mut places,
-            Rangef::new(self.frame.left() - 20.0, self.outside.clip_rect().right()),
-        );
-        let baseline = self.frame.top() - 6.0;
-        for ((x, galley), (centre, _)) in seen.into_iter().zip(places) {
-            let stroke = Stroke::new(1.0, color.gamma_multiply(0.7));
-            self.outside
-                .line_segment([pos2(x, self.frame.top()), pos2(centre, baseline)], stroke);
-            let size = galley.size();
-            self.outside.galley(
-                pos2(centre - 0.5 * size.x, baseline - size.y),
-                galley,
-                color,
-            );
-        }
-    }
-
-    /// A one-line box beside the pointer, kept inside the picture.
-    pub fn read_out(&self, pointer: Pos2, text: &str) {
-        let galley = self.galley(text, self.palette.text);
-        let size = galley.size() + vec2(14.0, 8.0);
-        let room = self.outside.clip_rect().shrink(4.0);
-        let above = pointer.y - size.y - 12.0;
-        let y = if above > room.top() {
-            above
-        } else {
-            pointer.y + 18.0
-        };
-        let x = (pointer.x - 0.5 * size.x)
-            .min(room.right() - size.x)
-            .max(room.left());
-        let rect = Rect::from_min_size(pos2(x, y), size);
-        self.outside.rect(
-            rect,
-            CornerRadius::same(4),
-            self.palette.panel,
-            Stroke::new(1.0, self.palette.text_faint.gamma_multiply(0.6)),
-            StrokeKind::Inside,
-        );
-        self.outside
-            .galley(rect.min + vec2(7.0, 4.0), galley, self.palette.text);
-    }
-
     /// Where the pointer rests in the frame, with no button down.
     pub fn resting_pointer(&self, ui: &Ui) -> Option<Pos2> {
         if !ui.rect_contains_pointer(self.frame) || ui.input(|i| i.pointer.any_down()) {
             return None;
         }
         ui.input(|i| i.pointer.hover_pos())
-    }
-}
-
-/// Width of the widest of some texts in the label font of a picture.
-pub(super) fn widest<'t>(ui: &Ui, texts: impl IntoIterator<Item = &'t str>) -> f32 {
-    let body = TextStyle::Body.resolve(ui.style());
-    let font = FontId::new((0.87 * body.size).max(11.0), body.family);
-    texts
-        .into_iter()
-        .map(|text| {
-            ui.painter()
-                .layout_no_wrap(text.to_owned(), font.clone(), Color32::WHITE)
-                .size()
-                .x
-        })
-        .fold(0.0, f32::max)
-}
-
-/// Ctrl and the wheel, or two fingers, zoom around the pointer; a zoomed picture can
-/// be dragged; a double click shows all of it again.
-fn turn_view(ui: &Ui, response: &Response, frame: Rect, view: &mut View) {
-    if response.double_clicked() && *view != View::default() {
-        *view = View::default();
-        return;
-    }
-    let share = |at: Pos2| {
-        let across = f64::from((at.x - frame.left()) / frame.width());
-        let up = f64::from((frame.bottom() - at.y) / frame.height());
-        (across, up)
-    };
-    let zoom = f64::from(ui.input(|i| i.zoom_delta()));
-    if zoom != 1.0
-        && let Some(at) = response.hover_pos()
-    {
-        let (across, up) = share(at);
-        view.x = zoomed(view.x, zoom, across);
-        view.y = zoomed(view.y, zoom, up);
-    }
-    if response.dragged() {
-        let by: Vec2 = response.drag_delta() / frame.size();
-        view.x = shifted(view.x, -f64::from(by.x));
-        view.y = shifted(view.y, f64::from(by.y));
     }
 }
 
@@ -398,15 +253,4 @@ fn dashes(points: &[Pos2], dash: f32, gap: f32) -> Vec<[Pos2; 2]> {
         dashes.push([from, *end]);
     }
     dashes
-}
-
-fn zoomed((from, to): (f64, f64), by: f64, around: f64) -> (f64, f64) {
-    let width = ((to - from) / by).clamp(0.005, 1.0);
-    let from = (from + around * (to - from - width)).clamp(0.0, 1.0 - width);
-    (from, from + width)
-}
-
-fn shifted((from, to): (f64, f64), by: f64) -> (f64, f64) {
-    let by = (by * (to - from)).clamp(-from, 1.0 - to);
-    (from + by, to + by)
 }

@@ -1,11 +1,12 @@
 //! The charge map: charge across, temperature up, and what the unit is like there.
 
-use eframe::egui::{Align2, Pos2, RichText, Ui, pos2};
+use eframe::egui::{Align2, Label, Pos2, Rangef, RichText, Ui, pos2};
 
 use super::axis::{Axis, Home, Scale};
-use super::canvas::{Canvas, EndLabel, Margins, widest};
+use super::canvas::{Canvas, Margins};
 use super::charge_mark::{TRACK, band, bottom_margin, handle_ui, paint_band, window_ui};
 use super::grip::scrub_line;
+use super::gutter::{EndLabel, widest};
 use super::map_areas::Areas;
 use super::{Picture, PlotState, header_ui, missing_ui, say, table};
 use crate::assess::{Assessment, ChargeFigures, Charts};
@@ -29,15 +30,16 @@ pub fn charge_map_ui(
     let (charts, charge) = match (&a.charts, &a.charge) {
         (Ok(charts), Ok(charge)) => (charts, charge),
         (Err(missing), _) | (_, Err(missing)) => {
+            state.charge_held = None;
             missing_ui(ui, Picture::ChargeMap, missing, units, palette);
             return None;
         }
     };
     ui.push_id(Picture::ChargeMap.name(), |ui| {
         let copy = header_ui(ui, Picture::ChargeMap, state, palette, |ui, _| {
-            ui.label(
-                RichText::new(charge_in_words(design, charge, units)).color(palette.text_faint),
-            );
+            let words =
+                RichText::new(charge_in_words(design, charge, units)).color(palette.text_faint);
+            ui.add(Label::new(words).truncate());
         });
         if copy {
             ui.ctx().copy_text(table::charge_map(charts, units));
@@ -100,7 +102,7 @@ fn map_ui(
         bottom: bottom_margin(ui),
     };
     let mut canvas = Canvas::new(ui, (across, upward), margins, &mut state.map_view, palette);
-    if canvas.response.double_clicked() && state.map_view == Default::default() {
+    if canvas.to_enlarge {
         state.toggle_enlarged(Picture::ChargeMap);
     }
     canvas.describe(|| sentence(charge, design, a, units));
@@ -108,7 +110,7 @@ fn map_ui(
     canvas.leave_room(false, scrubber.kelvin());
     let areas = Areas::new(&canvas, charts, &a.fluid);
     areas.paint_fills(&canvas);
-    canvas.y_axis(degree, degree.symbol);
+    canvas.y_axis(degree, degree.symbol, 22.0);
     canvas.x_axis(mass, &mass_name, TRACK);
     areas.paint_over_allowable(&canvas);
     areas.paint_lines(&canvas);
@@ -126,15 +128,15 @@ fn map_ui(
             color: palette.condition,
         });
     }
+    window_ui(ui, &canvas, a, units);
     paint_band(&canvas, charge);
-    areas.paint_names(&canvas, band(&canvas, charge).expand(4.0), &heights);
     scrub_line(ui, &canvas, false, units, charts.span, scrubber);
+    areas.paint_names(&canvas, band(&canvas, charge).expand(4.0), &heights);
     canvas.border();
     canvas.end_labels(labels);
     if let Some(fill) = &fill {
         fill.paint(&canvas, &fill_name);
     }
-    window_ui(ui, &canvas, a, units);
     let moved = handle_ui(ui, &canvas, a, charge, units, state);
     if let Some(pointer) = canvas.resting_pointer(ui)
         && let Some(text) = pointed(&canvas, a, fill.as_ref(), pointer, units)
@@ -195,11 +197,9 @@ impl FillScale {
         let top = canvas.frame.top();
         for tick in axis.ticks(percent, 36.0) {
             let x = canvas.inside.round_to_pixel_center(axis.px(tick.si));
-            canvas.outside.vline(
-                x,
-                eframe::egui::Rangef::new(top - 4.0, top),
-                canvas.axis_stroke(),
-            );
+            canvas
+                .outside
+                .vline(x, Rangef::new(top - 4.0, top), canvas.axis_stroke());
             canvas.text(
                 pos2(x, top - 5.0),
                 Align2::CENTER_BOTTOM,

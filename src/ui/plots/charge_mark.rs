@@ -1,7 +1,9 @@
 //! The present charge in the charge map: a band as wide as its tolerance, the
 //! window of allowed mass along the axis, and the handle between them.
 
-use eframe::egui::{CornerRadius, CursorIcon, Rangef, Rect, Sense, Stroke, Ui, pos2, vec2};
+use eframe::egui::{
+    Align2, CornerRadius, CursorIcon, Rangef, Rect, Sense, Shape, Stroke, TextStyle, Ui, pos2,
+};
 
 use super::PlotState;
 use super::canvas::Canvas;
@@ -47,7 +49,7 @@ pub(super) fn window_ui(ui: &Ui, canvas: &Canvas<'_>, a: &Assessment, units: &Un
         if window.is_empty() {
             // The ends have passed each other: a broken line between them.
             let points = [pos2(stretch.min, y), pos2(stretch.max, y)];
-            canvas.outside.extend(eframe::egui::Shape::dashed_line(
+            canvas.outside.extend(Shape::dashed_line(
                 &points,
                 Stroke::new(3.0, color),
                 4.0,
@@ -81,7 +83,7 @@ pub(super) fn window_ui(ui: &Ui, canvas: &Canvas<'_>, a: &Assessment, units: &Un
     };
     canvas.text(
         pos2(canvas.frame.right() + 14.0, y - 1.0),
-        eframe::egui::Align2::LEFT_CENTER,
+        Align2::LEFT_CENTER,
         word,
         color,
     );
@@ -219,6 +221,5 @@ fn tolerance(charge: &ChargeFigures) -> Mass {
 
 /// Room for the axis, its numbers and the knob.
 pub(super) fn bottom_margin(ui: &Ui) -> f32 {
-    let _ = vec2(0.0, 0.0);
-    TRACK + 8.0 + ui.text_style_height(&eframe::egui::TextStyle::Body)
+    TRACK + 8.0 + ui.text_style_height(&TextStyle::Body)
 }

@@ -1,9 +1,8 @@
 //! What is dragged: a handle with a keyboard and a voice, and the line of the scrubber.
 
-use eframe::egui::Id;
 use eframe::egui::accesskit::{Action, ActionData};
 use eframe::egui::{
-    Align2, CornerRadius, CursorIcon, EventFilter, Key, Painter, Pos2, Rect, Response, Sense,
+    Align2, CornerRadius, CursorIcon, EventFilter, Id, Key, Painter, Pos2, Rect, Response, Sense,
     Stroke, Ui, WidgetInfo, pos2, vec2,
 };
 

@@ -1,11 +1,21 @@
 //! Text that finds room for itself.
 
-use eframe::egui::{Rangef, Rect, Vec2, pos2};
+use eframe::egui::{Pos2, Rangef, Rect, Vec2, pos2};
 
 /// Moves places of given sizes apart along a line so that none overlap, each as
 /// little as may be, inside `within`. `wanted` are centres; the order is kept.
 pub(super) fn spread(wanted: &mut [(f32, f32)], within: Rangef) {
     wanted.sort_by(|a, b| a.0.total_cmp(&b.0));
+    // Neighbours that overlap give way to each other by halves; a few rounds settle a row.
+    for _ in 0..12 {
+        for i in 1..wanted.len() {
+            let overlap = 0.5 * (wanted[i - 1].1 + wanted[i].1) - (wanted[i].0 - wanted[i - 1].0);
+            if overlap > 0.0 {
+                wanted[i - 1].0 -= 0.5 * overlap;
+                wanted[i].0 += 0.5 * overlap;
+            }
+        }
+    }
     let mut edge = within.min;
     for (centre, size) in wanted.iter_mut() {
         *centre = centre.max(edge + 0.5 * *size);
@@ -22,6 +32,8 @@ pub(super) fn spread(wanted: &mut [(f32, f32)], within: Rangef) {
 #[derive(Debug, Default)]
 pub(super) struct Taken {
     rects: Vec<Rect>,
+    /// Points of lines that are not to be written over.
+    points: Vec<Pos2>,
 }
 
 impl Taken {
@@ -29,8 +41,15 @@ impl Taken {
         self.rects.push(rect);
     }
 
+    /// Keeps texts off a line, as far as its points are close enough together.
+    pub fn keep_off(&mut self, line: &[Pos2]) {
+        self.points.extend_from_slice(line);
+    }
+
     pub fn is_free(&self, rect: Rect) -> bool {
+        let near = rect.expand(2.0);
         !self.rects.iter().any(|taken| taken.intersects(rect))
+            && !self.points.iter().any(|p| near.contains(*p))
     }
 
     /// The first of some places that is free and inside `within`; it is then taken.

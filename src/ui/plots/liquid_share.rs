@@ -1,16 +1,17 @@
 //! How much of the inside is liquid, over temperature.
 
-use eframe::egui::{Align2, CornerRadius, Pos2, Rangef, Rect, Stroke, Ui, pos2};
+use eframe::egui::{CornerRadius, Mesh, Pos2, Rangef, Rect, Shape, Stroke, Ui, pos2};
 
 use super::axis::{Home, Scale};
-use super::canvas::{Canvas, EndLabel, Margins, widest};
+use super::canvas::{Canvas, Margins};
 use super::grip::scrub_line;
-use super::labels::Taken;
-use super::pressure::{mark_event, paint_conditions};
+use super::gutter::{EndLabel, widest};
+use super::labels::{Taken, place_in_area};
+use super::over_temperature::{mark_event, name_bands, paint_conditions, regime_bands};
 use super::{Picture, PlotState, header_ui, missing_ui, say, table};
 use crate::assess::{Assessment, Charts, EventKind};
 use crate::design::Design;
-use crate::fluid::Regime;
+use crate::sealed::PathPoint;
 use crate::ui::theme::Palette;
 use crate::units::{Kind, Temperature, Units, unit_named};
 use crate::words;
@@ -74,13 +75,16 @@ fn plot_ui(
         bottom: 24.0,
     };
     let mut canvas = Canvas::new(ui, (across, up), margins, &mut state.share_view, palette);
-    if canvas.response.double_clicked() && state.share_view == Default::default() {
+    if canvas.to_enlarge {
         state.toggle_enlarged(Picture::LiquidShare);
     }
     canvas.describe(|| sentence(design, a, units));
     canvas.leave_room(true, scrubber.kelvin());
-    paint_regimes(&canvas, charts, ceiling);
-    canvas.y_axis(unit_named(Kind::Ratio, "%"), "% liquid");
+    let runs = shares(&canvas, charts);
+    paint_phases(&canvas, &runs);
+    paint_kept(&canvas, ceiling);
+    let bands = regime_bands(&canvas, charts);
+    canvas.y_axis(unit_named(Kind::Ratio, "%"), "% liquid", 34.0);
     canvas.x_axis(degree, &across_name, 0.0);
     paint_conditions(&canvas, design, units);
 
@@ -108,34 +112,25 @@ fn plot_ui(
     level(1.0, "liquid-full", palette.text_faint, false);
     level(ceiling, &ceiling_name, palette.allowable, true);
 
-    let mut run: Vec<Pos2> = Vec::with_capacity(charts.path.len());
-    let mut last = None;
-    for point in &charts.path {
-        match point
-            .state
-            .as_ref()
-            .ok()
-            .and_then(|state| state.liquid_share)
-        {
-            Some(share) => run.push(canvas.at(point.temperature.kelvin(), share)),
-            None => {
-                last = run.last().copied().or(last);
-                canvas
-                    .inside
-                    .line(std::mem::take(&mut run), Stroke::new(4.0, palette.path));
-            }
-        }
+    for run in &runs {
+        canvas
+            .inside
+            .line(run.clone(), Stroke::new(3.0, palette.path));
     }
-    last = run.last().copied().or(last);
-    canvas.inside.line(run, Stroke::new(4.0, palette.path));
-    if let Some(end) = last.filter(|end| end.x >= canvas.frame.right() - 2.0) {
+    if let Some(end) = runs
+        .last()
+        .and_then(|run| run.last())
+        .filter(|end| end.x >= full.max - 2.0)
+    {
         ends.push(EndLabel {
             y: end.y,
             text: "this unit".to_owned(),
             color: palette.path,
         });
     }
+    scrub_line(ui, &canvas, true, units, charts.span, scrubber);
     let mut taken = Taken::default();
+    runs.iter().for_each(|run| taken.keep_off(run));
     if let (Ok(events), Ok(corners)) = (&a.events, &a.corners) {
         for event in events
             .iter()
@@ -162,7 +157,8 @@ fn plot_ui(
             );
         }
     }
-    scrub_line(ui, &canvas, true, units, charts.span, scrubber);
+    name_bands(&canvas, &bands, &mut taken);
+    name_phases(&canvas, &runs, &mut taken);
     canvas.border();
     canvas.end_labels(ends);
     if let Some(pointer) = canvas.resting_pointer(ui)
@@ -187,41 +183,101 @@ fn plot_ui(
     }
 }
 
-/// What has no liquid share is tinted as in the charge map, and the space above the
-/// ceiling, which must stay vapour at the hottest.
-fn paint_regimes(canvas: &Canvas<'_>, charts: &Charts, ceiling: f64) {
+/// The liquid share as runs of points; a run ends where phases are not told apart.
+fn shares(canvas: &Canvas<'_>, charts: &Charts) -> Vec<Vec<Pos2>> {
+    let known = |p: &PathPoint| {
+        p.state
+            .as_ref()
+            .is_ok_and(|state| state.liquid_share.is_some())
+    };
+    let runs = charts
+        .path
+        .chunk_by(|a, b| known(a) == known(b))
+        .filter(|run| run.first().is_some_and(known));
+    let point = |p: &PathPoint| {
+        let share = p.state.as_ref().ok()?.liquid_share?;
+        Some(canvas.at(p.temperature.kelvin(), share))
+    };
+    runs.map(|run| run.iter().filter_map(point).collect())
+        .collect()
+}
+
+/// Liquid below the line, vapour above it, in the tints of the charge map.
+fn paint_phases(canvas: &Canvas<'_>, runs: &[Vec<Pos2>]) {
+    let (dry, full) = (canvas.y.px(0.0), canvas.y.px(1.0));
+    let mut mesh = Mesh::default();
+    for pair in runs.iter().flat_map(|run| run.windows(2)) {
+        for (edge, color) in [
+            (dry, canvas.palette.liquid_full),
+            (full, canvas.palette.all_vapour),
+        ] {
+            let first = mesh.vertices.len() as u32;
+            for corner in [
+                pair[0],
+                pair[1],
+                pos2(pair[0].x, edge),
+                pos2(pair[1].x, edge),
+            ] {
+                mesh.colored_vertex(corner, color);
+            }
+            mesh.add_triangle(first, first + 1, first + 2);
+            mesh.add_triangle(first + 1, first + 2, first + 3);
+        }
+    }
+    canvas.inside.add(Shape::mesh(mesh));
+}
+
+fn name_phases(canvas: &Canvas<'_>, runs: &[Vec<Pos2>], taken: &mut Taken) {
+    let Some(run) = runs.iter().max_by_key(|run| run.len()) else {
+        return;
+    };
+    let sparse: Vec<Pos2> = run.iter().step_by(6).chain(run.last()).copied().collect();
+    let (dry, full) = (canvas.y.px(0.0), canvas.y.px(1.0));
+    let nowhere = Rangef::new(-1.0, -1.0);
+    for (name, ground) in [
+        ("liquid", canvas.palette.liquid_full),
+        ("vapour", canvas.palette.all_vapour),
+    ] {
+        let liquid = name == "liquid";
+        let extent = |y: f32| {
+            let there = |p: &Pos2| {
+                if liquid {
+                    p.y < y && y < dry
+                } else {
+                    full < y && y < p.y
+                }
+            };
+            let stretches = sparse
+                .chunk_by(|a, b| there(a) == there(b))
+                .filter(|s| s.first().is_some_and(there));
+            stretches
+                .filter_map(|s| Some(Rangef::new(s.first()?.x, s.last()?.x)))
+                .max_by(|a, b| a.span().total_cmp(&b.span()))
+        };
+        let galley = canvas.inside.layout_no_wrap(
+            name.to_owned(),
+            canvas.name_font.clone(),
+            canvas.palette.text,
+        );
+        if let Some((rect, _)) =
+            place_in_area(galley.size(), canvas.frame, extent, nowhere, &[], taken)
+        {
+            taken.add(rect);
+            canvas.backed(rect, galley, ground);
+        }
+    }
+}
+
+/// The space above the ceiling, which must stay vapour at the hottest.
+fn paint_kept(canvas: &Canvas<'_>, ceiling: f64) {
     let palette = canvas.palette;
     let frame = canvas.frame;
     let kept = Rangef::new(canvas.y.px(1.0), canvas.y.px(ceiling));
     canvas.inside.rect_filled(
         Rect::from_x_y_ranges(frame.x_range(), kept),
         CornerRadius::ZERO,
-        palette.over_allowable.gamma_multiply(0.30),
+        palette.over_allowable.gamma_multiply(0.6),
     );
-    for (regime, color) in [
-        (Regime::Frozen, palette.frozen),
-        (Regime::Supercritical, palette.supercritical),
-    ] {
-        let here = charts
-            .path
-            .iter()
-            .filter(|p| p.state.as_ref().is_ok_and(|s| s.regime == regime));
-        let across = here.map(|p| canvas.x.px(p.temperature.kelvin()));
-        let (from, to) = across.fold((f32::INFINITY, f32::NEG_INFINITY), |(a, b), x| {
-            (a.min(x), b.max(x))
-        });
-        if from >= to {
-            continue;
-        }
-        let rect = Rect::from_x_y_ranges(Rangef::new(from, to), frame.y_range());
-        canvas.inside.rect_filled(rect, CornerRadius::ZERO, color);
-        let seen = rect.intersect(frame);
-        let galley = canvas.galley(words::regime(regime), palette.text);
-        if seen.width() > galley.size().x + 8.0 {
-            let at = Align2::CENTER_CENTER.anchor_size(seen.center(), galley.size());
-            canvas.inside.galley(at.min, galley, palette.text);
-        }
-    }
 }
 
 fn sentence(design: &Design, a: &Assessment, units: &Units) -> String {

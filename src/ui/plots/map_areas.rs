@@ -1,6 +1,6 @@
 //! The areas of the charge map and their names.
 
-use eframe::egui::{Mesh, Pos2, Rangef, Rect, Shape, Stroke, pos2};
+use eframe::egui::{Mesh, Pos2, Rangef, Rect, Shape, Stroke, pos2, vec2};
 
 use super::canvas::Canvas;
 use super::labels::{Taken, place_in_area};
@@ -165,7 +165,7 @@ impl Areas {
             let edge = self.allowable.iter().find_map(|piece| x_at(piece, y))?;
             Some(Rangef::new(edge, all.max))
         };
-        let mut name = |texts: &[&str], extent: &dyn Fn(f32) -> Option<Rangef>, ground| {
+        let mut name = |texts: &[&str], extent: &dyn Fn(f32) -> Option<Rangef>, ground| -> bool {
             for text in texts {
                 let galley = canvas.inside.layout_no_wrap(
                     (*text).to_owned(),
@@ -177,9 +177,10 @@ impl Areas {
                 {
                     taken.add(rect.expand(4.0));
                     canvas.backed(rect, galley, ground);
-                    return;
+                    return true;
                 }
             }
+            false
         };
         name(
             &[
@@ -196,9 +197,49 @@ impl Areas {
             &full,
             palette.liquid_full,
         );
-        name(&["all vapour", "all\nvapour"], &vapour, palette.all_vapour);
+        let vapour_named = name(&["all vapour", "all\nvapour"], &vapour, palette.all_vapour);
         name(&["supercritical"], &above, palette.supercritical);
         name(&["frozen"], &frozen, palette.frozen);
+        if !vapour_named {
+            self.point_at_vapour(canvas, avoid, heights, &taken);
+        }
+    }
+
+    /// Beside the area of vapour alone, which is often a sliver: its name and a hair to it.
+    fn point_at_vapour(&self, canvas: &Canvas<'_>, avoid: Rangef, heights: &[f32], taken: &Taken) {
+        let galley = canvas.inside.layout_no_wrap(
+            "all vapour".to_owned(),
+            canvas.font.clone(),
+            canvas.palette.text,
+        );
+        let size = galley.size();
+        let seen = self.frame.shrink2(vec2(0.0, 0.5 * size.y + 3.0));
+        const ROWS: u8 = 24;
+        let place = (0..=ROWS)
+            .map(|row| seen.top() + seen.height() * f32::from(row) / f32::from(ROWS))
+            .find_map(|y| {
+                let edge = x_at(&self.dry_out, y)?;
+                let rect = Rect::from_min_size(
+                    pos2(edge.max(self.frame.left()) + 18.0, y - 0.5 * size.y),
+                    size,
+                );
+                let clear = heights
+                    .iter()
+                    .all(|height| (height - y).abs() > 0.5 * size.y + 2.0);
+                let room = taken.is_free(rect)
+                    && rect.right() < self.frame.right()
+                    && !rect.x_range().intersects(avoid);
+                (edge - self.frame.left() >= 1.5 && clear && room).then_some((edge, rect))
+            });
+        if let Some((edge, rect)) = place {
+            let y = rect.center().y;
+            let from = pos2(0.5 * (edge + self.frame.left()), y);
+            canvas.inside.line_segment(
+                [from, pos2(rect.left() - 4.0, y)],
+                Stroke::new(1.0, canvas.palette.text),
+            );
+            canvas.inside.galley(rect.min, galley, canvas.palette.text);
+        }
     }
 }
 
@@ -267,7 +308,6 @@ fn hatch_right_of(edge: &[Pos2], frame: Rect, into: &mut Vec<[Pos2; 2]>) {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use eframe::egui::vec2;
 
     #[test]
     fn hatching_stays_right_of_its_edge() {

@@ -7,21 +7,25 @@ mod canvas;
 mod charge_map;
 mod charge_mark;
 mod grip;
+mod gutter;
 mod labels;
 mod liquid_share;
 mod map_areas;
+mod over_temperature;
 mod pressure;
+mod pressure_lines;
 mod say;
 mod scrubber;
 mod table;
 #[cfg(test)]
 mod tests;
+mod view;
 
-use eframe::egui::{Align, Button, Layout, RichText, Ui};
+use eframe::egui::{Align, Button, Layout, RichText, Ui, vec2};
 use serde::{Deserialize, Serialize};
 
 use self::axis::Home;
-use self::canvas::View;
+use self::view::View;
 use crate::assess::Missing;
 use crate::ui::theme::Palette;
 use crate::units::Units;
@@ -69,7 +73,6 @@ pub struct PlotState {
 }
 
 impl Picture {
-    #[cfg(test)]
     pub const ALL: [Self; 3] = [Self::ChargeMap, Self::Pressure, Self::LiquidShare];
 
     pub const fn name(self) -> &'static str {
@@ -119,25 +122,28 @@ fn header_ui(
     beside: impl FnOnce(&mut Ui, &mut PlotState),
 ) -> bool {
     let mut copy = false;
-    ui.horizontal(|ui| {
-        ui.label(RichText::new(picture.name()).strong().color(palette.text));
-        beside(ui, state);
-        ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
-            copy = ui
-                .add(Button::new("Copy as table").small())
-                .on_hover_text("Values with their units, separated by tabs, for a spreadsheet")
-                .clicked();
-            let word = if state.enlarged == Some(picture) {
-                "Restore"
-            } else {
-                "Enlarge"
-            };
-            let enlarge = ui
-                .add(Button::new(word).small())
-                .on_hover_text("Double click on the picture does the same");
-            if enlarge.clicked() {
-                state.toggle_enlarged(picture);
-            }
+    // Buttons first, from the right: what stands beside the name gives way to them.
+    let buttons = Layout::right_to_left(Align::Center);
+    let row = vec2(ui.available_width(), ui.spacing().interact_size.y);
+    ui.allocate_ui_with_layout(row, buttons, |ui| {
+        copy = ui
+            .add(Button::new("Copy as table").small())
+            .on_hover_text("Values with their units, separated by tabs, for a spreadsheet")
+            .clicked();
+        let word = if state.enlarged == Some(picture) {
+            "Restore"
+        } else {
+            "Enlarge"
+        };
+        let enlarge = ui
+            .add(Button::new(word).small())
+            .on_hover_text("A double click on the picture does the same");
+        if enlarge.clicked() {
+            state.toggle_enlarged(picture);
+        }
+        ui.with_layout(Layout::left_to_right(Align::Center), |ui| {
+            ui.label(RichText::new(picture.name()).strong().color(palette.text));
+            beside(ui, state);
         });
     });
     copy

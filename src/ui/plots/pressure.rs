@@ -4,14 +4,16 @@
 use eframe::egui::{Align2, Color32, Pos2, Rect, Stroke, Ui, pos2, vec2};
 
 use super::axis::{Home, Scale};
-use super::canvas::{Canvas, EndLabel, Margins, widest};
+use super::canvas::{Canvas, Margins};
 use super::grip::scrub_line;
+use super::gutter::{EndLabel, widest};
 use super::labels::Taken;
+use super::over_temperature::{mark_event, name_bands, paint_conditions, regime_bands};
+use super::pressure_lines::{Lines, upward};
 use super::{Picture, PlotState, PressureScale, header_ui, missing_ui, say, table};
 use crate::assess::{Assessment, Charts, LimitPoint};
 use crate::design::Design;
-use crate::fluid::{Regime, State};
-use crate::sealed::PathPoint;
+use crate::fluid::Regime;
 use crate::ui::theme::Palette;
 use crate::units::{Kind, Pressure, Temperature, Units};
 use crate::words;
@@ -90,12 +92,13 @@ fn plot_ui(
         bottom: 24.0,
     };
     let mut canvas = Canvas::new(ui, (across, up), margins, &mut state.pressure_view, palette);
-    if canvas.response.double_clicked() && state.pressure_view == Default::default() {
+    if canvas.to_enlarge {
         state.toggle_enlarged(Picture::Pressure);
     }
     canvas.describe(|| sentence(design, a, units));
     canvas.leave_room(true, scrubber.kelvin());
-    canvas.y_axis(pressure, &format!("{} abs", pressure.symbol));
+    let bands = regime_bands(&canvas, charts);
+    canvas.y_axis(pressure, &format!("{} abs", pressure.symbol), 26.0);
     canvas.x_axis(degree, &across_name, 0.0);
     paint_conditions(&canvas, design, units);
     let mut ends = Vec::new();
@@ -134,13 +137,23 @@ fn plot_ui(
     for run in &burst {
         canvas.dashed(run, Stroke::new(2.0, palette.burst), 2.0, 4.0);
     }
+    scrub_line(ui, &canvas, true, units, charts.span, scrubber);
+    for run in saturation
+        .iter()
+        .chain(&path)
+        .chain(&frozen)
+        .chain(&allowable)
+        .chain(&burst)
+    {
+        taken.keep_off(run);
+    }
     end(&saturation, "saturation", palette.saturation, &mut taken);
     end(&path, "this unit", palette.path, &mut taken);
     end(&allowable, "allowable", palette.allowable, &mut taken);
     end(&burst, "burst", palette.burst, &mut taken);
     paint_events(&canvas, a, units, &mut taken);
-    paint_unknown(&canvas, (design, a), &up, units, &taken);
-    scrub_line(ui, &canvas, true, units, charts.span, scrubber);
+    name_bands(&canvas, &bands, &mut taken);
+    paint_unknown(&canvas, (design, a), &up, units, &mut taken);
     canvas.border();
     canvas.end_labels(ends);
     if let Some(pointer) = canvas.resting_pointer(ui)
@@ -155,128 +168,6 @@ fn plot_ui(
             pointer,
             &format!("at {}: {text}", say::temperature(at, units)),
         );
-    }
-}
-
-/// From which to which pressure to draw, so that both the saturation and the strength
-/// can be read and a liquid-full unit does not press them flat.
-fn upward(design: &Design, a: &Assessment, charts: &Charts, scale: PressureScale) -> Home {
-    let conditions = &design.conditions;
-    let lived = |t: Temperature| t >= conditions.coldest && t <= conditions.hottest;
-    let greatest = |pick: fn(&LimitPoint) -> Option<Pressure>| {
-        charts
-            .limits
-            .iter()
-            .filter(|p| lived(p.temperature))
-            .filter_map(pick)
-            .map(Pressure::pascal)
-            .fold(0.0, f64::max)
-    };
-    let saturation = greatest(|p| p.saturation);
-    let allowable = greatest(|p| p.allowable);
-    let burst = greatest(|p| p.burst);
-    let worst = a
-        .worst
-        .as_ref()
-        .map_or(0.0, |worst| worst.pressure.pascal());
-    let own = charts
-        .path
-        .iter()
-        .filter_map(|p| p.state.as_ref().ok())
-        .map(|s| s.pressure.pascal());
-    let (least, most) = own.fold((f64::INFINITY, 0.0), |(least, most): (f64, f64), p| {
-        (if p > 0.0 { least.min(p) } else { least }, most.max(p))
-    });
-    let known = saturation.max(allowable);
-    let bounded = |worst: f64, times: f64| {
-        if known > 0.0 {
-            worst.min(times * known)
-        } else {
-            worst.max(most)
-        }
-    };
-    match scale {
-        PressureScale::Linear => {
-            let vapour = saturation.max(bounded(worst, 2.0));
-            // A wall far stronger than needed would press the curve flat: it is then told in words.
-            let top = if allowable < 8.0 * vapour {
-                allowable.max(vapour)
-            } else {
-                vapour
-            };
-            Home {
-                scale: Scale::Linear,
-                low: 0.0,
-                high: 1.3 * top.max(1.0),
-            }
-        }
-        PressureScale::Logarithm | PressureScale::Reciprocal => {
-            let top = known
-                .max(bounded(worst, 5.0))
-                .max(burst.min(20.0 * known))
-                .max(1.0);
-            let low = charts
-                .limits
-                .iter()
-                .filter_map(|p| p.saturation)
-                .map(Pressure::pascal)
-                .fold(least, f64::min);
-            let low = if low.is_finite() && low > 0.0 {
-                low
-            } else {
-                1e-3 * top
-            };
-            Home {
-                scale: Scale::Logarithm,
-                low: (0.6 * low).max(1e-7 * top),
-                high: 2.0 * top,
-            }
-        }
-    }
-}
-
-/// The lines as runs of points; a run ends where a value is not known.
-struct Lines<'a> {
-    canvas: &'a Canvas<'a>,
-    charts: &'a Charts,
-}
-
-impl Lines<'_> {
-    fn runs(&self, pick: fn(&LimitPoint) -> Option<Pressure>) -> Vec<Vec<Pos2>> {
-        let points = self.charts.limits.iter().map(|p| (p.temperature, pick(p)));
-        self.collect(points)
-    }
-
-    fn path(&self, which: fn(&State) -> bool) -> Vec<Vec<Pos2>> {
-        let pressure = |p: &PathPoint| {
-            p.state
-                .as_ref()
-                .ok()
-                .filter(|state| which(state))
-                .map(|state| state.pressure)
-        };
-        let points = self
-            .charts
-            .path
-            .iter()
-            .map(|p| (p.temperature, pressure(p)));
-        self.collect(points)
-    }
-
-    fn collect(
-        &self,
-        points: impl Iterator<Item = (Temperature, Option<Pressure>)>,
-    ) -> Vec<Vec<Pos2>> {
-        let mut runs = vec![Vec::new()];
-        for (temperature, pressure) in points {
-            match (pressure, runs.last_mut()) {
-                (Some(p), Some(run)) => run.push(self.canvas.at(temperature.kelvin(), p.pascal())),
-                (None, Some(run)) if !run.is_empty() => runs.push(Vec::new()),
-                _ => {}
-            }
-        }
-        runs.retain(|run| run.len() > 1);
-        runs
     }
 }
 
@@ -308,9 +199,10 @@ fn name_line(
     let galley = canvas.galley(text, color);
     let size = galley.size();
     let places = [
-        pos2(last.x - size.x - 8.0, last.y + 4.0),
-        pos2(last.x + 8.0, last.y + 4.0),
+        pos2(last.x + 6.0, last.y + 4.0),
         pos2(last.x + 8.0, last.y - size.y - 4.0),
+        pos2(last.x - size.x - 8.0, last.y + 4.0),
+        pos2(last.x - size.x - 8.0, last.y - size.y - 4.0),
         pos2(last.x - size.x - 8.0, last.y + 20.0),
     ];
     if let Some(rect) = taken.first_free(
@@ -319,20 +211,6 @@ fn name_line(
     ) {
         canvas.backed(rect, galley, canvas.palette.ground.gamma_multiply(0.85));
     }
-}
-
-/// Coldest, working range and hottest as upright lines, named above the frame.
-pub(super) fn paint_conditions(canvas: &Canvas<'_>, design: &Design, units: &Units) {
-    let color = canvas.palette.condition;
-    let mut labels = Vec::with_capacity(4);
-    for (t, name) in say::conditions(&design.conditions) {
-        let x = canvas.inside.round_to_pixel_center(canvas.x.px(t.kelvin()));
-        canvas
-            .inside
-            .vline(x, canvas.frame.y_range(), canvas.condition_stroke());
-        labels.push((x, format!("{name} {}", say::temperature(t, units))));
-    }
-    canvas.top_labels(&labels, color);
 }
 
 /// A dot and a name where the unit's behaviour changes.
@@ -354,38 +232,13 @@ fn paint_events(canvas: &Canvas<'_>, a: &Assessment, units: &Units, taken: &mut 
     }
 }
 
-/// One dot with its name beside it, where there is room.
-pub(super) fn mark_event(canvas: &Canvas<'_>, at: Pos2, text: &str, taken: &mut Taken) {
-    if !canvas.frame.expand(1.0).contains(at) {
-        return;
-    }
-    let palette = canvas.palette;
-    canvas
-        .inside
-        .circle(at, 4.0, palette.ground, Stroke::new(2.0, palette.path));
-    let galley = canvas.galley(text, palette.text);
-    let size = galley.size();
-    let places = [
-        at + vec2(9.0, 5.0),
-        at + vec2(-9.0 - size.x, -size.y - 5.0),
-        at + vec2(9.0, -size.y - 5.0),
-        at + vec2(-9.0 - size.x, 5.0),
-        at + vec2(9.0, 10.0 + size.y),
-        at + vec2(-9.0 - size.x, -2.0 * size.y - 10.0),
-    ];
-    let room = canvas.frame.shrink(3.0);
-    if let Some(rect) = taken.first_free(places.map(|min| Rect::from_min_size(min, size)), room) {
-        canvas.backed(rect, galley, palette.ground.gamma_multiply(0.85));
-    }
-}
-
-/// In words, at the lower right: strengths that are not known or lie above the picture.
+/// In words, in a free corner: strengths that are not known or lie above the picture.
 fn paint_unknown(
     canvas: &Canvas<'_>,
     (design, a): (&Design, &Assessment),
     up: &Home,
     units: &Units,
-    taken: &Taken,
+    taken: &mut Taken,
 ) {
     let hottest = design.conditions.hottest;
     let mut lines: Vec<String> = Vec::new();
@@ -410,18 +263,23 @@ fn paint_unknown(
         )),
         (Ok(_), None) => {}
     }
-    let mut bottom = canvas.frame.bottom() - 6.0;
-    for line in lines.iter().rev() {
-        let galley = canvas.galley(line, canvas.palette.text);
-        let mut rect = Align2::RIGHT_BOTTOM
-            .anchor_size(pos2(canvas.frame.right() - 8.0, bottom), galley.size());
-        if !taken.is_free(rect) {
-            rect = Align2::LEFT_BOTTOM
-                .anchor_size(pos2(canvas.frame.left() + 8.0, bottom), galley.size());
-        }
-        canvas.backed(rect, galley, canvas.palette.ground.gamma_multiply(0.85));
-        bottom = rect.top() - 2.0;
+    if lines.is_empty() {
+        return;
     }
+    let galley = canvas.galley(&lines.join("\n"), canvas.palette.text);
+    let room = canvas.frame.shrink2(vec2(8.0, 5.0));
+    let corner = |anchor: Align2| anchor.align_size_within_rect(galley.size(), room);
+    let corners = [
+        Align2::RIGHT_BOTTOM,
+        Align2::LEFT_TOP,
+        Align2::RIGHT_TOP,
+        Align2::LEFT_BOTTOM,
+    ]
+    .map(corner);
+    let rect = taken
+        .first_free(corners, canvas.frame)
+        .unwrap_or(corners[0]);
+    canvas.backed(rect, galley, canvas.palette.ground.gamma_multiply(0.85));
 }
 
 fn sentence(design: &Design, a: &Assessment, units: &Units) -> String {

@@ -1,13 +1,14 @@
 //! The pictures in a window without a screen.
 
 use eframe::egui::epaint::ClippedShape;
-use eframe::egui::{Color32, Key, Pos2, Shape, Vec2, pos2};
+use eframe::egui::{Key, Pos2, Shape, Vec2, pos2};
 use egui_kittest::Harness;
 use egui_kittest::kittest::Queryable as _;
 
 use super::*;
 use crate::assess::{Assessment, Library, assess};
 use crate::design::{ChargeAim, Design};
+use crate::ui::theme::Theme;
 use crate::units::{Mass, Temperature, UnitSystem};
 
 const TUBE: &str = r#"(
@@ -61,7 +62,7 @@ impl World {
 
     fn ui(&mut self, ui: &mut Ui) {
         let units = Units::new(UnitSystem::Metric);
-        let palette = palette();
+        let palette = Palette::of(Theme::Light);
         let (design, a, scrubber, plots) =
             (&self.design, &self.a, &mut self.scrubber, &mut self.plots);
         let mut moved = None;
@@ -69,11 +70,11 @@ impl World {
             eframe::egui::UiBuilder::new().max_rect(picture_rect()),
             |ui| match self.picture {
                 Picture::ChargeMap => {
-                    moved = charge_map_ui(ui, design, a, &units, &palette, scrubber, plots)
+                    moved = charge_map_ui(ui, design, a, &units, palette, scrubber, plots)
                 }
-                Picture::Pressure => pressure_ui(ui, design, a, &units, &palette, scrubber, plots),
+                Picture::Pressure => pressure_ui(ui, design, a, &units, palette, scrubber, plots),
                 Picture::LiquidShare => {
-                    liquid_share_ui(ui, design, a, &units, &palette, scrubber, plots)
+                    liquid_share_ui(ui, design, a, &units, palette, scrubber, plots)
                 }
             },
         );
@@ -88,56 +89,10 @@ fn picture_rect() -> eframe::egui::Rect {
     eframe::egui::Rect::from_min_size(Pos2::ZERO, Vec2::new(660.0, 330.0))
 }
 
-fn palette() -> Palette {
-    let c = Color32::from_gray(120);
-    let [
-        two_phase,
-        all_vapour,
-        liquid_full,
-        supercritical,
-        frozen,
-        over_allowable,
-    ] = [c; 6];
-    let [
-        saturation,
-        path,
-        allowable,
-        burst,
-        charge,
-        condition,
-        scrubber,
-        window,
-    ] = [c; 8];
-    let [fit, warning, error, note, text, text_faint, ground, panel] = [c; 8];
-    Palette {
-        two_phase,
-        all_vapour,
-        liquid_full,
-        supercritical,
-        frozen,
-        over_allowable,
-        saturation,
-        path,
-        allowable,
-        burst,
-        charge,
-        condition,
-        scrubber,
-        window,
-        fit,
-        warning,
-        error,
-        note,
-        text,
-        text_faint,
-        ground,
-        panel,
-    }
-}
-
 fn harness(world: World) -> Harness<'static, World> {
     let mut harness = Harness::builder()
         .with_size(Vec2::new(660.0, 400.0))
+        .with_step_dt(1.0 / 60.0)
         .build_ui_state(|ui, world: &mut World| world.ui(ui), world);
     harness.run();
     harness
@@ -280,4 +235,57 @@ fn a_picture_is_copied_as_a_table_with_units() {
     assert!(text.lines().all(|line| line.split('\t').count() == 6));
     assert!(table::charge_map(charts, &units).contains("liquid-full\t"));
     assert!(table::liquid_share(charts, &units).contains("two-phase"));
+}
+
+#[test]
+fn the_scrubber_is_dragged_in_the_picture_itself() {
+    for (picture, step) in [
+        (Picture::ChargeMap, Vec2::new(0.0, -30.0)),
+        (Picture::Pressure, Vec2::new(40.0, 0.0)),
+    ] {
+        let mut harness = harness(World::new(picture));
+        let frame = harness.get_by_role(eframe::egui::Role::Image).rect();
+        let span = harness.state().a.charts.as_ref().expect("charts").span;
+        let share = (314.15 - span.0.kelvin()) / (span.1.kelvin() - span.0.kelvin());
+        let on_line = match picture {
+            Picture::ChargeMap => pos2(
+                frame.right() - 90.0,
+                frame.bottom() - share as f32 * frame.height(),
+            ),
+            _ => pos2(
+                frame.left() + share as f32 * frame.width(),
+                frame.center().y,
+            ),
+        };
+        harness.drag_at(on_line);
+        harness.step();
+        harness.hover_at(on_line + step);
+        harness.step();
+        harness.drop_at(on_line + step);
+        harness.run();
+        let after = harness.state().scrubber.celsius();
+        assert!(after > 50.0 && after < 70.0, "{picture:?} {after}");
+    }
+}
+
+#[test]
+fn ctrl_and_wheel_zoom_and_a_double_click_shows_all_again() {
+    let mut harness = harness(World::new(Picture::ChargeMap));
+    let at = harness
+        .get_by_role(eframe::egui::Role::Image)
+        .rect()
+        .center()
+        + Vec2::new(60.0, -20.0);
+    harness.hover_at(at);
+    harness.run();
+    harness.event(eframe::egui::Event::Zoom(2.0));
+    harness.run();
+    assert_ne!(harness.state().plots.map_view, View::default());
+    for _ in 0..2 {
+        harness.drag_at(at);
+        harness.drop_at(at);
+    }
+    harness.run();
+    assert_eq!(harness.state().plots.map_view, View::default());
+    assert_eq!(harness.state().plots.enlarged, None);
 }
