@@ -223,9 +223,13 @@ impl Areas {
                     pos2(edge.max(self.frame.left()) + 18.0, y - 0.5 * size.y),
                     size,
                 );
-                let clear = heights
-                    .iter()
-                    .all(|height| (height - y).abs() > 0.5 * size.y + 2.0);
+                // Near the critical point the boundary leans over: there it would cross the text.
+                let leans = x_at(&self.dry_out, rect.top() - 3.0)
+                    .is_none_or(|above| above > rect.left() - 4.0);
+                let clear = !leans
+                    && heights
+                        .iter()
+                        .all(|height| (height - y).abs() > 0.5 * size.y + 2.0);
                 let room = taken.is_free(rect)
                     && rect.right() < self.frame.right()
                     && !rect.x_range().intersects(avoid);
@@ -238,7 +242,7 @@ impl Areas {
                 [from, pos2(rect.left() - 4.0, y)],
                 Stroke::new(1.0, canvas.palette.text),
             );
-            canvas.inside.galley(rect.min, galley, canvas.palette.text);
+            canvas.backed(rect, galley, canvas.palette.two_phase);
         }
     }
 }

@@ -73,6 +73,7 @@ pub struct PlotState {
 }
 
 impl Picture {
+    #[cfg(test)]
     pub const ALL: [Self; 3] = [Self::ChargeMap, Self::Pressure, Self::LiquidShare];
 
     pub const fn name(self) -> &'static str {
@@ -130,16 +131,19 @@ fn header_ui(
             .add(Button::new("Copy as table").small())
             .on_hover_text("Values with their units, separated by tabs, for a spreadsheet")
             .clicked();
-        let word = if state.enlarged == Some(picture) {
-            "Restore"
-        } else {
-            "Enlarge"
-        };
-        let enlarge = ui
-            .add(Button::new(word).small())
-            .on_hover_text("A double click on the picture does the same");
-        if enlarge.clicked() {
-            state.toggle_enlarged(picture);
+        // Where it is narrow a double click must do.
+        if row.x > 520.0 {
+            let word = if state.enlarged == Some(picture) {
+                "Restore"
+            } else {
+                "Enlarge"
+            };
+            let enlarge = ui
+                .add(Button::new(word).small())
+                .on_hover_text("A double click on the picture does the same");
+            if enlarge.clicked() {
+                state.toggle_enlarged(picture);
+            }
         }
         ui.with_layout(Layout::left_to_right(Align::Center), |ui| {
             ui.label(RichText::new(picture.name()).strong().color(palette.text));
