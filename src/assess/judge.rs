@@ -485,12 +485,12 @@ impl Judge<'_> {
         }
     }
 
-    /// Vapour too thin at room temperature to push out a thousandth of the air.
+    /// Too little vapour at room temperature to push out half a per cent of the air.
     fn harmless_on_release(&self) -> bool {
         self.a
             .release
             .as_ref()
-            .is_ok_and(|release| release.ppm < 1_000.0 || release.capped)
+            .is_ok_and(|release| release.ppm < 5_000.0 || release.capped)
     }
 
     fn glass(&mut self) {

@@ -15,7 +15,7 @@ use std::sync::Arc;
 
 use crate::chamber::{Envelope, Materials, Volumes};
 use crate::design::Design;
-use crate::fluid::{Catalog, DomeSide, Fluid};
+use crate::fluid::{Catalog, DomeSide, Fluid, FluidError, Regime};
 use crate::hazard::{EnergyError, Release, release, rupture_energy};
 use crate::units::{Energy, Mass, Pressure, Temperature};
 
@@ -203,11 +203,28 @@ impl Assessment {
     }
 }
 
+/// The temperature at which a unit leaves the dome by this side: its hottest crossing,
+/// since water may touch its liquid line near 4 °C as well. A unit that is on that
+/// side wherever the fluid is liquid is so from the lowest temperature on.
 fn side_of(unit: &crate::sealed::SealedUnit, side: DomeSide) -> Figure<Option<Temperature>> {
     let crossings = unit.crossings()?;
-    let on_side = crossings.iter().filter(|crossing| crossing.side == side);
-    // The hottest crossing: below it water may touch its liquid line near 4 °C.
-    Ok(on_side.map(|crossing| crossing.temperature).next_back())
+    let fluid = unit.fluid();
+    if crossings.is_empty() {
+        let (low, _) = fluid.saturation_range();
+        let low = low.max(fluid.freezing_point());
+        // Too dense even for the model counts as liquid: it is past every liquid line.
+        let is_there = match (unit.state(low), side) {
+            (Ok(state), DomeSide::Liquid) => state.regime == Regime::LiquidFull,
+            (Ok(state), DomeSide::Vapour) => state.regime == Regime::AllVapour,
+            (Err(FluidError::TooDense { .. } | FluidError::PressureTooHigh { .. }), side) => {
+                side == DomeSide::Liquid
+            }
+            _ => false,
+        };
+        return Ok(is_there.then_some(low));
+    }
+    let on_side = crossings.iter().rfind(|crossing| crossing.side == side);
+    Ok(on_side.map(|crossing| crossing.temperature))
 }
 
 fn events(corners: &Corners, walls: &Walls<'_>) -> Figure<Vec<Event>> {

@@ -24,11 +24,11 @@ pub struct Head {
 /// reason at the top and carries no scale readings.
 pub fn render(design: &Design, a: &Assessment, units: &Units, head: &Head) -> String {
     let mut page = Page::default();
-    sections::head(&mut page, design, head);
     let fit = a.verdict != Verdict::NotFit;
     if !fit {
         do_not_fill(&mut page, design, a, units);
     }
+    sections::head(&mut page, design, head);
     sections::release(&mut page, fit);
     sections::fluid(&mut page, a);
     sections::before_filling(&mut page, design, a, units);

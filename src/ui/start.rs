@@ -45,7 +45,12 @@ pub fn open(design: Option<PathBuf>) -> ExitCode {
     };
     match quietly(run) {
         Ok(Ok(())) => ExitCode::SUCCESS,
-        Ok(Err(error)) => refuse(&format!("the window cannot be opened: {error}")),
+        Ok(Err(error)) => {
+            // The toolkit puts the place in its own source before the reason.
+            let text = error.to_string();
+            let reason = text.rsplit(": ").next().unwrap_or(&text);
+            refuse(&format!("the window cannot be opened: {reason}"))
+        }
         Err(why) => refuse(&format!("the window cannot be opened: {why}")),
     }
 }

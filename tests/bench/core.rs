@@ -32,7 +32,10 @@ fn whole_assessment(bencher: Bencher<'_, '_>, name: &str) {
 fn charge_sheet(bencher: Bencher<'_, '_>, name: &str) {
     let design = store::preset(name).expect("a ready design");
     let assessment = assess(&design, &Library::built_in());
-    let head = Head { file_name: None, fingerprint: store::fingerprint(&design) };
+    let head = Head {
+        file_name: None,
+        fingerprint: store::fingerprint(&design),
+    };
     bencher.bench_local(|| render(&design, &assessment, &Units::default(), &head));
 }
 
@@ -55,7 +58,8 @@ fn saturation_looked_up(bencher: Bencher<'_, '_>, id: &str) {
 fn state_two_phase(bencher: Bencher<'_, '_>, id: &str) {
     let fluid = Catalog::built_in().by_id(id).expect("a fluid");
     let t = Temperature::from_kelvin(0.7 * fluid.critical().temperature_k).expect("temperature");
-    let rho = Density::from_kilogram_per_cubic_metre(fluid.critical().density_kg_per_m3).expect("density");
+    let rho = Density::from_kilogram_per_cubic_metre(fluid.critical().density_kg_per_m3)
+        .expect("density");
     fluid.curve().expect("a curve");
     bencher.bench_local(|| fluid.state(black_box(rho), t));
 }
@@ -76,8 +80,10 @@ fn expansions_built(bencher: Bencher<'_, '_>, id: &str) {
     let fluid = Catalog::built_in().by_id(id).expect("a fluid");
     let m = fluid.molar_mass();
     bencher.bench_local(|| {
-        SaturationCurve::build(fluid.critical().temperature_k, fluid.model().saturation_range_k(), |t| {
-            fluid.model().curve_point(t, m)
-        })
+        SaturationCurve::build(
+            fluid.critical().temperature_k,
+            fluid.model().saturation_range_k(),
+            |t| fluid.model().curve_point(t, m),
+        )
     });
 }
