@@ -1,7 +1,8 @@
 //! The charge sheet: plain text for the fill bench, the same bytes for the same design.
 
+mod bench;
+mod facts;
 mod page;
-mod sections;
 
 pub use page::WIDTH;
 
@@ -28,21 +29,21 @@ pub fn render(design: &Design, a: &Assessment, units: &Units, head: &Head) -> St
     if !fit {
         do_not_fill(&mut page, design, a, units);
     }
-    sections::head(&mut page, design, head);
-    sections::release(&mut page, fit);
-    sections::fluid(&mut page, a);
-    sections::before_filling(&mut page, design, a, units);
+    facts::head(&mut page, design, head);
+    facts::release(&mut page, fit);
+    facts::fluid(&mut page, a);
+    facts::before_filling(&mut page, design, a, units);
     if fit {
-        sections::weighing(&mut page, design, a, units);
-        sections::steps(&mut page, design, a, units);
-        sections::afterwards(&mut page, design, a, units);
+        bench::weighing(&mut page, design, a, units);
+        bench::steps(&mut page, design, a, units);
+        bench::afterwards(&mut page, design, a, units);
     }
-    sections::worst_case(&mut page, design, a, units);
-    sections::warnings(&mut page, design, a, units);
-    sections::basis(&mut page, design, a);
-    sections::care(&mut page, a);
+    facts::worst_case(&mut page, design, a, units);
+    facts::warnings(&mut page, design, a, units);
+    facts::basis(&mut page, design, a);
+    facts::care(&mut page, a);
     if fit {
-        sections::label(&mut page, design, a, units);
+        facts::label(&mut page, design, a, units);
     }
     page.finish()
 }

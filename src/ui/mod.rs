@@ -5,6 +5,7 @@ mod command;
 mod desk;
 mod dialogs;
 mod history;
+mod orders;
 mod panels;
 mod plots;
 mod settings;

@@ -6,15 +6,19 @@
 
 mod ancillary;
 mod ideal;
+mod non_analytic;
 mod residual;
 mod saturation;
+mod tau;
+mod terms;
 
 use serde::Deserialize;
 
 use crate::source::Citation;
 use ancillary::Ancillaries;
 use ideal::IdealTerms;
-use residual::{EXPONENT_LIMIT, Residual, ResidualIsotherm, ResidualTerms};
+use residual::{EXPONENT_LIMIT, Residual, ResidualIsotherm};
+use terms::ResidualTerms;
 
 pub use residual::{Derivatives, UnequalLists};
 pub use saturation::{CLOSEST_TO_CRITICAL, NotConverged, SaturatedPair};

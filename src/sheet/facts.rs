@@ -1,0 +1,293 @@
+//! What the sheet states: head, fluid, unit, worst case, basis, care.
+
+use super::Head;
+use super::page::Page;
+use crate::assess::{Assessment, EventKind, Severity};
+use crate::chamber::MeasuredVolume;
+use crate::design::Design;
+use crate::units::{Units, figures};
+use crate::words;
+
+pub fn head(page: &mut Page, design: &Design, head: &Head) {
+    page.rule('=');
+    page.paragraph("CHARGE SHEET");
+    page.rule('=');
+    page.row("Design", &design.title);
+    if !design.note.is_empty() {
+        page.row("Note", &design.note);
+    }
+    page.row("File", head.file_name.as_deref().unwrap_or("not saved"));
+    page.row("Content fingerprint", &head.fingerprint);
+    page.row(
+        "Written by",
+        concat!("Chargewright ", env!("CARGO_PKG_VERSION")),
+    );
+    page.row("Duty", design.duty.name());
+    page.blank();
+    page.blanks_side_by_side(&["Date", "Serial", "Lot"]);
+}
+
+pub fn release(page: &mut Page, fit: bool) {
+    page.blank();
+    if fit {
+        page.blank_row("Released before filling");
+        page.blank_row("Checked by a second person");
+    } else {
+        page.paragraph("Not to be released. No scale readings are given.");
+    }
+}
+
+pub fn fluid(page: &mut Page, a: &Assessment) {
+    let fluid = &a.fluid;
+    page.heading("FLUID");
+    page.row("Name", fluid.name());
+    page.row("CAS", fluid.cas());
+    page.row("Formula", fluid.formula());
+    if let Some(number) = fluid.refrigerant() {
+        page.row("Refrigerant number", number);
+    }
+    if let Some(group) = &fluid.safety().group {
+        page.row(
+            "Safety group",
+            &format!("{} ({})", group.value, group.source),
+        );
+    }
+    page.blank_row("Grade and moisture");
+    page.blank_row("Stabiliser");
+    page.blank_row("Lot of the fluid");
+}
+
+pub fn before_filling(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
+    page.heading("BEFORE FILLING");
+    match &design.chamber.measured {
+        Some(MeasuredVolume {
+            volume,
+            uncertainty,
+        }) => page.row(
+            "Inside volume",
+            &format!(
+                "{} +/- {}, measured",
+                units.show(*volume),
+                units.show_to(*uncertainty, 2)
+            ),
+        ),
+        None => {
+            if let Ok(volumes) = &a.volumes {
+                page.row(
+                    "Inside volume",
+                    &format!(
+                        "{} by the drawing ({} to {})",
+                        units.show(volumes.nominal),
+                        units.show(volumes.least),
+                        units.show(volumes.greatest)
+                    ),
+                );
+            }
+        }
+    }
+    page.row("Bench temperature", &units.show(design.conditions.bench));
+    page.blank_row("Cleaned as");
+    page.blank_row("Bake-out, temperature, hours");
+    page.blank_row("Proof test, medium, pressure");
+    page.blank_row("Leak test, limit, result");
+    page.paragraph(
+        "Prove and leak-test before charging. The wall's strength under outside pressure while evacuated \
+         and hot is not judged here: ask for it before a hot bake-out.",
+    );
+}
+
+pub fn worst_case(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
+    page.heading("WORST CASE");
+    match &a.worst {
+        Ok(case) => {
+            page.row("Governing temperature", &units.show(case.temperature));
+            page.row(
+                "Pressure there",
+                &format!(
+                    "{} abs ({}), heaviest charge in the smallest volume",
+                    units.show(case.pressure),
+                    words::regime(case.state.regime)
+                ),
+            );
+            page.row(
+                "Load on the wall",
+                &format!(
+                    "{}, against {} abs outside",
+                    units.show(case.load),
+                    units.show(design.conditions.least_outside)
+                ),
+            );
+            match &case.weakest {
+                Ok(weakest) => {
+                    page.row("Weakest part", &weakest.name);
+                    page.row(
+                        "Allowable load",
+                        &format!(
+                            "{} ({})",
+                            units.show(weakest.allowable.pressure),
+                            words::basis(weakest.allowable.basis)
+                        ),
+                    );
+                    if let Ok(share) = &case.of_allowable {
+                        page.row(
+                            "Used of the allowable",
+                            &format!("{} %", figures(100.0 * share, 3)),
+                        );
+                    }
+                    match (&weakest.burst, &case.of_burst) {
+                        (Ok(burst), Ok(share)) if *share > 0.0 => page.row(
+                            "Burst load",
+                            &format!(
+                                "{}, {} times the load",
+                                units.show(*burst),
+                                figures(1.0 / share, 3)
+                            ),
+                        ),
+                        (Ok(burst), _) => page.row("Burst load", &units.show(*burst)),
+                        (Err(unknown), _) => {
+                            page.row("Burst load", &format!("not known: {}", unknown.reason))
+                        }
+                    }
+                }
+                Err(unknown) => page.row("Weakest part", &format!("not known: {unknown}")),
+            }
+        }
+        Err(missing) => page.row("Worst case", &words::missing(missing, units)),
+    }
+    if let Ok(events) = &a.events {
+        let (_, high) = a.fluid.range();
+        for event in events.iter().filter(|event| event.temperature < high) {
+            let what = words::event(event.kind);
+            // Freezing belongs to the fluid, not to this charge.
+            let prefix = if event.kind == EventKind::Freezing {
+                "Fluid"
+            } else {
+                "Unit"
+            };
+            page.row(
+                &format!("{prefix} {what}"),
+                &format!("at {}", units.show(event.temperature)),
+            );
+        }
+    }
+}
+
+pub fn warnings(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
+    let spoken: Vec<_> = a
+        .findings
+        .iter()
+        .filter(|f| f.severity != Severity::Error)
+        .collect();
+    if spoken.is_empty() {
+        return;
+    }
+    page.heading("WARNINGS AND NOTES");
+    for finding in spoken {
+        let said = words::finding(finding, Some(&design.chamber), units);
+        let mark = if finding.severity == Severity::Warning {
+            "!"
+        } else {
+            "-"
+        };
+        let advice = said
+            .try_this
+            .map_or_else(String::new, |text| format!(" {text}"));
+        page.item(mark, &format!("{}: {}{advice}", said.title, said.detail));
+    }
+}
+
+pub fn basis(page: &mut Page, design: &Design, a: &Assessment) {
+    page.heading("BASIS");
+    for source in a.fluid.model_sources() {
+        page.row("Fluid", &source);
+    }
+    page.row("Its uncertainty", &a.fluid.uncertainty());
+    page.row("Melting point", &a.fluid.melting_point().source.to_string());
+    let mut unconfirmed = !a.fluid.melting_point().source.is_confirmed();
+    if let Ok(case) = &a.worst
+        && let Ok(weakest) = &case.weakest
+    {
+        let material = design
+            .chamber
+            .parts
+            .get(weakest.part)
+            .and_then(|part| part.wall.as_ref());
+        let material = material.map_or("", |wall| wall.material.as_str());
+        for source in a.envelope.sources(weakest.part, weakest.allowable.basis) {
+            unconfirmed |= !source.is_confirmed();
+            page.row("Strength", &format!("{material}: {source}"));
+        }
+    }
+    let safety = a.fluid.safety();
+    for (what, source) in [
+        (
+            "Flammable limit",
+            safety.lower_flammable_limit.as_ref().map(|s| &s.source),
+        ),
+        (
+            "Exposure limit",
+            safety.exposure_limit_ppm.as_ref().map(|s| &s.source),
+        ),
+        (
+            "Dangerous concentration",
+            safety.immediately_dangerous_ppm.as_ref().map(|s| &s.source),
+        ),
+        ("Hazard statements", Some(&safety.statements.source)),
+    ] {
+        if let Some(source) = source {
+            unconfirmed |= !source.is_confirmed();
+            page.row(what, &source.to_string());
+        }
+    }
+    if unconfirmed {
+        page.blank_row("To be confirmed by");
+    }
+}
+
+pub fn care(page: &mut Page, a: &Assessment) {
+    page.heading("HAZARDS AND CARE");
+    let safety = a.fluid.safety();
+    for code in &safety.statements.value {
+        page.row(code, words::statement(code));
+    }
+    page.item(
+        "-",
+        "Eye protection and a shield at every pressurised or evacuated unit; gloves against cold.",
+    );
+    if safety.is_flammable() {
+        page.item(
+            "-",
+            "No ignition source; earthed vessels; ventilation at the floor and at the joint.",
+        );
+    }
+    if safety.is_toxic() || safety.is_corrosive() {
+        page.item(
+            "-",
+            "Work under an extraction hood; keep what the safety data sheet asks for at hand.",
+        );
+    }
+    page.item(
+        "-",
+        "Spill and disposal: as the safety data sheet and the local rules say.",
+    );
+    for caution in words::CAUTIONS {
+        page.item("-", caution);
+    }
+}
+
+pub fn label(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
+    let Ok(charge) = &a.charge else { return };
+    page.heading("UNIT LABEL");
+    page.paragraph(&format!(
+        "{}, {} (CAS {})",
+        design.title,
+        a.fluid.name(),
+        a.fluid.cas()
+    ));
+    page.paragraph(&format!(
+        "Sealed charge {}. Highest temperature {}.",
+        units.show(charge.nominal),
+        units.show(design.conditions.hottest)
+    ));
+    page.paragraph("Do not heat above it, open or puncture. Serial ____________");
+}
