@@ -22,6 +22,7 @@ pub enum Severity {
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Hash)]
 pub enum Section {
     Conditions,
+    Demands,
     Fluid,
     Chamber,
     Charge,

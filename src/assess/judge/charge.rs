@@ -31,7 +31,7 @@ impl Judge<'_> {
             let factors = self.design.demands.factors;
             self.add(
                 Severity::Warning,
-                Section::Chamber,
+                Section::Demands,
                 FindingKind::FactorsBelowDefault {
                     on_burst: factors.on_burst.number(),
                     on_yield: factors.on_yield.number(),

@@ -2,7 +2,6 @@
 
 use eframe::egui::Ui;
 
-use super::section::subheading_ui;
 use crate::design::Design;
 use crate::ui::widgets::QuantityField;
 use crate::units::{Temperature, Units};
@@ -62,7 +61,19 @@ pub fn conditions_ui(ui: &mut Ui, design: &mut Design, units: &Units) {
         .slider(80_000.0, 105_000.0)
         .hover("Gauge pressures are counted from it")
         .show(ui);
-    subheading_ui(ui, "Demanded");
+}
+
+pub fn demands_decision(design: &Design, units: &Units) -> String {
+    let demands = &design.demands;
+    format!(
+        "ullage {}, factors {} and {}",
+        units.show_to(demands.ullage, 2),
+        demands.factors.on_burst.number(),
+        demands.factors.on_yield.number()
+    )
+}
+
+pub fn demands_ui(ui: &mut Ui, design: &mut Design, units: &Units) {
     let demands = &mut design.demands;
     QuantityField::new("Ullage", &mut demands.ullage, units)
         .slider(0.0, 0.5)

@@ -2,6 +2,7 @@
 
 use eframe::egui::{ComboBox, Id, Role, TextEdit, Ui, WidgetInfo};
 
+use super::fluid::FluidPanel;
 use super::section::{column_ui, section_ui};
 use super::{chamber, charge, conditions, fluid};
 use crate::assess::{Assessment, Library, Section};
@@ -14,8 +15,7 @@ use crate::units::Units;
 pub struct DesignPanel {
     /// A section to open and scroll to in the next frame.
     pub show_next: Option<Section>,
-    /// What is typed into the fluid search.
-    fluid_search: String,
+    fluid: FluidPanel,
 }
 
 /// Edits the design. The assessment only supplies the decisions that closed
@@ -45,9 +45,20 @@ pub fn design_ui(
                 conditions::conditions_ui(ui, design, units);
             },
         );
+        let decision = conditions::demands_decision(design, units);
+        section_ui(
+            ui,
+            "Demands",
+            &decision,
+            false,
+            show(Section::Demands),
+            |ui| {
+                conditions::demands_ui(ui, design, units);
+            },
+        );
         let decision = fluid::decision(a);
         section_ui(ui, "Fluid", &decision, true, show(Section::Fluid), |ui| {
-            fluid::fluid_ui(ui, design, a, library, &mut panel.fluid_search);
+            fluid::fluid_ui(ui, design, a, library, &mut panel.fluid);
         });
         let decision = chamber::decision(a, units);
         section_ui(

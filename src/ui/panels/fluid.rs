@@ -1,11 +1,19 @@
 //! The fluid picker: search, facts, choice.
 
-use eframe::egui::{Grid, RichText, Role, ScrollArea, TextEdit, Ui, WidgetInfo};
+use eframe::egui::{Align, Grid, RichText, Role, ScrollArea, TextEdit, Ui, WidgetInfo};
 
 use crate::assess::{Assessment, Library};
 use crate::design::{Design, FluidId};
 use crate::fluid::Fluid;
 use crate::ui::theme::Palette;
+
+/// View-only state of the picker.
+#[derive(Debug, Default)]
+pub struct FluidPanel {
+    search: String,
+    /// The fluid last scrolled to.
+    in_sight: Option<FluidId>,
+}
 
 pub fn decision(a: &Assessment) -> String {
     format!("{}, {}", a.fluid.name(), nature(&a.fluid))
@@ -16,15 +24,15 @@ pub fn fluid_ui(
     design: &mut Design,
     a: &Assessment,
     library: &Library,
-    search: &mut String,
+    panel: &mut FluidPanel,
 ) {
     let response = ui.add(
-        TextEdit::singleline(search)
+        TextEdit::singleline(&mut panel.search)
             .hint_text("name, CAS or refrigerant number")
             .desired_width(f32::INFINITY),
     );
     response.widget_info(|| WidgetInfo::labeled(Role::TextInput, true, "Search fluids"));
-    let wanted = search.to_lowercase();
+    let wanted = panel.search.to_lowercase();
     ScrollArea::vertical()
         .id_salt("fluids")
         .max_height(132.0)
@@ -39,14 +47,22 @@ pub fn fluid_ui(
                 any = true;
                 let chosen = fluid.id() == design.fluid.as_str();
                 let label = format!("{}   {}", fluid.name(), nature(&fluid));
-                if ui.selectable_label(chosen, label).clicked()
+                let row = ui.selectable_label(chosen, label);
+                if chosen && panel.in_sight.as_ref() != Some(&design.fluid) {
+                    // Another fluid than last time, by whatever way: bring it into sight.
+                    row.scroll_to_me(Some(Align::Center));
+                    panel.in_sight = Some(design.fluid.clone());
+                }
+                if row.clicked()
                     && let Some(id) = FluidId::new(fluid.id())
                 {
+                    panel.in_sight = Some(id.clone());
                     design.fluid = id;
                 }
             }
             if !any {
-                ui.label(RichText::new(format!("No fluid here answers to “{search}”.")).weak());
+                let text = format!("No fluid here answers to “{}”.", panel.search.trim());
+                ui.label(RichText::new(text).weak());
             }
         });
     facts_ui(ui, &a.fluid);
