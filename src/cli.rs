@@ -82,6 +82,8 @@ pub enum CliError {
         text: String,
         cause: QuantityError,
     },
+    #[error("--{option} {text}: the decimal mark is a point here, and one value is asked for")]
+    Comma { option: &'static str, text: String },
     #[error("the output cannot be written: {0}")]
     Output(io::Error),
 }
@@ -256,6 +258,12 @@ fn temperatures(list: &str) -> Result<Vec<Temperature>, CliError> {
 }
 
 fn quantity<Q: Quantity>(option: &'static str, text: &str, default: &str) -> Result<Q, CliError> {
+    if text.contains(',') {
+        return Err(CliError::Comma {
+            option,
+            text: text.to_owned(),
+        });
+    }
     let si = parse_si(text, Q::KIND, unit_named(Q::KIND, default)).map_err(|cause| {
         CliError::Number {
             option,

@@ -112,6 +112,22 @@ pub struct Bench {
     pub gauge: bool,
 }
 
+/// What one click may change: fluid, wall, volume or charge. Temperatures, outside
+/// pressure, room and factors are facts and are never changed by a click.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub enum Change {
+    SetCharge(Mass),
+}
+
+impl Design {
+    /// Makes a change.
+    pub fn apply(&mut self, change: Change) {
+        match change {
+            Change::SetCharge(mass) => self.charge.aim = ChargeAim::Mass { mass },
+        }
+    }
+}
+
 impl FluidId {
     /// The id of a fluid that the built-in catalogue knows.
     pub fn new(id: &str) -> Option<Self> {

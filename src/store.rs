@@ -3,6 +3,7 @@
 use std::fs::{self, File};
 use std::io::{self, Read, Write};
 use std::path::{Path, PathBuf};
+use std::sync::atomic::{AtomicU32, Ordering};
 
 use serde::{Deserialize, Serialize};
 
@@ -46,6 +47,8 @@ pub enum ParseError {
     },
     #[error("format {found} is newer than this program reads, {FORMAT}: use a newer version")]
     NewerFormat { found: u32 },
+    #[error("format {found} never was: the first is 1")]
+    NoSuchFormat { found: u32 },
 }
 
 /// A design with its format version, as it stands in a file.
@@ -82,33 +85,75 @@ pub fn to_text(design: &Design) -> String {
 /// # Errors
 /// [`ParseError`] names line, column, field, value and limit.
 pub fn from_text(text: &str) -> Result<Design, ParseError> {
-    if let Ok(FormatOnly { format }) = ron::from_str::<FormatOnly>(text)
-        && format > FORMAT
-    {
-        return Err(ParseError::NewerFormat { found: format });
+    match ron::from_str::<FormatOnly>(text) {
+        Ok(FormatOnly { format }) if format > FORMAT => {
+            return Err(ParseError::NewerFormat { found: format });
+        }
+        Ok(FormatOnly { format: 0 }) => return Err(ParseError::NoSuchFormat { found: 0 }),
+        _ => {}
     }
-    let mut deserializer = ron::Deserializer::from_str(text).map_err(|error| at(&error, None))?;
+    let mut deserializer =
+        ron::Deserializer::from_str(text).map_err(|error| at(text, &error, None))?;
     let file: DesignFile =
         serde_path_to_error::deserialize(&mut deserializer).map_err(|error| {
             let field = error.path().to_string();
             let field = (field != "." && !field.is_empty()).then_some(field);
-            at(&deserializer.span_error(error.into_inner()), field)
+            at(text, &deserializer.span_error(error.into_inner()), field)
         })?;
     deserializer
         .end()
-        .map_err(|error| at(&deserializer.span_error(error), None))?;
+        .map_err(|error| at(text, &deserializer.span_error(error), None))?;
     Ok(file.design)
 }
 
-fn at(error: &ron::error::SpannedError, field: Option<String>) -> ParseError {
+fn at(text: &str, error: &ron::error::SpannedError, field: Option<String>) -> ParseError {
     // An error within a value is found where the value starts.
     let position = error.span.start;
+    let what = match &error.code {
+        ron::Error::IntegerOutOfBounds => {
+            let found = value_at(text, position.line, position.col);
+            format!("{found} is not a whole number from 0 to {}", u32::MAX)
+        }
+        code @ (ron::Error::ExpectedFloat
+        | ron::Error::ExpectedInteger
+        | ron::Error::ExpectedBoolean
+        | ron::Error::ExpectedString) => {
+            format!(
+                "{code}, not {}",
+                value_at(text, position.line, position.col)
+            )
+        }
+        code => code.to_string(),
+    };
     ParseError::At {
         line: position.line,
         column: position.col,
         field,
-        what: error.code.to_string(),
+        what,
     }
+}
+
+/// The value that stands at a line and column, as it is written there.
+fn value_at(text: &str, line: usize, column: usize) -> String {
+    const LONGEST: usize = 40;
+    let line = text.lines().nth(line.saturating_sub(1)).unwrap_or_default();
+    let ends = |c: char| matches!(c, ',' | ':' | '(' | ')' | '[' | ']') || c.is_whitespace();
+    let at = line
+        .char_indices()
+        .nth(column.saturating_sub(1))
+        .map_or(line.len(), |(at, _)| at);
+    let start = line[..at]
+        .char_indices()
+        .rev()
+        .take_while(|(_, c)| !ends(*c))
+        .last()
+        .map_or(at, |(start, _)| start);
+    line[start..]
+        .trim_start()
+        .chars()
+        .take_while(|c| !ends(*c))
+        .take(LONGEST)
+        .collect()
 }
 
 /// Fingerprint of a design's content: FNV-1a, 64 bits, of its text. It tells
@@ -156,7 +201,8 @@ fn read_text(path: &Path) -> Result<String, StoreError> {
     }
     let too_large = |bytes: u64| StoreError::TooLarge {
         path: named(),
-        mebibytes: bytes >> 20,
+        // Rounded up: just above the limit it does not read as allowed.
+        mebibytes: bytes.div_ceil(1 << 20),
     };
     if metadata.len() > LARGEST_BYTES {
         return Err(too_large(metadata.len()));
@@ -209,7 +255,10 @@ pub fn write_text(path: &Path, text: &str) -> Result<(), StoreError> {
         .file_name()
         .map(|name| name.to_string_lossy().into_owned())
         .unwrap_or_default();
-    let temporary = folder.join(format!(".{name}.{}.part", std::process::id()));
+    // Two that write at once, threads or processes, each have a name of their own.
+    static COUNT: AtomicU32 = AtomicU32::new(0);
+    let count = COUNT.fetch_add(1, Ordering::Relaxed);
+    let temporary = folder.join(format!(".{name}.{}-{count}.part", std::process::id()));
     let written = write_and_rename(&temporary, &target, text);
     if written.is_err() {
         // Nothing half-written stays behind; that it may not exist is no second error.

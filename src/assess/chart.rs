@@ -5,7 +5,7 @@ use super::worst::Walls;
 use crate::design::Design;
 use crate::fluid::Fluid;
 use crate::sealed::{PathPoint, SealedUnit, path};
-use crate::units::{Mass, Pressure, Temperature, Volume};
+use crate::units::{Mass, Pressure, Quantity, Temperature, Volume};
 
 /// Points of the sealed path.
 const PATH_POINTS: usize = 400;
@@ -64,8 +64,10 @@ pub fn span(design: &Design) -> (Temperature, Temperature) {
     let low = conditions.coldest.min(conditions.hottest).kelvin();
     let high = conditions.hottest.max(conditions.coldest).kelvin();
     let pad = (0.125 * (high - low)).max(10.0);
-    let kelvin =
-        |t: f64| Temperature::from_kelvin(t.max(1.0)).expect("near the design's temperatures");
+    let (_, hottest) = Temperature::RANGE;
+    let kelvin = |t: f64| {
+        Temperature::from_kelvin(t.clamp(1.0, hottest)).expect("clamped into the type's range")
+    };
     (kelvin(low - pad), kelvin(high + pad))
 }
 

@@ -4,6 +4,7 @@ use super::figure::Missing;
 use super::window::Requirement;
 use crate::chamber::ChamberFault;
 use crate::conditions::ConditionFault;
+use crate::design::Change;
 use crate::fluid::StabilityKind;
 use crate::units::{Energy, Mass, Pressure, Temperature, TemperatureDifference};
 
@@ -42,13 +43,7 @@ pub struct Finding {
     /// How much of its limit is used, for a margin bar.
     pub share: Option<Share>,
     /// What one click would mend it with.
-    pub remedy: Option<Remedy>,
-}
-
-/// A change of fluid, wall, volume or charge; facts are never changed by a click.
-#[derive(Debug, Clone, Copy, PartialEq)]
-pub enum Remedy {
-    SetCharge(Mass),
+    pub remedy: Option<Change>,
 }
 
 /// What was found, with its figures.

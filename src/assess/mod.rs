@@ -22,7 +22,7 @@ use crate::units::{Energy, Mass, Pressure, Temperature};
 pub use charge::{ChargeFigures, Corners};
 pub use chart::{ChargeMap, Charts, LimitPoint, MapPoint};
 pub use figure::{Figure, Missing};
-pub use finding::{Finding, FindingKind, Remedy, Section, Severity, Verdict};
+pub use finding::{Finding, FindingKind, Section, Severity, Verdict};
 pub use window::{Bound, Requirement, Side, Window};
 pub use worst::{Walls, WorstCase};
 
@@ -223,7 +223,14 @@ fn side_of(unit: &crate::sealed::SealedUnit, side: DomeSide) -> Figure<Option<Te
         };
         return Ok(is_there.then_some(low));
     }
-    let on_side = crossings.iter().rfind(|crossing| crossing.side == side);
+    // At the critical point a unit denser than critical leaves by the liquid's side.
+    let critical = match unit.mean_density().kilogram_per_cubic_metre() {
+        rho if rho >= fluid.critical().density_kg_per_m3 => DomeSide::Liquid,
+        _ => DomeSide::Vapour,
+    };
+    let on_side = crossings.iter().rfind(|crossing| {
+        crossing.side == side || (crossing.side == DomeSide::Critical && side == critical)
+    });
     Ok(on_side.map(|crossing| crossing.temperature))
 }
 

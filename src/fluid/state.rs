@@ -79,7 +79,14 @@ impl Fluid {
         let curve = self.curve()?;
         let at = curve.at(t.min(top.kelvin()));
         if rho >= at.liquid_kg_per_m3 {
-            self.single(Regime::LiquidFull, density, temperature, Some(1.0))
+            let mut state = self.single(Regime::LiquidFull, density, temperature, Some(1.0))?;
+            // Beside its line a cold liquid's pressure is lost in the rounding of large
+            // terms, to below zero even: it is never below the vapour pressure.
+            if state.pressure.pascal() < at.pressure_pa {
+                state.pressure =
+                    Pressure::from_pascal(at.pressure_pa).expect("a vapour pressure is finite");
+            }
+            Ok(state)
         } else if rho <= at.vapour_kg_per_m3 {
             self.single(Regime::AllVapour, density, temperature, Some(0.0))
         } else if temperature > top {
@@ -102,7 +109,7 @@ impl Fluid {
 
     /// Temperatures at which a unit of this mean density leaves or enters the
     /// dome, ascending. Water's liquid line turns near 4 °C, so there can be
-    /// three. A density whose line meets the dome above 0.9999 T_c is given the
+    /// two. A density whose line meets the dome above 0.9999 T_c is given the
     /// critical temperature.
     ///
     /// # Errors
@@ -200,11 +207,12 @@ impl Fluid {
             let at = self.curve()?.at(t.min(top.kelvin()));
             if p > at.pressure_pa {
                 // A correlated liquid has no stated densest state: twice ρ′ is beyond its pressure limit.
-                (
-                    at.liquid_kg_per_m3,
-                    most.min(2.0 * at.liquid_kg_per_m3),
-                    true,
-                )
+                let densest = if most.is_finite() {
+                    most
+                } else {
+                    2.0 * at.liquid_kg_per_m3
+                };
+                (at.liquid_kg_per_m3, densest, true)
             } else {
                 (1e-9 * at.vapour_kg_per_m3, at.vapour_kg_per_m3, false)
             }

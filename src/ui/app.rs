@@ -15,8 +15,8 @@ use super::panels::{
 use super::settings::Settings;
 use super::theme::{self, Palette};
 use super::widgets::is_typing;
-use crate::design::ChargeAim;
-use crate::units::{Mass, Units};
+use crate::design::Change;
+use crate::units::Units;
 
 /// The whole window.
 pub struct App {
@@ -169,7 +169,7 @@ impl App {
             })
             .inner;
         if let Some(mass) = dragged {
-            self.set_mass(mass);
+            self.desk.design.apply(Change::SetCharge(mass));
         }
     }
 
@@ -229,10 +229,6 @@ impl App {
                 self.closing = true;
             }
         }
-    }
-
-    pub(super) fn set_mass(&mut self, mass: Mass) {
-        self.desk.design.charge.aim = ChargeAim::Mass { mass };
     }
 
     /// Settings are written when they change, not while a column is being dragged.

@@ -5,7 +5,8 @@ use std::path::PathBuf;
 use eframe::egui::{Key, KeyboardShortcut, Modifiers};
 
 use super::theme::Theme;
-use crate::assess::{Remedy, Section};
+use crate::assess::Section;
+use crate::design::Change;
 use crate::units::UnitSystem;
 
 /// An order, drained after the frame is drawn.
@@ -30,7 +31,7 @@ pub enum Command {
     Quit,
     /// Open a section of the left column.
     Show(Section),
-    Apply(Remedy),
+    Apply(Change),
 }
 
 impl Command {

@@ -9,7 +9,6 @@ use super::command::Command;
 use super::desk::Desk;
 use super::dialogs::{Decision, Dialog, PathDialog, Purpose, dialog_ui};
 use super::theme;
-use crate::assess::Remedy;
 use crate::design::Design;
 use crate::sheet::{Head, render};
 use crate::store;
@@ -92,7 +91,7 @@ impl App {
             Command::ZoomReset => ctx.set_zoom_factor(1.0),
             Command::About => self.dialog = Some(Dialog::About),
             Command::Show(section) => self.design_panel.show_next = Some(section),
-            Command::Apply(Remedy::SetCharge(mass)) => self.set_mass(mass),
+            Command::Apply(change) => self.desk.design.apply(change),
         }
         ctx.request_repaint();
     }

@@ -2,8 +2,9 @@
 
 use super::missing::{chamber_fault, condition_fault, missing, upper};
 use super::requirement;
-use crate::assess::{Finding, FindingKind, Remedy};
+use crate::assess::{Finding, FindingKind};
 use crate::chamber::Chamber;
+use crate::design::Change;
 use crate::fluid::StabilityKind;
 use crate::units::{Units, careful_up, figures};
 
@@ -26,7 +27,7 @@ pub struct Said {
 pub fn finding(finding: &Finding, chamber: Option<&Chamber>, units: &Units) -> Said {
     let mut said = kind(&finding.kind, chamber, units);
     said.button = finding.remedy.as_ref().map(|remedy| match remedy {
-        Remedy::SetCharge(mass) => format!("Set the charge to {}", units.show(*mass)),
+        Change::SetCharge(mass) => format!("Set the charge to {}", units.show(*mass)),
     });
     said
 }

@@ -123,10 +123,11 @@ fn a_liquid_full_unit_gains_bars_per_kelvin() {
 #[test]
 fn which_way_an_isochore_leaves_the_dome_depends_on_the_critical_density() {
     for fluid in Catalog::built_in().iter() {
+        let id = fluid.id();
         let critical = fluid.critical().density_kg_per_m3;
         for (share, side) in [(2.0, DomeSide::Liquid), (0.1, DomeSide::Vapour)] {
             let rho = density(share * critical);
-            let crossings = fluid.crossings(rho).expect(fluid.id());
+            let crossings = fluid.crossings(rho).expect(id);
             assert_eq!(crossings.len(), 1, "{}", fluid.id());
             assert_eq!(crossings[0].side, side, "{}", fluid.id());
         }

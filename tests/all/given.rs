@@ -7,7 +7,7 @@ use chargewright::design::Design;
 use chargewright::fluid::helmholtz::Equation;
 use chargewright::fluid::{Catalog, Fluid, Model};
 use chargewright::store;
-use chargewright::units::{Density, Mass, Pressure, Ratio, Temperature};
+use chargewright::units::{Density, Mass, Pressure, Temperature};
 
 pub fn fluid(id: &str) -> Arc<Fluid> {
     Catalog::built_in().by_id(id).expect(id)
@@ -31,10 +31,6 @@ pub fn pascal(value: f64) -> Pressure {
 
 pub fn kilogram(value: f64) -> Mass {
     Mass::from_kilogram(value).expect("a mass")
-}
-
-pub fn fraction(value: f64) -> Ratio {
-    Ratio::from_fraction(value).expect("a share")
 }
 
 /// The equation of a fluid that has one.
@@ -73,6 +69,8 @@ pub struct Vessel {
     pub fluid: &'static str,
     pub coldest: f64,
     pub hottest: f64,
+    /// The extremes, where left out.
+    pub working: Option<(f64, f64)>,
     pub ullage: f64,
     pub margin: f64,
     pub wall_mm: f64,
@@ -86,6 +84,7 @@ impl Default for Vessel {
             fluid: "r-134a",
             coldest: 0.0,
             hottest: 50.0,
+            working: None,
             ullage: 0.05,
             margin: 0.0,
             wall_mm: 5.0,
@@ -96,6 +95,7 @@ impl Default for Vessel {
 
 impl Vessel {
     pub fn design(&self) -> Design {
+        let (working_low, working_high) = self.working.unwrap_or((self.coldest, self.hottest));
         let text = format!(
             r#"(
   format: 1,
@@ -104,8 +104,8 @@ impl Vessel {
     duty: {},
     conditions: (
       bench_temperature_k: 293.15,
-      working_low_k: {low},
-      working_high_k: {high},
+      working_low_k: {:?},
+      working_high_k: {:?},
       coldest_k: {low},
       hottest_k: {high},
       least_outside_pressure_pa: 0.0,
@@ -124,6 +124,8 @@ impl Vessel {
   ),
 )"#,
             self.duty,
+            working_low + 273.15,
+            working_high + 273.15,
             self.fluid,
             1e-3 * self.wall_mm,
             self.mass,

@@ -420,7 +420,7 @@ fn a_finding_leads_to_its_section_and_its_remedy_mends_it() {
     let mass = chargewright::units::Mass::from_kilogram(1.9).expect("mass");
     order(
         &mut harness,
-        Command::Apply(chargewright::assess::Remedy::SetCharge(mass)),
+        Command::Apply(chargewright::design::Change::SetCharge(mass)),
     );
     harness.get_by_label_contains("Not fit");
     let button = harness

@@ -20,7 +20,8 @@ use std::process::ExitCode;
 use std::thread;
 use std::time::{Duration, Instant};
 
-use chargewright::assess::{Library, Remedy, assess};
+use chargewright::assess::{Library, assess};
+use chargewright::design::Change;
 use chargewright::design::{ChargeAim, Design};
 use chargewright::ui::{App, Command};
 use chargewright::units::{Mass, Quantity};
@@ -218,7 +219,7 @@ fn frame(ctx: &Context, app: &mut App, events: Vec<Event>, mass: Option<Mass>) -
     };
     let start = Instant::now();
     if let Some(mass) = mass {
-        app.order(Command::Apply(Remedy::SetCharge(mass)));
+        app.order(Command::Apply(Change::SetCharge(mass)));
     }
     let output = ctx.run_ui(input, |ui: &mut Ui| app.frame_ui(ui));
     black_box(ctx.tessellate(output.shapes, output.pixels_per_point));

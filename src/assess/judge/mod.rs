@@ -4,10 +4,10 @@ mod charge;
 mod people;
 
 use super::figure::Missing;
-use super::finding::{Finding, FindingKind, Remedy, Section, Severity};
+use super::finding::{Finding, FindingKind, Section, Severity};
 use super::{Assessment, Library};
 use crate::chamber::StrengthGap;
-use crate::design::Design;
+use crate::design::{Change, Design};
 
 /// Every finding, worst first; within a severity in the order of the questions.
 pub fn findings(design: &Design, library: &Library, a: &Assessment) -> Vec<Finding> {
@@ -59,14 +59,15 @@ impl Judge<'_> {
             .then(|| {
                 self.a
                     .nearest_charge(self.design.charge.tolerance)
-                    .map(Remedy::SetCharge)
+                    .map(Change::SetCharge)
             })
             .flatten();
         self.found.push(Finding {
             severity,
             section,
             kind,
-            share: Some(share),
+            // A limit of nothing is exceeded beyond all measure, not infinitely.
+            share: Some(share.min(f64::MAX.sqrt())),
             remedy,
         });
     }
