@@ -39,10 +39,10 @@ pub(super) struct Bounds {
 
 impl WallStrength {
     pub(super) fn new(index: usize, part: &Part, materials: &Materials) -> Self {
-        let id = part
-            .wall
-            .as_ref()
-            .map_or("no material", |wall| &wall.material);
+        // By its name where the material is at hand, by its id where it is not.
+        let id = part.wall.as_ref().map(|wall| wall.material.as_str());
+        let known = id.and_then(|id| materials.get(id));
+        let called = known.map_or(id, |material| Some(material.name.as_str()));
         let base = Base::new(part, materials);
         let glass = base
             .as_ref()
@@ -50,7 +50,7 @@ impl WallStrength {
         Self {
             part: index,
             name: Arc::from(part.name.as_str()),
-            material: Arc::from(id),
+            material: Arc::from(called.unwrap_or("no material")),
             formula: formula(&part.shape, glass),
             base,
         }

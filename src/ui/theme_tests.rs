@@ -127,6 +127,7 @@ fn areas_and_lines_stay_apart_for_every_eye() {
             ("allowable", p.allowable),
             ("burst", p.burst),
             ("charge", p.charge),
+            ("window", p.window),
             ("condition", p.condition),
         ];
         for eye in &EYES {

@@ -1,6 +1,11 @@
-//! One axis of a picture: SI values to points on the screen, and where its ticks lie.
+//! One axis of a picture: SI values to points of the plot and of the screen, and where
+//! its ticks lie.
 //!
-//! Values stay in SI; a unit only decides which of them are round.
+//! Values stay in SI; a unit only decides which of them are round. The plot itself is
+//! linear: a logarithm or a reciprocal is taken here.
+
+use eframe::egui::{Pos2, Rangef, Rect};
+use egui_plot::{PlotBounds, PlotTransform};
 
 use crate::units::Unit;
 
@@ -23,13 +28,11 @@ pub(super) struct Home {
 }
 
 /// An axis laid on the screen.
-#[derive(Debug, Clone, Copy, PartialEq)]
+#[derive(Debug, Clone, Copy)]
 pub(super) struct Axis {
-    scale: Scale,
-    /// Stretched values at the two ends.
-    ends: (f64, f64),
-    /// Points on the screen of the two ends.
-    pixels: (f32, f32),
+    home: Home,
+    upright: bool,
+    place: PlotTransform,
 }
 
 /// A labelled place on an axis.
@@ -57,38 +60,63 @@ impl Scale {
     }
 }
 
-impl Axis {
-    /// The part of `home` between two shares of it (0 and 1: all), from one point to another.
-    pub fn new(home: Home, (from, to): (f64, f64), pixels: (f32, f32)) -> Self {
+impl Home {
+    /// Plot coordinates of the two ends.
+    pub fn ends(&self) -> (f64, f64) {
         let (low, high) = (
-            home.scale.stretched(home.low),
-            home.scale.stretched(home.high),
+            self.scale.stretched(self.low),
+            self.scale.stretched(self.high),
         );
-        let width = if high > low { high - low } else { 1.0 };
+        (low, if high > low { high } else { low + 1.0 })
+    }
+
+    /// Plot coordinate of a value; far outside it stays within a few lengths of the
+    /// axis, so that lines keep their direction and no coordinate overflows.
+    pub fn at(&self, si: f64) -> f64 {
+        let (low, high) = self.ends();
+        let reach = 20.0 * (high - low);
+        let at = self.scale.stretched(si);
+        if at.is_nan() {
+            low - reach
+        } else {
+            at.clamp(low - reach, high + reach)
+        }
+    }
+}
+
+impl Axis {
+    /// The level or upright axis of a plot.
+    pub fn new(home: Home, upright: bool, place: PlotTransform) -> Self {
         Self {
-            scale: home.scale,
-            ends: (low + from * width, low + to * width),
-            pixels,
+            home,
+            upright,
+            place,
         }
     }
 
-    /// Where a value lies; far outside it stays within a few lengths of the axis, so
-    /// that lines keep their direction and no coordinate overflows.
+    /// A level axis with no plot, all of it between two points of the screen.
+    pub fn rail(home: Home, across: Rangef) -> Self {
+        let (low, high) = home.ends();
+        let bounds = PlotBounds::from_min_max([low, 0.0], [high, 1.0]);
+        let rect = Rect::from_x_y_ranges(across, Rangef::new(0.0, 1.0));
+        Self::new(home, false, PlotTransform::new(rect, bounds, false))
+    }
+
+    /// Where a value lies on the screen.
     pub fn px(&self, si: f64) -> f32 {
-        let share = (self.scale.stretched(si) - self.ends.0) / (self.ends.1 - self.ends.0);
-        let share = if share.is_nan() {
-            -20.0
+        let at = self.home.at(si);
+        if self.upright {
+            self.place.position_from_point_y(at)
         } else {
-            share.clamp(-20.0, 20.0)
-        };
-        self.pixels.0 + share as f32 * (self.pixels.1 - self.pixels.0)
+            self.place.position_from_point_x(at)
+        }
     }
 
     /// The value at a point of the screen.
     pub fn si(&self, px: f32) -> f64 {
-        let share = f64::from((px - self.pixels.0) / (self.pixels.1 - self.pixels.0));
-        self.scale
-            .back(self.ends.0 + share * (self.ends.1 - self.ends.0))
+        let point = self.place.value_from_position(Pos2::new(px, px));
+        let at = if self.upright { point.y } else { point.x };
+        self.home.scale.back(at)
     }
 
     /// The value at a point, to the decimal that one point of the screen can tell apart.
@@ -104,7 +132,10 @@ impl Axis {
 
     /// Least and greatest value on the axis.
     pub fn range(&self) -> (f64, f64) {
-        (self.scale.back(self.ends.0), self.scale.back(self.ends.1))
+        let axis = usize::from(self.upright);
+        let bounds = self.place.bounds();
+        let back = |at| self.home.scale.back(at);
+        (back(bounds.min()[axis]), back(bounds.max()[axis]))
     }
 
     pub fn contains(&self, si: f64) -> bool {
@@ -117,11 +148,12 @@ impl Axis {
     pub fn ticks(&self, unit: &Unit, spacing: f32) -> Vec<Tick> {
         let (low, high) = self.range();
         let (low, high) = (unit.number_of(low), unit.number_of(high));
-        let length = (self.pixels.1 - self.pixels.0).abs();
+        let frame = self.place.frame().size();
+        let length = if self.upright { frame.y } else { frame.x };
         if !(low < high && length > 1.0) {
             return Vec::new();
         }
-        if self.scale == Scale::Logarithm && low > 0.0 && high > 6.0 * low {
+        if self.home.scale == Scale::Logarithm && low > 0.0 && high > 6.0 * low {
             return decades(low, high, f64::from(spacing / length))
                 .map(|n| tick(unit, n, None))
                 .collect();
@@ -185,10 +217,11 @@ fn tick(unit: &Unit, number: f64, step: Option<f64>) -> Tick {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::ui::plots::view::View;
     use crate::units::{Kind, unit_named};
 
     fn texts(scale: Scale, low: f64, high: f64, unit: &Unit) -> Vec<String> {
-        let axis = Axis::new(Home { scale, low, high }, (0.0, 1.0), (0.0, 500.0));
+        let axis = Axis::rail(Home { scale, low, high }, Rangef::new(0.0, 500.0));
         axis.ticks(unit, 70.0)
             .into_iter()
             .map(|tick| tick.text)
@@ -216,15 +249,18 @@ mod tests {
     #[test]
     fn a_point_and_its_value_belong_together_on_every_scale() {
         for scale in [Scale::Linear, Scale::Logarithm, Scale::Reciprocal] {
-            let axis = Axis::new(
-                Home {
-                    scale,
-                    low: 250.0,
-                    high: 400.0,
-                },
-                (0.25, 0.75),
-                (600.0, 40.0),
-            );
+            let home = Home {
+                scale,
+                low: 250.0,
+                high: 400.0,
+            };
+            let view = View {
+                x: (0.0, 1.0),
+                y: (0.25, 0.75),
+            };
+            let frame = Rect::from_x_y_ranges(Rangef::new(0.0, 1.0), Rangef::new(40.0, 600.0));
+            let place = PlotTransform::new(frame, view.bounds(&home, &home), false);
+            let axis = Axis::new(home, true, place);
             for si in [290.0, 310.0, 330.0] {
                 assert!((axis.si(axis.px(si)) - si).abs() < 1e-3, "{scale:?} {si}");
             }
@@ -233,15 +269,12 @@ mod tests {
 
     #[test]
     fn a_pointed_value_has_no_more_decimals_than_the_screen_tells_apart() {
-        let axis = Axis::new(
-            Home {
-                scale: Scale::Linear,
-                low: 0.0,
-                high: 4e-3,
-            },
-            (0.0, 1.0),
-            (0.0, 500.0),
-        );
+        let home = Home {
+            scale: Scale::Linear,
+            low: 0.0,
+            high: 4e-3,
+        };
+        let axis = Axis::rail(home, Rangef::new(0.0, 500.0));
         let gram = unit_named(Kind::Mass, "g");
         let number = gram.number_of(axis.rounded_si(123.0, gram));
         assert!((number - 0.984).abs() < 1e-9, "{number}");

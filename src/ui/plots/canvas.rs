@@ -1,27 +1,38 @@
-//! The ground of a picture: frame, axes, zoom, and the gutters in which lines are named.
-//!
-//! Painted by hand and not by a plot widget: the same ground carries a second axis,
-//! a logarithm, a reciprocal, and areas bounded from side to side.
+//! The ground of a picture: a plot with its frame, axes and zoom, and the gutters in
+//! which lines are named. What no plot can do is painted over it.
 
 use eframe::egui::text::Galley;
 use eframe::egui::{
     Align2, Color32, CornerRadius, FontId, Painter, Pos2, Rangef, Rect, Response, Role, Sense,
-    Shape, Stroke, StrokeKind, TextStyle, Ui, WidgetInfo, pos2, vec2,
+    Stroke, StrokeKind, TextStyle, Ui, WidgetInfo, pos2, vec2,
 };
+use egui_plot::{AxisHints, GridMark, HPlacement, Plot, PlotTransform, VPlacement};
 use std::sync::Arc;
 
-use super::axis::{Axis, Home};
-use super::view::{View, turn_view};
+use super::axis::{Axis, Home, Tick};
+use super::items::Items;
+use super::view::View;
 use crate::ui::theme::Palette;
 use crate::units::Unit;
 
-/// Space around the frame, in points.
-#[derive(Debug, Clone, Copy)]
-pub(super) struct Margins {
-    pub left: f32,
-    pub right: f32,
-    pub top: f32,
-    pub bottom: f32,
+/// Points above the frame.
+const TOP: f32 = 24.0;
+/// Points from an axis to its numbers.
+const GAP: f32 = 6.0;
+
+/// What stands on one side of the frame.
+pub(super) struct Side<'u> {
+    pub unit: &'u Unit,
+    /// Beyond the numbers: right of the level ones, above the upright ones.
+    pub name: &'u str,
+    /// Least points between two numbers.
+    pub spacing: f32,
+    /// Points from the frame to the axis.
+    pub away: f32,
+    /// Points from the frame to the end of the picture.
+    pub margin: f32,
+    /// A value whose tag covers the axis: no number is written there.
+    pub tag: Option<f64>,
 }
 
 pub(super) struct Canvas<'a> {
@@ -36,8 +47,6 @@ pub(super) struct Canvas<'a> {
     /// Paints on the gutters as well.
     pub outside: Painter,
     pub palette: &'a Palette,
-    /// Heights and places across where a tag covers the axis: no number is written there.
-    pub tagged: (Option<f32>, Option<f32>),
     /// Of ticks and labels.
     pub font: FontId,
     /// Of the names of areas.
@@ -45,115 +54,138 @@ pub(super) struct Canvas<'a> {
 }
 
 impl<'a> Canvas<'a> {
-    /// Takes what room there is and paints the empty frame.
-    pub fn new(
+    /// Takes what room there is and shows the items in a plot with gutters.
+    pub fn show(
         ui: &mut Ui,
-        homes: (Home, Home),
-        margins: Margins,
+        items: Items,
+        (across, up): (Side<'_>, Side<'_>),
+        right: f32,
         view: &mut View,
         palette: &'a Palette,
     ) -> Self {
         let size = ui.available_size();
         let height = if size.y.is_finite() { size.y } else { 330.0 };
-        let (rect, _) =
-            ui.allocate_exact_size(vec2(size.x.max(220.0), height.max(130.0)), Sense::hover());
-        let frame = Rect::from_min_max(
-            rect.min + vec2(margins.left, margins.top),
-            rect.max - vec2(margins.right, margins.bottom),
+        let size = vec2(size.x.max(220.0), height.max(130.0));
+        let rect = Rect::from_min_size(ui.cursor().min, size);
+        let (x, y) = (items.x, items.y);
+        let bounds = view.bounds(&x, &y);
+        let expected = Rect::from_min_max(
+            rect.min + vec2(up.margin, TOP),
+            rect.max - vec2(right, across.margin),
         );
-        // Not focusable: what can be done here by pointer, the slider and the charge
-        // handle do by keyboard.
-        let response = ui.interact(
-            frame,
-            ui.scope_id().with("frame"),
-            Sense::CLICK | Sense::DRAG,
-        );
-        let to_enlarge = turn_view(ui, &response, frame, view);
-        let outside = ui.painter_at(rect.expand(2.0));
-        let inside = ui.painter_at(frame);
-        inside.rect_filled(frame, CornerRadius::ZERO, palette.ground);
+        let place = PlotTransform::new(expected, bounds, false);
+        let x_ticks = ticks(&Axis::new(x, false, place), &across, 24.0);
+        let y_ticks = ticks(&Axis::new(y, true, place), &up, 15.0);
         let body = TextStyle::Body.resolve(ui.style());
         let font = FontId::new((0.87 * body.size).max(11.0), body.family.clone());
-        Self {
-            x: Axis::new(homes.0, view.x, (frame.left(), frame.right())),
-            y: Axis::new(homes.1, view.y, (frame.bottom(), frame.top())),
+        let x_marks = |_| marks(&x_ticks, &x);
+        let y_marks = |_| marks(&y_ticks, &y);
+        let faint = palette.text_faint;
+        let plot = Plot::new("plot")
+            .width(size.x)
+            .height(size.y)
+            .sense(Sense::CLICK | Sense::DRAG)
+            .allow_scroll(false)
+            .allow_boxed_zoom(false)
+            .allow_axis_zoom_drag(false)
+            .allow_double_click_reset(false)
+            .allow_drag(*view != View::default())
+            .show_x(false)
+            .show_y(false)
+            .grid_color(faint.gamma_multiply(0.14))
+            .x_grid_spacer(x_marks)
+            .y_grid_spacer(y_marks)
+            .custom_x_axes(vec![
+                room(AxisHints::new_x(), across.away + GAP),
+                room(AxisHints::new_x(), across.margin - across.away - GAP)
+                    .tick_label_font(font.clone())
+                    .tick_label_color(faint)
+                    .formatter(|mark, _| text_at(&x_ticks, &x, mark)),
+                room(AxisHints::new_x(), TOP).placement(VPlacement::Top),
+            ])
+            .custom_y_axes(vec![
+                room(AxisHints::new_y(), 0.5 * GAP),
+                room(AxisHints::new_y(), up.margin - 0.5 * GAP)
+                    .tick_label_font(font.clone())
+                    .tick_label_color(faint)
+                    .formatter(|mark, _| text_at(&y_ticks, &y, mark)),
+                room(AxisHints::new_y(), right).placement(HPlacement::Right),
+            ]);
+        let list = items.list;
+        let shown = ui.scope(|ui| {
+            // The border is painted last, over the areas.
+            ui.visuals_mut().widgets.noninteractive.bg_stroke = Stroke::NONE;
+            ui.visuals_mut().extreme_bg_color = palette.ground;
+            plot.show(ui, |plot| {
+                plot.set_plot_bounds(bounds);
+                list.into_iter().for_each(|item| plot.add_item(item));
+            })
+        });
+        let (rect, shown) = (shown.response.rect, shown.inner);
+        let place = shown.transform;
+        let before = *view;
+        let to_enlarge = shown.response.double_clicked() && before == View::default();
+        if shown.response.double_clicked() {
+            *view = View::default();
+        } else if *place.bounds() != bounds {
+            *view = View::of(place.bounds(), &x, &y);
+        }
+        if *view != before || *place.bounds() != bounds {
+            // The plot goes beyond the whole, and its numbers were chosen before it
+            // moved: this picture is not shown but done again.
+            ui.ctx().request_discard("zoomed or dragged");
+            ui.ctx().request_repaint();
+        }
+        let frame = *place.frame();
+        let canvas = Self {
+            x: Axis::new(x, false, place),
+            y: Axis::new(y, true, place),
             frame,
-            response,
+            response: shown.response,
             to_enlarge,
-            inside,
-            outside,
+            inside: ui.painter_at(frame),
+            outside: ui.painter_at(rect.expand(2.0)),
             palette,
-            tagged: (None, None),
             font,
             name_font: FontId::new(body.size, body.family),
+        };
+        canvas.finish_axes((&x_ticks, &y_ticks), (&across, &up));
+        canvas
+    }
+
+    /// Short strokes at the numbers, and the names beyond them.
+    fn finish_axes(&self, (x, y): (&[Tick], &[Tick]), (across, up): (&Side<'_>, &Side<'_>)) {
+        let stroke = self.axis_stroke();
+        let (left, top) = self.frame.left_top().into();
+        for tick in y {
+            let reach = Rangef::new(left - 4.0, left);
+            self.outside.hline(reach, self.y.px(tick.si), stroke);
         }
+        let bottom = self.frame.bottom() + across.away;
+        for tick in x {
+            let reach = Rangef::new(bottom, bottom + 4.0);
+            self.outside.vline(self.x.px(tick.si), reach, stroke);
+        }
+        let text = self.palette.text;
+        let above = pos2(left - 7.0, top - 6.0);
+        self.text(above, Align2::RIGHT_BOTTOM, up.name, text);
+        let beside = pos2(self.frame.right() + 14.0, bottom + GAP);
+        self.text(beside, Align2::LEFT_TOP, across.name, text);
     }
 
     pub fn at(&self, x_si: f64, y_si: f64) -> Pos2 {
         pos2(self.x.px(x_si), self.y.px(y_si))
     }
 
+    /// A line's points on the screen.
+    pub fn points(&self, run: &[[f64; 2]]) -> Vec<Pos2> {
+        run.iter().map(|[x, y]| self.at(*x, *y)).collect()
+    }
+
     /// What a reader who cannot see the picture is told.
     pub fn describe(&self, sentence: impl Fn() -> String) {
         self.response
             .widget_info(|| WidgetInfo::labeled(Role::Image, true, sentence()));
-    }
-
-    /// Grid lines and numbers of the upright axis, at least `spacing` points apart; its
-    /// unit stands above the numbers.
-    pub fn y_axis(&self, unit: &Unit, unit_text: &str, spacing: f32) {
-        let left = self.frame.left() - 7.0;
-        for tick in self.y.ticks(unit, spacing) {
-            let y = self.inside.round_to_pixel_center(self.y.px(tick.si));
-            self.inside.hline(self.frame.x_range(), y, self.grid());
-            self.outside.hline(
-                Rangef::new(self.frame.left() - 4.0, self.frame.left()),
-                y,
-                self.axis_stroke(),
-            );
-            if !near(self.tagged.1, y, 15.0) {
-                self.text(
-                    pos2(left, y),
-                    Align2::RIGHT_CENTER,
-                    &tick.text,
-                    self.palette.text_faint,
-                );
-            }
-        }
-        self.text(
-            pos2(left, self.frame.top() - 6.0),
-            Align2::RIGHT_BOTTOM,
-            unit_text,
-            self.palette.text,
-        );
-    }
-
-    /// Grid lines and numbers of the level axis `below` points under the frame; its
-    /// name stands to the right of the numbers.
-    pub fn x_axis(&self, unit: &Unit, name: &str, below: f32) {
-        let y = self
-            .inside
-            .round_to_pixel_center(self.frame.bottom() + below);
-        for tick in self.x.ticks(unit, 52.0) {
-            let x = self.inside.round_to_pixel_center(self.x.px(tick.si));
-            self.inside.vline(x, self.frame.y_range(), self.grid());
-            self.outside
-                .vline(x, Rangef::new(y, y + 4.0), self.axis_stroke());
-            if !near(self.tagged.0, x, 24.0) {
-                self.text(
-                    pos2(x, y + 6.0),
-                    Align2::CENTER_TOP,
-                    &tick.text,
-                    self.palette.text_faint,
-                );
-            }
-        }
-        self.text(
-            pos2(self.frame.right() + 14.0, y + 6.0),
-            Align2::LEFT_TOP,
-            name,
-            self.palette.text,
-        );
     }
 
     pub fn border(&self) {
@@ -165,26 +197,8 @@ impl<'a> Canvas<'a> {
         );
     }
 
-    /// Leaves room on an axis for the tag of a level (upright axis) or upright line.
-    pub fn leave_room(&mut self, upright: bool, kelvin: f64) {
-        if upright {
-            self.tagged.0 = self.x.contains(kelvin).then(|| self.x.px(kelvin));
-        } else {
-            self.tagged.1 = self.y.contains(kelvin).then(|| self.y.px(kelvin));
-        }
-    }
-
-    /// Lines of the conditions: clear, but behind the lines of the fluid.
-    pub fn condition_stroke(&self) -> Stroke {
-        Stroke::new(1.0, self.palette.condition.gamma_multiply(0.45))
-    }
-
     pub fn axis_stroke(&self) -> Stroke {
         Stroke::new(1.0, self.palette.text_faint.gamma_multiply(0.7))
-    }
-
-    fn grid(&self) -> Stroke {
-        Stroke::new(1.0, self.palette.text_faint.gamma_multiply(0.14))
     }
 
     /// Text anywhere, gutters included.
@@ -205,15 +219,6 @@ impl<'a> Canvas<'a> {
         self.inside.galley(rect.min, galley, self.palette.text);
     }
 
-    /// A broken line through some points.
-    pub fn dashed(&self, points: &[Pos2], stroke: Stroke, dash: f32, gap: f32) {
-        self.inside.extend(
-            dashes(points, dash, gap)
-                .into_iter()
-                .map(|ends| Shape::line_segment(ends, stroke)),
-        );
-    }
-
     /// Where the pointer rests in the frame, with no button down.
     pub fn resting_pointer(&self, ui: &Ui) -> Option<Pos2> {
         if !ui.rect_contains_pointer(self.frame) || ui.input(|i| i.pointer.any_down()) {
@@ -223,34 +228,37 @@ impl<'a> Canvas<'a> {
     }
 }
 
-fn near(tag: Option<f32>, at: f32, reach: f32) -> bool {
-    tag.is_some_and(|tag| (tag - at).abs() < reach)
+/// Round values on an axis, without a number where a tag covers it.
+fn ticks(axis: &Axis, side: &Side<'_>, reach: f32) -> Vec<Tick> {
+    let mut ticks = axis.ticks(side.unit, side.spacing);
+    if let Some(tag) = side.tag.filter(|tag| axis.contains(*tag)) {
+        for tick in &mut ticks {
+            if (axis.px(tick.si) - axis.px(tag)).abs() < reach {
+                tick.text.clear();
+            }
+        }
+    }
+    ticks
 }
 
-/// Dashes along a line. Each is straight from its start to its end: with points closer
-/// together than a dash, pieces cut at the points would be too short to be seen.
-fn dashes(points: &[Pos2], dash: f32, gap: f32) -> Vec<[Pos2; 2]> {
-    /// A line that leaves far outside the frame is not worth more.
-    const MOST: usize = 1500;
-    let mut dashes = Vec::new();
-    let (mut along, mut next, mut lit) = (0.0, 0.0, false);
-    let mut from = Pos2::ZERO;
-    for pair in points.windows(2) {
-        let length = pair[0].distance(pair[1]);
-        while next <= along + length && dashes.len() < MOST {
-            let at = pair[0] + (pair[1] - pair[0]) * ((next - along) / length.max(1e-6));
-            if lit {
-                dashes.push([from, at]);
-            } else {
-                from = at;
-            }
-            next += if lit { gap } else { dash };
-            lit = !lit;
-        }
-        along += length;
-    }
-    if let (true, Some(end)) = (lit, points.last()) {
-        dashes.push([from, *end]);
-    }
-    dashes
+/// Ticks as marks of the plot, all as strong as one a whole axis apart.
+fn marks(ticks: &[Tick], home: &Home) -> Vec<GridMark> {
+    let (low, high) = home.ends();
+    let mark = |tick: &Tick| GridMark {
+        value: home.at(tick.si),
+        step_size: high - low,
+    };
+    ticks.iter().map(mark).collect()
+}
+
+fn text_at(ticks: &[Tick], home: &Home, mark: GridMark) -> String {
+    let here = ticks.iter().find(|tick| home.at(tick.si) == mark.value);
+    here.map(|tick| tick.text.clone()).unwrap_or_default()
+}
+
+/// An axis without numbers: room for what is painted beside the frame.
+fn room(hints: AxisHints<'_>, thickness: f32) -> AxisHints<'_> {
+    hints
+        .min_thickness(thickness)
+        .formatter(|_, _| String::new())
 }

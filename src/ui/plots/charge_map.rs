@@ -1,13 +1,16 @@
 //! The charge map: charge across, temperature up, and what the unit is like there.
 
 use eframe::egui::{Align2, Label, Pos2, Rangef, RichText, Ui, pos2};
+use egui_plot::LineStyle;
 
 use super::axis::{Axis, Home, Scale};
-use super::canvas::{Canvas, Margins};
-use super::charge_mark::{TRACK, band, bottom_margin, handle_ui, paint_band, window_ui};
+use super::canvas::{Canvas, Side};
+use super::charge_mark::{TRACK, band, bottom_margin, handle_ui, lay_charge, window_ui};
 use super::grip::scrub_line;
 use super::gutter::{EndLabel, widest};
+use super::items::Items;
 use super::map_areas::Areas;
+use super::over_temperature::condition_stroke;
 use super::{Picture, PlotState, header_ui, missing_ui, say, table};
 use crate::assess::{Assessment, ChargeFigures, Charts};
 use crate::design::Design;
@@ -95,41 +98,46 @@ fn map_ui(
         .iter()
         .map(|(_, text)| text.as_str())
         .chain([mass_name.as_str(), fill_name.as_str()]);
-    let margins = Margins {
-        left: 48.0,
-        right: widest(ui, texts) + 18.0,
-        top: 24.0,
-        bottom: bottom_margin(ui),
+    let right = widest(ui, texts) + 18.0;
+    let mut items = Items::new(across, upward, palette.ground);
+    let areas = Areas::new(charts, &a.fluid);
+    areas.lay(&mut items, palette);
+    for (t, _) in &lines {
+        items.level(t.kelvin(), condition_stroke(palette), LineStyle::Solid);
+    }
+    lay_charge(&mut items, a, charge, palette);
+    let level = Side {
+        unit: mass,
+        name: &mass_name,
+        spacing: 52.0,
+        away: TRACK,
+        margin: bottom_margin(ui),
+        tag: None,
     };
-    let mut canvas = Canvas::new(ui, (across, upward), margins, &mut state.map_view, palette);
+    let upright = Side {
+        unit: degree,
+        name: degree.symbol,
+        spacing: 22.0,
+        away: 0.0,
+        margin: 48.0,
+        tag: Some(scrubber.kelvin()),
+    };
+    let view = &mut state.map_view;
+    let canvas = Canvas::show(ui, items, (level, upright), right, view, palette);
     if canvas.to_enlarge {
         state.toggle_enlarged(Picture::ChargeMap);
     }
     canvas.describe(|| sentence(charge, design, a, units));
-
-    canvas.leave_room(false, scrubber.kelvin());
-    let areas = Areas::new(&canvas, charts, &a.fluid);
-    areas.paint_fills(&canvas);
-    canvas.y_axis(degree, degree.symbol, 22.0);
-    canvas.x_axis(mass, &mass_name, TRACK);
-    areas.paint_over_allowable(&canvas);
-    areas.paint_lines(&canvas);
-    let mut heights = Vec::with_capacity(lines.len());
-    let mut labels = Vec::with_capacity(lines.len());
-    for (t, text) in lines {
-        let y = canvas.inside.round_to_pixel_center(canvas.y.px(t.kelvin()));
-        canvas
-            .inside
-            .hline(canvas.frame.x_range(), y, canvas.condition_stroke());
-        heights.push(y);
-        labels.push(EndLabel {
-            y,
+    let labels: Vec<EndLabel> = lines
+        .into_iter()
+        .map(|(t, text)| EndLabel {
+            y: canvas.y.px(t.kelvin()),
             text,
             color: palette.condition,
-        });
-    }
+        })
+        .collect();
+    let heights: Vec<f32> = labels.iter().map(|label| label.y).collect();
     window_ui(ui, &canvas, a, units);
-    paint_band(&canvas, charge);
     scrub_line(ui, &canvas, false, units, charts.span, scrubber);
     areas.paint_names(&canvas, band(&canvas, charge).expand(4.0), &heights);
     canvas.border();
@@ -188,11 +196,8 @@ impl FillScale {
             low,
             high,
         };
-        let axis = Axis::new(
-            home,
-            (0.0, 1.0),
-            (canvas.x.px(self.mass(low)), canvas.x.px(self.mass(high))),
-        );
+        let end = |fill| canvas.x.px(self.mass(fill));
+        let axis = Axis::rail(home, Rangef::new(end(low), end(high)));
         let percent = crate::units::unit_named(Kind::Ratio, "%");
         let top = canvas.frame.top();
         for tick in axis.ticks(percent, 36.0) {

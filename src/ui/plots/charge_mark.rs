@@ -4,12 +4,15 @@
 use eframe::egui::{
     Align2, CornerRadius, CursorIcon, Rangef, Rect, Sense, Shape, Stroke, TextStyle, Ui, pos2,
 };
+use egui_plot::LineStyle;
 
 use super::PlotState;
 use super::canvas::Canvas;
 use super::grip::{grip, knob};
+use super::items::Items;
 use super::say;
 use crate::assess::{Assessment, ChargeFigures};
+use crate::ui::theme::Palette;
 use crate::units::{Kind, Mass, Units};
 
 /// Points from the frame down to the axis that carries the window.
@@ -60,17 +63,6 @@ pub(super) fn window_ui(ui: &Ui, canvas: &Canvas<'_>, a: &Assessment, units: &Un
             canvas
                 .outside
                 .rect_filled(bar, CornerRadius::same(2), color);
-            for end in [lower, upper].into_iter().flatten() {
-                canvas.dashed(
-                    &[
-                        pos2(end, canvas.frame.bottom()),
-                        pos2(end, canvas.frame.top()),
-                    ],
-                    Stroke::new(1.0, color.gamma_multiply(0.8)),
-                    2.0,
-                    4.0,
-                );
-            }
         }
     }
     for end in [lower, upper].into_iter().flatten() {
@@ -108,20 +100,26 @@ pub(super) fn band(canvas: &Canvas<'_>, charge: &ChargeFigures) -> Rangef {
     Rangef::new(least.min(centre - 1.0), greatest.max(centre + 1.0))
 }
 
-pub(super) fn paint_band(canvas: &Canvas<'_>, charge: &ChargeFigures) {
-    let palette = canvas.palette;
-    let rect = Rect::from_x_y_ranges(band(canvas, charge), canvas.frame.y_range());
-    canvas.inside.rect_filled(
-        rect,
-        CornerRadius::ZERO,
-        palette.charge.gamma_multiply(0.28),
-    );
-    let centre = canvas.x.px(charge.nominal.kilogram());
-    canvas.inside.vline(
-        centre,
-        canvas.frame.y_range(),
-        Stroke::new(2.0, palette.charge),
-    );
+/// The ends of the window as upright dots, and the band over them.
+pub(super) fn lay_charge(
+    items: &mut Items,
+    a: &Assessment,
+    charge: &ChargeFigures,
+    palette: &Palette,
+) {
+    if let Ok(window) = &a.window
+        && !window.is_empty()
+    {
+        let dots = Stroke::new(0.8, palette.window);
+        for bound in [&window.lower, &window.upper].into_iter().flatten() {
+            let style = LineStyle::Dotted { spacing: 5.0 };
+            items.upright(bound.mass.kilogram(), dots, style);
+        }
+    }
+    let (least, greatest) = (charge.least.kilogram(), charge.greatest.kilogram());
+    items.upright_band(least, greatest, palette.charge.gamma_multiply(0.28));
+    let centre = Stroke::new(2.0, palette.charge);
+    items.upright(charge.nominal.kilogram(), centre, LineStyle::Solid);
 }
 
 /// The handle: the band and its knob on the axis. Some(mass) when it is moved.

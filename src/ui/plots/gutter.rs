@@ -8,7 +8,7 @@ use eframe::egui::{
 use std::sync::Arc;
 
 use super::canvas::Canvas;
-use super::labels::spread;
+use super::labels::{Taken, spread};
 
 /// A name at the right end of a line.
 pub(super) struct EndLabel {
@@ -99,6 +99,48 @@ impl Canvas<'_> {
         );
         self.outside
             .galley(rect.min + vec2(7.0, 4.0), galley, self.palette.text);
+    }
+}
+
+/// A line's name: in the gutter where it reaches it, else where it leaves the frame.
+pub(super) fn name_line(
+    canvas: &Canvas<'_>,
+    runs: &[Vec<Pos2>],
+    text: &str,
+    color: Color32,
+    ends: &mut Vec<EndLabel>,
+    taken: &mut Taken,
+) {
+    let frame = canvas.frame;
+    let Some(last) = runs
+        .iter()
+        .flatten()
+        .rfind(|p| frame.expand(0.5).contains(**p))
+    else {
+        return;
+    };
+    if last.x >= frame.right() - 14.0 {
+        ends.push(EndLabel {
+            y: last.y,
+            text: text.to_owned(),
+            color,
+        });
+        return;
+    }
+    let galley = canvas.galley(text, color);
+    let size = galley.size();
+    let places = [
+        pos2(last.x + 6.0, last.y + 4.0),
+        pos2(last.x + 8.0, last.y - size.y - 4.0),
+        pos2(last.x - size.x - 8.0, last.y + 4.0),
+        pos2(last.x - size.x - 8.0, last.y - size.y - 4.0),
+        pos2(last.x - size.x - 8.0, last.y + 20.0),
+    ];
+    if let Some(rect) = taken.first_free(
+        places.map(|at| Rect::from_min_size(at, size)),
+        frame.shrink(2.0),
+    ) {
+        canvas.backed(rect, galley, canvas.palette.ground.gamma_multiply(0.85));
     }
 }
 

@@ -1,13 +1,17 @@
 //! How much of the inside is liquid, over temperature.
 
-use eframe::egui::{CornerRadius, Mesh, Pos2, Rangef, Rect, Shape, Stroke, Ui, pos2};
+use eframe::egui::{Pos2, Rangef, Stroke, Ui};
+use egui_plot::LineStyle;
 
 use super::axis::{Home, Scale};
-use super::canvas::{Canvas, Margins};
+use super::canvas::{Canvas, Side};
 use super::grip::scrub_line;
 use super::gutter::{EndLabel, widest};
+use super::items::{Items, Run};
 use super::labels::{Taken, place_in_area};
-use super::over_temperature::{mark_event, name_bands, paint_conditions, regime_bands};
+use super::over_temperature::{
+    lay_conditions, lay_regimes, mark_event, name_bands, name_conditions, temperature_side,
+};
 use super::{Picture, PlotState, header_ui, missing_ui, say, table};
 use crate::assess::{Assessment, Charts, EventKind};
 use crate::design::Design;
@@ -68,59 +72,60 @@ fn plot_ui(
         ceiling_name.as_str(),
         across_name.as_str(),
     ];
-    let margins = Margins {
-        left: 48.0,
-        right: widest(ui, names) + 22.0,
-        top: 24.0,
-        bottom: 24.0,
+    let mut items = Items::new(across, up, palette.ground);
+    let runs = shares(charts);
+    // Liquid below the line, vapour above it, in the tints of the charge map.
+    for run in &runs {
+        items.fill_to(run, 0.0, items.veil(palette.liquid_full));
+        items.fill_to(run, 1.0, items.veil(palette.all_vapour));
+        // The space above the ceiling, which must stay vapour at the hottest.
+        let kept: Run = run.iter().map(|point| [point[0], ceiling]).collect();
+        items.fill_to(&kept, 1.0, palette.over_allowable.gamma_multiply(0.6));
+    }
+    let bands = lay_regimes(&mut items, charts, palette);
+    lay_conditions(&mut items, design, palette);
+    let levels = [
+        (0.0, "dry", palette.text_faint),
+        (1.0, "liquid-full", palette.text_faint),
+        (ceiling, ceiling_name.as_str(), palette.allowable),
+    ];
+    items.level(0.0, Stroke::new(1.0, palette.text_faint), LineStyle::Solid);
+    items.level(1.0, Stroke::new(1.0, palette.text_faint), LineStyle::Solid);
+    let broken = LineStyle::Dashed { length: 8.0 };
+    items.level(ceiling, Stroke::new(2.0, palette.allowable), broken);
+    for run in &runs {
+        items.line(run, Stroke::new(3.0, palette.path), LineStyle::Solid);
+    }
+    let level = temperature_side(degree, &across_name, *scrubber);
+    let upright = Side {
+        unit: unit_named(Kind::Ratio, "%"),
+        name: "% liquid",
+        spacing: 34.0,
+        away: 0.0,
+        margin: 48.0,
+        tag: None,
     };
-    let mut canvas = Canvas::new(ui, (across, up), margins, &mut state.share_view, palette);
+    let right = widest(ui, names) + 22.0;
+    let view = &mut state.share_view;
+    let canvas = Canvas::show(ui, items, (level, upright), right, view, palette);
     if canvas.to_enlarge {
         state.toggle_enlarged(Picture::LiquidShare);
     }
     canvas.describe(|| sentence(design, a, units));
-    canvas.leave_room(true, scrubber.kelvin());
-    let runs = shares(&canvas, charts);
-    paint_phases(&canvas, &runs);
-    paint_kept(&canvas, ceiling);
-    let bands = regime_bands(&canvas, charts);
-    canvas.y_axis(unit_named(Kind::Ratio, "%"), "% liquid", 34.0);
-    canvas.x_axis(degree, &across_name, 0.0);
-    paint_conditions(&canvas, design, units);
-
-    let full = canvas.frame.x_range();
-    let mut ends = Vec::new();
-    let mut level = |share: f64, text: &str, color, broken: bool| {
-        let y = canvas.y.px(share);
-        if broken {
-            canvas.dashed(
-                &[pos2(full.min, y), pos2(full.max, y)],
-                Stroke::new(2.0, color),
-                8.0,
-                4.0,
-            );
-        } else {
-            canvas.inside.hline(full, y, Stroke::new(1.0, color));
-        }
-        ends.push(EndLabel {
-            y,
+    name_conditions(&canvas, design, units);
+    let mut ends: Vec<EndLabel> = levels
+        .into_iter()
+        .map(|(share, text, color)| EndLabel {
+            y: canvas.y.px(share),
             text: text.to_owned(),
             color,
-        });
-    };
-    level(0.0, "dry", palette.text_faint, false);
-    level(1.0, "liquid-full", palette.text_faint, false);
-    level(ceiling, &ceiling_name, palette.allowable, true);
-
-    for run in &runs {
-        canvas
-            .inside
-            .line(run.clone(), Stroke::new(3.0, palette.path));
-    }
+        })
+        .collect();
+    let runs: Vec<Vec<Pos2>> = runs.iter().map(|run| canvas.points(run)).collect();
     if let Some(end) = runs
         .last()
         .and_then(|run| run.last())
-        .filter(|end| end.x >= full.max - 2.0)
+        .filter(|end| end.x >= canvas.frame.right() - 2.0)
     {
         ends.push(EndLabel {
             y: end.y,
@@ -184,7 +189,7 @@ fn plot_ui(
 }
 
 /// The liquid share as runs of points; a run ends where phases are not told apart.
-fn shares(canvas: &Canvas<'_>, charts: &Charts) -> Vec<Vec<Pos2>> {
+fn shares(charts: &Charts) -> Vec<Run> {
     let known = |p: &PathPoint| {
         p.state
             .as_ref()
@@ -196,35 +201,10 @@ fn shares(canvas: &Canvas<'_>, charts: &Charts) -> Vec<Vec<Pos2>> {
         .filter(|run| run.first().is_some_and(known));
     let point = |p: &PathPoint| {
         let share = p.state.as_ref().ok()?.liquid_share?;
-        Some(canvas.at(p.temperature.kelvin(), share))
+        Some([p.temperature.kelvin(), share])
     };
     runs.map(|run| run.iter().filter_map(point).collect())
         .collect()
-}
-
-/// Liquid below the line, vapour above it, in the tints of the charge map.
-fn paint_phases(canvas: &Canvas<'_>, runs: &[Vec<Pos2>]) {
-    let (dry, full) = (canvas.y.px(0.0), canvas.y.px(1.0));
-    let mut mesh = Mesh::default();
-    for pair in runs.iter().flat_map(|run| run.windows(2)) {
-        for (edge, color) in [
-            (dry, canvas.palette.liquid_full),
-            (full, canvas.palette.all_vapour),
-        ] {
-            let first = mesh.vertices.len() as u32;
-            for corner in [
-                pair[0],
-                pair[1],
-                pos2(pair[0].x, edge),
-                pos2(pair[1].x, edge),
-            ] {
-                mesh.colored_vertex(corner, color);
-            }
-            mesh.add_triangle(first, first + 1, first + 2);
-            mesh.add_triangle(first + 1, first + 2, first + 3);
-        }
-    }
-    canvas.inside.add(Shape::mesh(mesh));
 }
 
 fn name_phases(canvas: &Canvas<'_>, runs: &[Vec<Pos2>], taken: &mut Taken) {
@@ -266,18 +246,6 @@ fn name_phases(canvas: &Canvas<'_>, runs: &[Vec<Pos2>], taken: &mut Taken) {
             canvas.backed(rect, galley, ground);
         }
     }
-}
-
-/// The space above the ceiling, which must stay vapour at the hottest.
-fn paint_kept(canvas: &Canvas<'_>, ceiling: f64) {
-    let palette = canvas.palette;
-    let frame = canvas.frame;
-    let kept = Rangef::new(canvas.y.px(1.0), canvas.y.px(ceiling));
-    canvas.inside.rect_filled(
-        Rect::from_x_y_ranges(frame.x_range(), kept),
-        CornerRadius::ZERO,
-        palette.over_allowable.gamma_multiply(0.6),
-    );
 }
 
 fn sentence(design: &Design, a: &Assessment, units: &Units) -> String {

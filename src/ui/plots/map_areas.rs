@@ -1,146 +1,80 @@
 //! The areas of the charge map and their names.
 
-use eframe::egui::{Mesh, Pos2, Rangef, Rect, Shape, Stroke, pos2, vec2};
+use eframe::egui::{Pos2, Rangef, Rect, Stroke, pos2, vec2};
+use egui_plot::LineStyle;
 
 use super::canvas::Canvas;
+use super::items::{Items, Run};
 use super::labels::{Taken, place_in_area};
+use super::strip::x_at;
 use crate::assess::{Charts, MapPoint};
 use crate::fluid::Fluid;
+use crate::ui::theme::Palette;
 
-/// Points between two hatch lines, across.
-const HATCH: f32 = 11.0;
-
-/// The boundaries as points of the screen, upper ends last.
+/// The boundaries, upper ends last.
 pub(super) struct Areas {
-    dry_out: Vec<Pos2>,
-    liquid_full: Vec<Pos2>,
+    dry_out: Run,
+    liquid_full: Run,
     /// Pieces of the allowable line; right of each the pressure is too high.
-    allowable: Vec<Vec<Pos2>>,
-    /// Heights above which the fluid is supercritical, and below which it is frozen.
-    critical: Option<f32>,
-    freezing: Option<f32>,
-    frame: Rect,
+    allowable: Vec<Run>,
+    /// Temperatures above which the fluid is supercritical, and below which it is frozen.
+    critical: Option<f64>,
+    freezing: Option<f64>,
 }
 
 impl Areas {
-    pub fn new(canvas: &Canvas<'_>, charts: &Charts, fluid: &Fluid) -> Self {
-        let points = |line: &[MapPoint]| -> Vec<Pos2> {
-            line.iter()
-                .map(|p| canvas.at(p.mass.kilogram(), p.temperature.kelvin()))
-                .collect()
-        };
+    pub fn new(charts: &Charts, fluid: &Fluid) -> Self {
         let map = &charts.map;
-        let height = |t: f64| canvas.y.px(t);
         let (low, high) = (charts.span.0.kelvin(), charts.span.1.kelvin());
         let critical = fluid.critical().temperature_k;
-        let freezing = fluid.freezing_point();
+        let freezing = fluid.freezing_point().kelvin();
         Self {
-            dry_out: points(&map.dry_out),
-            liquid_full: points(&map.liquid_full),
+            dry_out: run(&map.dry_out),
+            liquid_full: run(&map.liquid_full),
             allowable: pieces(&map.allowable, 1.5 * (high - low) / 96.0)
-                .map(points)
+                .map(run)
                 .collect(),
             critical: (critical < high && fluid.range().1.kelvin() > critical)
-                .then(|| height(critical.max(low))),
-            freezing: (freezing > charts.span.0)
-                .then(|| height(freezing.min(charts.span.1).kelvin())),
-            frame: canvas.frame,
+                .then(|| critical.max(low)),
+            freezing: (freezing > low).then(|| freezing.min(high)),
         }
     }
 
-    pub fn paint_fills(&self, canvas: &Canvas<'_>) {
-        let palette = canvas.palette;
-        let (left, right) = (self.frame.left(), self.frame.right());
-        let mut mesh = Mesh::default();
-        let mut band = |a: (f32, f32, f32), b: (f32, f32, f32), color| {
-            // Two levels, each from left to right at a height.
-            let first = mesh.vertices.len() as u32;
-            for corner in [
-                pos2(a.0, a.2),
-                pos2(a.1, a.2),
-                pos2(b.0, b.2),
-                pos2(b.1, b.2),
-            ] {
-                mesh.colored_vertex(corner, color);
-            }
-            mesh.add_triangle(first, first + 1, first + 2);
-            mesh.add_triangle(first + 1, first + 2, first + 3);
-        };
-        for (dry, full) in self.dry_out.windows(2).zip(self.liquid_full.windows(2)) {
-            let (ya, yb) = (dry[0].y, dry[1].y);
-            band(
-                (left, dry[0].x, ya),
-                (left, dry[1].x, yb),
-                palette.all_vapour,
-            );
-            band(
-                (dry[0].x, full[0].x, ya),
-                (dry[1].x, full[1].x, yb),
-                palette.two_phase,
-            );
-            band(
-                (full[0].x, right.max(full[0].x), ya),
-                (full[1].x, right.max(full[1].x), yb),
-                palette.liquid_full,
-            );
+    /// Tints, hatching of what the walls do not bear, and the lines between.
+    pub fn lay(&self, items: &mut Items, palette: &Palette) {
+        let (left, right) = (f64::NEG_INFINITY, f64::INFINITY);
+        let dry = || self.dry_out.iter().map(|p| (p[1], left, p[0]));
+        let full = || self.liquid_full.iter().map(|p| (p[1], p[0], right));
+        let between = self.dry_out.iter().zip(&self.liquid_full);
+        let two_phase = between.map(|(dry, full)| (dry[1], dry[0], full[0]));
+        items.rows(dry(), items.veil(palette.all_vapour), None);
+        items.rows(two_phase, items.veil(palette.two_phase), None);
+        items.rows(full(), items.veil(palette.liquid_full), None);
+        let (low, high) = (items.y.low, items.y.high);
+        if let Some(t) = self.critical {
+            items.level_band(t, high, items.veil(palette.supercritical));
         }
-        if let Some(y) = self.critical {
-            band(
-                (left, right, self.frame.top()),
-                (left, right, y),
-                palette.supercritical,
-            );
+        if let Some(t) = self.freezing {
+            items.level_band(low, t, items.veil(palette.frozen));
         }
-        if let Some(y) = self.freezing {
-            band(
-                (left, right, y),
-                (left, right, self.frame.bottom()),
-                palette.frozen,
-            );
-        }
-        canvas.inside.add(Shape::mesh(mesh));
-    }
-
-    /// The tint and hatching of what the walls do not bear.
-    pub fn paint_over_allowable(&self, canvas: &Canvas<'_>) {
-        let color = canvas.palette.over_allowable;
-        let right = self.frame.right();
-        let mut mesh = Mesh::default();
-        let mut hatch = Vec::new();
+        let hatch = Stroke::new(1.0, palette.allowable.gamma_multiply(0.45));
         for piece in &self.allowable {
-            for pair in piece.windows(2) {
-                let (a, b) = (pair[0], pair[1]);
-                if a.x.min(b.x) >= right || (a.y - b.y).abs() < 1e-3 {
-                    continue;
-                }
-                let first = mesh.vertices.len() as u32;
-                for corner in [a, pos2(right.max(a.x), a.y), b, pos2(right.max(b.x), b.y)] {
-                    mesh.colored_vertex(corner, color.gamma_multiply(0.6));
-                }
-                mesh.add_triangle(first, first + 1, first + 2);
-                mesh.add_triangle(first + 1, first + 2, first + 3);
-            }
-            hatch_right_of(piece, self.frame, &mut hatch);
+            let rows = piece.iter().map(|p| (p[1], p[0], right));
+            items.rows(
+                rows,
+                palette.over_allowable.gamma_multiply(0.6),
+                Some(hatch),
+            );
         }
-        canvas.inside.add(Shape::mesh(mesh));
-        let stroke = Stroke::new(1.0, canvas.palette.allowable.gamma_multiply(0.45));
-        canvas.inside.extend(
-            hatch
-                .into_iter()
-                .map(|ends| Shape::line_segment(ends, stroke)),
-        );
-    }
-
-    pub fn paint_lines(&self, canvas: &Canvas<'_>) {
-        let palette = canvas.palette;
         let edge = Stroke::new(1.5, palette.saturation);
-        canvas.inside.line(self.dry_out.clone(), edge);
-        canvas.inside.line(self.liquid_full.clone(), edge);
-        for y in [self.critical, self.freezing].into_iter().flatten() {
-            canvas.inside.hline(self.frame.x_range(), y, edge);
+        items.line(&self.dry_out, edge, LineStyle::Solid);
+        items.line(&self.liquid_full, edge, LineStyle::Solid);
+        for t in [self.critical, self.freezing].into_iter().flatten() {
+            items.level(t, edge, LineStyle::Solid);
         }
+        let stroke = Stroke::new(2.0, palette.allowable);
         for piece in &self.allowable {
-            canvas.dashed(piece, Stroke::new(2.0, palette.allowable), 7.0, 4.0);
+            items.line(piece, stroke, LineStyle::Dashed { length: 7.0 });
         }
     }
 
@@ -148,21 +82,18 @@ impl Areas {
     /// and, where it can, off some heights.
     pub fn paint_names(&self, canvas: &Canvas<'_>, avoid: Rangef, heights: &[f32]) {
         let palette = canvas.palette;
-        let all = self.frame.x_range();
+        let all = canvas.frame.x_range();
         let mut taken = Taken::default();
-        let between = |line: &[Pos2], y: f32| x_at(line, y);
-        let two_phase = |y: f32| {
-            Some(Rangef::new(
-                between(&self.dry_out, y)?,
-                between(&self.liquid_full, y)?,
-            ))
-        };
-        let vapour = |y: f32| Some(Rangef::new(all.min, between(&self.dry_out, y)?));
-        let full = |y: f32| Some(Rangef::new(between(&self.liquid_full, y)?, all.max));
-        let above = |y: f32| self.critical.filter(|edge| y < *edge).map(|_| all);
-        let frozen = |y: f32| self.freezing.filter(|edge| y > *edge).map(|_| all);
+        let [dry_out, liquid_full] = [&self.dry_out, &self.liquid_full].map(|r| canvas.points(r));
+        let allowable: Vec<Vec<Pos2>> = self.allowable.iter().map(|r| canvas.points(r)).collect();
+        let [critical, freezing] = [self.critical, self.freezing].map(|t| Some(canvas.y.px(t?)));
+        let two_phase = |y: f32| Some(Rangef::new(x_at(&dry_out, y)?, x_at(&liquid_full, y)?));
+        let vapour = |y: f32| Some(Rangef::new(all.min, x_at(&dry_out, y)?));
+        let full = |y: f32| Some(Rangef::new(x_at(&liquid_full, y)?, all.max));
+        let above = |y: f32| critical.filter(|edge| y < *edge).map(|_| all);
+        let frozen = |y: f32| freezing.filter(|edge| y > *edge).map(|_| all);
         let over = |y: f32| {
-            let edge = self.allowable.iter().find_map(|piece| x_at(piece, y))?;
+            let edge = allowable.iter().find_map(|piece| x_at(piece, y))?;
             Some(Rangef::new(edge, all.max))
         };
         let mut name = |texts: &[&str], extent: &dyn Fn(f32) -> Option<Rangef>, ground| -> bool {
@@ -173,7 +104,7 @@ impl Areas {
                     palette.text,
                 );
                 if let Some((rect, _)) =
-                    place_in_area(galley.size(), self.frame, extent, avoid, heights, &taken)
+                    place_in_area(galley.size(), canvas.frame, extent, avoid, heights, &taken)
                 {
                     taken.add(rect.expand(4.0));
                     canvas.backed(rect, galley, ground);
@@ -201,49 +132,55 @@ impl Areas {
         name(&["supercritical"], &above, palette.supercritical);
         name(&["frozen"], &frozen, palette.frozen);
         if !vapour_named {
-            self.point_at_vapour(canvas, avoid, heights, &taken);
+            point_at_vapour(canvas, &dry_out, avoid, heights, &taken);
         }
     }
+}
 
-    /// Beside the area of vapour alone, which is often a sliver: its name and a hair to it.
-    fn point_at_vapour(&self, canvas: &Canvas<'_>, avoid: Rangef, heights: &[f32], taken: &Taken) {
-        let galley = canvas.inside.layout_no_wrap(
-            "all vapour".to_owned(),
-            canvas.font.clone(),
-            canvas.palette.text,
-        );
-        let size = galley.size();
-        let seen = self.frame.shrink2(vec2(0.0, 0.5 * size.y + 3.0));
-        const ROWS: u8 = 24;
-        let place = (0..=ROWS)
-            .map(|row| seen.top() + seen.height() * f32::from(row) / f32::from(ROWS))
-            .find_map(|y| {
-                let edge = x_at(&self.dry_out, y)?;
-                let rect = Rect::from_min_size(
-                    pos2(edge.max(self.frame.left()) + 18.0, y - 0.5 * size.y),
-                    size,
-                );
-                // Near the critical point the boundary leans over: there it would cross the text.
-                let leans = x_at(&self.dry_out, rect.top() - 3.0)
-                    .is_none_or(|above| above > rect.left() - 4.0);
-                let clear = !leans
-                    && heights
-                        .iter()
-                        .all(|height| (height - y).abs() > 0.5 * size.y + 2.0);
-                let room = taken.is_free(rect)
-                    && rect.right() < self.frame.right()
-                    && !rect.x_range().intersects(avoid);
-                (edge - self.frame.left() >= 1.5 && clear && room).then_some((edge, rect))
-            });
-        if let Some((edge, rect)) = place {
-            let y = rect.center().y;
-            let from = pos2(0.5 * (edge + self.frame.left()), y);
-            canvas.inside.line_segment(
-                [from, pos2(rect.left() - 4.0, y)],
-                Stroke::new(1.0, canvas.palette.text),
+/// Beside the area of vapour alone, which is often a sliver: its name and a hair to it.
+fn point_at_vapour(
+    canvas: &Canvas<'_>,
+    dry_out: &[Pos2],
+    avoid: Rangef,
+    heights: &[f32],
+    taken: &Taken,
+) {
+    let galley = canvas.inside.layout_no_wrap(
+        "all vapour".to_owned(),
+        canvas.font.clone(),
+        canvas.palette.text,
+    );
+    let size = galley.size();
+    let seen = canvas.frame.shrink2(vec2(0.0, 0.5 * size.y + 3.0));
+    const ROWS: u8 = 24;
+    let place = (0..=ROWS)
+        .map(|row| seen.top() + seen.height() * f32::from(row) / f32::from(ROWS))
+        .find_map(|y| {
+            let edge = x_at(dry_out, y)?;
+            let rect = Rect::from_min_size(
+                pos2(edge.max(canvas.frame.left()) + 18.0, y - 0.5 * size.y),
+                size,
             );
-            canvas.backed(rect, galley, canvas.palette.two_phase);
-        }
+            // Near the critical point the boundary leans over: there it would cross the text.
+            let leans =
+                x_at(dry_out, rect.top() - 3.0).is_none_or(|above| above > rect.left() - 4.0);
+            let clear = !leans
+                && heights
+                    .iter()
+                    .all(|height| (height - y).abs() > 0.5 * size.y + 2.0);
+            let room = taken.is_free(rect)
+                && rect.right() < canvas.frame.right()
+                && !rect.x_range().intersects(avoid);
+            (edge - canvas.frame.left() >= 1.5 && clear && room).then_some((edge, rect))
+        });
+    if let Some((edge, rect)) = place {
+        let y = rect.center().y;
+        let from = pos2(0.5 * (edge + canvas.frame.left()), y);
+        canvas.inside.line_segment(
+            [from, pos2(rect.left() - 4.0, y)],
+            Stroke::new(1.0, canvas.palette.text),
+        );
+        canvas.backed(rect, galley, canvas.palette.two_phase);
     }
 }
 
@@ -252,82 +189,8 @@ fn pieces(line: &[MapPoint], gap_k: f64) -> impl Iterator<Item = &[MapPoint]> {
     line.chunk_by(move |a, b| b.temperature.kelvin() - a.temperature.kelvin() <= gap_k)
 }
 
-/// Where a line that rises on the screen from point to point crosses a height.
-fn x_at(line: &[Pos2], y: f32) -> Option<f32> {
-    let next = line.partition_point(|p| p.y > y);
-    let (a, b) = (line.get(next.checked_sub(1)?)?, line.get(next)?);
-    let share = if a.y == b.y {
-        0.0
-    } else {
-        (a.y - y) / (a.y - b.y)
-    };
-    Some(a.x + share * (b.x - a.x))
-}
-
-/// Slanted lines over all that lies right of `edge`, a line rising on the screen.
-fn hatch_right_of(edge: &[Pos2], frame: Rect, into: &mut Vec<[Pos2; 2]>) {
-    let (Some(bottom), Some(top)) = (edge.first(), edge.last()) else {
-        return;
-    };
-    let (bottom, top) = (bottom.y.min(frame.bottom()), top.y.max(frame.top()));
-    if bottom <= top {
-        return;
-    }
-    let leftmost = edge
-        .iter()
-        .map(|p| p.x)
-        .fold(f32::INFINITY, f32::min)
-        .max(frame.left());
-    // Lines rise to the right at 45°: x + y is constant along each.
-    let mut sum = HATCH * ((leftmost + top) / HATCH).ceil();
-    let last = frame.right() + bottom;
-    while sum < last {
-        // Walked from the lower left up; steps fine enough for the edge's bends.
-        let mut start: Option<Pos2> = None;
-        let mut y = bottom.min(sum - leftmost);
-        loop {
-            let at = pos2(sum - y, y);
-            let inside = at.x <= frame.right()
-                && x_at(edge, y.clamp(top + 1e-3, bottom - 1e-3)).is_some_and(|x| at.x >= x);
-            match (inside, start) {
-                (true, None) => start = Some(at),
-                (false, Some(from)) => {
-                    into.push([from, at]);
-                    start = None;
-                }
-                _ => {}
-            }
-            if y <= top || at.x > frame.right() {
-                if let Some(from) = start {
-                    into.push([from, at]);
-                }
-                break;
-            }
-            y = (y - 2.0).max(top);
-        }
-        sum += HATCH;
-    }
-}
-
-#[cfg(test)]
-mod tests {
-    use super::*;
-
-    #[test]
-    fn hatching_stays_right_of_its_edge() {
-        let frame = Rect::from_min_size(pos2(0.0, 0.0), vec2(100.0, 100.0));
-        let edge = [
-            pos2(80.0, 100.0),
-            pos2(60.0, 50.0),
-            pos2(10.0, 50.0),
-            pos2(5.0, 0.0),
-        ];
-        let mut lines = Vec::new();
-        hatch_right_of(&edge, frame, &mut lines);
-        assert!(lines.len() > 5);
-        for point in lines.iter().flatten() {
-            let x = x_at(&edge, point.y.clamp(0.01, 99.9)).expect("on the edge's heights");
-            assert!(point.x >= x - 60.0 && point.x <= 103.0, "{point:?} {x}");
-        }
-    }
+fn run(line: &[MapPoint]) -> Run {
+    line.iter()
+        .map(|p| [p.mass.kilogram(), p.temperature.kelvin()])
+        .collect()
 }

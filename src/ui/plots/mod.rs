@@ -8,6 +8,7 @@ mod charge_map;
 mod charge_mark;
 mod grip;
 mod gutter;
+mod items;
 mod labels;
 mod liquid_share;
 mod map_areas;
@@ -16,6 +17,7 @@ mod pressure;
 mod pressure_lines;
 mod say;
 mod scrubber;
+mod strip;
 mod table;
 #[cfg(test)]
 mod tests;

@@ -1,65 +1,91 @@
 //! What the pictures over temperature have in common.
 
-use eframe::egui::{Color32, CornerRadius, Pos2, Rangef, Rect, Stroke, pos2, vec2};
+use eframe::egui::{Color32, Pos2, Rangef, Rect, Stroke, pos2, vec2};
+use egui_plot::LineStyle;
 
-use super::canvas::Canvas;
+use super::canvas::{Canvas, Side};
+use super::items::Items;
 use super::labels::Taken;
 use super::say;
 use crate::assess::Charts;
 use crate::design::Design;
 use crate::fluid::Regime;
-use crate::units::Units;
+use crate::ui::theme::Palette;
+use crate::units::{Temperature, Unit, Units};
 use crate::words;
 
-/// Coldest, working range and hottest as upright lines, named above the frame.
-pub(super) fn paint_conditions(canvas: &Canvas<'_>, design: &Design, units: &Units) {
-    let color = canvas.palette.condition;
-    let mut labels = Vec::with_capacity(4);
-    for (t, name) in say::conditions(&design.conditions) {
-        let x = canvas.inside.round_to_pixel_center(canvas.x.px(t.kelvin()));
-        canvas
-            .inside
-            .vline(x, canvas.frame.y_range(), canvas.condition_stroke());
-        labels.push((x, format!("{name} {}", say::temperature(t, units))));
+/// Temperatures from which to which the unit is in a regime, and its tint.
+pub(super) type Band = (f64, f64, Regime, Color32);
+
+/// The level axis, with room for the scrubber's tag.
+pub(super) fn temperature_side<'u>(
+    unit: &'u Unit,
+    name: &'u str,
+    scrubber: Temperature,
+) -> Side<'u> {
+    Side {
+        unit,
+        name,
+        spacing: 52.0,
+        away: 0.0,
+        margin: 24.0,
+        tag: Some(scrubber.kelvin()),
     }
-    canvas.top_labels(&labels, color);
+}
+
+/// Coldest, working range and hottest as upright lines.
+pub(super) fn lay_conditions(items: &mut Items, design: &Design, palette: &Palette) {
+    for (t, _) in say::conditions(&design.conditions) {
+        items.upright(t.kelvin(), condition_stroke(palette), LineStyle::Solid);
+    }
+}
+
+/// Lines of the conditions: clear, but behind the lines of the fluid.
+pub(super) fn condition_stroke(palette: &Palette) -> Stroke {
+    Stroke::new(1.0, palette.condition.gamma_multiply(0.45))
+}
+
+/// The names of those lines, above the frame.
+pub(super) fn name_conditions(canvas: &Canvas<'_>, design: &Design, units: &Units) {
+    let labels: Vec<_> = say::conditions(&design.conditions)
+        .into_iter()
+        .map(|(t, name)| {
+            let text = format!("{name} {}", say::temperature(t, units));
+            (canvas.x.px(t.kelvin()), text)
+        })
+        .collect();
+    canvas.top_labels(&labels, canvas.palette.condition);
 }
 
 /// Tints the temperatures at which the unit is frozen or supercritical, as in the
 /// charge map. The bands are named last, by [`name_bands`].
-pub(super) fn regime_bands(
-    canvas: &Canvas<'_>,
-    charts: &Charts,
-) -> [Option<(Rect, Regime, Color32)>; 2] {
-    let palette = canvas.palette;
-    [
-        (Regime::Frozen, palette.frozen),
-        (Regime::Supercritical, palette.supercritical),
-    ]
-    .map(|(regime, color)| {
+pub(super) fn lay_regimes(items: &mut Items, charts: &Charts, palette: &Palette) -> Vec<Band> {
+    let of = |(regime, color): (Regime, Color32)| {
         let here = charts
             .path
             .iter()
-            .filter(|p| p.state.as_ref().is_ok_and(|s| s.regime == regime));
-        let across = here.map(|p| canvas.x.px(p.temperature.kelvin()));
-        let (from, to) = across.fold((f32::INFINITY, f32::NEG_INFINITY), |(a, b), x| {
-            (a.min(x), b.max(x))
+            .filter(|p| p.state.as_ref().is_ok_and(|s| s.regime == regime))
+            .map(|p| p.temperature.kelvin());
+        let (from, to) = here.fold((f64::INFINITY, f64::NEG_INFINITY), |(a, b), t| {
+            (a.min(t), b.max(t))
         });
-        if from >= to {
-            return None;
-        }
-        let band = Rect::from_x_y_ranges(Rangef::new(from, to), canvas.frame.y_range());
-        canvas.inside.rect_filled(band, CornerRadius::ZERO, color);
-        Some((band.intersect(canvas.frame), regime, color))
-    })
+        (from < to).then_some((from, to, regime, color))
+    };
+    let regimes = [
+        (Regime::Frozen, palette.frozen),
+        (Regime::Supercritical, palette.supercritical),
+    ];
+    let bands: Vec<Band> = regimes.into_iter().filter_map(of).collect();
+    for (from, to, _, color) in &bands {
+        items.upright_band(*from, *to, items.veil(*color));
+    }
+    bands
 }
 
-pub(super) fn name_bands(
-    canvas: &Canvas<'_>,
-    bands: &[Option<(Rect, Regime, Color32)>],
-    taken: &mut Taken,
-) {
-    for (band, regime, color) in bands.iter().flatten() {
+pub(super) fn name_bands(canvas: &Canvas<'_>, bands: &[Band], taken: &mut Taken) {
+    for (from, to, regime, color) in bands {
+        let across = Rangef::new(canvas.x.px(*from), canvas.x.px(*to));
+        let band = Rect::from_x_y_ranges(across, canvas.frame.y_range()).intersect(canvas.frame);
         let text = words::regime(*regime).to_owned();
         let galley =
             canvas

@@ -1,17 +1,21 @@
 //! Pressure over temperature: the saturation line, the sealed unit that leaves it,
 //! and what the weakest wall bears.
 
-use eframe::egui::{Align2, Color32, Pos2, Rect, Stroke, Ui, pos2, vec2};
+use eframe::egui::{Align2, Pos2, Stroke, Ui, vec2};
+use egui_plot::LineStyle;
 
 use super::axis::{Home, Scale};
-use super::canvas::{Canvas, Margins};
+use super::canvas::{Canvas, Side};
 use super::grip::scrub_line;
-use super::gutter::{EndLabel, widest};
+use super::gutter::{name_line, widest};
+use super::items::{Items, Run};
 use super::labels::Taken;
-use super::over_temperature::{mark_event, name_bands, paint_conditions, regime_bands};
-use super::pressure_lines::{Lines, upward};
+use super::over_temperature::{
+    lay_conditions, lay_regimes, mark_event, name_bands, name_conditions, temperature_side,
+};
+use super::pressure_lines::{limit_runs, path_runs, upward};
 use super::{Picture, PlotState, PressureScale, header_ui, missing_ui, say, table};
-use crate::assess::{Assessment, Charts, LimitPoint};
+use crate::assess::{Assessment, Charts};
 use crate::design::Design;
 use crate::fluid::Regime;
 use crate::ui::theme::Palette;
@@ -85,72 +89,69 @@ fn plot_ui(
         "burst",
         across_name.as_str(),
     ];
-    let margins = Margins {
-        left: 56.0,
-        right: widest(ui, names) + 22.0,
-        top: 24.0,
-        bottom: 24.0,
+    let mut items = Items::new(across, up, palette.ground);
+    let bands = lay_regimes(&mut items, charts, palette);
+    lay_conditions(&mut items, design, palette);
+    let saturation = limit_runs(charts, |point| point.saturation);
+    let frozen = path_runs(charts, |state| state.regime == Regime::Frozen);
+    let path = path_runs(charts, |state| state.regime != Regime::Frozen);
+    let allowable = limit_runs(charts, |point| point.allowable);
+    let burst = limit_runs(charts, |point| point.burst);
+    // A rail and what runs on it: the unit's line stays visible where both are one.
+    let rail = Stroke::new(6.0, palette.saturation.gamma_multiply(0.45));
+    let dots = |spacing| LineStyle::Dotted { spacing };
+    for (runs, stroke, style) in [
+        (&saturation, rail, LineStyle::Solid),
+        (&frozen, Stroke::new(1.2, palette.path), dots(6.0)),
+        (&path, Stroke::new(2.5, palette.path), LineStyle::Solid),
+        (
+            &allowable,
+            Stroke::new(2.0, palette.allowable),
+            LineStyle::Dashed { length: 8.0 },
+        ),
+        (&burst, Stroke::new(1.2, palette.burst), dots(5.0)),
+    ] {
+        runs.iter().for_each(|run| items.line(run, stroke, style));
+    }
+    let level = temperature_side(degree, &across_name, *scrubber);
+    let upright_name = format!("{} abs", pressure.symbol);
+    let upright = Side {
+        unit: pressure,
+        name: &upright_name,
+        spacing: 26.0,
+        away: 0.0,
+        margin: 56.0,
+        tag: None,
     };
-    let mut canvas = Canvas::new(ui, (across, up), margins, &mut state.pressure_view, palette);
+    let right = widest(ui, names) + 22.0;
+    let view = &mut state.pressure_view;
+    let canvas = Canvas::show(ui, items, (level, upright), right, view, palette);
     if canvas.to_enlarge {
         state.toggle_enlarged(Picture::Pressure);
     }
     canvas.describe(|| sentence(design, a, units));
-    canvas.leave_room(true, scrubber.kelvin());
-    let bands = regime_bands(&canvas, charts);
-    canvas.y_axis(pressure, &format!("{} abs", pressure.symbol), 26.0);
-    canvas.x_axis(degree, &across_name, 0.0);
-    paint_conditions(&canvas, design, units);
-    let mut ends = Vec::new();
-    let mut taken = Taken::default();
-    let lines = Lines {
-        canvas: &canvas,
-        charts,
-    };
-    let of = |pick: fn(&LimitPoint) -> Option<Pressure>| lines.runs(pick);
-    let mut end = |runs: &[Vec<Pos2>], text: &str, color: Color32, taken: &mut Taken| {
-        name_line(&canvas, runs, text, color, &mut ends, taken);
-    };
-    // A rail and what runs on it: the unit's line stays visible where both are one.
-    let saturation = of(|point| point.saturation);
-    for run in &saturation {
-        canvas.inside.line(
-            run.clone(),
-            Stroke::new(6.0, palette.saturation.gamma_multiply(0.45)),
-        );
-    }
-    let frozen = lines.path(|state| state.regime == Regime::Frozen);
-    for run in &frozen {
-        canvas.dashed(run, Stroke::new(2.0, palette.path), 3.0, 4.0);
-    }
-    let path = lines.path(|state| state.regime != Regime::Frozen);
-    for run in &path {
-        canvas
-            .inside
-            .line(run.clone(), Stroke::new(2.5, palette.path));
-    }
-    let allowable = of(|point| point.allowable);
-    for run in &allowable {
-        canvas.dashed(run, Stroke::new(2.0, palette.allowable), 8.0, 4.0);
-    }
-    let burst = of(|point| point.burst);
-    for run in &burst {
-        canvas.dashed(run, Stroke::new(2.0, palette.burst), 2.0, 4.0);
-    }
+    name_conditions(&canvas, design, units);
     scrub_line(ui, &canvas, true, units, charts.span, scrubber);
-    for run in saturation
-        .iter()
-        .chain(&path)
-        .chain(&frozen)
-        .chain(&allowable)
-        .chain(&burst)
+    let on_screen =
+        |runs: &[Run]| -> Vec<Vec<Pos2>> { runs.iter().map(|run| canvas.points(run)).collect() };
+    let [saturation, path, frozen, allowable, burst] =
+        [saturation, path, frozen, allowable, burst].map(|runs| on_screen(&runs));
+    let mut taken = Taken::default();
+    for run in [&saturation, &path, &frozen, &allowable, &burst]
+        .into_iter()
+        .flatten()
     {
         taken.keep_off(run);
     }
-    end(&saturation, "saturation", palette.saturation, &mut taken);
-    end(&path, "this unit", palette.path, &mut taken);
-    end(&allowable, "allowable", palette.allowable, &mut taken);
-    end(&burst, "burst", palette.burst, &mut taken);
+    let mut ends = Vec::new();
+    for (runs, text, color) in [
+        (&saturation, "saturation", palette.saturation),
+        (&path, "this unit", palette.path),
+        (&allowable, "allowable", palette.allowable),
+        (&burst, "burst", palette.burst),
+    ] {
+        name_line(&canvas, runs, text, color, &mut ends, &mut taken);
+    }
     paint_events(&canvas, a, units, &mut taken);
     name_bands(&canvas, &bands, &mut taken);
     paint_unknown(&canvas, (design, a), &up, units, &mut taken);
@@ -168,48 +169,6 @@ fn plot_ui(
             pointer,
             &format!("at {}: {text}", say::temperature(at, units)),
         );
-    }
-}
-
-/// A line's name: in the gutter where it reaches it, else where it leaves the frame.
-fn name_line(
-    canvas: &Canvas<'_>,
-    runs: &[Vec<Pos2>],
-    text: &str,
-    color: Color32,
-    ends: &mut Vec<EndLabel>,
-    taken: &mut Taken,
-) {
-    let frame = canvas.frame;
-    let Some(last) = runs
-        .iter()
-        .flatten()
-        .rfind(|p| frame.expand(0.5).contains(**p))
-    else {
-        return;
-    };
-    if last.x >= frame.right() - 14.0 {
-        ends.push(EndLabel {
-            y: last.y,
-            text: text.to_owned(),
-            color,
-        });
-        return;
-    }
-    let galley = canvas.galley(text, color);
-    let size = galley.size();
-    let places = [
-        pos2(last.x + 6.0, last.y + 4.0),
-        pos2(last.x + 8.0, last.y - size.y - 4.0),
-        pos2(last.x - size.x - 8.0, last.y + 4.0),
-        pos2(last.x - size.x - 8.0, last.y - size.y - 4.0),
-        pos2(last.x - size.x - 8.0, last.y + 20.0),
-    ];
-    if let Some(rect) = taken.first_free(
-        places.map(|at| Rect::from_min_size(at, size)),
-        frame.shrink(2.0),
-    ) {
-        canvas.backed(rect, galley, canvas.palette.ground.gamma_multiply(0.85));
     }
 }
 

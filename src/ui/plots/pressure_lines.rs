@@ -1,10 +1,8 @@
 //! What the pressure picture draws: its range, and its lines as points.
 
-use eframe::egui::Pos2;
-
 use super::PressureScale;
 use super::axis::{Home, Scale};
-use super::canvas::Canvas;
+use super::items::Run;
 use crate::assess::{Assessment, Charts, LimitPoint};
 use crate::design::Design;
 use crate::fluid::State;
@@ -93,47 +91,29 @@ pub(super) fn upward(
     }
 }
 
-/// The lines as runs of points; a run ends where a value is not known.
-pub(super) struct Lines<'a> {
-    pub canvas: &'a Canvas<'a>,
-    pub charts: &'a Charts,
+/// One line over temperature as runs of points; a run ends where a value is not known.
+pub(super) fn limit_runs(charts: &Charts, pick: fn(&LimitPoint) -> Option<Pressure>) -> Vec<Run> {
+    runs(charts.limits.iter().map(|p| (p.temperature, pick(p))))
 }
 
-impl Lines<'_> {
-    pub fn runs(&self, pick: fn(&LimitPoint) -> Option<Pressure>) -> Vec<Vec<Pos2>> {
-        let points = self.charts.limits.iter().map(|p| (p.temperature, pick(p)));
-        self.collect(points)
-    }
+/// The unit's own line, as far as its states are such.
+pub(super) fn path_runs(charts: &Charts, which: fn(&State) -> bool) -> Vec<Run> {
+    let pressure = |p: &PathPoint| {
+        let state = p.state.as_ref().ok().filter(|state| which(state))?;
+        Some(state.pressure)
+    };
+    runs(charts.path.iter().map(|p| (p.temperature, pressure(p))))
+}
 
-    pub fn path(&self, which: fn(&State) -> bool) -> Vec<Vec<Pos2>> {
-        let pressure = |p: &PathPoint| {
-            p.state
-                .as_ref()
-                .ok()
-                .filter(|state| which(state))
-                .map(|state| state.pressure)
-        };
-        let points = self
-            .charts
-            .path
-            .iter()
-            .map(|p| (p.temperature, pressure(p)));
-        self.collect(points)
-    }
-
-    fn collect(
-        &self,
-        points: impl Iterator<Item = (Temperature, Option<Pressure>)>,
-    ) -> Vec<Vec<Pos2>> {
-        let mut runs = vec![Vec::new()];
-        for (temperature, pressure) in points {
-            match (pressure, runs.last_mut()) {
-                (Some(p), Some(run)) => run.push(self.canvas.at(temperature.kelvin(), p.pascal())),
-                (None, Some(run)) if !run.is_empty() => runs.push(Vec::new()),
-                _ => {}
-            }
+fn runs(points: impl Iterator<Item = (Temperature, Option<Pressure>)>) -> Vec<Run> {
+    let mut runs = vec![Run::new()];
+    for (temperature, pressure) in points {
+        match (pressure, runs.last_mut()) {
+            (Some(p), Some(run)) => run.push([temperature.kelvin(), p.pascal()]),
+            (None, Some(run)) if !run.is_empty() => runs.push(Run::new()),
+            _ => {}
         }
-        runs.retain(|run| run.len() > 1);
-        runs
     }
+    runs.retain(|run| run.len() > 1);
+    runs
 }

@@ -80,7 +80,7 @@ fn slider_ui(
         low: span.0.kelvin(),
         high: span.1.kelvin(),
     };
-    let axis = Axis::new(home, (0.0, 1.0), (rail.min, rail.max));
+    let axis = Axis::rail(home, rail);
     let degree = units.unit_for(Kind::Temperature, span.1.kelvin());
     let number = |t: Temperature| degree.number_of(t.kelvin());
 

@@ -1,6 +1,8 @@
-//! Zoom and pan of a picture.
+//! Which part of a picture is in sight.
 
-use eframe::egui::{Pos2, Rect, Response, Ui, Vec2};
+use egui_plot::PlotBounds;
+
+use super::axis::Home;
 
 /// The part of the whole that is in sight, as shares of it: it outlives a change of
 /// unit and of design.
@@ -19,41 +21,51 @@ impl Default for View {
     }
 }
 
-/// Ctrl and the wheel, or two fingers, zoom around the pointer; a zoomed picture can
-/// be dragged; a double click shows all of it again. True where a double click found
-/// all of it shown already.
-pub(super) fn turn_view(ui: &Ui, response: &Response, frame: Rect, view: &mut View) -> bool {
-    if response.double_clicked() {
-        return std::mem::take(view) == View::default();
+impl View {
+    pub fn bounds(&self, x: &Home, y: &Home) -> PlotBounds {
+        let part = |home: &Home, share: f64| {
+            let (low, high) = home.ends();
+            low + share * (high - low)
+        };
+        PlotBounds::from_min_max(
+            [part(x, self.x.0), part(y, self.y.0)],
+            [part(x, self.x.1), part(y, self.y.1)],
+        )
     }
-    let share = |at: Pos2| {
-        let across = f64::from((at.x - frame.left()) / frame.width());
-        let up = f64::from((frame.bottom() - at.y) / frame.height());
-        (across, up)
-    };
-    let zoom = f64::from(ui.input(|i| i.zoom_delta()));
-    if zoom != 1.0
-        && let Some(at) = response.hover_pos()
-    {
-        let (across, up) = share(at);
-        view.x = zoomed(view.x, zoom, across);
-        view.y = zoomed(view.y, zoom, up);
+
+    /// The view that a plot was zoomed or dragged to, brought back into the whole.
+    pub fn of(bounds: &PlotBounds, x: &Home, y: &Home) -> Self {
+        let share = |home: &Home, axis: usize| {
+            let (low, high) = home.ends();
+            let (from, to) = (bounds.min()[axis], bounds.max()[axis]);
+            let width = ((to - from) / (high - low)).clamp(0.005, 1.0);
+            let from = ((from - low) / (high - low)).clamp(0.0, 1.0 - width);
+            (from, from + width)
+        };
+        Self {
+            x: share(x, 0),
+            y: share(y, 1),
+        }
     }
-    if response.dragged() {
-        let by: Vec2 = response.drag_delta() / frame.size();
-        view.x = shifted(view.x, -f64::from(by.x));
-        view.y = shifted(view.y, f64::from(by.y));
-    }
-    false
 }
 
-fn zoomed((from, to): (f64, f64), by: f64, around: f64) -> (f64, f64) {
-    let width = ((to - from) / by).clamp(0.005, 1.0);
-    let from = (from + around * (to - from - width)).clamp(0.0, 1.0 - width);
-    (from, from + width)
-}
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::ui::plots::axis::Scale;
 
-fn shifted((from, to): (f64, f64), by: f64) -> (f64, f64) {
-    let by = (by * (to - from)).clamp(-from, 1.0 - to);
-    (from + by, to + by)
+    #[test]
+    fn a_view_moved_out_of_the_whole_or_too_deep_comes_back() {
+        let home = Home {
+            scale: Scale::Linear,
+            low: 100.0,
+            high: 300.0,
+        };
+        let view = |min, max| View::of(&PlotBounds::from_min_max(min, max), &home, &home);
+        assert_eq!(view([0.0, 90.0], [400.0, 310.0]), View::default());
+        let moved = view([50.0, 250.0], [150.0, 350.0]);
+        assert_eq!((moved.x, moved.y), ((0.0, 0.5), (0.5, 1.0)));
+        let deep = view([200.0, 200.0], [200.1, 200.1]);
+        assert!((deep.x.1 - deep.x.0 - 0.005).abs() < 1e-12, "{deep:?}");
+    }
 }
