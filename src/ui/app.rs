@@ -32,7 +32,6 @@ pub struct App {
     pub(super) orders: Vec<Command>,
     /// The user has agreed to close; the next close request goes through.
     pub(super) closing: bool,
-    themed: bool,
     title: String,
 }
 
@@ -50,10 +49,11 @@ impl App {
             notice: None,
             orders: Vec::new(),
             closing: false,
-            themed: false,
             title: String::new(),
             folder,
         };
+        // Before the first frame: fonts set later would be laid out twice.
+        theme::apply(ctx, app.settings.theme);
         ctx.set_zoom_factor(app.settings.zoom);
         app.desk.start_watching(ctx);
         if let Some(path) = path {
@@ -78,9 +78,6 @@ impl App {
     /// Draws one frame into the whole window.
     pub fn frame_ui(&mut self, ui: &mut Ui) {
         let ctx = ui.ctx().clone();
-        if !std::mem::replace(&mut self.themed, true) {
-            theme::apply(&ctx, self.settings.theme);
-        }
         self.keys(&ctx);
         self.dropped_files(&ctx);
         self.close_requests(&ctx);

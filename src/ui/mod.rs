@@ -17,5 +17,5 @@ pub use app::App;
 pub use command::Command;
 pub use desk::{Desk, Draft};
 pub use settings::Settings;
-pub use start::open;
+pub use start::{open, warm_up};
 pub use theme::{Palette, Theme};

@@ -8,6 +8,8 @@ use std::sync::atomic::{AtomicBool, Ordering};
 use eframe::egui::{self, ViewportBuilder};
 
 use super::app::App;
+use super::orders::first_design;
+use crate::assess::{Library, assess};
 use crate::store;
 
 /// Set once the window's toolkit has started: a panic after it is ours.
@@ -18,6 +20,7 @@ pub fn open(design: Option<PathBuf>) -> ExitCode {
     if !has_display() {
         return refuse("there is no display");
     }
+    warm_up();
     let options = eframe::NativeOptions {
         viewport: ViewportBuilder::default()
             .with_title("Chargewright")
@@ -53,6 +56,12 @@ pub fn open(design: Option<PathBuf>) -> ExitCode {
         }
         Err(why) => refuse(&format!("the window cannot be opened: {why}")),
     }
+}
+
+/// Assesses the first design on another thread: the window and its driver take longer
+/// to open than that, and a fluid's expansions are kept once they are made.
+pub fn warm_up() {
+    std::thread::spawn(|| drop(assess(&first_design(), &Library::built_in())));
 }
 
 /// Runs the window. Its toolkit panics where a library of the system is missing

@@ -38,7 +38,10 @@ fn main() -> ExitCode {
     let arguments: Vec<String> = env::args().skip(1).collect();
     let arguments: Vec<&str> = arguments.iter().map(String::as_str).collect();
     match arguments[..] {
-        ["app"] => open(start, false, app),
+        ["app"] => {
+            chargewright::ui::warm_up(); // as src/ui/start.rs does
+            open(start, false, app)
+        }
         ["bare"] => open(start, false, |_| Content::Bare),
         ["app", "--idle"] => open(start, true, app),
         ["bare", "--idle"] => open(start, true, |_| Content::Bare),

@@ -1,11 +1,11 @@
 //! The fluid picker: search, facts, choice.
 
-use eframe::egui::{Align, Grid, RichText, Role, ScrollArea, TextEdit, Ui, WidgetInfo};
+use eframe::egui::{Align, RichText, Role, ScrollArea, TextEdit, Ui, WidgetInfo};
 
+use super::section::fact_ui;
 use crate::assess::{Assessment, Library};
 use crate::design::{Design, FluidId};
 use crate::fluid::Fluid;
-use crate::ui::theme::Palette;
 
 /// View-only state of the picker.
 #[derive(Debug, Default)]
@@ -69,40 +69,24 @@ pub fn fluid_ui(
 }
 
 fn facts_ui(ui: &mut Ui, fluid: &Fluid) {
-    let faint = Palette::in_use(ui).text_faint;
+    const LABELS: f32 = 76.0;
     ui.add_space(4.0);
-    Grid::new("fluid facts")
-        .num_columns(2)
-        .spacing([10.0, 2.0])
-        .show(ui, |ui| {
-            let mut row = |what: &str, value: String, hover: Option<String>| {
-                ui.label(RichText::new(what).color(faint));
-                let label = ui.label(value);
-                if let Some(hover) = hover {
-                    label.on_hover_text(hover);
-                }
-                ui.end_row();
-            };
-            row("CAS", fluid.cas().to_owned(), None);
-            row("Formula", fluid.formula().to_owned(), None);
-            if let Some(number) = fluid.refrigerant() {
-                let group = fluid.safety().group.as_ref();
-                let text = group.map_or_else(
-                    || number.to_owned(),
-                    |group| format!("{number}, group {}", group.value),
-                );
-                row(
-                    "Refrigerant",
-                    text,
-                    group.map(|group| group.source.to_string()),
-                );
-            }
-            row(
-                "Model",
-                fluid.model_kind().to_owned(),
-                Some(fluid.model_sources().join("\n")),
-            );
-        });
+    fact_ui(ui, LABELS, "CAS", fluid.cas());
+    fact_ui(ui, LABELS, "Formula", fluid.formula());
+    if let Some(number) = fluid.refrigerant() {
+        let group = fluid.safety().group.as_ref();
+        let text = group.map_or_else(
+            || number.to_owned(),
+            |group| format!("{number}, group {}", group.value),
+        );
+        let row = fact_ui(ui, LABELS, "Refrigerant", &text);
+        if let Some(group) = group {
+            row.on_hover_text(group.source.to_string());
+        }
+    }
+    fact_ui(ui, LABELS, "Model", fluid.model_kind()).on_hover_ui(|ui| {
+        ui.label(fluid.model_sources().join("\n"));
+    });
 }
 
 /// What it does to people, in a few words.

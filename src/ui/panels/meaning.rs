@@ -1,9 +1,9 @@
 //! The right column: the verdict, the window, the worst case, the findings.
 
-use eframe::egui::{Grid, RichText, Ui};
+use eframe::egui::{RichText, Ui};
 
 use super::findings::findings_ui;
-use super::section::{column_ui, subheading_ui};
+use super::section::{column_ui, fact_ui, subheading_ui};
 use crate::assess::{Assessment, Missing, Window};
 use crate::design::Design;
 use crate::ui::command::Command;
@@ -101,54 +101,44 @@ fn worst_ui(ui: &mut Ui, a: &Assessment, units: &Units) {
             return;
         }
     };
-    let faint = Palette::in_use(ui).text_faint;
-    Grid::new("worst case")
-        .num_columns(2)
-        .spacing([10.0, 3.0])
-        .show(ui, |ui| {
-            let mut row = |what: &str, value: String| {
-                ui.label(RichText::new(what).color(faint));
-                ui.label(value);
-                ui.end_row();
-            };
-            row(
-                "Governing",
-                format!(
-                    "{}, {}",
-                    units.show(case.temperature),
-                    words::regime(case.state.regime)
-                ),
-            );
-            row("Pressure", format!("{} abs", units.show(case.pressure)));
-            match &case.weakest {
-                Ok(weakest) => {
-                    row("Weakest part", weakest.name.to_string());
-                    row("Allowable load", units.show(weakest.allowable.pressure));
-                    let times = |share: &Result<f64, Missing>| match share {
-                        Ok(share) if *share > 0.0 => {
-                            format!("{} times the load", figures(1.0 / share, 3))
-                        }
-                        Ok(_) => "no load".to_owned(),
-                        Err(_) => "–".to_owned(),
-                    };
-                    row("Margin", times(&case.of_allowable));
-                    match &weakest.burst {
-                        Ok(burst) => row(
-                            "Burst load",
-                            format!("{}, {}", units.show(*burst), times(&case.of_burst)),
-                        ),
-                        Err(_) => row("Burst load", "not known there".to_owned()),
-                    }
+    let mut row = |what: &str, value: String| drop(fact_ui(ui, 96.0, what, &value));
+    row(
+        "Governing",
+        format!(
+            "{}, {}",
+            units.show(case.temperature),
+            words::regime(case.state.regime)
+        ),
+    );
+    row("Pressure", format!("{} abs", units.show(case.pressure)));
+    match &case.weakest {
+        Ok(weakest) => {
+            row("Weakest part", weakest.name.to_string());
+            row("Allowable load", units.show(weakest.allowable.pressure));
+            let times = |share: &Result<f64, Missing>| match share {
+                Ok(share) if *share > 0.0 => {
+                    format!("{} times the load", figures(1.0 / share, 3))
                 }
-                Err(_) => row("Weakest part", "not known".to_owned()),
+                Ok(_) => "no load".to_owned(),
+                Err(_) => "–".to_owned(),
+            };
+            row("Margin", times(&case.of_allowable));
+            match &weakest.burst {
+                Ok(burst) => row(
+                    "Burst load",
+                    format!("{}, {}", units.show(*burst), times(&case.of_burst)),
+                ),
+                Err(_) => row("Burst load", "not known there".to_owned()),
             }
-            if let Ok(Some(at)) = &a.heaviest_full_at {
-                row("Liquid-full", format!("at {}", units.show(*at)));
-            }
-            if let Ok(Some(at)) = &a.lightest_dry_at {
-                row("Dry", format!("at {}", units.show(*at)));
-            }
-        });
+        }
+        Err(_) => row("Weakest part", "not known".to_owned()),
+    }
+    if let Ok(Some(at)) = &a.heaviest_full_at {
+        row("Liquid-full", format!("at {}", units.show(*at)));
+    }
+    if let Ok(Some(at)) = &a.lightest_dry_at {
+        row("Dry", format!("at {}", units.show(*at)));
+    }
 }
 
 fn cautions_ui(ui: &mut Ui) {

@@ -134,3 +134,20 @@ pub fn subheading_ui(ui: &mut Ui, text: &str) {
             .color(Palette::in_use(ui).text_faint),
     );
 }
+
+/// A label and its value in two columns; a long value wraps in its own. Unlike a grid
+/// it is laid out in one pass, also in the first frame.
+pub fn fact_ui(ui: &mut Ui, label_width: f32, label: &str, value: &str) -> egui::Response {
+    let row = ui.horizontal_top(|ui| {
+        let height = ui.text_style_height(&TextStyle::Body);
+        let layout = egui::Layout::left_to_right(Align::Min);
+        ui.allocate_ui_with_layout(vec2(label_width, height), layout, |ui| {
+            ui.set_min_width(label_width);
+            ui.label(RichText::new(label).color(Palette::in_use(ui).text_faint));
+        });
+        ui.add(egui::Label::new(value).wrap())
+    });
+    // Rows of one list stand closer than separate things do.
+    ui.add_space(3.0 - ui.spacing().item_spacing.y);
+    row.inner
+}
