@@ -1,7 +1,7 @@
 //! Working fluids: two kinds of model behind one interface.
 //!
 //! [`Fluid`] is the door. A fluid is data (`assets/fluids/*.ron`), read by
-//! [`asset`], evaluated by [`helmholtz`] or [`correlated`], and looked up in the
+//! `asset`, evaluated by [`helmholtz`] or [`correlated`], and looked up in the
 //! [`Catalog`].
 
 mod asset;

@@ -194,6 +194,10 @@ impl App {
             if let Some(keys) = command.shortcut()
                 && ctx.input_mut(|i| i.consume_shortcut(&keys))
             {
+                // A value half typed counts: its field takes it as it loses the focus.
+                if let Some(field) = ctx.memory(egui::Memory::focused) {
+                    ctx.memory_mut(|memory| memory.surrender_focus(field));
+                }
                 self.orders.push(command);
             }
         }

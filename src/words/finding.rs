@@ -212,7 +212,7 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
         ),
         FindingKind::NoHazardLimits => say(
             "No hazard figures",
-            "No exposure limit is recorded for this fluid. Not known is not harmless.".to_owned(),
+            "The fluid is classed as harmful, yet no exposure limit is recorded. Not known is not harmless.".to_owned(),
         ),
         FindingKind::BrittleGlass { part } => say(
             "Brittle glass",

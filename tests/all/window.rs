@@ -435,3 +435,22 @@ fn a_finding_leads_to_its_section_and_its_remedy_mends_it() {
     harness.run();
     assert!(harness.query_by_label_contains("Not fit").is_none());
 }
+
+#[test]
+fn a_value_half_typed_is_saved_too() {
+    let folder = Folder::new("half");
+    let path = preset(&folder, "copper-water-heat-pipe");
+    let mut harness = window(Some(&path), None);
+    harness
+        .get_by_role_and_label(Role::TextInput, "Hottest")
+        .click();
+    harness.run();
+    harness
+        .get_by_role_and_label(Role::TextInput, "Hottest")
+        .type_text("105");
+    harness.run();
+    harness.key_press_modifiers(Modifiers::COMMAND, Key::S);
+    harness.run();
+    let saved = store::load(&path).expect("saved");
+    assert!((saved.conditions.hottest.celsius() - 105.0).abs() < 1e-9);
+}

@@ -173,12 +173,13 @@ impl Judge<'_> {
             };
             self.add(Severity::Note, Section::Room, kind);
         }
-        if limit.is_none()
-            && dangerous.is_none()
-            && safety.statements.value.is_empty()
-            && self.a.fluid.id() != "water"
-        {
-            self.add(Severity::Note, Section::Fluid, FindingKind::NoHazardLimits);
+        let harmful = safety.is_toxic() || safety.is_corrosive();
+        if harmful && limit.is_none() && dangerous.is_none() {
+            self.add(
+                Severity::Warning,
+                Section::Fluid,
+                FindingKind::NoHazardLimits,
+            );
         }
     }
 

@@ -1,6 +1,6 @@
 //! The right column: the verdict, the window, the worst case, the findings.
 
-use eframe::egui::{RichText, Ui};
+use eframe::egui::{Frame, Panel, RichText, Ui};
 
 use super::findings::findings_ui;
 use super::section::{column_ui, fact_ui, subheading_ui};
@@ -22,12 +22,15 @@ pub fn meaning_ui(
 ) {
     verdict_badge(ui, Badge::from(a.verdict), words::verdict(a.verdict));
     ui.add_space(4.0);
+    Panel::bottom("care")
+        .frame(Frame::NONE)
+        .resizable(false)
+        .show(ui, cautions_ui);
     column_ui(ui, "meaning", |ui| {
         charge_ui(ui, design, a, units);
         worst_ui(ui, a, units);
         subheading_ui(ui, "Findings, worst first");
         findings_ui(ui, &a.findings, &design.chamber, units, out);
-        cautions_ui(ui);
     });
 }
 
@@ -141,10 +144,12 @@ fn worst_ui(ui: &mut Ui, a: &Assessment, units: &Units) {
     }
 }
 
+/// Always in sight: they cannot be scrolled or clicked away.
 fn cautions_ui(ui: &mut Ui) {
     let faint = Palette::in_use(ui).text_faint;
+    ui.spacing_mut().item_spacing.y = 1.0;
+    ui.add_space(4.0);
     for caution in words::CAUTIONS {
-        ui.label(RichText::new(*caution).color(faint));
-        ui.add_space(2.0);
+        ui.label(RichText::new(*caution).small().color(faint));
     }
 }
