@@ -73,6 +73,11 @@ pub enum FindingKind {
         needed: f64,
         temperature: Temperature,
     },
+    /// Under outside pressure a wall can collapse; that is not computed here.
+    CollapseNotJudged {
+        inside: Pressure,
+        outside: Pressure,
+    },
     /// Above the critical temperature ullage means nothing; the pressure governs.
     AboveCritical {
         hottest: Temperature,

@@ -105,15 +105,9 @@ fn window_rows(page: &mut Page, a: &Assessment, units: &Units) {
             Side::AtMost => window.upper.as_ref(),
         };
         bound.map(|bound| {
-            let down = side == Side::AtMost;
-            let careful = if down {
-                careful_down(bound.mass.kilogram(), 4)
-            } else {
-                careful_up(bound.mass.kilogram(), 4)
-            };
             format!(
                 "{} ({}, {})",
-                units.show_si(Kind::Mass, careful, 4),
+                words::bound_mass(bound, units),
                 words::requirement(bound.requirement),
                 units.show(bound.temperature)
             )

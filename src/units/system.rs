@@ -2,7 +2,7 @@
 
 use serde::{Deserialize, Serialize};
 
-use super::format::figures;
+use super::format::{careful_down, careful_up, figures};
 use super::quantity::Quantity;
 use super::unit::{Kind, Unit, unit_named};
 
@@ -106,6 +106,24 @@ impl Units {
         self.show_si(Q::KIND, quantity.si(), digits)
     }
 
+    /// A quantity with its unit, the last of `digits` figures rounded down or up and never
+    /// to the nearest: an end of a range, told so that it lies inside.
+    pub fn show_careful<Q: Quantity>(&self, quantity: Q, digits: i32, down: bool) -> String {
+        let unit = self.unit_for(Q::KIND, quantity.si());
+        let number = unit.number_of(quantity.si());
+        let number = if down {
+            careful_down(number, digits)
+        } else {
+            careful_up(number, digits)
+        };
+        let text = figures(number, digits.unsigned_abs() as usize);
+        if unit.symbol.is_empty() {
+            text
+        } else {
+            format!("{text}{NBSP}{}", unit.symbol)
+        }
+    }
+
     /// A quantity with its unit, to four significant figures.
     pub fn show<Q: Quantity>(&self, quantity: Q) -> String {
         self.show_to(quantity, 4)
@@ -126,6 +144,10 @@ mod tests {
         let warm = Temperature::from_kelvin(273.15).expect("temperature");
         assert_eq!(metric.show(warm), "0.0\u{a0}°C");
         assert_eq!(inch.show(warm), "32.0\u{a0}°F");
+        let mass = Mass::from_kilogram(18.3757e-3).expect("mass");
+        assert_eq!(metric.show_careful(mass, 4, true), "18.37\u{a0}g");
+        assert_eq!(metric.show_careful(mass, 4, false), "18.38\u{a0}g");
+        assert_eq!(inch.show_careful(mass, 4, true), "0.6481\u{a0}oz");
         let p = Pressure::from_pascal(58_700.0).expect("pressure");
         assert_eq!(metric.show(p), "0.5870\u{a0}bar");
     }

@@ -100,6 +100,15 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
             ),
         )
         .try_this("Less charge or more volume."),
+        FindingKind::CollapseNotJudged { inside, outside } => say(
+            "Collapse not judged",
+            format!(
+                "In the cold the inside stands at {} abs or less, the outside at {} abs. Whether the wall bears that is not computed here.",
+                units.show_to(*inside, 3),
+                units.show_to(*outside, 3)
+            ),
+        )
+        .try_this("Check the walls under outside pressure, also evacuated and hot in the bake-out."),
         FindingKind::AboveCritical { hottest, critical } => say(
             "Above the critical temperature",
             format!(

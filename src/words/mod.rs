@@ -8,9 +8,10 @@ mod missing;
 pub use finding::{Said, finding};
 pub use missing::{chamber_fault, condition_fault, missing};
 
-use crate::assess::{EventKind, Requirement, Severity, Verdict};
+use crate::assess::{Bound, EventKind, Requirement, Severity, Side, Verdict};
 use crate::chamber::AllowableBasis;
 use crate::fluid::Regime;
+use crate::units::Units;
 
 /// The care that is always said.
 pub const CAUTIONS: &[&str] = &[
@@ -48,6 +49,11 @@ pub const fn requirement(requirement: Requirement) -> &'static str {
         Requirement::FrozenVolume => "room for the frozen fluid",
         Requirement::AllowablePressure => "allowable pressure",
     }
+}
+
+/// A bound's mass, rounded into the window.
+pub fn bound_mass(bound: &Bound, units: &Units) -> String {
+    units.show_careful(bound.mass, 4, bound.side == Side::AtMost)
 }
 
 pub const fn event(event: EventKind) -> &'static str {

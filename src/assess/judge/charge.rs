@@ -40,6 +40,25 @@ impl Judge<'_> {
         }
     }
 
+    /// The strength of a wall under outside pressure is not computed: said wherever
+    /// there is any, which is in the cold.
+    pub(super) fn collapse(&mut self) {
+        let Ok(corners) = &self.a.corners else {
+            return;
+        };
+        let conditions = &self.design.conditions;
+        let outside = conditions.barometer;
+        if let Ok(state) = corners.nominal.state(conditions.coldest)
+            && state.pressure < outside
+        {
+            let kind = FindingKind::CollapseNotJudged {
+                inside: state.pressure,
+                outside,
+            };
+            self.add(Severity::Warning, Section::Chamber, kind);
+        }
+    }
+
     pub(super) fn liquid_full(&mut self) {
         let (Ok(corners), Ok(full_at)) = (&self.a.corners, &self.a.heaviest_full_at) else {
             return;

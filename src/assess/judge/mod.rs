@@ -20,6 +20,7 @@ pub fn findings(design: &Design, library: &Library, a: &Assessment) -> Vec<Findi
     judge.contradictions();
     judge.not_known();
     judge.pressure();
+    judge.collapse();
     judge.liquid_full();
     judge.dry_out();
     judge.freezing();

@@ -4,12 +4,12 @@ use eframe::egui::{Frame, Panel, RichText, Ui};
 
 use super::findings::findings_ui;
 use super::section::{column_ui, fact_ui, subheading_ui};
-use crate::assess::{Assessment, Missing, Window};
+use crate::assess::{Assessment, Bound, Missing, Window};
 use crate::design::Design;
 use crate::ui::command::Command;
 use crate::ui::theme::Palette;
 use crate::ui::widgets::{Badge, WindowBar, WindowBarLabels, verdict_badge, window_bar};
-use crate::units::{Kind, Units, careful_down, careful_up, figures};
+use crate::units::{Units, figures};
 use crate::words;
 
 /// Shows what it means; orders leave through `out`.
@@ -83,16 +83,11 @@ fn charge_ui(ui: &mut Ui, design: &Design, a: &Assessment, units: &Units) {
 
 /// The ends, rounded into the window.
 fn ends_text(window: &Window, units: &Units) -> (String, String) {
-    let mass = |kilogram: f64| units.show_si(Kind::Mass, kilogram, 4);
-    let low = window.lower.as_ref().map_or_else(
-        || "0".to_owned(),
-        |b| mass(careful_up(b.mass.kilogram(), 4)),
-    );
-    let high = window.upper.as_ref().map_or_else(
-        || "–".to_owned(),
-        |b| mass(careful_down(b.mass.kilogram(), 4)),
-    );
-    (low, high)
+    let told = |bound: &Option<Bound>, none: &str| match bound {
+        Some(bound) => words::bound_mass(bound, units),
+        None => none.to_owned(),
+    };
+    (told(&window.lower, "0"), told(&window.upper, "–"))
 }
 
 fn worst_ui(ui: &mut Ui, a: &Assessment, units: &Units) {

@@ -7,7 +7,7 @@ use super::canvas::Canvas;
 use super::items::{Items, Run};
 use super::labels::{Taken, place_in_area};
 use super::strip::x_at;
-use crate::assess::{Charts, MapPoint};
+use crate::assess::{Charts, LimitPoint, MapPoint};
 use crate::fluid::Fluid;
 use crate::ui::theme::Palette;
 
@@ -20,6 +20,8 @@ pub(super) struct Areas {
     /// Temperatures above which the fluid is supercritical, and below which it is frozen.
     critical: Option<f64>,
     freezing: Option<f64>,
+    /// Temperatures between which no strength of the walls is known.
+    strength_unknown: Vec<(f64, f64)>,
 }
 
 impl Areas {
@@ -37,6 +39,7 @@ impl Areas {
             critical: (critical < high && fluid.range().1.kelvin() > critical)
                 .then(|| critical.max(low)),
             freezing: (freezing > low).then(|| freezing.min(high)),
+            strength_unknown: strength_unknown(&charts.limits),
         }
     }
 
@@ -64,6 +67,16 @@ impl Areas {
                 rows,
                 palette.over_allowable.gamma_multiply(0.6),
                 Some(hatch),
+            );
+        }
+        // A question without an answer is not left blank.
+        let grey = Stroke::new(1.0, palette.text_faint.gamma_multiply(0.35));
+        for (from, to) in &self.strength_unknown {
+            let rows = [(*from, left, right), (*to, left, right)];
+            items.rows(
+                rows.into_iter(),
+                palette.text_faint.gamma_multiply(0.12),
+                Some(grey),
             );
         }
         let edge = Stroke::new(1.5, palette.saturation);
@@ -113,6 +126,12 @@ impl Areas {
             }
             false
         };
+        for (from, to) in &self.strength_unknown {
+            let (top, bottom) = (canvas.y.px(*to), canvas.y.px(*from));
+            let unknown = |y: f32| (top..=bottom).contains(&y).then_some(all);
+            let ground = palette.ground.gamma_multiply(0.85);
+            name(&["strength of the walls not known"], &unknown, ground);
+        }
         name(
             &[
                 "above allowable pressure",
@@ -135,6 +154,25 @@ impl Areas {
             point_at_vapour(canvas, &dry_out, avoid, heights, &taken);
         }
     }
+}
+
+/// Runs of temperature, in the order of the limits, in which no allowable is known.
+fn strength_unknown(limits: &[LimitPoint]) -> Vec<(f64, f64)> {
+    let mut runs: Vec<(f64, f64)> = Vec::new();
+    let mut last_known = true;
+    for point in limits {
+        let t = point.temperature.kelvin();
+        match (point.allowable, runs.last_mut()) {
+            (Some(_), _) => last_known = true,
+            (None, Some(run)) if !last_known => run.1 = t,
+            (None, _) => {
+                runs.push((t, t));
+                last_known = false;
+            }
+        }
+    }
+    runs.retain(|(from, to)| to > from);
+    runs
 }
 
 /// Beside the area of vapour alone, which is often a sliver: its name and a hair to it.

@@ -51,7 +51,7 @@ pub(super) fn bound(word: &str, bound: &Bound, units: &Units) -> String {
     let at = temperature(bound.temperature, units);
     format!(
         "{word} {}: {}, {at}",
-        units.show(bound.mass),
+        words::bound_mass(bound, units),
         words::requirement(bound.requirement)
     )
 }
