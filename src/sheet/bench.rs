@@ -27,7 +27,7 @@ pub fn weighing(page: &mut Page, design: &Design, a: &Assessment, units: &Units)
         &format!(
             "{} +/- {}",
             units.show(charge.nominal),
-            units.show_to(design.charge.tolerance, 3)
+            units.show_beside(design.charge.tolerance, charge.nominal, 3)
         ),
     );
     let balance = design.bench.balance.kilogram();

@@ -106,6 +106,18 @@ impl Units {
         self.show_si(Q::KIND, quantity.si(), digits)
     }
 
+    /// A quantity with its unit, in the unit in which `beside` is shown: a tolerance
+    /// after its nominal.
+    pub fn show_beside<Q: Quantity>(&self, quantity: Q, beside: Q, digits: usize) -> String {
+        let unit = self.unit_for(Q::KIND, beside.si());
+        let number = self.number(Q::KIND, quantity.si(), unit, digits);
+        if unit.symbol.is_empty() {
+            number
+        } else {
+            format!("{number}{NBSP}{}", unit.symbol)
+        }
+    }
+
     /// A quantity with its unit, the last of `digits` figures rounded down or up and never
     /// to the nearest: an end of a range, told so that it lies inside.
     pub fn show_careful<Q: Quantity>(&self, quantity: Q, digits: i32, down: bool) -> String {

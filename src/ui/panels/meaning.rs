@@ -45,7 +45,7 @@ fn charge_ui(ui: &mut Ui, design: &Design, a: &Assessment, units: &Units) {
     let stated = format!(
         "Charge {} ± {}",
         units.show(charge.nominal),
-        units.show_to(design.charge.tolerance, 3)
+        units.show_beside(design.charge.tolerance, charge.nominal, 3)
     );
     ui.label(RichText::new(&stated).strong());
     let Some(upper) = &window.upper else {

@@ -255,7 +255,7 @@ fn charge_in_words(design: &Design, charge: &ChargeFigures, units: &Units) -> St
     let mut text = format!(
         "{} ± {}",
         units.show(charge.nominal),
-        units.show_to(design.charge.tolerance, 2)
+        units.show_beside(design.charge.tolerance, charge.nominal, 2)
     );
     if let Ok(fill) = charge.bench_fill {
         let bench = say::temperature(design.conditions.bench, units);

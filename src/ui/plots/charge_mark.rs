@@ -190,7 +190,7 @@ pub(super) fn handle_ui(
             let text = format!(
                 "{} ± {}",
                 units.show(charge.nominal),
-                units.show_to(tolerance(charge), 2)
+                units.show_beside(tolerance(charge), charge.nominal, 2)
             );
             canvas.read_out(pos2(centre, canvas.frame.top() + 44.0), &text);
         }
