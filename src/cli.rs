@@ -95,6 +95,25 @@ pub struct Outcome {
     pub code: u8,
 }
 
+/// The arguments, or how the program ends without them: help and version are
+/// answers, anything else is refused in one line.
+///
+/// # Errors
+/// The exit code; the text has been printed.
+pub fn arguments() -> Result<Arguments, ExitCode> {
+    Arguments::try_parse().map_err(|error| {
+        if !error.use_stderr() {
+            let _ = error.print();
+            return ExitCode::SUCCESS;
+        }
+        let text = error.render().to_string();
+        let reason = text.split("\n\n").next().unwrap_or(&text);
+        let reason = one_line(reason.trim_start_matches("error: "));
+        eprintln!("chargewright: {reason}; --help lists the commands");
+        ExitCode::from(2)
+    })
+}
+
 /// Runs a headless command: exit 0 or 1 with output, or 2 with one line on stderr.
 pub fn run(command: &Headless) -> ExitCode {
     let outcome = answer(command).and_then(|outcome| print(&outcome.text).map(|()| outcome.code));
@@ -140,7 +159,7 @@ fn sheet(path: &Path, out: Option<&Path>) -> Result<Outcome, CliError> {
     let text = sheet_text(&design, name);
     match out {
         Some(out) => {
-            store::write_text(out, &text)?;
+            store::write_beside(out, &text, Some(path))?;
             Ok(Outcome {
                 text: String::new(),
                 code: 0,
@@ -306,10 +325,8 @@ fn digits(value: f64) -> String {
 }
 
 fn one_line(text: &str) -> String {
-    text.replace('\u{a0}', " ")
-        .split_whitespace()
-        .collect::<Vec<_>>()
-        .join(" ")
+    let plain = text.replace(|c: char| c.is_control() || c == '\u{a0}', " ");
+    plain.split_whitespace().collect::<Vec<_>>().join(" ")
 }
 
 /// One write; a reader that has gone away is no error.

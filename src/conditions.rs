@@ -61,6 +61,17 @@ pub enum ConditionFault {
         coldest: Temperature,
         hottest: Temperature,
     },
+    #[error("the bench is outside coldest to hottest")]
+    BenchOutsideExtremes {
+        bench: Temperature,
+        coldest: Temperature,
+        hottest: Temperature,
+    },
+    #[error("the least outside pressure is above the barometer")]
+    LeastAboveBarometer {
+        least: Pressure,
+        barometer: Pressure,
+    },
     #[error("a pressure outside the wall is below zero")]
     OutsideBelowZero { pressure: Pressure },
     #[error("the room has no volume")]
@@ -85,6 +96,19 @@ impl Conditions {
                 coldest,
                 hottest,
             });
+        }
+        let bench = self.bench;
+        if hottest >= coldest && (bench < coldest || bench > hottest) {
+            // The sealed unit stands on the bench as well.
+            faults.push(ConditionFault::BenchOutsideExtremes {
+                bench,
+                coldest,
+                hottest,
+            });
+        }
+        let (least, barometer) = (self.least_outside, self.barometer);
+        if least > barometer {
+            faults.push(ConditionFault::LeastAboveBarometer { least, barometer });
         }
         for pressure in [self.least_outside, self.barometer] {
             if pressure.pascal() < 0.0 {

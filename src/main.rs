@@ -2,14 +2,15 @@
 
 use std::process::ExitCode;
 
-use chargewright::cli::{Arguments, run};
-use clap::Parser;
+use chargewright::cli::{arguments, run};
 
 fn main() -> ExitCode {
-    let arguments = Arguments::parse();
-    match &arguments.command {
-        Some(command) => run(command),
-        None => open_window(arguments.design),
+    match arguments() {
+        Ok(arguments) => match &arguments.command {
+            Some(command) => run(command),
+            None => open_window(arguments.design),
+        },
+        Err(code) => code,
     }
 }
 

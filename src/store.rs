@@ -23,6 +23,10 @@ pub enum StoreError {
     Missing { path: PathBuf },
     #[error("{} is a folder, not a design file", path.display())]
     Folder { path: PathBuf },
+    #[error("{} is neither a file nor a folder that can be read here", path.display())]
+    NotAFile { path: PathBuf },
+    #[error("{} is the design itself: name another file", path.display())]
+    OverDesign { path: PathBuf },
     #[error("{} is {mebibytes} MiB: a design file is at most 4 MiB", path.display())]
     TooLarge { path: PathBuf, mebibytes: u64 },
     #[error("{} is not text", path.display())]
@@ -199,6 +203,10 @@ fn read_text(path: &Path) -> Result<String, StoreError> {
     if metadata.is_dir() {
         return Err(StoreError::Folder { path: named() });
     }
+    if !metadata.is_file() {
+        // A pipe would keep us waiting, a device would never end.
+        return Err(StoreError::NotAFile { path: named() });
+    }
     let too_large = |bytes: u64| StoreError::TooLarge {
         path: named(),
         // Rounded up: just above the limit it does not read as allowed.
@@ -208,7 +216,7 @@ fn read_text(path: &Path) -> Result<String, StoreError> {
         return Err(too_large(metadata.len()));
     }
     let mut bytes = Vec::new();
-    // A pipe or a file that grows has no length to trust: read one byte more than allowed.
+    // A file that grows has no length to trust: read one byte more than allowed.
     let file = File::open(path).map_err(failed)?;
     file.take(LARGEST_BYTES + 1)
         .read_to_end(&mut bytes)
@@ -225,6 +233,23 @@ fn read_text(path: &Path) -> Result<String, StoreError> {
 /// [`StoreError::Write`]; the file that was there is still whole.
 pub fn save(path: &Path, design: &Design) -> Result<(), StoreError> {
     write_text(path, &to_text(design))
+}
+
+/// Writes a text that must not take the place of the design it was made from, links
+/// followed.
+///
+/// # Errors
+/// [`StoreError::OverDesign`], or as [`write_text`].
+pub fn write_beside(path: &Path, text: &str, design: Option<&Path>) -> Result<(), StoreError> {
+    let real = |path: &Path| fs::canonicalize(path).ok();
+    if let (Some(target), Some(design)) = (real(path), design.and_then(real))
+        && target == design
+    {
+        return Err(StoreError::OverDesign {
+            path: path.to_owned(),
+        });
+    }
+    write_text(path, text)
 }
 
 /// Writes a text file at once or not at all: a temporary file in the same folder is

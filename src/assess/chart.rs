@@ -77,6 +77,7 @@ pub fn charts(
     span: (Temperature, Temperature),
     kinks: &[Temperature],
     walls: &Walls<'_>,
+    window_end: Option<Mass>,
 ) -> Charts {
     let fluid = unit.fluid();
     let map = charge_map(fluid, unit.volume(), span, walls);
@@ -84,6 +85,7 @@ pub fn charts(
         .liquid_full
         .iter()
         .map(|point| point.mass.kilogram())
+        .chain(window_end.map(Mass::kilogram))
         .fold(unit.mass().kilogram(), f64::max);
     Charts {
         span,

@@ -73,6 +73,25 @@ pub enum FindingKind {
         needed: f64,
         temperature: Temperature,
     },
+    /// The allowable rests on a strength that is known only where it is cooler.
+    StrengthKnownCooler {
+        part: String,
+        temperature: Temperature,
+    },
+    /// A unit could be empty.
+    ToleranceLargerThanCharge {
+        tolerance: Mass,
+        charge: Mass,
+    },
+    /// A plain vessel without liquid from here up.
+    AllVapourFrom {
+        at: Temperature,
+        hottest: Temperature,
+    },
+    FrozenOnBench {
+        freezing: Temperature,
+        bench: Temperature,
+    },
     /// Under outside pressure a wall can collapse; that is not computed here.
     CollapseNotJudged {
         inside: Pressure,

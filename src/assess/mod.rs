@@ -74,6 +74,8 @@ pub struct Assessment {
     pub events: Figure<Vec<Event>>,
     /// Liquid-full temperature of the heaviest corner.
     pub heaviest_full_at: Figure<Option<Temperature>>,
+    /// Where the heaviest corner, with the model's uncertainty, reaches the allowable.
+    pub heaviest_over_at: Figure<Option<Temperature>>,
     /// Dry-out temperature of the lightest corner.
     pub lightest_dry_at: Figure<Option<Temperature>>,
     pub worst: Figure<WorstCase>,
@@ -120,13 +122,17 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         .as_ref()
         .map_err(with)
         .and_then(|c| side_of(&c.heaviest, DomeSide::Liquid));
+    let heaviest_over_at = corners
+        .as_ref()
+        .map_err(with)
+        .and_then(|c| reaches_allowable(&c.heaviest, &walls, fluid.pressure_uncertainty()));
     let lightest_dry_at = corners
         .as_ref()
         .map_err(with)
         .and_then(|c| match &c.lightest {
             Some(unit) => side_of(unit, DomeSide::Vapour),
-            // A charge that may be nothing is dry at once.
-            None => Ok(Some(design.conditions.coldest)),
+            // A charge that may be nothing has a finding of its own.
+            None => Ok(None),
         });
     let worst = corners
         .as_ref()
@@ -150,7 +156,11 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
             .flatten()
             .map(|event| event.temperature)
             .collect();
-        chart::charts(&c.nominal, chart::span(design), &kinks, &walls)
+        let upper = window
+            .as_ref()
+            .ok()
+            .and_then(|w| Some(w.upper.as_ref()?.mass));
+        chart::charts(&c.nominal, chart::span(design), &kinks, &walls, upper)
     });
     let release = charge
         .as_ref()
@@ -168,6 +178,7 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         corners,
         events,
         heaviest_full_at,
+        heaviest_over_at,
         lightest_dry_at,
         worst,
         window,
@@ -234,6 +245,23 @@ fn side_of(unit: &crate::sealed::SealedUnit, side: DomeSide) -> Figure<Option<Te
     Ok(on_side.map(|crossing| crossing.temperature))
 }
 
+/// The lowest temperature at which a unit's pressure, a share of it added, reaches the
+/// allowable.
+fn reaches_allowable(
+    unit: &crate::sealed::SealedUnit,
+    walls: &Walls<'_>,
+    added: f64,
+) -> Figure<Option<Temperature>> {
+    let fluid = unit.fluid();
+    let (low, high) = fluid.range();
+    let limit = |t: Temperature| {
+        let allowable = walls.allowable_pressure(t).ok()?;
+        Pressure::from_pascal(allowable.pascal() / (1.0 + added)).ok()
+    };
+    let between = (low.max(fluid.freezing_point()), high);
+    Ok(unit.meets(limit, between, &walls.knots)?.first().copied())
+}
+
 fn events(corners: &Corners, walls: &Walls<'_>) -> Figure<Vec<Event>> {
     let unit = &corners.nominal;
     let fluid = unit.fluid();
@@ -252,13 +280,10 @@ fn events(corners: &Corners, walls: &Walls<'_>) -> Figure<Vec<Event>> {
             temperature: crossing.temperature,
         });
     }
-    let (low, high) = fluid.range();
-    let limit = |t: Temperature| walls.allowable_pressure(t).ok();
-    let between = (low.max(fluid.freezing_point()), high);
-    if let Some(temperature) = unit.meets(limit, between, &walls.knots)?.first() {
+    if let Some(temperature) = reaches_allowable(unit, walls, 0.0)? {
         events.push(Event {
             kind: EventKind::AllowableReached,
-            temperature: *temperature,
+            temperature,
         });
     }
     events.sort_by(|a, b| a.temperature.kelvin().total_cmp(&b.temperature.kelvin()));

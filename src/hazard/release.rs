@@ -33,7 +33,8 @@ pub struct Release {
 /// `mass` set free in `room` at one standard atmosphere.
 ///
 /// C = 10⁶ · m R T / (M p V), an ideal gas: at room pressure that is good to 1 %.
-/// The share of air pushed out is C/(1 + C), the room being vented.
+/// The gas pushes out its own volume of air, the careful one of the usual pictures: what
+/// leaves the room is air alone.
 pub fn release(fluid: &Fluid, mass: Mass, room: &Room) -> Option<Release> {
     let volume = room.volume.cubic_metre();
     if volume <= 0.0 {
@@ -46,7 +47,8 @@ pub fn release(fluid: &Fluid, mass: Mass, room: &Room) -> Option<Release> {
         .saturation_pressure(room.temperature)
         .map_or(f64::INFINITY, |p| p.pascal() / STANDARD_ATMOSPHERE_PA);
     let capped = mole_ratio > ceiling && ceiling < 1.0;
-    let fraction = if capped { ceiling } else { mole_ratio };
+    // More than all of the air cannot be pushed out.
+    let fraction = if capped { ceiling } else { mole_ratio.min(1.0) };
     let ppm = 1e6 * fraction;
     let safety = fluid.safety();
     let over =
@@ -61,7 +63,7 @@ pub fn release(fluid: &Fluid, mass: Mass, room: &Room) -> Option<Release> {
             .map(|limit| fraction / limit.value),
         of_exposure_limit: over(&safety.exposure_limit_ppm),
         of_immediately_dangerous: over(&safety.immediately_dangerous_ppm),
-        oxygen: OXYGEN / (1.0 + fraction),
+        oxygen: OXYGEN * (1.0 - fraction),
     })
 }
 

@@ -1,32 +1,34 @@
-//! What the bench does: weighing, steps, checks afterwards.
+//! What the bench weighs, and what it checks afterwards.
 
 use super::page::Page;
-use crate::assess::{Assessment, Side, Window};
-use crate::conditions::STANDARD_ATMOSPHERE_PA;
+use crate::assess::{Assessment, Corners, Side, Window};
 use crate::design::{ChargeAim, Design, NamedVolume};
-use crate::fluid::{Regime, StabilityKind};
-use crate::units::{Kind, Pressure, Temperature, Units, careful_down, careful_up, figures};
+use crate::fluid::Regime;
+use crate::sealed::SealedUnit;
+use crate::units::{Kind, Temperature, Units, figures};
+
 use crate::words;
 
-/// Dry ice sublimes at −78.5 °C and liquid nitrogen boils at 77.36 K under one
-/// atmosphere (CRC Handbook of Chemistry and Physics, from memory).
-const DRY_ICE_K: f64 = 194.65;
-const LIQUID_NITROGEN_K: f64 = 77.36;
-/// Below it air condenses into an open vessel: liquid oxygen (boils at 90.2 K).
-const OXYGEN_CONDENSES_K: f64 = 90.2;
+/// Air at 20 °C and one atmosphere (CRC Handbook of Chemistry and Physics, from memory).
+const AIR_KG_PER_M3: f64 = 1.2;
 
 pub fn weighing(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
     let Ok(charge) = &a.charge else { return };
     page.heading("WEIGHING");
-    page.paragraph(
-        "Tare the unit evacuated: an open unit of 50 mL holds 60 mg of air. Weigh by difference on one balance.",
-    );
+    let air = a
+        .volumes
+        .as_ref()
+        .map_or(0.0, |v| AIR_KG_PER_M3 * v.nominal.cubic_metre());
+    page.paragraph(&format!(
+        "Tare the unit evacuated: open, it holds {} of air. Weigh by difference on one balance.",
+        units.show_si(Kind::Mass, air, 2)
+    ));
     page.row("Charge stated as", &stated(design, units));
     page.row(
         "Sealed mass aimed at",
         &format!(
             "{} +/- {}",
-            units.show(charge.nominal),
+            units.show_to(charge.nominal, 5),
             units.show_beside(design.charge.tolerance, charge.nominal, 3)
         ),
     );
@@ -43,16 +45,23 @@ pub fn weighing(page: &mut Page, design: &Design, a: &Assessment, units: &Units)
         low = low.max(least.kilogram() + balance);
         high = high.min(greatest.kilogram() - balance);
     }
+    // Told in steps of a tenth of the balance's uncertainty, rounded inwards.
     let unit = units.unit_for(Kind::Mass, charge.nominal.kilogram());
+    let step = 10f64
+        .powf((unit.number_of(balance).log10() - 1.0).floor())
+        .max(1e-9);
+    let decimals = (-step.log10().round()).max(0.0) as usize;
     let reading = |kilogram: f64, down: bool| {
-        let number = unit.number_of(kilogram);
-        let digits = 5;
-        let careful = if down {
-            careful_down(number, digits)
+        let steps = unit.number_of(kilogram) / step;
+        let nearest = steps.round();
+        let whole = if (steps - nearest).abs() < 1e-6 {
+            nearest
+        } else if down {
+            steps.floor()
         } else {
-            careful_up(number, digits)
+            steps.ceil()
         };
-        format!("{} {}", figures(careful, digits as usize), unit.symbol)
+        format!("{:.decimals$} {}", whole * step, unit.symbol)
     };
     page.row(
         "1  Dispense, scale shows",
@@ -151,102 +160,15 @@ fn stated(design: &Design, units: &Units) -> String {
     }
 }
 
-pub fn steps(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
-    page.heading("STEPS");
-    let fluid = &a.fluid;
-    let bench = design.conditions.bench;
-    let pressure = |t: Temperature| fluid.saturation_pressure(t).ok();
-    let show = |p: Pressure| format!("{} abs", units.show(p));
-    page.item(
-        "[ ]",
-        "Evacuate the clean, proven unit; close the valve; read the tare.",
-    );
-    let gas_at_bench = pressure(bench).is_none_or(|p| p.pascal() > STANDARD_ATMOSPHERE_PA);
-    match pressure(bench) {
-        Some(p) if gas_at_bench => page.item(
-            "[ ]",
-            &format!(
-                "The fluid stands at {} on the bench: transfer it from its cylinder through a closed line into \
-                 the cooled unit. Never into an open one.",
-                show(p)
-            ),
-        ),
-        Some(p) => page.item(
-            "[ ]",
-            &format!(
-                "Degas the fluid: it boils at {} on the bench. Dissolved air not removed here stays in the unit.",
-                show(p)
-            ),
-        ),
-        None => page.item(
-            "[ ]",
-            "The fluid has no liquid on the bench: charge it as a gas through a closed line, or cold.",
-        ),
-    }
-    page.item("[ ]", "Dispense by weight until the scale is inside row 1.");
-    let freezing = fluid.freezing_point();
-    let baths = [
-        ("dry ice", DRY_ICE_K),
-        ("liquid nitrogen", LIQUID_NITROGEN_K),
-    ];
-    let verdicts: Vec<String> = baths
-        .iter()
-        .map(|(bath, kelvin)| {
-            let verb = if *kelvin < freezing.kelvin() {
-                "freezes"
-            } else {
-                "does not freeze"
-            };
-            let at = units.show_si(Kind::Temperature, *kelvin, 4);
-            format!("{bath} ({at}) {verb} it")
-        })
-        .collect();
-    page.item(
-        "[ ]",
-        &format!(
-            "Freeze, evacuate, thaw, repeat; or boil off the purge loss. It melts at {}: {}.",
-            units.show(freezing),
-            verdicts.join("; ")
-        ),
-    );
-    if freezing.kelvin() > LIQUID_NITROGEN_K && freezing.kelvin() < DRY_ICE_K {
-        page.item(
-            " ! ",
-            &format!(
-                "Below {} never open the unit to air: oxygen condenses, and with an organic it explodes.",
-                units.show_si(Kind::Temperature, OXYGEN_CONDENSES_K, 4)
-            ),
-        );
-    }
-    page.item(" ! ", "Never plunge glass into a cold bath; cool slowly. Thaw from the top, so that the melt has room.");
-    page.item(" ! ", "If gas has condensed in the unit, do not seal it.");
-    if fluid.safety().is_flammable() {
-        page.item(
-            " ! ",
-            "Flammable vapour: no flame, no hot seal, until no vapour is near the joint.",
-        );
-    }
-    if fluid
-        .safety()
-        .stability
-        .iter()
-        .any(|s| s.kind == StabilityKind::AcidInFlame)
-    {
-        page.item(" ! ", "Its vapour in a flame makes acid, and chlorinated vapour phosgene: purge the seal first.");
-    }
-    page.item(
-        "[ ]",
-        "Seal. Weigh unit and stub: the sealed mass must be inside row 2.",
-    );
-}
-
 pub fn afterwards(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
     let Ok(corners) = &a.corners else { return };
     let conditions = &design.conditions;
     page.heading("AFTERWARDS");
     if design.bench.gauge {
         page.paragraph(&format!(
-            "Expected pressure once the whole unit stands at one temperature (gauge against a barometer of {}):",
+            "Expected pressure once the whole unit stands at one temperature (gauge against a barometer of {}). \
+             Reject outside these limits, widened by what the gauge and the thermometer are uncertain by; \
+             1 K changes the pressure as told:",
             units.show(conditions.barometer)
         ));
         for t in [
@@ -254,37 +176,29 @@ pub fn afterwards(page: &mut Page, design: &Design, a: &Assessment, units: &Unit
             conditions.bench,
             conditions.working_high,
         ] {
-            let text = match corners.nominal.state(t) {
-                Ok(state) if state.regime == Regime::Frozen => "frozen".to_owned(),
-                Ok(state) => {
-                    let gauge = state.pressure.pascal() - conditions.barometer.pascal();
-                    format!(
-                        "{} abs, {} gauge",
-                        units.show(state.pressure),
-                        units.show_si(Kind::Pressure, gauge, 4)
-                    )
-                }
-                Err(_) => "not known".to_owned(),
-            };
             page.row(
                 &format!("  at {}", units.show(t).replace('\u{a0}', " ")),
-                &text,
+                &expected_pressure(design, a, corners, t, units),
             );
         }
-        page.paragraph("A higher reading is gas in the unit or a wrong fluid: do not release it.");
+        page.paragraph(
+            "A higher reading is gas in the unit, too much fluid or a wrong one; a lower reading is too little \
+             fluid, a wrong one or a leak. Release neither.",
+        );
     } else {
         page.paragraph("No gauge stays on the unit. Judge by the liquid level and by weight.");
     }
     if let Ok(charge) = &a.charge
         && let Ok(fill) = charge.bench_fill
     {
+        let text = match fill {
+            fill if fill <= 0.0 => "none".to_owned(),
+            fill if fill >= 1.0 => "the whole inside".to_owned(),
+            fill => format!("{} % of the inside volume", figures(100.0 * fill, 3)),
+        };
         page.row(
             "Liquid on the bench",
-            &format!(
-                "{} % of the inside volume at {}",
-                figures(100.0 * fill, 3),
-                units.show(conditions.bench)
-            ),
+            &format!("{text}, at {}", units.show(conditions.bench)),
         );
     }
     page.item(
@@ -296,4 +210,37 @@ pub fn afterwards(page: &mut Page, design: &Design, a: &Assessment, units: &Unit
         "Under- or overfilled: recover the fluid into its vessel. Never boil it off into the room.",
     );
     page.blank_row("Mass after soak, days");
+}
+
+/// From the lightest charge in the largest volume to the heaviest in the smallest, the
+/// model's uncertainty on both sides, and what a kelvin changes.
+fn expected_pressure(
+    design: &Design,
+    a: &Assessment,
+    corners: &Corners,
+    t: Temperature,
+    units: &Units,
+) -> String {
+    let uncertainty = a.fluid.pressure_uncertainty();
+    let warmer = Temperature::from_kelvin(t.kelvin() + 1.0);
+    let state = |unit: &SealedUnit| unit.state(t).ok().filter(|s| s.regime != Regime::Frozen);
+    let low = corners.lightest.as_ref().and_then(state);
+    let (Some(low), Some(high), Ok(warmer)) = (low, state(&corners.heaviest), warmer) else {
+        return "not known, or frozen".to_owned();
+    };
+    let low = low.pressure.pascal() * (1.0 - uncertainty);
+    let high = high.pressure.pascal() * (1.0 + uncertainty);
+    let barometer = design.conditions.barometer.pascal();
+    let show = |pascal: f64| units.show_si(Kind::Pressure, pascal, 4);
+    let slope = match (corners.nominal.state(t), corners.nominal.state(warmer)) {
+        (Ok(here), Ok(there)) => show(there.pressure.pascal() - here.pressure.pascal()),
+        _ => "not known".to_owned(),
+    };
+    format!(
+        "{} to {} abs, {} to {} gauge; 1 K: {slope}",
+        show(low),
+        show(high),
+        show(low - barometer),
+        show(high - barometer)
+    )
 }

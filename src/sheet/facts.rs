@@ -2,10 +2,10 @@
 
 use super::Head;
 use super::page::Page;
-use crate::assess::{Assessment, EventKind, Severity};
+use crate::assess::{Assessment, Figure, Severity};
 use crate::chamber::MeasuredVolume;
 use crate::design::Design;
-use crate::units::{Units, figures};
+use crate::units::{Temperature, Units, figures};
 use crate::words;
 
 pub fn head(page: &mut Page, design: &Design, head: &Head) {
@@ -109,14 +109,20 @@ pub fn worst_case(page: &mut Page, design: &Design, a: &Assessment, units: &Unit
                     words::regime(case.state.regime)
                 ),
             );
-            page.row(
-                "Load on the wall",
-                &format!(
+            let outside = design.conditions.least_outside;
+            let load = if case.load.pascal() > 0.0 {
+                format!(
                     "{}, against {} abs outside",
                     units.show(case.load),
-                    units.show(design.conditions.least_outside)
-                ),
-            );
+                    units.show(outside)
+                )
+            } else {
+                format!(
+                    "none: the least outside, {} abs, is higher",
+                    units.show(outside)
+                )
+            };
+            page.row("Load on the wall", &load);
             match &case.weakest {
                 Ok(weakest) => {
                     page.row("Weakest part", &weakest.name);
@@ -128,7 +134,9 @@ pub fn worst_case(page: &mut Page, design: &Design, a: &Assessment, units: &Unit
                             words::basis(weakest.allowable.basis)
                         ),
                     );
-                    if let Ok(share) = &case.of_allowable {
+                    if let Ok(share) = &case.of_allowable
+                        && *share > 0.0
+                    {
                         page.row(
                             "Used of the allowable",
                             &format!("{} %", figures(100.0 * share, 3)),
@@ -154,22 +162,24 @@ pub fn worst_case(page: &mut Page, design: &Design, a: &Assessment, units: &Unit
         }
         Err(missing) => page.row("Worst case", &words::missing(missing, units)),
     }
-    if let Ok(events) = &a.events {
-        let (_, high) = a.fluid.range();
-        for event in events.iter().filter(|event| event.temperature < high) {
-            let what = words::event(event.kind);
-            // Freezing belongs to the fluid, not to this charge.
-            let prefix = if event.kind == EventKind::Freezing {
-                "Fluid"
-            } else {
-                "Unit"
-            };
-            page.row(
-                &format!("{prefix} {what}"),
-                &format!("at {}", units.show(event.temperature)),
-            );
+    page.row(
+        "Fluid freezes",
+        &format!("at {}", units.show(a.fluid.freezing_point())),
+    );
+    // Each from the corner that comes to it first.
+    let mut at = |what: &str, found: &Figure<Option<Temperature>>, corner: &str| {
+        if let Ok(Some(t)) = found {
+            page.row(what, &format!("at {} ({corner})", units.show(*t)));
         }
-    }
+    };
+    let heaviest = "heaviest charge, smallest volume";
+    at("Reaches the allowable", &a.heaviest_over_at, heaviest);
+    at("Goes liquid-full", &a.heaviest_full_at, heaviest);
+    at(
+        "Dries out",
+        &a.lightest_dry_at,
+        "lightest charge, largest volume",
+    );
 }
 
 pub fn warnings(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {

@@ -3,6 +3,7 @@
 mod bench;
 mod facts;
 mod page;
+mod steps;
 
 pub use page::WIDTH;
 
@@ -35,7 +36,7 @@ pub fn render(design: &Design, a: &Assessment, units: &Units, head: &Head) -> St
     facts::before_filling(&mut page, design, a, units);
     if fit {
         bench::weighing(&mut page, design, a, units);
-        bench::steps(&mut page, design, a, units);
+        steps::steps(&mut page, design, a, units);
         bench::afterwards(&mut page, design, a, units);
     }
     facts::worst_case(&mut page, design, a, units);

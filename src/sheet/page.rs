@@ -78,7 +78,8 @@ impl Page {
     fn wrapped(&mut self, text: &str, first: &str, rest: &str) {
         let mut line = first.to_owned();
         let mut empty = true;
-        let plain = text.replace('\n', " ");
+        // A printer or terminal obeys control characters: a title must not command it.
+        let plain = text.replace(char::is_control, " ");
         for word in plain.split(' ').filter(|word| !word.is_empty()) {
             let gap = usize::from(!empty);
             if !empty && line.chars().count() + gap + word.chars().count() > WIDTH {

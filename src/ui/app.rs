@@ -119,10 +119,12 @@ impl App {
                 None => {}
             }
         }
+        // A narrow or zoomed window keeps a third for the pictures.
+        let width = ui.available_width();
         let left = Panel::left("design")
             .frame(panel)
             .default_size(self.settings.left_column)
-            .size_range(260.0..=520.0)
+            .size_range(240.0..=(0.33 * width).max(260.0))
             .show(ui, |ui| {
                 let desk = &mut self.desk;
                 desk.edit(|design, a, library| {
@@ -135,7 +137,7 @@ impl App {
         let right = Panel::right("meaning")
             .frame(panel)
             .default_size(self.settings.right_column)
-            .size_range(250.0..=520.0)
+            .size_range(220.0..=(0.33 * width).max(240.0))
             .show(ui, |ui| {
                 meaning_ui(
                     ui,

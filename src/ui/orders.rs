@@ -200,7 +200,7 @@ impl App {
             Purpose::SaveAs => self.save_to(path, then),
             Purpose::ExportSheet => {
                 let text = sheet_text(&self.desk, &Units::new(self.settings.units));
-                match store::write_text(path, &text) {
+                match store::write_beside(path, &text, self.desk.path()) {
                     Ok(()) => {
                         self.dialog = None;
                         self.notice = Some(format!("The charge sheet is in {}.", path.display()));

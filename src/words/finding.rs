@@ -100,6 +100,36 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
             ),
         )
         .try_this("Less charge or more volume."),
+        FindingKind::StrengthKnownCooler { part, temperature } => say(
+            "Strength known only cooler",
+            format!(
+                "The allowable of {part} at {} rests on a strength that is known only where it is cooler; heat lowers it.",
+                units.show(*temperature)
+            ),
+        )
+        .try_this("Give the material's strength at that temperature, or keep a margin."),
+        FindingKind::ToleranceLargerThanCharge { tolerance, charge } => say(
+            "Tolerance not smaller than the charge",
+            format!(
+                "The charge is {}, its tolerance {}: a unit could be empty.",
+                units.show(*charge),
+                units.show_beside(*tolerance, *charge, 4)
+            ),
+        )
+        .try_this("A tighter tolerance or more charge."),
+        FindingKind::AllVapourFrom { at, hottest } => say(
+            "All vapour when hot",
+            format!(
+                "The lightest charge has no liquid from {} up to the hottest, {}.",
+                units.show(*at),
+                units.show(*hottest)
+            ),
+        ),
+        FindingKind::FrozenOnBench { freezing, bench } => say(
+            "Frozen on the bench",
+            format!("It freezes at {}; the bench is at {}.", units.show(*freezing), units.show(*bench)),
+        )
+        .try_this("Dispense it warm, and weigh it: volumes and fill ratios on the bench do not exist."),
         FindingKind::CollapseNotJudged { inside, outside } => say(
             "Collapse not judged",
             format!(

@@ -180,6 +180,21 @@ pub fn condition_fault(fault: &ConditionFault, units: &Units) -> String {
             units.show(*coldest),
             units.show(*hottest)
         ),
+        ConditionFault::BenchOutsideExtremes {
+            bench,
+            coldest,
+            hottest,
+        } => format!(
+            "The sealed unit also stands on the bench, at {}, outside coldest to hottest, {} to {}. Widen the extremes.",
+            units.show(*bench),
+            units.show(*coldest),
+            units.show(*hottest)
+        ),
+        ConditionFault::LeastAboveBarometer { least, barometer } => format!(
+            "The least outside pressure, {} abs, is above the barometer, {} abs. The bench is outside too: lower it.",
+            units.show(*least),
+            units.show(*barometer)
+        ),
         ConditionFault::OutsideBelowZero { pressure } => {
             format!(
                 "An outside pressure of {} abs is below zero. Use 0 for space.",

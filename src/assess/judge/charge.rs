@@ -3,6 +3,7 @@
 use super::Judge;
 use crate::assess::finding::{Finding, FindingKind, Section, Severity};
 use crate::assess::window::Requirement;
+use crate::chamber::AllowableBasis;
 use crate::design::Duty;
 use crate::fluid::Regime;
 use crate::units::Temperature;
@@ -27,6 +28,20 @@ impl Judge<'_> {
             // Whether less charge helps is the window's to say: its nearest charge is the remedy.
             self.add_share(Severity::Error, Section::Charge, kind, *share);
         }
+        use AllowableBasis as Basis;
+        if matches!(
+            weakest.allowable.basis,
+            Basis::BurstAtMost | Basis::YieldAtMost | Basis::CodeFormAtMost
+        ) {
+            let kind = FindingKind::StrengthKnownCooler {
+                part: weakest.name.to_string(),
+                temperature: case.temperature,
+            };
+            self.add(Severity::Warning, Section::Chamber, kind);
+        }
+    }
+
+    pub(super) fn factors(&mut self) {
         if self.design.demands.factors.below_default() {
             let factors = self.design.demands.factors;
             self.add(
@@ -113,16 +128,21 @@ impl Judge<'_> {
     }
 
     pub(super) fn dry_out(&mut self) {
-        if self.design.duty == Duty::PlainVessel {
-            return;
-        }
         let (Ok(dry_at), true) = (&self.a.lightest_dry_at, self.a.charge.is_ok()) else {
             return;
         };
         let Some(at) = *dry_at else { return };
         let conditions = &self.design.conditions;
         let working_high = conditions.working_high;
-        if at <= working_high {
+        if self.design.duty == Duty::PlainVessel {
+            if at < conditions.hottest {
+                let kind = FindingKind::AllVapourFrom {
+                    at,
+                    hottest: conditions.hottest,
+                };
+                self.add(Severity::Note, Section::Charge, kind);
+            }
+        } else if at <= working_high {
             let kind = FindingKind::Dry { at, working_high };
             self.add_share(Severity::Error, Section::Charge, kind, 1.0);
         } else if at < conditions.hottest {
@@ -137,6 +157,14 @@ impl Judge<'_> {
     pub(super) fn freezing(&mut self) {
         let conditions = &self.design.conditions;
         let freezing = self.a.fluid.freezing_point();
+        if conditions.bench < freezing {
+            let bench = conditions.bench;
+            self.add(
+                Severity::Warning,
+                Section::Conditions,
+                FindingKind::FrozenOnBench { freezing, bench },
+            );
+        }
         if conditions.coldest >= freezing {
             return;
         }
@@ -187,9 +215,23 @@ impl Judge<'_> {
         }
     }
 
+    pub(super) fn tolerance(&mut self) {
+        let tolerance = self.design.charge.tolerance;
+        if let Ok(charge) = &self.a.charge
+            && tolerance >= charge.nominal
+        {
+            let kind = FindingKind::ToleranceLargerThanCharge {
+                tolerance,
+                charge: charge.nominal,
+            };
+            self.add(Severity::Error, Section::Charge, kind);
+        }
+    }
+
     pub(super) fn balance(&mut self) {
         let (balance, tolerance) = (self.design.bench.balance, self.design.charge.tolerance);
-        if balance >= tolerance {
+        // A tenth of the balance's uncertainty is the step in which readings are told.
+        if 1.1 * balance.kilogram() >= tolerance.kilogram() {
             let share = balance.kilogram() / tolerance.kilogram().max(f64::MIN_POSITIVE);
             let kind = FindingKind::BalanceTooCoarse { balance, tolerance };
             self.found.push(Finding {

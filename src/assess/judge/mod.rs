@@ -20,7 +20,9 @@ pub fn findings(design: &Design, library: &Library, a: &Assessment) -> Vec<Findi
     judge.contradictions();
     judge.not_known();
     judge.pressure();
+    judge.factors();
     judge.collapse();
+    judge.tolerance();
     judge.liquid_full();
     judge.dry_out();
     judge.freezing();

@@ -3,8 +3,8 @@
 use super::Judge;
 use crate::assess::finding::{FindingKind, Section, Severity};
 use crate::chamber::MaterialKind;
-use crate::fluid::{Model, StabilityKind};
-use crate::hazard::{Compatibility, CompatibilityTable, PairVerdict};
+use crate::fluid::{FluidError, Model, StabilityKind};
+use crate::hazard::{Compatibility, CompatibilityTable, EnergyError, PairVerdict};
 use crate::units::Temperature;
 
 /// Oxygen below which a room is dangerous to enter: 19.5 %, OSHA 29 CFR 1910.134
@@ -70,8 +70,15 @@ impl Judge<'_> {
         let safety = self.a.fluid.safety();
         for stability in &safety.stability {
             let severity = match stability.kind {
-                StabilityKind::SelfDecomposing | StabilityKind::Pyrophoric => Severity::Error,
-                _ => Severity::Warning,
+                StabilityKind::SelfDecomposing
+                | StabilityKind::Pyrophoric
+                | StabilityKind::Oxidising
+                | StabilityKind::WaterReactive => Severity::Error,
+                // These hold while air, water and flame are kept away, which a sealed
+                // unit does: somebody must answer for the filling.
+                StabilityKind::PeroxideForming
+                | StabilityKind::Hydrolysing
+                | StabilityKind::AcidInFlame => Severity::Warning,
             };
             let kind = FindingKind::Unstable {
                 kind: stability.kind,
@@ -91,14 +98,17 @@ impl Judge<'_> {
             };
             self.add(Severity::Error, Section::Fluid, kind);
         }
-        if let Some(restriction) = &safety.consumer_restriction
-            && self.design.room.consumers
-        {
+        if let Some(restriction) = &safety.consumer_restriction {
+            let severity = if self.design.room.consumers {
+                Severity::Error
+            } else {
+                Severity::Note
+            };
             let kind = FindingKind::NotForConsumers {
                 reason: restriction.value.clone(),
                 source: restriction.source.to_string(),
             };
-            self.add(Severity::Error, Section::Fluid, kind);
+            self.add(severity, Section::Fluid, kind);
         }
     }
 
@@ -215,7 +225,11 @@ impl Judge<'_> {
                     FindingKind::Rupture { energy: *energy },
                 );
             }
-            Ok(Err(error)) => {
+            // A fluid error has its own finding.
+            Ok(Err(
+                error @ (EnergyError::FreezesOnExpansion { .. }
+                | EnergyError::Fluid(FluidError::NoEnergy { .. })),
+            )) => {
                 let kind = FindingKind::RuptureNotComputed {
                     reason: error.to_string(),
                 };

@@ -1,6 +1,8 @@
 //! The parts list: shapes, sizes, walls, and a measured volume over their sum.
 
-use eframe::egui::{Align, ComboBox, Id, Layout, RichText, Role, TextEdit, Ui, WidgetInfo};
+use eframe::egui::{
+    Align, Button, ComboBox, Id, Layout, RichText, Role, TextEdit, Ui, WidgetInfo, vec2,
+};
 
 use super::design::name;
 use crate::assess::{Assessment, FindingKind, Library};
@@ -87,30 +89,38 @@ fn part_ui(
     let palette = Palette::in_use(ui);
     let open_id = Id::unique(("part open", index));
     let mut open = ui.data(|data| data.get_temp(open_id)).unwrap_or(false);
-    ui.horizontal(|ui| {
-        let mark = if faults.is_empty() { "" } else { "!  " };
-        let title = RichText::new(format!("{mark}{}", part.name));
-        let title = if faults.is_empty() {
-            title
+    let row = vec2(ui.available_width(), ui.spacing().interact_size.y);
+    ui.allocate_ui_with_layout(row, Layout::right_to_left(Align::Center), |ui| {
+        let volume = part.volumes().nominal_m3;
+        let share = if total > 0.0 {
+            format!(", {:.0} %", 100.0 * volume / total)
         } else {
-            title.color(palette.error).strong()
+            String::new()
         };
-        if ui
-            .selectable_label(open, title)
-            .on_hover_text(part.shape.kind_name())
-            .clicked()
-        {
-            open = !open;
-        }
-        ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
-            let volume = part.volumes().nominal_m3;
-            let share = if total > 0.0 {
-                format!(", {:.0} %", 100.0 * volume / total)
+        let text = format!("{}{share}", units.show_si(Kind::Volume, volume, 3));
+        ui.label(RichText::new(text).color(palette.text_faint));
+        // The name takes what is left, however long it is.
+        ui.with_layout(Layout::left_to_right(Align::Center), |ui| {
+            let mark = if faults.is_empty() { "" } else { "!  " };
+            let called = if part.name.trim().is_empty() {
+                "unnamed part"
             } else {
-                String::new()
+                &part.name
             };
-            let text = format!("{}{share}", units.show_si(Kind::Volume, volume, 3));
-            ui.label(RichText::new(text).color(palette.text_faint));
+            let title = RichText::new(format!("{mark}{called}"));
+            let title = if faults.is_empty() {
+                title
+            } else {
+                title.color(palette.error).strong()
+            };
+            let button = Button::selectable(open, title).truncate();
+            if ui
+                .add(button)
+                .on_hover_text(part.shape.kind_name())
+                .clicked()
+            {
+                open = !open;
+            }
         });
     });
     ui.data_mut(|data| data.insert_temp(open_id, open));

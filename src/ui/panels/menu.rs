@@ -26,8 +26,8 @@ pub fn menu_ui(ui: &mut Ui, desk: &Desk, settings: &Settings, out: &mut Vec<Comm
                 ui.label(RichText::new("unsaved").color(palette.warning));
                 ui.label(RichText::new("•").color(palette.warning));
             }
-            let title = format!("{}  ({})", desk.design.title, desk.name());
-            ui.add(Label::new(title).wrap_mode(TextWrapMode::Truncate));
+            ui.label(format!("({})", desk.name()));
+            ui.add(Label::new(&desk.design.title).wrap_mode(TextWrapMode::Truncate));
         });
     });
 }
