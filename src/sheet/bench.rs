@@ -236,11 +236,17 @@ fn expected_pressure(
         (Ok(here), Ok(there)) => show(there.pressure.pascal() - here.pressure.pascal()),
         _ => "not known".to_owned(),
     };
+    let range = |low: f64, high: f64| {
+        let (low, high) = (show(low), show(high));
+        if low == high {
+            low
+        } else {
+            format!("{low} to {high}")
+        }
+    };
     format!(
-        "{} to {} abs, {} to {} gauge; 1 K: {slope}",
-        show(low),
-        show(high),
-        show(low - barometer),
-        show(high - barometer)
+        "{} abs, {} gauge; 1 K: {slope}",
+        range(low, high),
+        range(low - barometer, high - barometer)
     )
 }

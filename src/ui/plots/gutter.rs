@@ -53,14 +53,19 @@ impl Canvas<'_> {
             .map(|(x, text)| (*x, self.galley(text, color)))
             .collect();
         seen.sort_by(|a, b| a.0.total_cmp(&b.0));
+        let room = Rangef::new(self.frame.left() - 2.0, self.outside.clip_rect().right());
+        let width = |seen: &[(f32, Arc<Galley>)]| -> f32 {
+            seen.iter().map(|(_, galley)| galley.size().x + 12.0).sum()
+        };
+        // Where there is no room for all, the outermost are the ones that matter.
+        while seen.len() > 1 && width(&seen) > room.span() {
+            seen.remove(if seen.len() > 2 { 1 } else { 0 });
+        }
         let mut places: Vec<(f32, f32)> = seen
             .iter()
             .map(|(x, galley)| (*x, galley.size().x + 12.0))
             .collect();
-        spread(
-            &mut places,
-            Rangef::new(self.frame.left() - 2.0, self.outside.clip_rect().right()),
-        );
+        spread(&mut places, room);
         let baseline = self.frame.top() - 6.0;
         for ((x, galley), (centre, _)) in seen.into_iter().zip(places) {
             let stroke = Stroke::new(1.0, color.gamma_multiply(0.7));

@@ -125,12 +125,17 @@ fn header_ui(
     beside: impl FnOnce(&mut Ui, &mut PlotState),
 ) -> bool {
     let mut copy = false;
+    let copy_text = if ui.available_width() < 480.0 {
+        "Copy"
+    } else {
+        "Copy as table"
+    };
     // Buttons first, from the right: what stands beside the name gives way to them.
     let buttons = Layout::right_to_left(Align::Center);
     let row = vec2(ui.available_width(), ui.spacing().interact_size.y);
     ui.allocate_ui_with_layout(row, buttons, |ui| {
         copy = ui
-            .add(Button::new("Copy as table").small())
+            .add(Button::new(copy_text).small())
             .on_hover_text("Values with their units, separated by tabs, for a spreadsheet")
             .clicked();
         // Where it is narrow a double click must do.

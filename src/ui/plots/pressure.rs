@@ -225,8 +225,10 @@ fn paint_unknown(
     if lines.is_empty() {
         return;
     }
-    let galley = canvas.galley(&lines.join("\n"), canvas.palette.text);
     let room = canvas.frame.shrink2(vec2(8.0, 5.0));
+    let text = lines.join("\n");
+    let (font, color) = (canvas.font.clone(), canvas.palette.text);
+    let galley = canvas.outside.layout(text, font, color, room.width());
     let corner = |anchor: Align2| anchor.align_size_within_rect(galley.size(), room);
     let corners = [
         Align2::RIGHT_BOTTOM,
