@@ -120,7 +120,7 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
         FindingKind::AllVapourFrom { at, hottest } => say(
             "All vapour when hot",
             format!(
-                "The lightest charge has no liquid from {} up to the hottest, {}.",
+                "The lightest charge has no liquid above {}; the hottest is {}.",
                 units.show(*at),
                 units.show(*hottest)
             ),
@@ -159,7 +159,7 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
         FindingKind::DryAboveWorking { at, hottest } => say(
             "Dries out above the working range",
             format!(
-                "The lightest charge is dry from {} up to the hottest, {}: the pressure then rises only slowly.",
+                "The lightest charge is dry above {}; the hottest is {}. The pressure then rises only slowly.",
                 units.show(*at),
                 units.show(*hottest)
             ),
