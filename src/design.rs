@@ -81,7 +81,7 @@ pub enum ChargeAim {
 pub enum NamedVolume {
     /// The whole inside.
     Inside,
-    /// The part of this name, all of its count.
+    /// The parts of this name together, each with all of its count.
     Part(String),
 }
 

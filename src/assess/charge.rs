@@ -102,13 +102,17 @@ fn sealed_mass(
             let inside = volumes.nominal.cubic_metre();
             let named = match of {
                 NamedVolume::Inside => inside,
-                NamedVolume::Part(name) => design
-                    .chamber
-                    .parts
-                    .iter()
-                    .find(|part| part.name == *name)
-                    .map(|part| part.volumes().nominal_m3.abs())
-                    .ok_or_else(|| Missing::NoSuchPart { name: name.clone() })?,
+                NamedVolume::Part(name) => {
+                    let parts = design.chamber.parts.iter();
+                    let named: Vec<f64> = parts
+                        .filter(|part| part.name == *name)
+                        .map(|part| part.volumes().nominal_m3.abs())
+                        .collect();
+                    if named.is_empty() {
+                        return Err(Missing::NoSuchPart { name: name.clone() });
+                    }
+                    named.iter().sum()
+                }
             };
             let liquid = ratio.fraction() * named;
             if liquid > inside {

@@ -8,6 +8,7 @@ use super::theme::Theme;
 use crate::assess::Section;
 use crate::design::Change;
 use crate::units::UnitSystem;
+use crate::words;
 
 /// An order, drained after the frame is drawn.
 #[derive(Debug, Clone, PartialEq)]
@@ -119,9 +120,5 @@ impl Command {
 
 /// A ready design's file name as a menu entry: "copper-water-heat-pipe" reads as words.
 fn preset_title(name: &str) -> String {
-    let words = name.replace('-', " ");
-    let mut chars = words.chars();
-    chars.next().map_or_else(String::new, |first| {
-        first.to_uppercase().chain(chars).collect()
-    })
+    words::upper(&name.replace('-', " "))
 }

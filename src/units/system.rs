@@ -94,11 +94,7 @@ impl Units {
     pub fn show_si(&self, kind: Kind, si: f64, digits: usize) -> String {
         let unit = self.unit_for(kind, si);
         let number = self.number(kind, si, unit, digits);
-        if unit.symbol.is_empty() {
-            number
-        } else {
-            format!("{number}{NBSP}{}", unit.symbol)
-        }
+        with_unit(number, unit)
     }
 
     /// A quantity with its unit, to `digits` significant figures.
@@ -111,11 +107,7 @@ impl Units {
     pub fn show_beside<Q: Quantity>(&self, quantity: Q, beside: Q, digits: usize) -> String {
         let unit = self.unit_for(Q::KIND, beside.si());
         let number = self.number(Q::KIND, quantity.si(), unit, digits);
-        if unit.symbol.is_empty() {
-            number
-        } else {
-            format!("{number}{NBSP}{}", unit.symbol)
-        }
+        with_unit(number, unit)
     }
 
     /// A quantity with its unit, the last of `digits` figures rounded down or up and never
@@ -129,16 +121,20 @@ impl Units {
             careful_up(number, digits)
         };
         let text = figures(number, digits.unsigned_abs() as usize);
-        if unit.symbol.is_empty() {
-            text
-        } else {
-            format!("{text}{NBSP}{}", unit.symbol)
-        }
+        with_unit(text, unit)
     }
 
     /// A quantity with its unit, to four significant figures.
     pub fn show<Q: Quantity>(&self, quantity: Q) -> String {
         self.show_to(quantity, 4)
+    }
+}
+
+fn with_unit(number: String, unit: &Unit) -> String {
+    if unit.symbol.is_empty() {
+        number
+    } else {
+        format!("{number}{NBSP}{}", unit.symbol)
     }
 }
 

@@ -206,7 +206,7 @@ pub fn condition_fault(fault: &ConditionFault, units: &Units) -> String {
 }
 
 /// The first letter in upper case.
-pub(super) fn upper(text: &str) -> String {
+pub fn upper(text: &str) -> String {
     let mut chars = text.chars();
     chars.next().map_or_else(String::new, |first| {
         first.to_uppercase().chain(chars).collect()

@@ -6,7 +6,7 @@ mod finding;
 mod missing;
 
 pub use finding::{Said, finding};
-pub use missing::{chamber_fault, condition_fault, missing};
+pub use missing::{chamber_fault, condition_fault, missing, upper};
 
 use crate::assess::{Bound, EventKind, Requirement, Severity, Side, Verdict};
 use crate::chamber::AllowableBasis;

@@ -180,7 +180,14 @@ fn body_ui(
         });
     });
     for (salt, (label, dimension)) in part.shape.dimensions_mut().into_iter().enumerate() {
-        dimension_ui(ui, &upper(label), dimension, (1e-3, 1.0), salt, units);
+        dimension_ui(
+            ui,
+            &words::upper(label),
+            dimension,
+            (1e-3, 1.0),
+            salt,
+            units,
+        );
     }
     match &mut part.wall {
         Some(wall) => wall_ui(ui, wall, library, units),
@@ -331,11 +338,4 @@ fn faults_of(a: &Assessment, index: usize) -> Vec<String> {
             _ => None,
         })
         .collect()
-}
-
-fn upper(text: &str) -> String {
-    let mut chars = text.chars();
-    chars.next().map_or_else(String::new, |first| {
-        first.to_uppercase().chain(chars).collect()
-    })
 }

@@ -75,6 +75,10 @@ fn charge_ui(ui: &mut Ui, design: &Design, a: &Assessment, units: &Units) {
             .small()
             .color(faint)
     };
+    if let Some(aim) = window.aim {
+        let text = format!("▾ aim of the duty: {}, the centre", units.show(aim));
+        ui.label(RichText::new(text).small().color(faint));
+    }
     if let Some(lower) = &window.lower {
         ui.label(end("lower end", lower.requirement));
     }
