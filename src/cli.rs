@@ -176,12 +176,11 @@ fn check(path: &Path) -> Result<Outcome, CliError> {
     let mut text = String::new();
     for finding in &assessment.findings {
         let said = words::finding(finding, Some(&design.chamber), &units);
-        let line = format!(
-            "{}: {}: {}",
-            words::severity(finding.severity),
-            said.title,
-            said.detail
-        );
+        let advice = said
+            .try_this
+            .map_or_else(String::new, |text| format!(" {text}"));
+        let severity = words::severity(finding.severity);
+        let line = format!("{severity}: {}: {}{advice}", said.title, said.detail);
         text.push_str(&one_line(&line));
         text.push('\n');
     }

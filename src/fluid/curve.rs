@@ -30,7 +30,8 @@ pub struct SaturationCurve {
 struct Piece {
     low: f64,
     high: f64,
-    coefficients: [[f64; NODES]; WHAT],
+    /// By degree, then by what is expanded: the three sums run side by side.
+    coefficients: [[f64; WHAT]; NODES],
 }
 
 /// One temperature's saturation state in mass units.
@@ -103,7 +104,7 @@ impl SaturationCurve {
             .min(self.pieces.len() - 1);
         let piece = &self.pieces[index];
         let u = ((2.0 * x - piece.low - piece.high) / (piece.high - piece.low)).clamp(-1.0, 1.0);
-        let [p, liquid, vapour] = piece.coefficients.each_ref().map(|c| clenshaw(c, u));
+        let [p, liquid, vapour] = clenshaw(&piece.coefficients, u);
         CurvePoint {
             pressure_pa: p.exp(),
             liquid_kg_per_m3: liquid,
@@ -165,9 +166,10 @@ impl Piece {
             *liquid = point.liquid_kg_per_m3;
             *vapour = point.vapour_kg_per_m3.ln();
         }
-        let coefficients = values.map(|values| {
-            let mut c = [0.0; NODES];
-            for (j, c) in c.iter_mut().enumerate() {
+        let mut coefficients = [[0.0; WHAT]; NODES];
+        for (j, row) in coefficients.iter_mut().enumerate() {
+            let scale = if j == 0 { 1.0 } else { 2.0 } / NODES as f64;
+            for (c, values) in row.iter_mut().zip(&values) {
                 let sum: f64 = values
                     .iter()
                     .enumerate()
@@ -176,11 +178,9 @@ impl Piece {
                             .cos()
                     })
                     .sum();
-                *c = sum * 2.0 / NODES as f64;
+                *c = scale * sum;
             }
-            c[0] *= 0.5;
-            c
-        });
+        }
         Ok(Self {
             low,
             high,
@@ -190,17 +190,27 @@ impl Piece {
 
     /// The tail of each expansion is below the noise of the solve.
     fn is_good(&self) -> bool {
-        let [p, liquid, vapour] = &self.coefficients;
-        let tail = |c: &[f64; NODES]| c[NODES - 2..].iter().fold(0.0_f64, |m, x| m.max(x.abs()));
+        let tail = |what: usize| {
+            let last = &self.coefficients[NODES - 2..];
+            last.iter()
+                .fold(0.0_f64, |most, row| most.max(row[what].abs()))
+        };
         // ln p and ln ρ″: an absolute tail is a relative error of p and ρ″.
-        tail(p) < GOOD && tail(vapour) < GOOD && tail(liquid) < GOOD * liquid[0].abs()
+        let liquid = self.coefficients[0][1].abs();
+        tail(0) < GOOD && tail(1) < GOOD * liquid && tail(2) < GOOD
     }
 }
 
-fn clenshaw(c: &[f64; NODES], u: f64) -> f64 {
-    let (mut b1, mut b2) = (0.0, 0.0);
-    for coefficient in c[1..].iter().rev() {
-        (b1, b2) = (2.0 * u * b1 - b2 + coefficient, b1);
+/// Clenshaw's sum of each expansion. Side by side, since each waits for itself only.
+fn clenshaw(coefficients: &[[f64; WHAT]; NODES], u: f64) -> [f64; WHAT] {
+    let (mut b1, mut b2) = ([0.0; WHAT], [0.0; WHAT]);
+    let twice = 2.0 * u;
+    for row in coefficients[1..].iter().rev() {
+        for i in 0..WHAT {
+            let next = twice * b1[i] - b2[i] + row[i];
+            b2[i] = b1[i];
+            b1[i] = next;
+        }
     }
-    c[0] + u * b1 - b2
+    std::array::from_fn(|i| coefficients[0][i] + u * b1[i] - b2[i])
 }
