@@ -101,6 +101,53 @@ pub fn bracketed_root(
     Ok(b)
 }
 
+/// The root of a rising `f`, which gives value and slope, between `low` and `high`.
+///
+/// Newton's steps from `start`; one that leaves the bracket or meets a slope that is
+/// not positive is replaced by halving, so it always ends. Stops where a Newton step is
+/// within `tolerance` of the argument: what is left is of the order of its square. Otherwise where a step
+/// is in the last digits of a double.
+///
+/// # Errors
+/// [`SolveError::NotANumber`] where `f` returns NaN. That the root lies in the bracket
+/// is the caller's to know.
+pub fn rising_root(
+    mut f: impl FnMut(f64) -> (f64, f64),
+    (mut low, mut high): (f64, f64),
+    start: f64,
+    tolerance: f64,
+) -> Result<f64, SolveError> {
+    let mut x = start.clamp(low, high);
+    // Halving alone needs about fifty; the loop's end is a guard only.
+    for _ in 0..300 {
+        let (y, slope) = f(x);
+        if y.is_nan() {
+            return Err(SolveError::NotANumber { at: x });
+        }
+        if y == 0.0 {
+            return Ok(x);
+        }
+        if y < 0.0 {
+            low = x
+        } else {
+            high = x
+        }
+        let newton = x - y / slope;
+        let is_newton = slope > 0.0 && newton > low && newton < high;
+        let next = if is_newton {
+            newton
+        } else {
+            0.5 * (low + high)
+        };
+        let step = (next - x).abs();
+        x = next;
+        if (is_newton && step <= tolerance * x.abs()) || step <= 2.0 * f64::EPSILON * x.abs() {
+            return Ok(x);
+        }
+    }
+    Ok(x)
+}
+
 /// Places in `knots` (ascending) between which `f` changes sign, each solved.
 /// Finds every root that the knots separate.
 pub fn roots_between(mut f: impl FnMut(f64) -> f64, knots: &[f64], tolerance: f64) -> Vec<f64> {
@@ -144,6 +191,19 @@ mod tests {
             bracketed_root(|_| f64::NAN, -1.0, 1.0, 0.0),
             Err(SolveError::NotANumber { .. })
         ));
+    }
+
+    #[test]
+    fn newton_within_a_bracket_meets_steep_flat_and_bent_functions() {
+        let root = rising_root(|x| (x * x * x - 5.0, 3.0 * x * x), (0.0, 100.0), 100.0, 0.0);
+        assert!((root.expect("root") - 5f64.cbrt()).abs() < 1e-15 * 2.0);
+        let steep = |x: f64| ((50.0 * x).exp() - 1e10, 50.0 * (50.0 * x).exp());
+        let root = rising_root(steep, (0.0, 1.0), 0.0, 0.0).expect("root");
+        assert!((root - 10.0 * 10f64.ln() / 50.0).abs() < 1e-14);
+        // A slope of 0 at the start: halving takes over.
+        let root = rising_root(|x: f64| (x.powi(3), 3.0 * x * x), (-1.0, 3.0), 0.0, 0.0);
+        assert_eq!(root, Ok(0.0));
+        assert!(rising_root(|_| (f64::NAN, 1.0), (0.0, 1.0), 0.5, 0.0).is_err());
     }
 
     #[test]

@@ -2,7 +2,7 @@
 
 use super::model::Model;
 use super::{Fluid, FluidError, clamped};
-use crate::solve::{bracketed_root, roots_between};
+use crate::solve::{bracketed_root, rising_root, roots_between};
 use crate::units::{Density, Pressure, Temperature};
 
 /// What the inside of a sealed unit looks like.
@@ -226,11 +226,25 @@ impl Fluid {
         if isotherm(from) >= p {
             return Ok(Density::from_kilogram_per_cubic_metre(from).ok());
         }
-        let root = bracketed_root(|rho| isotherm(rho) - p, from, to, 1e-13 * to).map_err(|_| {
-            FluidError::NotConverged {
-                fluid: self.name.clone(),
-                temperature,
+        let root = match &self.model {
+            Model::Equation(equation) => {
+                let isotherm = equation.isotherm(t);
+                let m = self.molar_mass;
+                let gap = |rho: f64| {
+                    let (found, slope) = isotherm.pressure_and_slope(rho / m);
+                    (found - p, slope / m)
+                };
+                // A liquid from its saturated density, anything else from the ideal gas.
+                let ideal = p * m / (equation.data().gas_constant_j_per_mol_k * t);
+                let start = if liquid { from } else { ideal };
+                // After a step of 1e-8 an error of some 1e-16 is left.
+                rising_root(gap, (from, to), start, 1e-8)
             }
+            Model::Correlated(_) => bracketed_root(|rho| isotherm(rho) - p, from, to, 1e-13 * to),
+        };
+        let root = root.map_err(|_| FluidError::NotConverged {
+            fluid: self.name.clone(),
+            temperature,
         })?;
         Ok(Density::from_kilogram_per_cubic_metre(root).ok())
     }
