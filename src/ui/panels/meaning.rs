@@ -1,6 +1,6 @@
 //! The right column: the verdict, the window, the worst case, the findings.
 
-use eframe::egui::{Frame, Panel, RichText, Ui};
+use eframe::egui::{Align, Layout, RichText, Ui};
 
 use super::findings::findings_ui;
 use super::section::{column_ui, fact_ui, subheading_ui};
@@ -22,15 +22,18 @@ pub fn meaning_ui(
 ) {
     verdict_badge(ui, Badge::from(a.verdict), words::verdict(a.verdict));
     ui.add_space(4.0);
-    Panel::bottom("care")
-        .frame(Frame::NONE)
-        .resizable(false)
-        .show(ui, cautions_ui);
-    column_ui(ui, "meaning", |ui| {
-        charge_ui(ui, design, a, units);
-        worst_ui(ui, a, units);
-        subheading_ui(ui, "Findings, worst first");
-        findings_ui(ui, &a.findings, &design.chamber, units, out);
+    // From below: the care keeps its place, the rest scrolls in what is left. (A panel
+    // would do, but costs the first frame a second pass.)
+    ui.with_layout(Layout::bottom_up(Align::Min), |ui| {
+        cautions_ui(ui);
+        ui.with_layout(Layout::top_down(Align::Min), |ui| {
+            column_ui(ui, "meaning", |ui| {
+                charge_ui(ui, design, a, units);
+                worst_ui(ui, a, units);
+                subheading_ui(ui, "Findings, worst first");
+                findings_ui(ui, &a.findings, &design.chamber, units, out);
+            });
+        });
     });
 }
 
@@ -146,9 +149,10 @@ fn worst_ui(ui: &mut Ui, a: &Assessment, units: &Units) {
 /// Always in sight: they cannot be scrolled or clicked away.
 fn cautions_ui(ui: &mut Ui) {
     let faint = Palette::in_use(ui).text_faint;
-    ui.spacing_mut().item_spacing.y = 1.0;
-    ui.add_space(4.0);
-    for caution in words::CAUTIONS {
+    let spacing = std::mem::replace(&mut ui.spacing_mut().item_spacing.y, 1.0);
+    for caution in words::CAUTIONS.iter().rev() {
         ui.label(RichText::new(*caution).small().color(faint));
     }
+    ui.spacing_mut().item_spacing.y = spacing;
+    ui.separator();
 }
