@@ -454,3 +454,59 @@ fn a_value_half_typed_is_saved_too() {
     let saved = store::load(&path).expect("saved");
     assert!((saved.conditions.hottest.celsius() - 105.0).abs() < 1e-9);
 }
+
+#[test]
+fn columns_and_recent_files_are_remembered() {
+    let folder = Folder::new("columns");
+    let path = preset(&folder, "refrigerant-vessel");
+    let narrow = chargewright::ui::Settings {
+        left_column: 270.0,
+        ..Default::default()
+    };
+    let wide = chargewright::ui::Settings {
+        left_column: 380.0,
+        ..Default::default()
+    };
+    let right_edge = |settings: &chargewright::ui::Settings| {
+        settings.save(Some(&folder.0));
+        let harness = window(None, Some(&folder.0));
+        harness
+            .get_by_role_and_label(Role::TextInput, "Hottest")
+            .rect()
+            .right()
+    };
+    let (narrow, wide) = (right_edge(&narrow), right_edge(&wide));
+    assert!((wide - narrow - 110.0).abs() < 2.0, "{narrow} {wide}");
+
+    drop(window(Some(&path), Some(&folder.0)));
+    let remembered = chargewright::ui::Settings::load(Some(&folder.0));
+    assert_eq!(remembered.recent, [path]);
+}
+
+#[test]
+fn the_whole_window_is_enlarged_by_key_and_by_menu() {
+    let mut harness = window(None, None);
+    harness.key_press_modifiers(Modifiers::COMMAND, Key::Plus);
+    harness.run();
+    let by_key = harness.ctx.zoom_factor();
+    assert!(by_key > 1.0);
+    order(&mut harness, Command::ZoomIn);
+    assert!(harness.ctx.zoom_factor() > by_key);
+    order(&mut harness, Command::ZoomReset);
+    assert_eq!(harness.ctx.zoom_factor(), 1.0);
+}
+
+#[test]
+fn the_charge_is_dragged_and_everything_follows() {
+    let mut harness = window(None, None);
+    let before = app(&mut harness).desk().design.clone();
+    let charge = harness.get_by_role_and_label(Role::Slider, "charge");
+    charge.focus();
+    harness.run();
+    harness.key_press(Key::ArrowRight);
+    harness.run();
+    let app = app(&mut harness);
+    assert_ne!(app.desk().design.charge, before.charge);
+    let charge = app.desk().assessment().charge.clone().expect("a charge");
+    assert!(charge.nominal.kilogram() > 0.0045);
+}
