@@ -74,7 +74,6 @@ pub fn behaviour_ui(
         ui.selectable_value(&mut state.tab, Tab::Behaviour, "Behaviour");
         ui.selectable_value(&mut state.tab, Tab::Sheet, "Sheet");
         if state.tab == Tab::Behaviour {
-            ui.separator();
             picture_selector(ui, state);
         }
     });
@@ -92,6 +91,7 @@ fn picture_selector(ui: &mut Ui, state: &mut Behaviour) {
     if ui.available_width() > WIDE - SELECTOR && alone.is_none() {
         return;
     }
+    ui.separator();
     if let Some(picture) = alone {
         ui.label(picture.name());
         return;
