@@ -74,8 +74,6 @@ pub enum ConditionFault {
     },
     #[error("a pressure outside the wall is below zero")]
     OutsideBelowZero { pressure: Pressure },
-    #[error("the room has no volume")]
-    NoRoom,
 }
 
 impl Conditions {

@@ -326,26 +326,26 @@ fn flush_folder(folder: &Path) {
     }
 }
 
-/// Name and text of the ready designs, in order of their file names.
+/// The ready designs with their names, in order of their file names.
 pub fn presets() -> impl Iterator<Item = (&'static str, Design)> {
-    PRESET_FILES.iter().map(|(name, text)| {
-        (
-            *name,
-            from_text(text).unwrap_or_else(|error| panic!("the ready design {name}: {error}")),
-        )
-    })
+    PRESET_FILES
+        .iter()
+        .map(|(name, text)| (*name, ready(name, text)))
 }
 
-/// Titles of the ready designs need no parsing of the rest: their file names.
+/// Names of the ready designs; parses nothing.
 pub fn preset_names() -> impl Iterator<Item = &'static str> {
     PRESET_FILES.iter().map(|(name, _)| *name)
 }
 
 /// One ready design by its file name.
 pub fn preset(name: &str) -> Option<Design> {
-    presets()
-        .find(|(known, _)| *known == name)
-        .map(|(_, design)| design)
+    let (name, text) = PRESET_FILES.iter().find(|(known, _)| *known == name)?;
+    Some(ready(name, text))
+}
+
+fn ready(name: &str, text: &str) -> Design {
+    from_text(text).unwrap_or_else(|error| panic!("the ready design {name}: {error}"))
 }
 
 /// Modification time and length: whether a file changed on disk.

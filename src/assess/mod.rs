@@ -17,6 +17,7 @@ use crate::chamber::{Envelope, Materials, Volumes};
 use crate::design::Design;
 use crate::fluid::{Catalog, DomeSide, Fluid, FluidError, Regime};
 use crate::hazard::{EnergyError, Release, release, rupture_energy};
+use crate::sealed::SealedUnit;
 use crate::units::{Energy, Mass, Pressure, Temperature};
 
 pub use charge::{ChargeFigures, Corners};
@@ -113,31 +114,17 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         (Ok(charge), Ok(volumes)) => charge::corners(&fluid, charge, volumes),
         (Err(missing), _) | (_, Err(missing)) => Err(missing.clone()),
     };
-    let with = |missing: &Missing| missing.clone();
-    let events = corners
-        .as_ref()
-        .map_err(with)
-        .and_then(|c| events(c, &walls));
-    let heaviest_full_at = corners
-        .as_ref()
-        .map_err(with)
-        .and_then(|c| side_of(&c.heaviest, DomeSide::Liquid));
-    let heaviest_over_at = corners
-        .as_ref()
-        .map_err(with)
+    let with_corners = || corners.as_ref().map_err(Missing::clone);
+    let events = with_corners().and_then(|c| events(c, &walls));
+    let heaviest_full_at = with_corners().and_then(|c| side_of(&c.heaviest, DomeSide::Liquid));
+    let heaviest_over_at = with_corners()
         .and_then(|c| reaches_allowable(&c.heaviest, &walls, fluid.pressure_uncertainty()));
-    let lightest_dry_at = corners
-        .as_ref()
-        .map_err(with)
-        .and_then(|c| match &c.lightest {
-            Some(unit) => side_of(unit, DomeSide::Vapour),
-            // A charge that may be nothing has a finding of its own.
-            None => Ok(None),
-        });
-    let worst = corners
-        .as_ref()
-        .map_err(with)
-        .and_then(|c| worst::worst_case(design, c, &walls));
+    let lightest_dry_at = with_corners().and_then(|c| match &c.lightest {
+        Some(unit) => side_of(unit, DomeSide::Vapour),
+        // A charge that may be nothing has a finding of its own.
+        None => Ok(None),
+    });
+    let worst = with_corners().and_then(|c| worst::worst_case(design, c, &walls));
     let walls_known = match &worst {
         Ok(case) => case
             .weakest
@@ -148,9 +135,9 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
     };
     let window = volumes
         .as_ref()
-        .map_err(with)
+        .map_err(Missing::clone)
         .and_then(|v| window::window(design, &fluid, v, &walls_known));
-    let charts = corners.as_ref().map_err(with).map(|c| {
+    let charts = with_corners().map(|c| {
         let kinks: Vec<Temperature> = events
             .iter()
             .flatten()
@@ -164,12 +151,9 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
     });
     let release = charge
         .as_ref()
-        .map_err(with)
+        .map_err(Missing::clone)
         .and_then(|c| release(&fluid, c.greatest, &design.room).ok_or(Missing::NoRoom));
-    let rupture = corners
-        .as_ref()
-        .map_err(with)
-        .map(|c| rupture_energy(&c.heaviest, design.conditions.hottest));
+    let rupture = with_corners().map(|c| rupture_energy(&c.heaviest, design.conditions.hottest));
     let mut assessment = Assessment {
         fluid,
         volumes,
@@ -197,14 +181,14 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
 impl Assessment {
     /// Allowable and burst pressure of the weakest part at a temperature, absolute.
     pub fn limits_at(&self, temperature: Temperature) -> Option<(Pressure, Option<Pressure>)> {
-        let walls = Walls {
-            envelope: &self.envelope,
-            least_outside: self.least_outside,
-            knots: Vec::new(),
-        };
         let weakest = self.envelope.weakest(temperature).ok()?;
-        let burst = weakest.burst.ok().map(|burst| walls.absolute(burst));
-        Some((walls.absolute(weakest.allowable.pressure), burst))
+        let burst = weakest.burst.ok().map(|burst| self.absolute(burst));
+        Some((self.absolute(weakest.allowable.pressure), burst))
+    }
+
+    /// A load on the wall as an absolute inside pressure.
+    pub fn absolute(&self, load: Pressure) -> Pressure {
+        worst::absolute(load, self.least_outside)
     }
 
     /// The charge nearest to the present one that the window allows.
@@ -217,7 +201,7 @@ impl Assessment {
 /// The temperature at which a unit leaves the dome by this side: its hottest crossing,
 /// since water may touch its liquid line near 4 °C as well. A unit that is on that
 /// side wherever the fluid is liquid is so from the lowest temperature on.
-fn side_of(unit: &crate::sealed::SealedUnit, side: DomeSide) -> Figure<Option<Temperature>> {
+fn side_of(unit: &SealedUnit, side: DomeSide) -> Figure<Option<Temperature>> {
     let crossings = unit.crossings()?;
     let fluid = unit.fluid();
     if crossings.is_empty() {
@@ -248,7 +232,7 @@ fn side_of(unit: &crate::sealed::SealedUnit, side: DomeSide) -> Figure<Option<Te
 /// The lowest temperature at which a unit's pressure, a share of it added, reaches the
 /// allowable.
 fn reaches_allowable(
-    unit: &crate::sealed::SealedUnit,
+    unit: &SealedUnit,
     walls: &Walls<'_>,
     added: f64,
 ) -> Figure<Option<Temperature>> {

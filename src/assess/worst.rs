@@ -45,8 +45,13 @@ impl Walls<'_> {
 
     /// A load on the wall as an absolute inside pressure.
     pub fn absolute(&self, load: Pressure) -> Pressure {
-        Pressure::from_pascal(load.pascal() + self.least_outside.pascal()).unwrap_or(load)
+        absolute(load, self.least_outside)
     }
+}
+
+/// A load on the wall and what stands outside it, together the pressure inside.
+pub fn absolute(load: Pressure, outside: Pressure) -> Pressure {
+    Pressure::from_pascal(load.pascal() + outside.pascal()).unwrap_or(load)
 }
 
 /// The governing condition of the heaviest corner.

@@ -68,11 +68,7 @@ pub enum FluidFileError {
 /// # Errors
 /// [`FluidFileError`] says what is wrong and where.
 pub fn parse(text: &str) -> Result<Fluid, FluidFileError> {
-    // Option fields may be given bare or in Some(..).
-    let options = ron::Options::default();
-    let file: FluidFile = options
-        .from_str(text)
-        .map_err(|e| FluidFileError::Syntax(Box::new(e)))?;
+    let file: FluidFile = ron::from_str(text).map_err(|e| FluidFileError::Syntax(Box::new(e)))?;
     if file.format != FORMAT {
         return Err(FluidFileError::Format { found: file.format });
     }

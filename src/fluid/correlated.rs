@@ -18,8 +18,8 @@ use crate::source::Source;
 
 /// Above this share of the critical temperature the model is refused.
 pub const HIGHEST_REDUCED_TEMPERATURE: f64 = 0.95;
-/// CODATA 2018, exact.
-const GAS_CONSTANT: f64 = 8.314_462_618_153_24;
+/// J/(mol K), CODATA 2018, exact.
+pub const GAS_CONSTANT: f64 = 8.314_462_618_153_24;
 
 /// A correlated fluid as its asset carries it; every form with range and source.
 #[derive(Debug, Clone, PartialEq, Deserialize)]
@@ -197,21 +197,32 @@ impl Correlated {
         }
     }
 
-    /// Pressure of vapour at ρ ≤ ρ″, Pa.
-    pub fn vapour_pressure_at(&self, density: f64, temperature: f64, molar_mass: f64) -> f64 {
-        let pair = self.saturation(temperature, molar_mass);
-        let ideal = |rho: f64| rho * GAS_CONSTANT / molar_mass * temperature;
-        let b = (pair.pressure / ideal(pair.vapour) - 1.0) / pair.vapour;
-        ideal(density) * (1.0 + b * density)
+    /// Pressure and its slope over density of vapour at ρ ≤ ρ″, Pa and Pa m³/kg.
+    pub fn vapour_isotherm(&self, t: f64, molar_mass: f64) -> impl Fn(f64) -> (f64, f64) + use<> {
+        let pair = self.saturation(t, molar_mass);
+        let rt = GAS_CONSTANT / molar_mass * t;
+        let b = (pair.pressure / (rt * pair.vapour) - 1.0) / pair.vapour;
+        move |density| {
+            (
+                density * rt * (1.0 + b * density),
+                rt * (1.0 + 2.0 * b * density),
+            )
+        }
     }
 
-    /// Pressure of compressed liquid at ρ ≥ ρ′, Pa.
+    /// Pressure and its slope over density of compressed liquid at ρ ≥ ρ′.
     ///
     /// 1/ρ = (1/ρ′)(1 − C ln((B + p)/(B + p_s))), solved for p.
-    pub fn liquid_pressure_at(&self, density: f64, temperature: f64, molar_mass: f64) -> f64 {
-        let pair = self.saturation(temperature, molar_mass);
-        let (b, c) = self.tait(temperature);
-        (b + pair.pressure) * ((1.0 - pair.liquid / density) / c).exp() - b
+    pub fn liquid_isotherm(&self, t: f64, molar_mass: f64) -> impl Fn(f64) -> (f64, f64) + use<> {
+        let pair = self.saturation(t, molar_mass);
+        let (b, c) = self.tait(t);
+        move |density| {
+            let squeezed = (b + pair.pressure) * ((1.0 - pair.liquid / density) / c).exp();
+            (
+                squeezed - b,
+                squeezed * pair.liquid / (c * density * density),
+            )
+        }
     }
 
     /// B (Pa) and C of the compressed-liquid form.

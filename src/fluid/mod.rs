@@ -245,22 +245,50 @@ impl Fluid {
         )
     }
 
+    fn not_frozen(&self, temperature: Temperature) -> Result<(), FluidError> {
+        let melting = self.freezing_point();
+        if temperature >= melting {
+            return Ok(());
+        }
+        let fluid = self.name.clone();
+        Err(FluidError::Frozen {
+            fluid,
+            temperature,
+            melting,
+        })
+    }
+
+    fn not_below(&self, low: Temperature, temperature: Temperature) -> Result<(), FluidError> {
+        if temperature >= low {
+            return Ok(());
+        }
+        let fluid = self.name.clone();
+        Err(FluidError::TooCold {
+            fluid,
+            temperature,
+            low,
+        })
+    }
+
+    /// Inside the temperatures of the model.
+    fn not_outside(&self, temperature: Temperature) -> Result<(), FluidError> {
+        let (low, high) = self.range();
+        self.not_below(low, temperature)?;
+        if temperature <= high {
+            return Ok(());
+        }
+        let fluid = self.name.clone();
+        Err(FluidError::TooHot {
+            fluid,
+            temperature,
+            high,
+        })
+    }
+
     fn saturation_allowed(&self, temperature: Temperature) -> Result<(), FluidError> {
         let (low, high) = self.saturation_range();
-        if temperature < self.freezing_point() {
-            return Err(FluidError::Frozen {
-                fluid: self.name.clone(),
-                temperature,
-                melting: self.freezing_point(),
-            });
-        }
-        if temperature < low {
-            return Err(FluidError::TooCold {
-                fluid: self.name.clone(),
-                temperature,
-                low,
-            });
-        }
+        self.not_frozen(temperature)?;
+        self.not_below(low, temperature)?;
         if temperature > high {
             let critical = clamped(self.critical().temperature_k);
             return Err(FluidError::NoSaturation {

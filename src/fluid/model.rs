@@ -134,20 +134,24 @@ impl Model {
         })
     }
 
-    /// Pressure of one phase on an isotherm; `liquid` tells a correlated fluid
-    /// which of its branches is meant.
-    pub fn isotherm(&self, t: f64, molar_mass: f64, liquid: bool) -> Box<dyn Fn(f64) -> f64 + '_> {
+    /// Pressure of one phase on an isotherm and its slope over density; `liquid` tells a
+    /// correlated fluid which of its branches is meant.
+    pub fn isotherm(
+        &self,
+        t: f64,
+        molar_mass: f64,
+        liquid: bool,
+    ) -> Box<dyn Fn(f64) -> (f64, f64) + '_> {
         match self {
             Self::Equation(equation) => {
                 let isotherm = equation.isotherm(t);
-                Box::new(move |density| isotherm.pressure(density / molar_mass))
+                Box::new(move |density| {
+                    let (p, slope) = isotherm.pressure_and_slope(density / molar_mass);
+                    (p, slope / molar_mass)
+                })
             }
-            Self::Correlated(model) if liquid => {
-                Box::new(move |density| model.liquid_pressure_at(density, t, molar_mass))
-            }
-            Self::Correlated(model) => {
-                Box::new(move |density| model.vapour_pressure_at(density, t, molar_mass))
-            }
+            Self::Correlated(model) if liquid => Box::new(model.liquid_isotherm(t, molar_mass)),
+            Self::Correlated(model) => Box::new(model.vapour_isotherm(t, molar_mass)),
         }
     }
 }

@@ -1,8 +1,9 @@
 //! The state at a density and a temperature: regime, pressure, how much is liquid.
 
+use super::correlated::GAS_CONSTANT;
 use super::model::Model;
 use super::{Fluid, FluidError, clamped};
-use crate::solve::{bracketed_root, rising_root, roots_between};
+use crate::solve::{rising_root, roots_between};
 use crate::units::{Density, Pressure, Temperature};
 
 /// What the inside of a sealed unit looks like.
@@ -56,21 +57,7 @@ impl Fluid {
         if temperature < self.freezing_point() {
             return self.frozen_state();
         }
-        let (low, high) = self.range();
-        if temperature < low {
-            return Err(FluidError::TooCold {
-                fluid: self.name.clone(),
-                temperature,
-                low,
-            });
-        }
-        if temperature > high {
-            return Err(FluidError::TooHot {
-                fluid: self.name.clone(),
-                temperature,
-                high,
-            });
-        }
+        self.not_outside(temperature)?;
         let critical = self.critical();
         if t >= critical.temperature_k {
             return self.single(Regime::Supercritical, density, temperature, None);
@@ -176,28 +163,8 @@ impl Fluid {
         pressure: Pressure,
         temperature: Temperature,
     ) -> Result<Option<Density>, FluidError> {
-        let (low, high) = self.range();
-        if temperature < self.freezing_point() {
-            return Err(FluidError::Frozen {
-                fluid: self.name.clone(),
-                temperature,
-                melting: self.freezing_point(),
-            });
-        }
-        if temperature < low {
-            return Err(FluidError::TooCold {
-                fluid: self.name.clone(),
-                temperature,
-                low,
-            });
-        }
-        if temperature > high {
-            return Err(FluidError::TooHot {
-                fluid: self.name.clone(),
-                temperature,
-                high,
-            });
-        }
+        self.not_frozen(temperature)?;
+        self.not_outside(temperature)?;
         let t = temperature.kelvin();
         let p = pressure.pascal();
         let critical = self.critical();
@@ -220,28 +187,21 @@ impl Fluid {
             (1e-9 * critical.density_kg_per_m3, most, false)
         };
         let isotherm = self.model.isotherm(t, self.molar_mass, liquid);
-        if isotherm(to) <= p {
+        let gap = |rho: f64| {
+            let (found, slope) = isotherm(rho);
+            (found - p, slope)
+        };
+        if gap(to).0 <= 0.0 {
             return Ok(None);
         }
-        if isotherm(from) >= p {
+        if gap(from).0 >= 0.0 {
             return Ok(Density::from_kilogram_per_cubic_metre(from).ok());
         }
-        let root = match &self.model {
-            Model::Equation(equation) => {
-                let isotherm = equation.isotherm(t);
-                let m = self.molar_mass;
-                let gap = |rho: f64| {
-                    let (found, slope) = isotherm.pressure_and_slope(rho / m);
-                    (found - p, slope / m)
-                };
-                // A liquid from its saturated density, anything else from the ideal gas.
-                let ideal = p * m / (equation.data().gas_constant_j_per_mol_k * t);
-                let start = if liquid { from } else { ideal };
-                // After a step of 1e-8 an error of some 1e-16 is left.
-                rising_root(gap, (from, to), start, 1e-8)
-            }
-            Model::Correlated(_) => bracketed_root(|rho| isotherm(rho) - p, from, to, 1e-13 * to),
-        };
+        // A liquid from its saturated density, anything else from the ideal gas. After a
+        // step of 1e-8 an error of some 1e-16 is left.
+        let ideal = p * self.molar_mass / (GAS_CONSTANT * t);
+        let start = if liquid { from } else { ideal };
+        let root = rising_root(gap, (from, to), start, 1e-8);
         let root = root.map_err(|_| FluidError::NotConverged {
             fluid: self.name.clone(),
             temperature,
@@ -305,11 +265,10 @@ impl Fluid {
                 high,
             });
         }
-        let p = self.model.isotherm(
-            temperature.kelvin(),
-            self.molar_mass,
-            regime == Regime::LiquidFull,
-        )(rho);
+        let liquid = regime == Regime::LiquidFull;
+        let (p, _) = self
+            .model
+            .isotherm(temperature.kelvin(), self.molar_mass, liquid)(rho);
         if p.is_nan() || p > most_pressure {
             let high = Pressure::from_pascal(most_pressure)
                 .expect("a fluid file's limits are checked when read");

@@ -4,10 +4,9 @@
 
 use crate::conditions::{Room, STANDARD_ATMOSPHERE_PA};
 use crate::fluid::Fluid;
+use crate::fluid::correlated::GAS_CONSTANT;
 use crate::units::Mass;
 
-/// CODATA 2018, exact.
-const GAS_CONSTANT: f64 = 8.314_462_618_153_24;
 /// Mole fraction of oxygen in dry air (U.S. Standard Atmosphere 1976).
 const OXYGEN: f64 = 0.209_476;
 

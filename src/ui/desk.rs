@@ -19,8 +19,6 @@ pub struct Desk {
     /// design restored from a draft that has no file.
     saved: Option<Design>,
     path: Option<PathBuf>,
-    /// The file as this program last saw it.
-    stamp: Option<Stamp>,
     history: History,
     library: Library,
     assessment: Assessment,
@@ -53,7 +51,6 @@ impl Desk {
         Self {
             saved: Some(design.clone()),
             path: None,
-            stamp: None,
             history: History::new(design.clone()),
             assessed: design.clone(),
             assessment,
@@ -218,12 +215,11 @@ impl Desk {
         self.drafts.remove();
     }
 
-    fn watch(&mut self) {
-        self.stamp = self.path.as_deref().and_then(store::stamp);
+    fn watch(&self) {
         if let Ok(mut watched) = self.watched.lock() {
             *watched = Watched {
                 path: self.path.clone(),
-                stamp: self.stamp,
+                stamp: self.path.as_deref().and_then(store::stamp),
                 changed: false,
             };
         }

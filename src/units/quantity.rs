@@ -131,8 +131,6 @@ quantities! {
     Ratio, Ratio, "a ratio", "", from_fraction, fraction, 0.0, 1.0;
     /// Energy.
     Energy, Energy, "an energy", "J", from_joule, joule, -1e18, 1e18;
-    /// Mass released into a volume, kg/m³ of room air.
-    MassRelease, Density, "a concentration", "kg/m3", from_kilogram_per_cubic_metre, kilogram_per_cubic_metre, 0.0, 1e9;
 }
 
 impl Temperature {

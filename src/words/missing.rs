@@ -201,7 +201,6 @@ pub fn condition_fault(fault: &ConditionFault, units: &Units) -> String {
                 units.show(*pressure)
             )
         }
-        ConditionFault::NoRoom => "The room has no volume.".to_owned(),
     }
 }
 

@@ -1,7 +1,7 @@
 //! Whether the charge fits the volume, the wall and the temperatures.
 
 use super::Judge;
-use crate::assess::finding::{Finding, FindingKind, Section, Severity};
+use crate::assess::finding::{FindingKind, Section, Severity};
 use crate::assess::window::Requirement;
 use crate::chamber::AllowableBasis;
 use crate::design::Duty;
@@ -15,10 +15,7 @@ impl Judge<'_> {
             return;
         };
         if *share > 1.0 {
-            let outside = self.design.conditions.least_outside.pascal();
-            let allowable =
-                crate::units::Pressure::from_pascal(weakest.allowable.pressure.pascal() + outside)
-                    .unwrap_or(weakest.allowable.pressure);
+            let allowable = self.a.absolute(weakest.allowable.pressure);
             let kind = FindingKind::OverAllowable {
                 pressure: case.pressure,
                 allowable,
@@ -234,13 +231,7 @@ impl Judge<'_> {
         if 1.1 * balance.kilogram() >= tolerance.kilogram() {
             let share = balance.kilogram() / tolerance.kilogram().max(f64::MIN_POSITIVE);
             let kind = FindingKind::BalanceTooCoarse { balance, tolerance };
-            self.found.push(Finding {
-                severity: Severity::Error,
-                section: Section::Bench,
-                kind,
-                share: Some(share.min(f64::MAX.sqrt())),
-                remedy: None,
-            });
+            self.add_share(Severity::Error, Section::Bench, kind, share);
         }
     }
 }
