@@ -8,6 +8,11 @@ fn main() {
     let root = env::var("CARGO_MANIFEST_DIR").expect("cargo sets it");
     let out = env::var("OUT_DIR").expect("cargo sets it");
     for (folder, constant, file) in [
+        (
+            "assets/compatibility",
+            "COMPATIBILITY_FILES",
+            "compatibility_files.rs",
+        ),
         ("assets/fluids", "FLUID_FILES", "fluid_files.rs"),
         ("assets/materials", "MATERIAL_FILES", "material_files.rs"),
         ("presets", "PRESET_FILES", "preset_files.rs"),

@@ -6,6 +6,8 @@ use serde::Deserialize;
 
 use crate::source::Source;
 
+include!(concat!(env!("OUT_DIR"), "/compatibility_files.rs"));
+
 /// How a pair gets on.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Deserialize)]
 pub enum Verdict {
@@ -31,16 +33,22 @@ pub struct Compatibility {
 }
 
 /// The table compiled in.
-#[derive(Debug, Clone, PartialEq, Deserialize)]
-#[serde(transparent)]
+#[derive(Debug, Clone, PartialEq)]
 pub struct CompatibilityTable(Vec<Compatibility>);
 
 impl CompatibilityTable {
     /// The table that comes with the program.
     pub fn built_in() -> &'static Self {
         static TABLE: LazyLock<CompatibilityTable> = LazyLock::new(|| {
-            ron::from_str(include_str!("../../assets/compatibility.ron"))
-                .expect("a test parses the table")
+            let rows = |text| {
+                ron::from_str::<Vec<Compatibility>>(text).expect("a test parses the table")
+            };
+            CompatibilityTable(
+                COMPATIBILITY_FILES
+                    .iter()
+                    .flat_map(|(_, text)| rows(text))
+                    .collect(),
+            )
         });
         &TABLE
     }

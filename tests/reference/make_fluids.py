@@ -5,7 +5,7 @@
     target/venv/bin/python tests/reference/make_fluids.py <folder with fluid-equations.json and correlation-coefficients.json>
 
 The coefficients are those that CoolProp 8.0.0 carries (see assets/fluids/NOTICE.txt). What a person has to know and cite
-(melting point, hazards, limits, the paper's own words) stands in fluid-facts.json. Two things are computed here:
+(melting point, hazards, limits) stands in facts/<id>.json, the papers and what they promise in papers.json. Two things are computed here:
 the equation's own critical point, and the highest density at which the equation may be asked. Only mpmath is needed.
 Running it twice writes the same bytes.
 """
@@ -297,15 +297,20 @@ def fluid_file(identity, facts, cas, molar_mass, model, tension):
     return "\n".join([first, *block("(", body, ")")]) + "\n"
 
 
+def read(path):
+    return json.loads((HERE / path).read_text(encoding="utf-8"))
+
+
 def main(data):
     data = pathlib.Path(data)
     equations = load_equations(data / "fluid-equations.json")
-    facts = json.loads((HERE / "fluid-facts.json").read_text(encoding="utf-8"))
-    papers, tension_papers = facts["papers"], facts["surface_tension_papers"]
+    papers = read("papers.json")
+    papers, tension_papers = papers["equations"], papers["surface_tension"]
     ASSETS.mkdir(parents=True, exist_ok=True)
     EQUATIONS.mkdir(parents=True, exist_ok=True)
 
-    for identity, fluid in facts["fluids"].items():
+    for path in sorted((HERE / "facts").glob("*.json")):
+        identity, fluid = path.stem, read(path)
         if fluid["data"] in equations:
             record = equations[fluid["data"]]
             cas, molar_mass = record["INFO"]["CAS"], record["EOS"][0]["molar_mass"]

@@ -9,7 +9,6 @@ written, and by CoolProp 8.0.0 in double precision, which must agree within AGRE
 coefficients and nothing else. Running it twice writes the same bytes.
 """
 
-import json
 import math
 import pathlib
 import random
@@ -19,7 +18,7 @@ import CoolProp
 from mpmath import findroot, mp, mpf
 
 from helmholtz import Equation, load_equations
-from make_fluids import HERE, TEST_ONLY, lower_limit, own_critical_point
+from make_fluids import HERE, TEST_ONLY, lower_limit, own_critical_point, read
 
 SATURATION_POINTS = 25
 NEAREST_TO_CRITICAL = 0.995
@@ -182,8 +181,8 @@ def write(path, header, columns, rows, **words):
 def main(data):
     mp.dps = 50
     equations = load_equations(pathlib.Path(data) / "fluid-equations.json")
-    facts = json.loads((HERE / "fluid-facts.json").read_text(encoding="utf-8"))["fluids"]
-    catalogue = {identity: fact["data"] for identity, fact in facts.items() if fact["data"] in equations}
+    names = {path.stem: read(path)["data"] for path in sorted((HERE / "facts").glob("*.json"))}
+    catalogue = {identity: name for identity, name in names.items() if name in equations}
     for names, prefix, by_mass, what, where in (
         (catalogue, "", True, "the catalogue's equation fluids", "assets/fluids/*.ron"),
         (TEST_ONLY, "extra-", False, "the test-only equations", "tests/reference/equations/*.ron"),

@@ -3,7 +3,7 @@
 The vapour pressure (Wagner 2.5/5) and liquid density (PPDS) of the VDI Heat Atlas,
 2nd ed., Springer 2010, table D3.1, as carried by chemicals 1.5.2, were fitted to data by
 others than the authors of the equations of state. The largest difference found here stands
-as the stated uncertainty of these fluids in fluid-facts.json.
+as the stated uncertainty of these fluids in facts/<id>.json.
 
     cargo build --no-default-features
     target/venv/bin/pip install chemicals==1.5.2
