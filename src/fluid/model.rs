@@ -2,7 +2,7 @@
 
 use super::correlated::Correlated;
 use super::curve::CurvePoint;
-use super::helmholtz::{CLOSEST_TO_CRITICAL, Equation, NotConverged};
+use super::helmholtz::{CLOSEST_TO_CRITICAL, Equation, Isotherm, NotConverged};
 
 /// What gives a fluid its properties.
 #[derive(Debug, Clone, PartialEq)]
@@ -116,9 +116,9 @@ impl Model {
     pub fn curve_point(&self, t: f64, molar_mass: f64) -> Result<CurvePoint, NotConverged> {
         Ok(match self {
             Self::Equation(equation) => {
-                let (liquid, vapour) = equation.saturated_densities(t)?;
+                let (pressure, liquid, vapour) = equation.saturated_state(t)?;
                 CurvePoint {
-                    pressure_pa: equation.isotherm(t).pressure(vapour),
+                    pressure_pa: pressure,
                     liquid_kg_per_m3: liquid * molar_mass,
                     vapour_kg_per_m3: vapour * molar_mass,
                 }
@@ -134,24 +134,37 @@ impl Model {
         })
     }
 
-    /// Pressure of one phase on an isotherm and its slope over density; `liquid` tells a
-    /// correlated fluid which of its branches is meant.
-    pub fn isotherm(
-        &self,
-        t: f64,
-        molar_mass: f64,
-        liquid: bool,
-    ) -> Box<dyn Fn(f64) -> (f64, f64) + '_> {
+    /// Pressure of one phase over density on an isotherm; `liquid` tells a correlated
+    /// fluid which of its branches is meant.
+    pub fn isotherm(&self, t: f64, molar_mass: f64, liquid: bool) -> PhaseIsotherm<'_> {
         match self {
-            Self::Equation(equation) => {
-                let isotherm = equation.isotherm(t);
-                Box::new(move |density| {
-                    let (p, slope) = isotherm.pressure_and_slope(density / molar_mass);
-                    (p, slope / molar_mass)
-                })
+            Self::Equation(equation) => PhaseIsotherm::Equation(equation.isotherm(t), molar_mass),
+            Self::Correlated(model) if liquid => {
+                PhaseIsotherm::Correlated(Box::new(model.liquid_isotherm(t, molar_mass)))
             }
-            Self::Correlated(model) if liquid => Box::new(model.liquid_isotherm(t, molar_mass)),
-            Self::Correlated(model) => Box::new(model.vapour_isotherm(t, molar_mass)),
+            Self::Correlated(model) => {
+                PhaseIsotherm::Correlated(Box::new(model.vapour_isotherm(t, molar_mass)))
+            }
+        }
+    }
+}
+
+/// One phase at one temperature.
+pub enum PhaseIsotherm<'a> {
+    /// With the molar mass in kg/mol.
+    Equation(Isotherm<'a>, f64),
+    Correlated(Box<dyn Fn(f64) -> (f64, f64)>),
+}
+
+impl PhaseIsotherm<'_> {
+    /// Pressure and its slope over density at a density in kg/m³: Pa and Pa m³/kg.
+    pub fn at(&self, density: f64) -> (f64, f64) {
+        match self {
+            Self::Equation(isotherm, molar_mass) => {
+                let (p, slope) = isotherm.pressure_and_slope(density / molar_mass);
+                (p, slope / molar_mass)
+            }
+            Self::Correlated(of_density) => of_density(density),
         }
     }
 }
