@@ -8,6 +8,7 @@ mod chart;
 mod figure;
 mod finding;
 mod judge;
+mod ranking;
 mod window;
 mod worst;
 
@@ -24,6 +25,7 @@ pub use charge::{ChargeFigures, Corners};
 pub use chart::{ChargeMap, Charts, LimitPoint, MapPoint};
 pub use figure::{Figure, Missing};
 pub use finding::{Finding, FindingKind, Section, Severity, Verdict};
+pub use ranking::{Objection, Ranked, rank};
 pub use window::{Bound, Requirement, Side, Window};
 pub use worst::{Walls, WorstCase};
 

@@ -130,6 +130,19 @@ impl SaturationCurve {
         }
     }
 
+    /// Slope of the vapour pressure over temperature, Pa/K, from the same powers.
+    pub fn slope_at(&self, temperature_k: f64) -> f64 {
+        let (piece, u) = self.piece(temperature_k);
+        let over_u = piece.coefficients[1..]
+            .iter()
+            .enumerate()
+            .rev()
+            .fold(0.0, |sum, (j, row)| sum * u + (j + 1) as f64 * row[0]);
+        // u = (x − middle)·scale and x² = 1 − T/T_c.
+        let x = piece.middle + u / piece.scale;
+        -over_u * piece.scale / (2.0 * x * self.critical_temperature_k)
+    }
+
     /// The piece for a temperature and the place in it, −1 to 1.
     fn piece(&self, temperature_k: f64) -> (&Piece, f64) {
         let x = (1.0 - temperature_k / self.critical_temperature_k)

@@ -218,6 +218,15 @@ impl Fluid {
         Ok(Pressure::from_pascal(p).expect("a vapour pressure is finite"))
     }
 
+    /// Slope of the vapour pressure in Pa/K, from the expansions.
+    ///
+    /// # Errors
+    /// As [`Self::saturation`].
+    pub fn saturation_slope(&self, temperature: Temperature) -> Result<f64, FluidError> {
+        self.saturation_allowed(temperature)?;
+        Ok(self.curve()?.slope_at(temperature.kelvin()))
+    }
+
     /// Surface tension in N/m, where known.
     pub fn surface_tension(&self, temperature: Temperature) -> Option<f64> {
         let form = self.surface_tension.as_ref()?;
