@@ -236,8 +236,8 @@ impl Fluid {
         })
     }
 
-    /// Mass of atom pairs over the mass of the saturated vapour; `None` for a vapour of one
-    /// kind, and outside the saturation.
+    /// Mass in molecules of two atoms over the mass of the saturated vapour; `None` for a
+    /// vapour that does not associate, and outside the saturation.
     pub fn dimer_mass_fraction(&self, temperature: Temperature) -> Option<f64> {
         let Model::Correlated(model) = &self.model else {
             return None;
@@ -247,7 +247,7 @@ impl Fluid {
         let vapour = model.saturation(t, self.molar_mass).vapour;
         model
             .vapour_isotherm(t, self.molar_mass)
-            .dimer_mass_fraction(vapour)
+            .mass_fraction(2.0, vapour)
     }
 
     /// Greatest density given, kg/m³, and greatest pressure.
