@@ -215,7 +215,7 @@ fn on_contour(
     let Ok(limit) = walls.allowable_pressure(temperature) else {
         return Ok(None);
     };
-    let density = fluid.density_at(limit, temperature)?;
+    let density = fluid.densest_within(limit, temperature)?;
     Ok(density.and_then(|density| {
         let kilogram = density.kilogram_per_cubic_metre() * volume.cubic_metre();
         Mass::from_kilogram(kilogram)

@@ -236,6 +236,20 @@ impl Fluid {
         })
     }
 
+    /// Mass of atom pairs over the mass of the saturated vapour; `None` for a vapour of one
+    /// kind, and outside the saturation.
+    pub fn dimer_mass_fraction(&self, temperature: Temperature) -> Option<f64> {
+        let Model::Correlated(model) = &self.model else {
+            return None;
+        };
+        self.saturation_allowed(temperature).ok()?;
+        let t = temperature.kelvin();
+        let vapour = model.saturation(t, self.molar_mass).vapour;
+        model
+            .vapour_isotherm(t, self.molar_mass)
+            .dimer_mass_fraction(vapour)
+    }
+
     /// Greatest density given, kg/m³, and greatest pressure.
     pub fn limits(&self) -> (Option<Density>, Pressure) {
         let (pressure, density) = self.model.limits(self.molar_mass);

@@ -86,6 +86,14 @@ impl Model {
         }
     }
 
+    /// Why the pressure of the liquid-full state is not known, where it is not.
+    pub fn no_compressed_liquid(&self) -> Option<&str> {
+        match self {
+            Self::Equation(_) => None,
+            Self::Correlated(model) => model.compressed_liquid.not_known(),
+        }
+    }
+
     /// Saturation by the direct solve, inside [`Self::saturation_range_k`].
     pub fn saturation(&self, t: f64, molar_mass: f64) -> Result<SaturationPoint, NotConverged> {
         Ok(match self {
@@ -135,14 +143,14 @@ impl Model {
     }
 
     /// Pressure of one phase on an isotherm and its slope over density; `liquid` tells a
-    /// correlated fluid which of its branches is meant.
+    /// correlated fluid which of its branches is meant. `None` where that branch is not known.
     pub fn isotherm(
         &self,
         t: f64,
         molar_mass: f64,
         liquid: bool,
-    ) -> Box<dyn Fn(f64) -> (f64, f64) + '_> {
-        match self {
+    ) -> Option<Box<dyn Fn(f64) -> (f64, f64) + '_>> {
+        Some(match self {
             Self::Equation(equation) => {
                 let isotherm = equation.isotherm(t);
                 Box::new(move |density| {
@@ -150,8 +158,14 @@ impl Model {
                     (p, slope / molar_mass)
                 })
             }
-            Self::Correlated(model) if liquid => Box::new(model.liquid_isotherm(t, molar_mass)),
-            Self::Correlated(model) => Box::new(model.vapour_isotherm(t, molar_mass)),
-        }
+            Self::Correlated(model) if liquid => {
+                let isotherm = model.liquid_isotherm(t, molar_mass)?;
+                Box::new(move |density| isotherm.pressure_and_slope(density))
+            }
+            Self::Correlated(model) => {
+                let isotherm = model.vapour_isotherm(t, molar_mass);
+                Box::new(move |density| isotherm.pressure_and_slope(density))
+            }
+        })
     }
 }
