@@ -47,7 +47,7 @@ class Choice:
     extra_pressures: dict = field(default_factory=dict)  # name: (form, lowest, highest)
     extra_densities: dict = field(default_factory=dict)
     least_pressure_uncertainty: float = 0.0  # percent, where the rows compared are not independent enough
-    least_density_uncertainty: float = 0.0
+    least_density_uncertainty: float = 0.3  # the tables share their data; handbooks differ by this at 20 degC
     least_heat_uncertainty: float = 0.0
 
 
