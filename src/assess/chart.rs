@@ -218,7 +218,7 @@ fn allowable_line(
         };
         let near = near.and_then(|rho| Density::from_kilogram_per_cubic_metre(rho).ok());
         let found = fluid
-            .density_near(limit, temperature, near)?
+            .densest_within(limit, temperature, near)?
             .map(Density::kilogram_per_cubic_metre);
         line.extend(found.and_then(|rho| at(rho, temperature)));
         behind = [behind[1], found];

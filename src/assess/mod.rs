@@ -213,9 +213,14 @@ fn side_of(unit: &SealedUnit, side: DomeSide) -> Figure<Option<Temperature>> {
         let is_there = match (unit.state(low), side) {
             (Ok(state), DomeSide::Liquid) => state.regime == Regime::LiquidFull,
             (Ok(state), DomeSide::Vapour) => state.regime == Regime::AllVapour,
-            (Err(FluidError::TooDense { .. } | FluidError::PressureTooHigh { .. }), side) => {
-                side == DomeSide::Liquid
-            }
+            (
+                Err(
+                    FluidError::TooDense { .. }
+                    | FluidError::PressureTooHigh { .. }
+                    | FluidError::NoCompressedLiquid { .. },
+                ),
+                side,
+            ) => side == DomeSide::Liquid,
             _ => false,
         };
         return Ok(is_there.then_some(low));

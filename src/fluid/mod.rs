@@ -245,6 +245,20 @@ impl Fluid {
         })
     }
 
+    /// Mass in molecules of two atoms over the mass of the saturated vapour; `None` for a
+    /// vapour that does not associate, and outside the saturation.
+    pub fn dimer_mass_fraction(&self, temperature: Temperature) -> Option<f64> {
+        let Model::Correlated(model) = &self.model else {
+            return None;
+        };
+        self.saturation_allowed(temperature).ok()?;
+        let t = temperature.kelvin();
+        let vapour = model.saturation(t, self.molar_mass).vapour;
+        model
+            .vapour_isotherm(t, self.molar_mass)
+            .mass_fraction(2.0, vapour)
+    }
+
     /// Greatest density given, kg/m³, and greatest pressure.
     pub fn limits(&self) -> (Option<Density>, Pressure) {
         let (pressure, density) = self.model.limits(self.molar_mass);

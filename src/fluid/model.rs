@@ -1,6 +1,6 @@
 //! The two kinds of model behind one interface, in SI mass units and f64.
 
-use super::correlated::Correlated;
+use super::correlated::{Correlated, LiquidIsotherm, VapourIsotherm};
 use super::curve::CurvePoint;
 use super::helmholtz::{CLOSEST_TO_CRITICAL, Equation, Isotherm, NotConverged};
 
@@ -86,6 +86,14 @@ impl Model {
         }
     }
 
+    /// Why the pressure of the liquid-full state is not known, where it is not.
+    pub fn no_compressed_liquid(&self) -> Option<&str> {
+        match self {
+            Self::Equation(_) => None,
+            Self::Correlated(model) => model.compressed_liquid.not_known(),
+        }
+    }
+
     /// Saturation by the direct solve, inside [`Self::saturation_range_k`].
     pub fn saturation(&self, t: f64, molar_mass: f64) -> Result<SaturationPoint, NotConverged> {
         Ok(match self {
@@ -135,17 +143,15 @@ impl Model {
     }
 
     /// Pressure of one phase over density on an isotherm; `liquid` tells a correlated
-    /// fluid which of its branches is meant.
-    pub fn isotherm(&self, t: f64, molar_mass: f64, liquid: bool) -> PhaseIsotherm<'_> {
-        match self {
+    /// fluid which of its branches is meant. `None` where that branch is not known.
+    pub fn isotherm(&self, t: f64, molar_mass: f64, liquid: bool) -> Option<PhaseIsotherm<'_>> {
+        Some(match self {
             Self::Equation(equation) => PhaseIsotherm::Equation(equation.isotherm(t), molar_mass),
             Self::Correlated(model) if liquid => {
-                PhaseIsotherm::Correlated(Box::new(model.liquid_isotherm(t, molar_mass)))
+                PhaseIsotherm::Liquid(model.liquid_isotherm(t, molar_mass)?)
             }
-            Self::Correlated(model) => {
-                PhaseIsotherm::Correlated(Box::new(model.vapour_isotherm(t, molar_mass)))
-            }
-        }
+            Self::Correlated(model) => PhaseIsotherm::Vapour(model.vapour_isotherm(t, molar_mass)),
+        })
     }
 }
 
@@ -153,7 +159,8 @@ impl Model {
 pub enum PhaseIsotherm<'a> {
     /// With the molar mass in kg/mol.
     Equation(Isotherm<'a>, f64),
-    Correlated(Box<dyn Fn(f64) -> (f64, f64)>),
+    Liquid(LiquidIsotherm),
+    Vapour(VapourIsotherm),
 }
 
 impl PhaseIsotherm<'_> {
@@ -164,7 +171,8 @@ impl PhaseIsotherm<'_> {
                 let (p, slope) = isotherm.pressure_and_slope(density / molar_mass);
                 (p, slope / molar_mass)
             }
-            Self::Correlated(of_density) => of_density(density),
+            Self::Liquid(isotherm) => isotherm.pressure_and_slope(density),
+            Self::Vapour(isotherm) => isotherm.pressure_and_slope(density),
         }
     }
 }

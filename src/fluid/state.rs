@@ -157,7 +157,7 @@ impl Fluid {
     /// with a superheated vapour.
     ///
     /// # Errors
-    /// [`FluidError`] outside the model's temperatures, or frozen.
+    /// [`FluidError`] outside the model's temperatures, frozen, or of an unknown compressed liquid.
     pub fn density_at(
         &self,
         pressure: Pressure,
@@ -199,7 +199,7 @@ impl Fluid {
         } else {
             (1e-9 * critical.density_kg_per_m3, most, false)
         };
-        let isotherm = self.model.isotherm(t, self.molar_mass, liquid);
+        let isotherm = self.isotherm(temperature, liquid)?;
         let gap = |rho: f64| {
             let (found, slope) = isotherm.at(rho);
             (found - p, slope)
@@ -226,6 +226,26 @@ impl Fluid {
             .filter(|_| !is_out))
     }
 
+    /// As [`Self::density_near`], but where the pressure of a liquid-full unit is not known
+    /// it answers with the saturated liquid: nothing denser is known to stay within.
+    ///
+    /// # Errors
+    /// [`FluidError`] outside the model's temperatures, or frozen.
+    pub fn densest_within(
+        &self,
+        pressure: Pressure,
+        temperature: Temperature,
+        near: Option<Density>,
+    ) -> Result<Option<Density>, FluidError> {
+        match self.density_near(pressure, temperature, near) {
+            Err(FluidError::NoCompressedLiquid { .. }) => {
+                let liquid = self.curve()?.at(temperature.kelvin()).liquid_kg_per_m3;
+                Ok(Density::from_kilogram_per_cubic_metre(liquid).ok())
+            }
+            answer => answer,
+        }
+    }
+
     /// Specific internal energy and entropy of a homogeneous state, J/kg and J/(kg K).
     ///
     /// # Errors
@@ -247,6 +267,24 @@ impl Fluid {
                 fluid: self.name.clone(),
             }),
         }
+    }
+
+    /// One branch at one temperature, Pa and Pa m³/kg over kg/m³.
+    fn isotherm(
+        &self,
+        temperature: Temperature,
+        liquid: bool,
+    ) -> Result<Box<dyn Fn(f64) -> (f64, f64) + '_>, FluidError> {
+        self.model
+            .isotherm(temperature.kelvin(), self.molar_mass, liquid)
+            .ok_or_else(|| FluidError::NoCompressedLiquid {
+                fluid: self.name.clone(),
+                reason: self
+                    .model
+                    .no_compressed_liquid()
+                    .unwrap_or_default()
+                    .to_owned(),
+            })
     }
 
     fn frozen_state(&self) -> Result<State, FluidError> {
@@ -283,10 +321,7 @@ impl Fluid {
             });
         }
         let liquid = regime == Regime::LiquidFull;
-        let (p, _) = self
-            .model
-            .isotherm(temperature.kelvin(), self.molar_mass, liquid)
-            .at(rho);
+        let (p, _) = self.isotherm(temperature, liquid)?.at(rho);
         if p.is_nan() || p > most_pressure {
             let high = Pressure::from_pascal(most_pressure)
                 .expect("a fluid file's limits are checked when read");
