@@ -40,9 +40,8 @@ impl CompatibilityTable {
     /// The table that comes with the program.
     pub fn built_in() -> &'static Self {
         static TABLE: LazyLock<CompatibilityTable> = LazyLock::new(|| {
-            let rows = |text| {
-                ron::from_str::<Vec<Compatibility>>(text).expect("a test parses the table")
-            };
+            let rows =
+                |text| ron::from_str::<Vec<Compatibility>>(text).expect("a test parses the table");
             CompatibilityTable(
                 COMPATIBILITY_FILES
                     .iter()
