@@ -153,7 +153,7 @@ impl<'a> Yardstick<'a> {
                 .map_err(|_| Missing::NoCharge)
         });
         let mut ranked = Ranked {
-            merit: fluid.merit(self.middle),
+            merit: None,
             fluid,
             mass,
             at_hottest,

@@ -1,7 +1,7 @@
 //! The state at a density and a temperature: regime, pressure, how much is liquid.
 
 use super::correlated::GAS_CONSTANT;
-use super::model::Model;
+use super::model::{Model, PhaseIsotherm};
 use super::{Fluid, FluidError, clamped};
 use crate::solve::{rising_root, roots_between};
 use crate::units::{Density, Pressure, Temperature};
@@ -274,7 +274,7 @@ impl Fluid {
         &self,
         temperature: Temperature,
         liquid: bool,
-    ) -> Result<Box<dyn Fn(f64) -> (f64, f64) + '_>, FluidError> {
+    ) -> Result<PhaseIsotherm<'_>, FluidError> {
         self.model
             .isotherm(temperature.kelvin(), self.molar_mass, liquid)
             .ok_or_else(|| FluidError::NoCompressedLiquid {

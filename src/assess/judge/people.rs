@@ -234,6 +234,14 @@ impl Judge<'_> {
     }
 
     pub(super) fn provenance(&mut self) {
+        if let Some(own) = self.a.fluid.own_file() {
+            let file = own.name.clone();
+            self.add(
+                Severity::Warning,
+                Section::Fluid,
+                FindingKind::OwnFluid { file },
+            );
+        }
         if let Model::Correlated(model) = self.a.fluid.model() {
             let percent = 100.0 * model.pressure_uncertainty();
             self.add(
