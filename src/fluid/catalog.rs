@@ -149,7 +149,10 @@ impl Catalog {
     pub fn ready(&self) -> impl Iterator<Item = Arc<Fluid>> + '_ {
         let built_in = self.built_in.iter().filter_map(|slot| slot.fluid.get());
         let own = self.own.iter().map(|(_, fluid)| fluid);
-        built_in.chain(own).filter(|fluid| fluid.has_curve()).map(Arc::clone)
+        built_in
+            .chain(own)
+            .filter(|fluid| fluid.has_curve())
+            .map(Arc::clone)
     }
 
     fn first(&self, is_it: impl Fn(&Entry) -> bool) -> Option<Arc<Fluid>> {
