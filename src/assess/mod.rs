@@ -8,6 +8,7 @@ mod chart;
 mod figure;
 mod finding;
 mod judge;
+mod ranking;
 mod window;
 mod worst;
 
@@ -24,6 +25,7 @@ pub use charge::{ChargeFigures, Corners};
 pub use chart::{ChargeMap, Charts, LimitPoint, MapPoint};
 pub use figure::{Figure, Missing};
 pub use finding::{Finding, FindingKind, Section, Severity, Verdict};
+pub use ranking::{Objection, Ranked, rank};
 pub use window::{Bound, Requirement, Side, Window};
 pub use worst::{Walls, WorstCase};
 
@@ -217,9 +219,14 @@ fn side_of(unit: &SealedUnit, side: DomeSide) -> Figure<Option<Temperature>> {
         let is_there = match (unit.state(low), side) {
             (Ok(state), DomeSide::Liquid) => state.regime == Regime::LiquidFull,
             (Ok(state), DomeSide::Vapour) => state.regime == Regime::AllVapour,
-            (Err(FluidError::TooDense { .. } | FluidError::PressureTooHigh { .. }), side) => {
-                side == DomeSide::Liquid
-            }
+            (
+                Err(
+                    FluidError::TooDense { .. }
+                    | FluidError::PressureTooHigh { .. }
+                    | FluidError::NoCompressedLiquid { .. },
+                ),
+                side,
+            ) => side == DomeSide::Liquid,
             _ => false,
         };
         return Ok(is_there.then_some(low));

@@ -3,7 +3,7 @@
 use serde::Deserialize;
 
 use super::Fluid;
-use super::correlated::Correlated;
+use super::correlated::{Correlated, CorrelatedError};
 use super::helmholtz::{Equation, EquationData, EquationError};
 use super::model::Model;
 use super::safety::Safety;
@@ -62,6 +62,8 @@ pub enum FluidFileError {
     NotPositive { field: &'static str, value: f64 },
     #[error("model: {0}")]
     Equation(#[from] EquationError),
+    #[error("model: {0}")]
+    Correlated(#[from] CorrelatedError),
 }
 
 /// Reads one fluid's file.
@@ -83,7 +85,10 @@ pub fn parse(text: &str) -> Result<Fluid, FluidFileError> {
     }
     let model = match file.model {
         ModelFile::Helmholtz(data) => Model::Equation(Box::new(Equation::new(*data)?)),
-        ModelFile::Correlated(data) => Model::Correlated(data),
+        ModelFile::Correlated(data) => {
+            data.check(file.molar_mass_kg_per_mol)?;
+            Model::Correlated(data)
+        }
     };
     Ok(Fluid {
         id: file.id,
@@ -99,6 +104,7 @@ pub fn parse(text: &str) -> Result<Fluid, FluidFileError> {
         safety: file.safety,
         model,
         own_file: None,
+        entry: std::sync::OnceLock::new(),
         curve: std::sync::OnceLock::new(),
     })
 }

@@ -49,6 +49,7 @@ pub struct Fluid {
     safety: Safety,
     model: Model,
     own_file: Option<OwnFile>,
+    entry: OnceLock<Entry>,
     curve: OnceLock<Result<SaturationCurve, FluidError>>,
 }
 
@@ -101,6 +102,11 @@ impl Fluid {
 
     pub fn safety(&self) -> &Safety {
         &self.safety
+    }
+
+    /// What lists show of it.
+    pub fn entry(&self) -> &Entry {
+        self.entry.get_or_init(|| Entry::of(self))
     }
 
     /// The user's file it was read from; `None` for a fluid that comes with the program.
@@ -220,6 +226,11 @@ impl Fluid {
             .map_err(Clone::clone)
     }
 
+    /// Whether [`Self::curve`] answers without building.
+    pub fn has_curve(&self) -> bool {
+        self.curve.get().is_some_and(Result::is_ok)
+    }
+
     /// Vapour pressure from the expansions; the same numbers as [`Self::saturation`] to 1e-10.
     ///
     /// # Errors
@@ -228,6 +239,15 @@ impl Fluid {
         self.saturation_allowed(temperature)?;
         let p = self.curve()?.at(temperature.kelvin()).pressure_pa;
         Ok(Pressure::from_pascal(p).expect("a vapour pressure is finite"))
+    }
+
+    /// Slope of the vapour pressure in Pa/K, from the expansions.
+    ///
+    /// # Errors
+    /// As [`Self::saturation`].
+    pub fn saturation_slope(&self, temperature: Temperature) -> Result<f64, FluidError> {
+        self.saturation_allowed(temperature)?;
+        Ok(self.curve()?.slope_at(temperature.kelvin()))
     }
 
     /// Surface tension in N/m, where known.
@@ -246,6 +266,20 @@ impl Fluid {
                 .map(|(a, n)| a * theta.powf(*n))
                 .sum()
         })
+    }
+
+    /// Mass in molecules of two atoms over the mass of the saturated vapour; `None` for a
+    /// vapour that does not associate, and outside the saturation.
+    pub fn dimer_mass_fraction(&self, temperature: Temperature) -> Option<f64> {
+        let Model::Correlated(model) = &self.model else {
+            return None;
+        };
+        self.saturation_allowed(temperature).ok()?;
+        let t = temperature.kelvin();
+        let vapour = model.saturation(t, self.molar_mass).vapour;
+        model
+            .vapour_isotherm(t, self.molar_mass)
+            .mass_fraction(2.0, vapour)
     }
 
     /// Greatest density given, kg/m³, and greatest pressure.

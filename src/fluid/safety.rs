@@ -49,7 +49,7 @@ pub struct Stability {
     pub source: Source,
 }
 
-#[derive(Debug, Clone, Copy, PartialEq, Eq, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash, Deserialize)]
 pub enum StabilityKind {
     SelfDecomposing,
     Oxidising,
@@ -58,6 +58,20 @@ pub enum StabilityKind {
     PeroxideForming,
     Hydrolysing,
     AcidInFlame,
+}
+
+impl StabilityKind {
+    /// Whether a design with such a fluid is not fit. The others hold while air, water
+    /// and flame are kept away, which a sealed unit does: somebody must answer for the
+    /// filling.
+    pub const fn blocks(self) -> bool {
+        match self {
+            Self::SelfDecomposing | Self::Oxidising | Self::WaterReactive | Self::Pyrophoric => {
+                true
+            }
+            Self::PeroxideForming | Self::Hydrolysing | Self::AcidInFlame => false,
+        }
+    }
 }
 
 impl Safety {

@@ -8,9 +8,9 @@ mod missing;
 pub use finding::{Said, finding};
 pub use missing::{chamber_fault, condition_fault, missing, upper};
 
-use crate::assess::{Bound, EventKind, Requirement, Severity, Side, Verdict};
+use crate::assess::{Bound, EventKind, Objection, Requirement, Severity, Side, Verdict};
 use crate::chamber::AllowableBasis;
-use crate::fluid::Regime;
+use crate::fluid::{Regime, StabilityKind};
 use crate::units::Units;
 
 /// The care that is always said.
@@ -63,6 +63,27 @@ pub const fn event(event: EventKind) -> &'static str {
         EventKind::LiquidFull => "goes liquid-full",
         EventKind::Critical => "passes the critical point",
         EventKind::AllowableReached => "reaches the allowable pressure",
+    }
+}
+
+/// Why a fluid is excluded, in a cell of a table.
+pub const fn objection(objection: Objection) -> &'static str {
+    match objection {
+        Objection::Unstable(StabilityKind::SelfDecomposing) => "can decompose",
+        Objection::Unstable(StabilityKind::Oxidising) => "oxidising",
+        Objection::Unstable(StabilityKind::WaterReactive) => "reacts with water",
+        Objection::Unstable(StabilityKind::Pyrophoric) => "ignites in air",
+        Objection::Unstable(StabilityKind::PeroxideForming) => "forms peroxides",
+        Objection::Unstable(StabilityKind::Hydrolysing) => "hydrolyses",
+        Objection::Unstable(StabilityKind::AcidInFlame) => "gives acid in a flame",
+        Objection::TooHotForFluid => "too hot for it",
+        Objection::NotForConsumers => "not for consumers",
+        Objection::Incompatible => "attacks the wall",
+        Objection::OverAllowable => "above the allowable",
+        Objection::LiquidFull => "liquid-full too soon",
+        Objection::Frozen => "frozen in work",
+        Objection::Dry => "dry in work",
+        Objection::OutsideModel => "outside its model",
     }
 }
 

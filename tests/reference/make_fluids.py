@@ -317,7 +317,7 @@ def main(data):
             model = block("model: Helmholtz((", equation_lines(record, papers, fluid.get("uncertainty")), ")),")
             tension = surface_tension(record, tension_papers)
         else:
-            coefficients = json.loads((data / "correlation-coefficients.json").read_text(encoding="utf-8"))[fluid["data"]]
+            coefficients = correlated.record(data / "correlation-coefficients.json", fluid["data"])
             cas, molar_mass = coefficients["CAS"], float(f"{coefficients['MW']['value']}e-3")
             model = block("model: Correlated((", correlated.model_lines(coefficients, number, numbers, text), ")),")
             tension = correlated.surface_tension_lines(coefficients, number, numbers, text)

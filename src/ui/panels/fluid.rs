@@ -16,13 +16,7 @@ pub struct FluidPanel {
 }
 
 pub fn decision(a: &Assessment) -> String {
-    let safety = a.fluid.safety();
-    let does = [
-        safety.is_flammable(),
-        safety.is_toxic(),
-        safety.is_corrosive(),
-    ];
-    format!("{}, {}", a.fluid.name(), nature(does))
+    format!("{}, {}", a.fluid.name(), nature(a.fluid.entry()))
 }
 
 pub fn fluid_ui(
@@ -52,9 +46,8 @@ pub fn fluid_ui(
             {
                 any = true;
                 let chosen = fluid.id() == design.fluid.as_str();
-                let does = [fluid.is_flammable(), fluid.is_toxic(), fluid.is_corrosive()];
                 let own = fluid.own_file().map_or("", |_| "your own, ");
-                let label = format!("{}   {own}{}", fluid.name(), nature(does));
+                let label = format!("{}   {own}{}", fluid.name(), nature(fluid));
                 let row = ui.selectable_label(chosen, label);
                 if chosen && panel.in_sight.as_ref() != Some(&design.fluid) {
                     // Another fluid than last time, by whatever way: bring it into sight.
@@ -98,13 +91,18 @@ fn facts_ui(ui: &mut Ui, fluid: &Fluid) {
     });
 }
 
-/// What it does to people, in a few words: whether it burns, harms, corrodes.
-fn nature(does: [bool; 3]) -> String {
-    let words: Vec<&str> = ["flammable", "harmful", "corrosive"]
-        .into_iter()
-        .zip(does)
-        .filter_map(|(word, it_does)| it_does.then_some(word))
-        .collect();
+/// What it does to people, in a few words.
+pub(super) fn nature(fluid: &Entry) -> String {
+    let mut words = Vec::new();
+    if fluid.is_flammable() {
+        words.push("flammable");
+    }
+    if fluid.is_toxic() {
+        words.push("harmful");
+    }
+    if fluid.is_corrosive() {
+        words.push("corrosive");
+    }
     if words.is_empty() {
         "no fire or poison class".to_owned()
     } else {
@@ -112,7 +110,7 @@ fn nature(does: [bool; 3]) -> String {
     }
 }
 
-fn matches(fluid: &Entry, wanted: &str) -> bool {
+pub(super) fn matches(fluid: &Entry, wanted: &str) -> bool {
     if wanted.is_empty() {
         return true;
     }
