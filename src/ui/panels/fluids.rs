@@ -237,7 +237,7 @@ pub fn fluid_table_ui(
     let shown: Vec<&Ranked> = rows
         .iter()
         .filter(|row| !table.without_objection_only || row.objections.is_empty())
-        .filter(|row| super::fluid::matches(&row.fluid, &wanted))
+        .filter(|row| super::fluid::matches(row.fluid.entry(), &wanted))
         .collect();
     let present = rows
         .iter()
@@ -452,7 +452,7 @@ fn row_ui(
     }
     response.on_hover_ui(|ui| {
         ui.label(RichText::new(row.fluid.name()).strong());
-        ui.label(super::fluid::nature(&row.fluid));
+        ui.label(super::fluid::nature(row.fluid.entry()));
         for objection in &row.objections {
             ui.label(words::objection(*objection));
         }
