@@ -133,6 +133,7 @@ pub fn statement(code: &str) -> &'static str {
         "H302" => "harmful if swallowed",
         "H304" => "may be fatal if swallowed and enters airways",
         "H311" => "toxic in contact with skin",
+        "H312" => "harmful in contact with skin",
         "H314" => "severe skin burns and eye damage",
         "H315" => "skin irritation",
         "H318" => "serious eye damage",
