@@ -191,9 +191,9 @@ fn read_text(path: &Path, kind: Kind) -> Result<String, StoreError> {
     let failed = |cause: io::Error| match cause.kind() {
         io::ErrorKind::NotFound => StoreError::Missing { path: named() },
         io::ErrorKind::IsADirectory => StoreError::Folder {
-                path: named(),
-                kind,
-            },
+            path: named(),
+            kind,
+        },
         _ => StoreError::Read {
             path: named(),
             cause,
@@ -202,9 +202,9 @@ fn read_text(path: &Path, kind: Kind) -> Result<String, StoreError> {
     let metadata = fs::metadata(path).map_err(failed)?;
     if metadata.is_dir() {
         return Err(StoreError::Folder {
-                path: named(),
-                kind,
-            });
+            path: named(),
+            kind,
+        });
     }
     if !metadata.is_file() {
         // A pipe would keep us waiting, a device would never end.

@@ -211,15 +211,14 @@ impl<'a> Yardstick<'a> {
             }),
             Objection::Incompatible,
         );
-        let over = |figure: &Figure<(Pressure, Regime)>, limit: Option<Pressure>| match (
-            figure, limit,
-        ) {
-            (Ok((pressure, _)), Some(limit)) => {
-                pressure.pascal() * (1.0 + fluid.pressure_uncertainty()) > limit.pascal()
-            }
-            (Err(Missing::Fluid(FluidError::PressureTooHigh { .. })), Some(_)) => true,
-            _ => false,
-        };
+        let over =
+            |figure: &Figure<(Pressure, Regime)>, limit: Option<Pressure>| match (figure, limit) {
+                (Ok((pressure, _)), Some(limit)) => {
+                    pressure.pascal() * (1.0 + fluid.pressure_uncertainty()) > limit.pascal()
+                }
+                (Err(Missing::Fluid(FluidError::PressureTooHigh { .. })), Some(_)) => true,
+                _ => false,
+            };
         object(
             over(&ranked.at_hottest, self.allowable[0])
                 || over(&ranked.at_coldest, self.allowable[1]),
@@ -238,9 +237,7 @@ impl<'a> Yardstick<'a> {
                 && ranked.dry_out.is_some_and(|t| t < conditions.working_high),
             Objection::Dry,
         );
-        let outside = |missing: &Missing| {
-            matches!(missing, Missing::Fluid(error) if !matches!(error, FluidError::Frozen { .. } | FluidError::PressureTooHigh { .. }))
-        };
+        let outside = |missing: &Missing| matches!(missing, Missing::Fluid(error) if !matches!(error, FluidError::Frozen { .. } | FluidError::PressureTooHigh { .. }));
         object(
             [&ranked.at_hottest, &ranked.at_coldest]
                 .into_iter()

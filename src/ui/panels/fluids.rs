@@ -74,7 +74,9 @@ impl Column {
 
     const fn tooltip(self) -> &'static str {
         match self {
-            Self::Name => "Name of the fluid. A click on a row tries it; Escape puts the old one back.",
+            Self::Name => {
+                "Name of the fluid. A click on a row tries it; Escape puts the old one back."
+            }
             Self::Hottest => "Absolute pressure of the unit at the hottest temperature",
             Self::Coldest => "Absolute pressure of the unit at the coldest temperature",
             Self::Slope => "Slope of the vapour pressure in the middle of the working range",
@@ -105,7 +107,11 @@ impl Column {
             (None, None) => Ordering::Equal,
         };
         match self {
-            Self::Name => a.fluid.name().to_lowercase().cmp(&b.fluid.name().to_lowercase()),
+            Self::Name => a
+                .fluid
+                .name()
+                .to_lowercase()
+                .cmp(&b.fluid.name().to_lowercase()),
             Self::Objection => a.objections.cmp(&b.objections),
             _ => number(self.value(a), self.value(b)),
         }
@@ -140,10 +146,17 @@ impl Scale {
     /// The unit that suits the present fluid's figure.
     fn of(column: Column, present: Option<&Ranked>, units: &Units) -> Self {
         let of_kind = |kind: Kind, otherwise: f64| {
-            let si = present.and_then(|row| column.value(row)).unwrap_or(otherwise);
+            let si = present
+                .and_then(|row| column.value(row))
+                .unwrap_or(otherwise);
             let unit = units.unit_for(kind, si);
             let symbol = unit.symbol.to_owned();
-            Self { unit: Some(unit), kind, symbol, factor: 1.0 }
+            Self {
+                unit: Some(unit),
+                kind,
+                symbol,
+                factor: 1.0,
+            }
         };
         match column {
             Column::Name | Column::Objection => Self {
@@ -224,37 +237,44 @@ pub fn fluid_table_ui(
     let shown: Vec<&Ranked> = rows
         .iter()
         .filter(|row| !table.without_objection_only || row.objections.is_empty())
-        .filter(|row| super::fluid::matches(&row.fluid, &wanted))
+        .filter(|row| super::fluid::matches(row.fluid.entry(), &wanted))
         .collect();
-    let present = rows.iter().find(|row| row.fluid.id() == design.fluid.as_str());
+    let present = rows
+        .iter()
+        .find(|row| row.fluid.id() == design.fluid.as_str());
     let scales = Column::ALL.map(|column| Scale::of(column, present, units));
     let mut sort = table.sort;
-    ScrollArea::horizontal().id_salt("fluid table").show(ui, |ui| {
-        let lefts = lefts(ui.available_width());
-        header_ui(ui, &lefts, &scales, &mut sort);
-        ScrollArea::vertical()
-            .id_salt("fluid rows")
-            .auto_shrink(false)
-            .show_rows(ui, ROW, shown.len(), |ui, range| {
-                ui.spacing_mut().item_spacing.y = 0.0;
-                for row in &shown[range] {
-                    let chosen = row.fluid.id() == design.fluid.as_str();
-                    if row_ui(ui, row, chosen, &lefts, &scales, units).clicked() && !chosen {
-                        trial = trial_of(design, row);
+    ScrollArea::horizontal()
+        .id_salt("fluid table")
+        .show(ui, |ui| {
+            let lefts = lefts(ui.available_width());
+            header_ui(ui, &lefts, &scales, &mut sort);
+            ScrollArea::vertical()
+                .id_salt("fluid rows")
+                .auto_shrink(false)
+                .show_rows(ui, ROW, shown.len(), |ui, range| {
+                    ui.spacing_mut().item_spacing.y = 0.0;
+                    for row in &shown[range] {
+                        let chosen = row.fluid.id() == design.fluid.as_str();
+                        if row_ui(ui, row, chosen, &lefts, &scales, units).clicked() && !chosen {
+                            trial = trial_of(design, row);
+                        }
                     }
-                }
-            });
-        if shown.is_empty() {
-            ui.label(RichText::new("No fluid here answers to that.").weak());
-        }
-    });
+                });
+            if shown.is_empty() {
+                ui.label(RichText::new("No fluid here answers to that.").weak());
+            }
+        });
     if sort != table.sort {
         table.sort = sort;
         table.ranked = None;
         ui.ctx().request_repaint();
     }
     if let Some((fluid, _)) = &trial
-        && table.tried.as_ref().is_none_or(|(tried, ..)| *tried != design.fluid)
+        && table
+            .tried
+            .as_ref()
+            .is_none_or(|(tried, ..)| *tried != design.fluid)
     {
         table.tried = Some((fluid.clone(), design.fluid.clone(), design.charge.clone()));
     } else if let (Some((fluid, _)), Some(tried)) = (&trial, &mut table.tried) {
@@ -270,8 +290,8 @@ impl FluidTable {
         if tried != design.fluid {
             return None; // chosen otherwise since: there is nothing to put back
         }
-        let escape = !is_typing(ui.ctx())
-            && ui.input_mut(|i| i.consume_key(Modifiers::NONE, Key::Escape));
+        let escape =
+            !is_typing(ui.ctx()) && ui.input_mut(|i| i.consume_key(Modifiers::NONE, Key::Escape));
         if escape {
             return Some((fluid, charge));
         }
@@ -309,7 +329,7 @@ fn trial_of(design: &Design, row: &Ranked) -> Option<Trial> {
         let grams = crate::units::careful_down(same_fill.kilogram(), 4);
         *mass = Mass::from_kilogram(grams).unwrap_or(*same_fill);
     }
-    Some((FluidId::new(row.fluid.id())?, charge))
+    Some((FluidId::from(&*row.fluid), charge))
 }
 
 /// Left ends of the columns and the right end of the last.
@@ -333,10 +353,11 @@ fn header_ui(ui: &mut Ui, lefts: &[f32], scales: &[Scale; 9], sort: &mut Option<
     for (i, column) in Column::ALL.into_iter().enumerate() {
         let cell = cell(rect, lefts, i);
         let response = ui
-            .interact(cell, ui.id().with(("column", i)), Sense::click())
+            .interact(cell, ui.scope_id().with(("column", i)), Sense::click())
             .on_hover_text(column.tooltip());
         let title = column.title();
-        response.widget_info(|| WidgetInfo::labeled(Role::Button, true, format!("Sort by {title}")));
+        response
+            .widget_info(|| WidgetInfo::labeled(Role::Button, true, format!("Sort by {title}")));
         let painter = ui.painter().with_clip_rect(cell);
         let (x, align) = anchor(column, cell);
         let colour = if response.hovered() || response.has_focus() {
@@ -344,7 +365,13 @@ fn header_ui(ui: &mut Ui, lefts: &[f32], scales: &[Scale; 9], sort: &mut Option<
         } else {
             palette.text_faint
         };
-        let top = painter.text(pos2(x, cell.top() + 2.0), align.0, title, font.clone(), colour);
+        let top = painter.text(
+            pos2(x, cell.top() + 2.0),
+            align.0,
+            title,
+            font.clone(),
+            colour,
+        );
         painter.text(
             pos2(x, cell.bottom() - 3.0),
             align.1,
@@ -360,7 +387,8 @@ fn header_ui(ui: &mut Ui, lefts: &[f32], scales: &[Scale; 9], sort: &mut Option<
             } else {
                 top.left() - 7.0
             };
-            ui.painter().add(arrow(pos2(x, top.center().y), *greatest_first, palette));
+            ui.painter()
+                .add(arrow(pos2(x, top.center().y), *greatest_first, palette));
         }
         if response.clicked() {
             *sort = match *sort {
@@ -396,9 +424,11 @@ fn row_ui(
     let label = spoken(row);
     response.widget_info(|| WidgetInfo::selected(Role::Button, true, chosen, &label));
     if chosen {
-        ui.painter().rect_filled(rect, 3.0, ui.visuals().selection.bg_fill);
+        ui.painter()
+            .rect_filled(rect, 3.0, ui.visuals().selection.bg_fill);
     } else if response.hovered() || response.has_focus() {
-        ui.painter().rect_filled(rect, 3.0, ui.visuals().widgets.hovered.weak_bg_fill);
+        ui.painter()
+            .rect_filled(rect, 3.0, ui.visuals().widgets.hovered.weak_bg_fill);
     }
     let colour = match (chosen, excluded) {
         (true, _) => ui.visuals().selection.stroke.color,
@@ -411,7 +441,9 @@ fn row_ui(
         let text = match column {
             Column::Name => row.fluid.name().to_owned(),
             Column::Objection => objection_text(row),
-            _ => column.value(row).map_or("–".to_owned(), |si| scales[i].text(si, units)),
+            _ => column
+                .value(row)
+                .map_or("–".to_owned(), |si| scales[i].text(si, units)),
         };
         let (x, (align, _)) = anchor(column, cell);
         let align = Align2([align.x(), eframe::egui::Align::Center]);
@@ -420,7 +452,7 @@ fn row_ui(
     }
     response.on_hover_ui(|ui| {
         ui.label(RichText::new(row.fluid.name()).strong());
-        ui.label(super::fluid::nature(&row.fluid));
+        ui.label(super::fluid::nature(row.fluid.entry()));
         for objection in &row.objections {
             ui.label(words::objection(*objection));
         }
@@ -480,16 +512,21 @@ fn as_text(rows: &[Ranked], units: &Units) -> String {
     });
     let mut text = heads.collect::<Vec<_>>().join("\t");
     for row in rows {
-        let cells = Column::ALL.iter().zip(&scales).map(|(column, scale)| match column {
-            Column::Name => row.fluid.name().to_owned(),
-            Column::Objection => row
-                .objections
-                .iter()
-                .map(|objection| words::objection(*objection))
-                .collect::<Vec<_>>()
-                .join("; "),
-            _ => column.value(row).map_or(String::new(), |si| scale.text(si, units)),
-        });
+        let cells = Column::ALL
+            .iter()
+            .zip(&scales)
+            .map(|(column, scale)| match column {
+                Column::Name => row.fluid.name().to_owned(),
+                Column::Objection => row
+                    .objections
+                    .iter()
+                    .map(|objection| words::objection(*objection))
+                    .collect::<Vec<_>>()
+                    .join("; "),
+                _ => column
+                    .value(row)
+                    .map_or(String::new(), |si| scale.text(si, units)),
+            });
         text.push('\n');
         text.push_str(&cells.collect::<Vec<_>>().join("\t"));
     }
