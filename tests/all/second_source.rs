@@ -1,6 +1,8 @@
 //! Correlated fluids against what a second published source prints, and against what
 //! thermodynamics says of any fluid.
 
+use std::sync::Arc;
+
 use chargewright::fluid::{Catalog, Fluid, Model};
 
 use crate::given::{fluid, grid, kelvin};
@@ -40,10 +42,12 @@ fn printed() -> Vec<Printed> {
         .collect()
 }
 
-fn correlated() -> impl Iterator<Item = std::sync::Arc<Fluid>> {
-    Catalog::built_in()
+fn correlated() -> Vec<Arc<Fluid>> {
+    let catalog = Catalog::built_in();
+    catalog
         .iter()
         .filter(|fluid| matches!(fluid.model(), Model::Correlated(_)))
+        .collect()
 }
 
 fn vapour_compressibility(fluid: &Fluid, temperature_k: f64) -> f64 {
