@@ -9,6 +9,8 @@ mod facts;
 mod files;
 mod given;
 mod layers;
+mod own_fluid_refusals;
+mod own_fluids;
 mod presets;
 mod printed_tables;
 mod random_states;

@@ -113,6 +113,22 @@ impl Correlated {
                 return Err(CorrelatedError::UnequalLists { form, n, t });
             }
         }
+        if let VapourForm::Associating {
+            smallest_atoms,
+            larger,
+            unit_pa,
+            ..
+        } = &self.vapour
+        {
+            let sizes = larger.iter().map(|molecule| ("atoms", molecule.atoms));
+            for (field, value) in
+                sizes.chain([("smallest_atoms", *smallest_atoms), ("unit_pa", *unit_pa)])
+            {
+                if !(value.is_finite() && value > 0.0) {
+                    return Err(CorrelatedError::NotPositive { field, value });
+                }
+            }
+        }
         if matches!(self.vapour, VapourForm::Clapeyron { .. }) && self.latent_heat.is_none() {
             return Err(CorrelatedError::Missing {
                 needed: "latent_heat",

@@ -5,6 +5,7 @@
 //! [`VapourForm`], [`CompressedLiquid`]. What lies outside a form's own range is
 //! refused by name, and so is all above 0.95 T_c, where the pieces do not join.
 
+mod association;
 mod check;
 mod compressed_liquid;
 mod latent_heat;
@@ -17,6 +18,7 @@ mod vapour_pressure;
 
 use serde::{Deserialize, Deserializer};
 
+pub use association::{Association, Molecule};
 pub use check::CorrelatedError;
 pub use compressed_liquid::{CompressedLiquid, LiquidIsotherm};
 pub use latent_heat::LatentHeat;
@@ -145,7 +147,8 @@ impl Correlated {
         let rt = GAS_CONSTANT / molar_mass * temperature;
         let VapourForm::Clapeyron { lowest_pressure_pa } = self.vapour else {
             return self
-                .own_isotherm(temperature, rt)
+                .vapour
+                .isotherm(temperature, rt)
                 .map_or(f64::NAN, |isotherm| isotherm.density(pressure));
         };
         if pressure >= lowest_pressure_pa {
@@ -174,21 +177,10 @@ impl Correlated {
         )
     }
 
-    /// The vapour's isotherm where it does not lean on the saturation; `rt` is RT/M.
-    fn own_isotherm(&self, temperature: f64, rt: f64) -> Option<VapourIsotherm> {
-        match self.vapour {
-            VapourForm::Clapeyron { .. } => None,
-            VapourForm::Dimer {
-                log10_k, unit_pa, ..
-            } => Some(VapourIsotherm::dimer(rt, log10_k, unit_pa, temperature)),
-            VapourForm::Ideal { .. } => Some(VapourIsotherm::Virial { rt, b: 0.0 }),
-        }
-    }
-
     /// Vapour at ρ ≤ ρ″.
     pub fn vapour_isotherm(&self, temperature: f64, molar_mass: f64) -> VapourIsotherm {
         let rt = GAS_CONSTANT / molar_mass * temperature;
-        self.own_isotherm(temperature, rt).unwrap_or_else(|| {
+        self.vapour.isotherm(temperature, rt).unwrap_or_else(|| {
             let pair = self.saturation(temperature, molar_mass);
             let b = (pair.pressure / (rt * pair.vapour) - 1.0) / pair.vapour;
             VapourIsotherm::Virial { rt, b }

@@ -82,25 +82,22 @@ fn metal(vapour: &str) -> Correlated {
 
 const MOLAR_MASS: f64 = 0.023;
 
+const PAIRS: &str =
+    "Associating(smallest_atoms: 1, larger: [(atoms: 2, log10_k: [0.0, 0.0])], unit_pa: 1e5, REST)";
+
 /// With K = 1 per bar and one bar of atoms there is one bar of pairs: two thirds of the
 /// mass are pairs and the density is that of three bar of atoms.
 #[test]
 fn half_the_molecules_are_pairs() {
-    let form: VapourForm = read("Dimer(log10_k: [0.0, 0.0], unit_pa: 1e5, REST)");
-    let VapourForm::Dimer {
-        log10_k, unit_pa, ..
-    } = form
-    else {
-        unreachable!()
-    };
+    let form: VapourForm = read(PAIRS);
     let rt = GAS_CONSTANT * 500.0 / MOLAR_MASS;
-    let isotherm = VapourIsotherm::dimer(rt, log10_k, unit_pa, 500.0);
+    let isotherm = form.isotherm(500.0, rt).expect("its own");
     let density = 3e5 / rt;
     let (pressure, slope) = isotherm.pressure_and_slope(density);
     near(pressure, 2e5, 1e-14);
     near(isotherm.density(2e5), density, 1e-14);
     near(
-        isotherm.dimer_mass_fraction(density).expect("pairs"),
+        isotherm.mass_fraction(2.0, density).expect("pairs"),
         2.0 / 3.0,
         1e-14,
     );
@@ -109,12 +106,17 @@ fn half_the_molecules_are_pairs() {
         - isotherm.pressure_and_slope(density - step).0)
         / (2.0 * step);
     near(slope, secant, 1e-8);
+    // So thin that all pairs fall apart.
+    let (thin, slope) = isotherm.pressure_and_slope(1e-9 * density);
+    near(thin, 1e-9 * density * rt, 1e-8);
+    near(slope, rt, 1e-8);
 }
 
 #[test]
 fn the_vapour_meets_its_boundary_at_the_vapour_pressure() {
     for vapour in [
-        "Dimer(log10_k: [-4.0, 4000.0], unit_pa: 101325.0, REST)",
+        "Associating(smallest_atoms: 1, larger: [(atoms: 2, log10_k: [-4.0, 4000.0]), (atoms: 4, log10_k: [-10.0, 8000.0])], unit_pa: 101325.0, REST)",
+        "Associating(smallest_atoms: 2, larger: [(atoms: 3, log10_k: [-5.0, 5000.0]), (atoms: 8, log10_k: [-20.0, 15000.0])], unit_pa: 1e5, REST)",
         "Ideal(REST)",
     ] {
         let model = metal(vapour);
@@ -124,7 +126,7 @@ fn the_vapour_meets_its_boundary_at_the_vapour_pressure() {
             let (p, _) = model
                 .vapour_isotherm(t, MOLAR_MASS)
                 .pressure_and_slope(pair.vapour);
-            near(p, pair.pressure, 1e-13);
+            near(p, pair.pressure, 1e-12);
         }
     }
 }

@@ -3,7 +3,8 @@
 
 use serde::Deserialize;
 
-use super::validity::{Validity, list};
+use super::association::{Association, Molecule};
+use super::validity::Validity;
 use crate::source::Source;
 
 #[derive(Debug, Clone, PartialEq, Deserialize)]
@@ -14,12 +15,13 @@ pub enum VapourForm {
     /// virial coefficient is held, Z″ = 1 − (1 − Z₁)(p/p₁)(T₁/T). Superheated by the
     /// virial equation with B from the saturated vapour.
     Clapeyron { lowest_pressure_pa: f64 },
-    /// Alkali metals: an ideal mixture of atoms and pairs of atoms in equilibrium,
-    /// p₂/p₁² = K, with log₁₀(K·p⁰) = A + B/T.
-    Dimer {
-        #[serde(deserialize_with = "list")]
-        log10_k: [f64; 2],
-        /// p⁰, the unit of pressure in which the constant was published.
+    /// An ideal mixture of molecules of several sizes in equilibrium with each other:
+    /// alkali metals, sulfur. See [`Association`].
+    Associating {
+        /// Atoms in the molecule that the constants are written for.
+        smallest_atoms: f64,
+        larger: Vec<Molecule>,
+        /// p⁰, the unit of pressure of the constants.
         unit_pa: f64,
         temperature_range_k: (f64, f64),
         /// Of the density at a given pressure.
@@ -36,12 +38,14 @@ pub enum VapourForm {
 }
 
 /// Pressure over density at one temperature.
-#[derive(Debug, Clone, Copy, PartialEq)]
+#[derive(Debug, Clone, PartialEq)]
 pub enum VapourIsotherm {
     /// p = ρ(RT/M)(1 + Bρ); RT/M in J/kg, B in m³/kg.
-    Virial { rt: f64, b: f64 },
-    /// Atoms and pairs; K in 1/Pa.
-    Dimer { rt: f64, k: f64 },
+    Virial {
+        rt: f64,
+        b: f64,
+    },
+    Association(Association),
 }
 
 impl VapourForm {
@@ -49,7 +53,7 @@ impl VapourForm {
     pub fn validity(&self) -> Option<Validity<'_>> {
         match self {
             Self::Clapeyron { .. } => None,
-            Self::Dimer {
+            Self::Associating {
                 temperature_range_k,
                 uncertainty_percent,
                 source,
@@ -66,57 +70,58 @@ impl VapourForm {
             }),
         }
     }
+
+    /// At a temperature in K, where the form does not lean on the saturation; `rt` is RT
+    /// over the molar mass of the atoms.
+    pub(super) fn isotherm(&self, temperature: f64, rt: f64) -> Option<VapourIsotherm> {
+        match self {
+            Self::Clapeyron { .. } => None,
+            Self::Associating {
+                smallest_atoms,
+                larger,
+                unit_pa,
+                ..
+            } => Some(VapourIsotherm::Association(Association::new(
+                *smallest_atoms,
+                larger,
+                *unit_pa,
+                temperature,
+                rt,
+            ))),
+            Self::Ideal { .. } => Some(VapourIsotherm::Virial { rt, b: 0.0 }),
+        }
+    }
 }
 
 impl VapourIsotherm {
-    /// Association at a temperature in K, log₁₀(K·p⁰) = A + B/T; `rt` is RT/M of the atoms.
-    pub(super) fn dimer(rt: f64, [a, b]: [f64; 2], unit_pa: f64, temperature: f64) -> Self {
-        let k = 10_f64.powf(a + b / temperature) / unit_pa;
-        Self::Dimer { rt, k }
-    }
-
     /// Pressure and its slope over density, Pa and Pa m³/kg.
     pub fn pressure_and_slope(&self, density: f64) -> (f64, f64) {
-        match *self {
+        match self {
             Self::Virial { rt, b } => (
                 density * rt * (1.0 + b * density),
                 rt * (1.0 + 2.0 * b * density),
             ),
-            Self::Dimer { rt, k } => {
-                // All atoms as a gas of their own, p₁ + 2Kp₁² = ρRT/M.
-                let atoms = positive_root(2.0 * k, density * rt);
-                let pairs = k * atoms;
-                let slope = (1.0 + 2.0 * pairs) / (1.0 + 4.0 * pairs) * rt;
-                (atoms * (1.0 + pairs), slope)
-            }
+            Self::Association(mixture) => mixture.pressure_and_slope(density),
         }
     }
 
-    /// The density at a pressure, where the form gives it in closed form.
+    /// The density at a pressure, kg/m³.
     pub(super) fn density(&self, pressure: f64) -> f64 {
-        match *self {
+        match self {
             // ρ(1 + Bρ) = p/(RT/M), the root that joins the ideal gas.
-            Self::Virial { rt, b } => positive_root(b, pressure / rt),
-            Self::Dimer { rt, k } => {
-                let atoms = positive_root(k, pressure);
-                atoms * (1.0 + 2.0 * k * atoms) / rt
+            Self::Virial { rt, b } => {
+                let ideal = pressure / rt;
+                2.0 * ideal / (1.0 + (1.0 + 4.0 * b * ideal).sqrt())
             }
+            Self::Association(mixture) => mixture.density(pressure),
         }
     }
 
-    /// Mass of the pairs over the whole mass; none for a vapour of one kind.
-    pub fn dimer_mass_fraction(&self, density: f64) -> Option<f64> {
-        match *self {
+    /// Mass in molecules of so many atoms over the whole mass; none for a vapour of one kind.
+    pub fn mass_fraction(&self, atoms: f64, density: f64) -> Option<f64> {
+        match self {
             Self::Virial { .. } => None,
-            Self::Dimer { rt, k } => {
-                let pairs = 2.0 * k * positive_root(2.0 * k, density * rt);
-                Some(pairs / (1.0 + pairs))
-            }
+            Self::Association(mixture) => Some(mixture.mass_fraction(atoms, density)),
         }
     }
-}
-
-/// x in x + qx² = s, free of cancellation for small q.
-fn positive_root(q: f64, s: f64) -> f64 {
-    2.0 * s / (1.0 + (1.0 + 4.0 * q * s).sqrt())
 }
