@@ -16,6 +16,7 @@ mod printed_tables;
 mod random_states;
 mod reference_equations;
 mod refusals;
+mod second_source;
 mod tables;
 mod transport;
 #[cfg(feature = "window")]
