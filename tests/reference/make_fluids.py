@@ -17,6 +17,7 @@ import sys
 from mpmath import findroot, mp, mpf
 
 import correlated
+import metals
 from helmholtz import Equation, load_equations
 
 HERE = pathlib.Path(__file__).resolve().parent
@@ -317,10 +318,11 @@ def main(data):
             model = block("model: Helmholtz((", equation_lines(record, papers, fluid.get("uncertainty")), ")),")
             tension = surface_tension(record, tension_papers)
         else:
-            coefficients = correlated.record(data / "correlation-coefficients.json", fluid["data"])
+            forms = metals if fluid["data"] in metals.ELEMENTS else correlated
+            coefficients = forms.record(data / "correlation-coefficients.json", fluid["data"])
             cas, molar_mass = coefficients["CAS"], float(f"{coefficients['MW']['value']}e-3")
-            model = block("model: Correlated((", correlated.model_lines(coefficients, number, numbers, text), ")),")
-            tension = correlated.surface_tension_lines(coefficients, number, numbers, text)
+            model = block("model: Correlated((", forms.model_lines(coefficients, number, numbers, text), ")),")
+            tension = forms.surface_tension_lines(coefficients, number, numbers, text)
         (ASSETS / f"{identity}.ron").write_text(
             fluid_file(identity, fluid, cas, molar_mass, model, tension), encoding="utf-8"
         )
