@@ -198,6 +198,10 @@ pub enum FindingKind {
     ModelUncertainty {
         percent: f64,
     },
+    /// The fluid is the user's own: nobody else answers for its figures.
+    OwnFluid {
+        file: String,
+    },
     FromMemory {
         what: String,
     },

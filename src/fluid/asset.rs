@@ -8,8 +8,9 @@ use super::helmholtz::{Equation, EquationData, EquationError};
 use super::model::Model;
 use super::safety::Safety;
 use crate::source::{Source, Sourced};
+use crate::text::{self, TextError};
 
-const FORMAT: u32 = 1;
+pub(super) const FORMAT: u32 = 1;
 
 #[derive(Debug, Deserialize)]
 #[serde(deny_unknown_fields)]
@@ -53,8 +54,8 @@ pub struct SurfaceTension {
 /// Why a fluid file is refused.
 #[derive(Debug, Clone, PartialEq, thiserror::Error)]
 pub enum FluidFileError {
-    #[error("{0}")]
-    Syntax(Box<ron::error::SpannedError>),
+    #[error(transparent)]
+    Text(#[from] TextError),
     #[error("format {found} is not one this program reads ({FORMAT})")]
     Format { found: u32 },
     #[error("{field} must be a finite number above 0, not {value}")]
@@ -70,7 +71,7 @@ pub enum FluidFileError {
 /// # Errors
 /// [`FluidFileError`] says what is wrong and where.
 pub fn parse(text: &str) -> Result<Fluid, FluidFileError> {
-    let file: FluidFile = ron::from_str(text).map_err(|e| FluidFileError::Syntax(Box::new(e)))?;
+    let file: FluidFile = text::read(text)?;
     if file.format != FORMAT {
         return Err(FluidFileError::Format { found: file.format });
     }
@@ -102,6 +103,7 @@ pub fn parse(text: &str) -> Result<Fluid, FluidFileError> {
         surface_tension: file.surface_tension,
         safety: file.safety,
         model,
+        own_file: None,
         curve: std::sync::OnceLock::new(),
     })
 }

@@ -8,19 +8,25 @@ mod asset;
 mod catalog;
 pub mod correlated;
 mod curve;
+mod entry;
 mod error;
 pub mod helmholtz;
 mod model;
+mod own;
+mod rules;
 mod safety;
+mod sound;
 mod state;
 
 use std::sync::OnceLock;
 
 pub use asset::{FluidFileError, SurfaceTension, parse as parse_fluid};
-pub use catalog::{Catalog, UnknownFluid};
+pub use catalog::{Catalog, NameTaken, UnknownFluid};
 pub use curve::{CurvePoint, SaturationCurve};
+pub use entry::Entry;
 pub use error::FluidError;
 pub use model::{Critical, Model, SaturationPoint};
+pub use own::{OwnFile, read_own};
 pub use safety::{Safety, Stability, StabilityKind};
 pub use state::{Crossing, DomeSide, Regime, State};
 
@@ -42,13 +48,14 @@ pub struct Fluid {
     surface_tension: Option<SurfaceTension>,
     safety: Safety,
     model: Model,
+    own_file: Option<OwnFile>,
     curve: OnceLock<Result<SaturationCurve, FluidError>>,
 }
 
 /// One fluid is the same as another if its file is.
 impl PartialEq for Fluid {
     fn eq(&self, other: &Self) -> bool {
-        self.id == other.id && self.model == other.model
+        self.id == other.id && self.model == other.model && self.own_file == other.own_file
     }
 }
 
@@ -94,6 +101,11 @@ impl Fluid {
 
     pub fn safety(&self) -> &Safety {
         &self.safety
+    }
+
+    /// The user's file it was read from; `None` for a fluid that comes with the program.
+    pub fn own_file(&self) -> Option<&OwnFile> {
+        self.own_file.as_ref()
     }
 
     pub fn model(&self) -> &Model {
@@ -208,6 +220,11 @@ impl Fluid {
             .map_err(Clone::clone)
     }
 
+    /// Whether [`Self::curve`] answers without building.
+    pub fn has_curve(&self) -> bool {
+        self.curve.get().is_some_and(Result::is_ok)
+    }
+
     /// Vapour pressure from the expansions; the same numbers as [`Self::saturation`] to 1e-10.
     ///
     /// # Errors
@@ -216,6 +233,15 @@ impl Fluid {
         self.saturation_allowed(temperature)?;
         let p = self.curve()?.at(temperature.kelvin()).pressure_pa;
         Ok(Pressure::from_pascal(p).expect("a vapour pressure is finite"))
+    }
+
+    /// Slope of the vapour pressure in Pa/K, from the expansions.
+    ///
+    /// # Errors
+    /// As [`Self::saturation`].
+    pub fn saturation_slope(&self, temperature: Temperature) -> Result<f64, FluidError> {
+        self.saturation_allowed(temperature)?;
+        Ok(self.curve()?.slope_at(temperature.kelvin()))
     }
 
     /// Surface tension in N/m, where known.

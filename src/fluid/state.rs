@@ -1,7 +1,7 @@
 //! The state at a density and a temperature: regime, pressure, how much is liquid.
 
 use super::correlated::GAS_CONSTANT;
-use super::model::Model;
+use super::model::{Model, PhaseIsotherm};
 use super::{Fluid, FluidError, clamped};
 use crate::solve::{rising_root, roots_between};
 use crate::units::{Density, Pressure, Temperature};
@@ -163,6 +163,19 @@ impl Fluid {
         pressure: Pressure,
         temperature: Temperature,
     ) -> Result<Option<Density>, FluidError> {
+        self.density_near(pressure, temperature, None)
+    }
+
+    /// [`Self::density_at`], sooner found from a density that is `near` it.
+    ///
+    /// # Errors
+    /// As [`Self::density_at`].
+    pub fn density_near(
+        &self,
+        pressure: Pressure,
+        temperature: Temperature,
+        near: Option<Density>,
+    ) -> Result<Option<Density>, FluidError> {
         self.not_frozen(temperature)?;
         self.not_outside(temperature)?;
         let t = temperature.kelvin();
@@ -188,28 +201,32 @@ impl Fluid {
         };
         let isotherm = self.isotherm(temperature, liquid)?;
         let gap = |rho: f64| {
-            let (found, slope) = isotherm(rho);
+            let (found, slope) = isotherm.at(rho);
             (found - p, slope)
         };
-        if gap(to).0 <= 0.0 {
-            return Ok(None);
-        }
-        if gap(from).0 >= 0.0 {
-            return Ok(Density::from_kilogram_per_cubic_metre(from).ok());
-        }
         // A liquid from its saturated density, anything else from the ideal gas. After a
         // step of 1e-8 an error of some 1e-16 is left.
         let ideal = p * self.molar_mass / (GAS_CONSTANT * t);
-        let start = if liquid { from } else { ideal };
+        let start = match near.map(Density::kilogram_per_cubic_metre) {
+            Some(near) if (from..=to).contains(&near) => near,
+            _ if liquid => from,
+            _ => ideal,
+        };
         let root = rising_root(gap, (from, to), start, 1e-8);
         let root = root.map_err(|_| FluidError::NotConverged {
             fluid: self.name.clone(),
             temperature,
         })?;
-        Ok(Density::from_kilogram_per_cubic_metre(root).ok())
+        // Driven to the densest state, the pressure may still not be reached there. A vapour
+        // at its own line may miss the vapour pressure by a rounding only.
+        let at_end = root > to * (1.0 - 1e-6);
+        let is_out = at_end && (liquid || t >= critical.temperature_k) && gap(to).0 <= 0.0;
+        Ok(Density::from_kilogram_per_cubic_metre(root)
+            .ok()
+            .filter(|_| !is_out))
     }
 
-    /// As [`Self::density_at`], but where the pressure of a liquid-full unit is not known
+    /// As [`Self::density_near`], but where the pressure of a liquid-full unit is not known
     /// it answers with the saturated liquid: nothing denser is known to stay within.
     ///
     /// # Errors
@@ -218,8 +235,9 @@ impl Fluid {
         &self,
         pressure: Pressure,
         temperature: Temperature,
+        near: Option<Density>,
     ) -> Result<Option<Density>, FluidError> {
-        match self.density_at(pressure, temperature) {
+        match self.density_near(pressure, temperature, near) {
             Err(FluidError::NoCompressedLiquid { .. }) => {
                 let liquid = self.curve()?.at(temperature.kelvin()).liquid_kg_per_m3;
                 Ok(Density::from_kilogram_per_cubic_metre(liquid).ok())
@@ -256,7 +274,7 @@ impl Fluid {
         &self,
         temperature: Temperature,
         liquid: bool,
-    ) -> Result<Box<dyn Fn(f64) -> (f64, f64) + '_>, FluidError> {
+    ) -> Result<PhaseIsotherm<'_>, FluidError> {
         self.model
             .isotherm(temperature.kelvin(), self.molar_mass, liquid)
             .ok_or_else(|| FluidError::NoCompressedLiquid {
@@ -303,7 +321,7 @@ impl Fluid {
             });
         }
         let liquid = regime == Regime::LiquidFull;
-        let (p, _) = self.isotherm(temperature, liquid)?(rho);
+        let (p, _) = self.isotherm(temperature, liquid)?.at(rho);
         if p.is_nan() || p > most_pressure {
             let high = Pressure::from_pascal(most_pressure)
                 .expect("a fluid file's limits are checked when read");

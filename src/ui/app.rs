@@ -9,7 +9,7 @@ use super::desk::{Desk, Draft};
 use super::dialogs::Dialog;
 use super::orders::{first_design, sheet_text};
 use super::panels::{
-    Behaviour, DesignPanel, DiskAnswer, behaviour_ui, design_ui, editing_text_id, meaning_ui,
+    Behaviour, DesignPanel, DiskAnswer, Wish, behaviour_ui, design_ui, editing_text_id, meaning_ui,
     menu_ui, status_ui,
 };
 use super::settings::Settings;
@@ -151,7 +151,7 @@ impl App {
         let ground = Frame::NONE
             .fill(palette.ground)
             .inner_margin(Margin::symmetric(8, 6));
-        let dragged = CentralPanel::default()
+        let wish = CentralPanel::default()
             .frame(ground)
             .show(ui, |ui| {
                 let desk = &self.desk;
@@ -160,6 +160,7 @@ impl App {
                     ui,
                     &desk.design,
                     desk.assessment(),
+                    desk.library(),
                     &units,
                     sheet,
                     &mut self.behaviour,
@@ -167,8 +168,13 @@ impl App {
                 )
             })
             .inner;
-        if let Some(mass) = dragged {
-            self.desk.design.apply(Change::SetCharge(mass));
+        match wish {
+            Some(Wish::Charge(mass)) => self.desk.design.apply(Change::SetCharge(mass)),
+            Some(Wish::Fluid(fluid, charge)) => {
+                self.desk.design.fluid = fluid;
+                self.desk.design.charge = charge;
+            }
+            None => {}
         }
     }
 

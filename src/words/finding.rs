@@ -289,6 +289,11 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
                 figures(careful_up(*percent, 2), 2)
             ),
         ),
+        FindingKind::OwnFluid { file } => say(
+            "Your own fluid",
+            format!("Its hazards and all its figures are your own, from {file}; nobody else has checked them."),
+        )
+        .try_this("Hold every figure of that file against its source, and have a second person do so."),
         FindingKind::FromMemory { what } => {
             say("To be confirmed", format!("From memory of a named document: {what}."))
         }

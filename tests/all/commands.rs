@@ -15,6 +15,10 @@ fn program() -> Command {
     for name in ["DISPLAY", "WAYLAND_DISPLAY", "WAYLAND_SOCKET"] {
         command.env_remove(name);
     }
+    // Whoever runs the tests may have fluids of their own.
+    for name in ["XDG_CONFIG_HOME", "HOME", "APPDATA"] {
+        command.env(name, "/nowhere");
+    }
     command
 }
 

@@ -3,7 +3,7 @@
 use super::Judge;
 use crate::assess::finding::{FindingKind, Section, Severity};
 use crate::chamber::MaterialKind;
-use crate::fluid::{FluidError, Model, StabilityKind};
+use crate::fluid::{FluidError, Model};
 use crate::hazard::{Compatibility, CompatibilityTable, EnergyError, PairVerdict};
 use crate::units::Temperature;
 
@@ -69,16 +69,10 @@ impl Judge<'_> {
     pub(super) fn stability(&mut self) {
         let safety = self.a.fluid.safety();
         for stability in &safety.stability {
-            let severity = match stability.kind {
-                StabilityKind::SelfDecomposing
-                | StabilityKind::Pyrophoric
-                | StabilityKind::Oxidising
-                | StabilityKind::WaterReactive => Severity::Error,
-                // These hold while air, water and flame are kept away, which a sealed
-                // unit does: somebody must answer for the filling.
-                StabilityKind::PeroxideForming
-                | StabilityKind::Hydrolysing
-                | StabilityKind::AcidInFlame => Severity::Warning,
+            let severity = if stability.kind.blocks() {
+                Severity::Error
+            } else {
+                Severity::Warning
             };
             let kind = FindingKind::Unstable {
                 kind: stability.kind,
@@ -240,6 +234,14 @@ impl Judge<'_> {
     }
 
     pub(super) fn provenance(&mut self) {
+        if let Some(own) = self.a.fluid.own_file() {
+            let file = own.name.clone();
+            self.add(
+                Severity::Warning,
+                Section::Fluid,
+                FindingKind::OwnFluid { file },
+            );
+        }
         if let Model::Correlated(model) = self.a.fluid.model() {
             let percent = 100.0 * model.pressure_uncertainty();
             self.add(

@@ -90,7 +90,7 @@ fn facts_ui(ui: &mut Ui, fluid: &Fluid) {
 }
 
 /// What it does to people, in a few words.
-fn nature(fluid: &Fluid) -> String {
+pub(super) fn nature(fluid: &Fluid) -> String {
     let safety = fluid.safety();
     let mut words = Vec::new();
     if safety.is_flammable() {
@@ -109,7 +109,7 @@ fn nature(fluid: &Fluid) -> String {
     }
 }
 
-fn matches(fluid: &Fluid, wanted: &str) -> bool {
+pub(super) fn matches(fluid: &Fluid, wanted: &str) -> bool {
     if wanted.is_empty() {
         return true;
     }
