@@ -9,6 +9,7 @@ mod facts;
 mod files;
 mod given;
 mod layers;
+mod metals;
 mod presets;
 mod printed_tables;
 mod random_states;
