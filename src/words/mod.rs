@@ -118,6 +118,9 @@ pub const fn basis(basis: AllowableBasis) -> &'static str {
 
 /// What a GHS hazard statement code says, shortened.
 pub fn statement(code: &str) -> &'static str {
+    if code == "EUH014" {
+        return "reacts violently with water";
+    }
     match code.get(..4).unwrap_or(code) {
         "H220" => "extremely flammable gas",
         "H221" => "flammable gas",
@@ -126,6 +129,8 @@ pub fn statement(code: &str) -> &'static str {
         "H226" => "flammable liquid and vapour",
         "H230" => "may react explosively even without air",
         "H231" => "may react explosively even without air, under pressure or hot",
+        "H250" => "catches fire by itself in air",
+        "H260" => "water sets free gases that may ignite by themselves",
         "H270" => "may cause or intensify fire; oxidiser",
         "H280" => "gas under pressure; may explode if heated",
         "H281" => "refrigerated gas; cold burns",
