@@ -7,6 +7,7 @@ mod consistency;
 mod contradictions;
 mod facts;
 mod files;
+mod fixed_points;
 mod given;
 mod layers;
 mod metals;

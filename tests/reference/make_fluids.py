@@ -26,20 +26,10 @@ HERE = pathlib.Path(__file__).resolve().parent
 ASSETS = HERE.parent.parent / "assets" / "fluids"
 EQUATIONS = HERE / "equations"
 
-# Equations that only the tests read: between them they bring in every term form that the fifteen fluids do not use.
+# Equations that only the tests read: they bring in the term forms that the catalogue does not use.
 TEST_ONLY = {
-    "r-125": "R125",              # Lemmon and Jacobsen's 2005 residual form
-    "n-heptane": "n-Heptane",     # Aly-Lee heat capacity, with empty halves
-    "d6": "D6",                   # Aly-Lee heat capacity, one full term
-    "r-22": "R22",                # constant and polynomial heat capacity
-    "r-11": "R11",                # as R-22, reducing point apart from the ancillaries'
-    "cyclopropane": "CycloPropane",  # polynomial heat capacity, lower limit far above melting
     "hfe-143m": "HFE143m",        # constant and polynomial heat capacity in powers of kelvin
     "fluorine": "Fluorine",       # exponential residual terms, generalised Planck-Einstein
-    "hydrogen": "Hydrogen",       # Planck-Einstein in kelvin, quantum gas
-    "r-114": "R114",              # Bender's form, critical point 0.4 % above the reducing one
-    "toluene": "Toluene",         # the short industrial form
-    "r-1336mzz-z": "R1336mzz(Z)", # heat capacity terms that carry their own gas constant
 }
 
 

@@ -341,7 +341,7 @@ def conformal(form):
     psi = form["psi"]
     return (
         f"ConformalFluid((like: {text(like)}, molecule: {molecule(form)}, reducing_density_mol_per_m3: {number(psi['rhomolar_reducing'])}, "
-        f"stretch: {tuples(psi['a'], psi['t'])}))"
+        f"stretch: {tuples(psi['a'], psi['t'][: len(psi['a'])])}))"
     )
 
 

@@ -278,8 +278,8 @@ pub fn fluid_table_ui(
     ScrollArea::horizontal()
         .id_salt("fluid table")
         .show(ui, |ui| {
-            let lefts = lefts(ui.available_width());
-            header_ui(ui, &lefts, &scales, &mut sort);
+            let lefts = columns.lefts(ui.available_width());
+            header_ui(ui, &lefts, &columns, &mut sort);
             ScrollArea::vertical()
                 .id_salt("fluid rows")
                 .auto_shrink(false)
@@ -363,12 +363,7 @@ fn trial_of(design: &Design, row: &Ranked) -> Option<Trial> {
     Some((FluidId::from(&*row.fluid), charge))
 }
 
-fn header_ui(
-    ui: &mut Ui,
-    lefts: &[f32],
-    columns: &Columns,
-    sort: &mut Option<(Column, bool)>,
-) {
+fn header_ui(ui: &mut Ui, lefts: &[f32], columns: &Columns, sort: &mut Option<(Column, bool)>) {
     let palette = Palette::in_use(ui);
     let width = lefts[lefts.len() - 1];
     let (rect, _) = ui.allocate_exact_size(vec2(width, 34.0), Sense::hover());
@@ -537,10 +532,7 @@ fn as_text(rows: &[Ranked], duty: Duty, units: &Units) -> String {
     });
     let mut text = heads.collect::<Vec<_>>().join("\t");
     for row in rows {
-        let cells = Column::ALL
-            .iter()
-            .zip(&scales)
-            .map(|(column, scale)| match column {
+        let cells = columns.0.iter().map(|(column, scale)| match column {
                 Column::Name => row.fluid.name().to_owned(),
                 Column::Objection => row
                     .objections
