@@ -104,6 +104,7 @@ pub fn parse(text: &str) -> Result<Fluid, FluidFileError> {
         safety: file.safety,
         model,
         own_file: None,
+        entry: std::sync::OnceLock::new(),
         curve: std::sync::OnceLock::new(),
     })
 }

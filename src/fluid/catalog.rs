@@ -13,7 +13,7 @@ include!(concat!(env!("OUT_DIR"), "/fluid_files.rs"));
 #[derive(Debug, Clone)]
 pub struct Catalog {
     built_in: Arc<[Slot]>,
-    own: Vec<(Entry, Arc<Fluid>)>,
+    own: Vec<Arc<Fluid>>,
 }
 
 #[derive(Debug)]
@@ -71,8 +71,7 @@ impl Catalog {
     /// # Errors
     /// [`NameTaken`] where another fluid here answers to one of its names.
     pub fn add(&mut self, fluid: Fluid) -> Result<(), NameTaken> {
-        let entry = Entry::of(&fluid);
-        for (field, name) in entry.names() {
+        for (field, name) in fluid.entry().names() {
             let wanted = folded(name);
             if let Some(by) = self.entries().find(|known| answers_to(known, &wanted)) {
                 return Err(NameTaken {
@@ -83,7 +82,7 @@ impl Catalog {
                 });
             }
         }
-        self.own.push((entry, Arc::new(fluid)));
+        self.own.push(Arc::new(fluid));
         Ok(())
     }
 
@@ -120,13 +119,13 @@ impl Catalog {
 
     /// Every fluid, read: the built-in ones by id, then the user's own.
     pub fn iter(&self) -> impl Iterator<Item = Arc<Fluid>> + '_ {
-        let own = self.own.iter().map(|(_, fluid)| Arc::clone(fluid));
+        let own = self.own.iter().map(Arc::clone);
         self.built_in.iter().map(Slot::get).chain(own)
     }
 
     /// What lists show of every fluid, in the order of [`Self::iter`]; reads nothing.
     pub fn entries(&self) -> impl Iterator<Item = &Entry> {
-        let own = self.own.iter().map(|(entry, _)| entry);
+        let own = self.own.iter().map(|fluid| fluid.entry());
         self.built_in.iter().map(|slot| slot.entry).chain(own)
     }
 
@@ -148,19 +147,16 @@ impl Catalog {
     /// [`Self::iter`]; reads nothing.
     pub fn ready(&self) -> impl Iterator<Item = Arc<Fluid>> + '_ {
         let built_in = self.built_in.iter().filter_map(|slot| slot.fluid.get());
-        let own = self.own.iter().map(|(_, fluid)| fluid);
         built_in
-            .chain(own)
+            .chain(&self.own)
             .filter(|fluid| fluid.has_curve())
             .map(Arc::clone)
     }
 
     fn first(&self, is_it: impl Fn(&Entry) -> bool) -> Option<Arc<Fluid>> {
         let built_in = self.built_in.iter().find(|slot| is_it(slot.entry));
-        let own = || self.own.iter().find(|(entry, _)| is_it(entry));
-        built_in
-            .map(Slot::get)
-            .or_else(|| own().map(|(_, fluid)| Arc::clone(fluid)))
+        let own = || self.own.iter().find(|fluid| is_it(fluid.entry()));
+        built_in.map(Slot::get).or_else(|| own().map(Arc::clone))
     }
 }
 

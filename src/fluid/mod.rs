@@ -49,6 +49,7 @@ pub struct Fluid {
     safety: Safety,
     model: Model,
     own_file: Option<OwnFile>,
+    entry: OnceLock<Entry>,
     curve: OnceLock<Result<SaturationCurve, FluidError>>,
 }
 
@@ -101,6 +102,11 @@ impl Fluid {
 
     pub fn safety(&self) -> &Safety {
         &self.safety
+    }
+
+    /// What lists show of it.
+    pub fn entry(&self) -> &Entry {
+        self.entry.get_or_init(|| Entry::of(self))
     }
 
     /// The user's file it was read from; `None` for a fluid that comes with the program.

@@ -56,6 +56,7 @@ impl App {
         theme::apply(ctx, app.settings.theme);
         ctx.set_zoom_factor(app.settings.zoom);
         app.desk.start_watching(ctx);
+        app.notice = app.fluid_notice();
         if let Some(path) = path {
             app.open_path(path);
         }

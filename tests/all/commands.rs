@@ -9,7 +9,7 @@ use chargewright::store;
 use crate::files::Folder;
 use crate::given::preset_with;
 
-fn program() -> Command {
+pub fn program() -> Command {
     let mut command = Command::new(env!("CARGO_BIN_EXE_chargewright"));
     // No display: a test must never open a window.
     for name in ["DISPLAY", "WAYLAND_DISPLAY", "WAYLAND_SOCKET"] {

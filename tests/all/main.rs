@@ -10,6 +10,8 @@ mod files;
 mod given;
 mod layers;
 mod metals;
+mod own_fluid_refusals;
+mod own_fluids;
 mod presets;
 mod printed_tables;
 mod random_states;

@@ -23,7 +23,7 @@ fn wrong(old: &str, new: &str, field: &str, parts: &[&str]) {
     assert_eq!(at.line, line, "“{new}”: {said}");
     assert!(at.column > 1, "“{new}”: {said}");
     assert!(
-        said.starts_with(&format!("line {line}, column {column}: ")),
+        said.starts_with(&format!("line {line}, column {}: ", at.column)),
         "{said}"
     );
     assert!(

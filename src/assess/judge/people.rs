@@ -235,7 +235,7 @@ impl Judge<'_> {
         }
     }
 
-    pub(super) fn provenance(&mut self) {
+    pub(super) fn own_fluid(&mut self) {
         if let Some(own) = self.a.fluid.own_file() {
             let file = own.name.clone();
             self.add(
@@ -244,6 +244,9 @@ impl Judge<'_> {
                 FindingKind::OwnFluid { file },
             );
         }
+    }
+
+    pub(super) fn provenance(&mut self) {
         if let Model::Correlated(model) = self.a.fluid.model() {
             let percent = 100.0 * model.pressure_uncertainty();
             self.add(

@@ -237,7 +237,7 @@ pub fn fluid_table_ui(
     let shown: Vec<&Ranked> = rows
         .iter()
         .filter(|row| !table.without_objection_only || row.objections.is_empty())
-        .filter(|row| super::fluid::matches(&row.fluid, &wanted))
+        .filter(|row| super::fluid::matches(row.fluid.entry(), &wanted))
         .collect();
     let present = rows
         .iter()
@@ -329,7 +329,7 @@ fn trial_of(design: &Design, row: &Ranked) -> Option<Trial> {
         let grams = crate::units::careful_down(same_fill.kilogram(), 4);
         *mass = Mass::from_kilogram(grams).unwrap_or(*same_fill);
     }
-    Some((FluidId::new(row.fluid.id())?, charge))
+    Some((FluidId::from(&*row.fluid), charge))
 }
 
 /// Left ends of the columns and the right end of the last.
@@ -353,7 +353,7 @@ fn header_ui(ui: &mut Ui, lefts: &[f32], scales: &[Scale; 9], sort: &mut Option<
     for (i, column) in Column::ALL.into_iter().enumerate() {
         let cell = cell(rect, lefts, i);
         let response = ui
-            .interact(cell, ui.id().with(("column", i)), Sense::click())
+            .interact(cell, ui.scope_id().with(("column", i)), Sense::click())
             .on_hover_text(column.tooltip());
         let title = column.title();
         response
@@ -452,7 +452,7 @@ fn row_ui(
     }
     response.on_hover_ui(|ui| {
         ui.label(RichText::new(row.fluid.name()).strong());
-        ui.label(super::fluid::nature(&row.fluid));
+        ui.label(super::fluid::nature(row.fluid.entry()));
         for objection in &row.objections {
             ui.label(words::objection(*objection));
         }
