@@ -92,7 +92,7 @@ pub fn parse(text: &str) -> Result<Fluid, FluidFileError> {
     let model = match file.model {
         ModelFile::Helmholtz(data) => Model::Equation(Box::new(Equation::new(*data)?)),
         ModelFile::Correlated(data) => {
-            data.check(file.molar_mass_kg_per_mol)?;
+            data.check()?;
             Model::Correlated(data)
         }
     };

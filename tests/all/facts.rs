@@ -1,7 +1,7 @@
 //! Facts of the trade and of handbooks. Each says whether its source was seen, is from
 //! memory, or is common practice without one.
 
-use chargewright::fluid::{Catalog, DomeSide, Regime};
+use chargewright::fluid::{Catalog, DomeSide, Model, Regime};
 
 use crate::given::{celsius, density, fluid};
 
@@ -128,6 +128,16 @@ fn which_way_an_isochore_leaves_the_dome_depends_on_the_critical_density() {
         for (share, side) in [(2.0, DomeSide::Liquid), (0.1, DomeSide::Vapour)] {
             let rho = density(share * critical);
             let crossings = fluid.crossings(rho).expect(id);
+            // The model of a metal ends far below the critical temperature.
+            let top = fluid.curve().expect(id);
+            let top = top.at(top.range_k().1);
+            let ends_inside = matches!(fluid.model(), Model::Correlated(_))
+                && (top.vapour_kg_per_m3..top.liquid_kg_per_m3)
+                    .contains(&rho.kilogram_per_cubic_metre());
+            if ends_inside {
+                assert_eq!(crossings, [], "{id}");
+                continue;
+            }
             assert_eq!(crossings.len(), 1, "{}", fluid.id());
             assert_eq!(crossings[0].side, side, "{}", fluid.id());
         }
