@@ -113,7 +113,10 @@ fn the_vapour_is_one_that_can_be() {
             if t > 800.0 {
                 break;
             }
-            assert!(z <= 1.0 && z < last + 2e-5, "{id} at {t} K: {z} after {last}");
+            assert!(
+                z <= 1.0 && z < last + 2e-5,
+                "{id} at {t} K: {z} after {last}"
+            );
             last = z;
             if p < 101_325.0 {
                 at_one_atmosphere = Some(z);
