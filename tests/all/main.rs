@@ -9,6 +9,7 @@ mod facts;
 mod files;
 mod given;
 mod layers;
+mod metals;
 mod own_fluid_refusals;
 mod own_fluids;
 mod presets;

@@ -182,6 +182,12 @@ FLUIDS = {
             "Mulero, A.; Cachadina, I. 2014, J. Phys. Chem. Ref. Data 43, 023104, doi 10.1063/1.4878755, as carried by chemicals 1.5.2",
         ),
     ),
+    # Iodine. VDI and Antoine agree within 0.3 % in the latter's range. Above 650 K nothing is at hand to compare with. The
+    # surface tension of the VDI tables is 40 % above the measured values at the melting point: left out.
+    "7553-56-2": Choice(
+        lowest=386.8, liquid_from=386.8, highest=650.0, tension=None, joint=12000.0, second_slope=("Antoine", 393.0, 487.0),
+        least_pressure_uncertainty=2.0, least_density_uncertainty=1.0,
+    ),
     # Titanium tetrachloride. Measured vapour pressures are at hand only from memory (Stull's table). At 298 K they give 1.65 kPa;
     # calorimetry from the boiling point (41.0 kJ/mol at 298 K from the enthalpies of formation, 36.2 kJ/mol at the boiling
     # point) 1.35 kPa, the Gibbs energies of formation of the CRC Handbook 1.23 kPa, Lee and Kesler 1.19 kPa. The measured ones
