@@ -363,12 +363,7 @@ fn trial_of(design: &Design, row: &Ranked) -> Option<Trial> {
     Some((FluidId::from(&*row.fluid), charge))
 }
 
-fn header_ui(
-    ui: &mut Ui,
-    lefts: &[f32],
-    columns: &Columns,
-    sort: &mut Option<(Column, bool)>,
-) {
+fn header_ui(ui: &mut Ui, lefts: &[f32], columns: &Columns, sort: &mut Option<(Column, bool)>) {
     let palette = Palette::in_use(ui);
     let width = lefts[lefts.len() - 1];
     let (rect, _) = ui.allocate_exact_size(vec2(width, 34.0), Sense::hover());
