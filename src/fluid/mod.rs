@@ -219,6 +219,7 @@ impl Fluid {
                 SaturationCurve::build(
                     self.critical().temperature_k,
                     self.model.saturation_range_k(),
+                    &self.model.joints_k(),
                     |t| self.model.curve_point(t, self.molar_mass),
                 )
                 .map_err(|e| FluidError::NotConverged {

@@ -71,6 +71,14 @@ impl Model {
         }
     }
 
+    /// Temperatures at which saturation passes from one form to another, K.
+    pub fn joints_k(&self) -> Vec<f64> {
+        match self {
+            Self::Equation(_) => Vec::new(),
+            Self::Correlated(model) => model.joint_k().into_iter().collect(),
+        }
+    }
+
     /// Greatest pressure and density given, Pa and kg/m³.
     pub fn limits(&self, molar_mass: f64) -> (f64, f64) {
         match self {
