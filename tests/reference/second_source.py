@@ -36,13 +36,18 @@ def liquid_density(row, temperature):
     return row.rhoc + sum(a * theta**e for a, e in powers)
 
 
-for fluid, cas, low, high in FLUIDS:
-    temperatures = [low + (high - low) * i / 40 for i in range(41)]
-    states = saturation(sys.argv[1], fluid, temperatures)
-    p = vapor_pressure.Psat_data_VDI_PPDS_3.loc[cas]
-    rho = volume.rho_data_VDI_PPDS_2.loc[cas]
-    off_p = max(
-        abs(vapor_pressure.Wagner(t, p.Tc, p.Pc, p.A, p.B, p.C, p.D) / found - 1.0) for t, found, _ in states
-    )
-    off_rho = max(abs(liquid_density(rho, t) / found - 1.0) for t, _, found in states)
-    print(f"{fluid}: {low:g} to {high:g} K: vapour pressure {100 * off_p:.2f} %, liquid density {100 * off_rho:.2f} %")
+def main():
+    for fluid, cas, low, high in FLUIDS:
+        temperatures = [low + (high - low) * i / 40 for i in range(41)]
+        states = saturation(sys.argv[1], fluid, temperatures)
+        p = vapor_pressure.Psat_data_VDI_PPDS_3.loc[cas]
+        rho = volume.rho_data_VDI_PPDS_2.loc[cas]
+        off_p = max(
+            abs(vapor_pressure.Wagner(t, p.Tc, p.Pc, p.A, p.B, p.C, p.D) / found - 1.0) for t, found, _ in states
+        )
+        off_rho = max(abs(liquid_density(rho, t) / found - 1.0) for t, _, found in states)
+        print(f"{fluid}: {low:g} to {high:g} K: vapour pressure {100 * off_p:.2f} %, liquid density {100 * off_rho:.2f} %")
+
+
+if __name__ == "__main__":
+    main()
