@@ -4,6 +4,7 @@ use std::fmt::Write as _;
 use std::io::{self, Write as _};
 use std::path::{Path, PathBuf};
 use std::process::ExitCode;
+use std::sync::Arc;
 
 use clap::{Parser, Subcommand};
 
@@ -11,7 +12,7 @@ use crate::assess::{Library, Verdict, assess};
 use crate::design::Design;
 use crate::fluid::{Catalog, Fluid, FluidError, Regime, UnknownFluid};
 use crate::sheet::{Head, render};
-use crate::store::{self, StoreError};
+use crate::store::{self, Shelf, StoreError};
 use crate::units::{
     Density, Kind, ParseError, Quantity, QuantityError, Temperature, Units, parse_si, unit_named,
 };
@@ -68,6 +69,12 @@ pub enum CliError {
     Store(#[from] StoreError),
     #[error(transparent)]
     UnknownFluid(#[from] UnknownFluid),
+    #[error("{unknown}; {notices}")]
+    UnknownBesideRefused {
+        unknown: UnknownFluid,
+        /// The fluid files that may hold it.
+        notices: String,
+    },
     #[error(transparent)]
     Fluid(#[from] FluidError),
     #[error("--{option} {text}: {cause}")]
@@ -93,6 +100,8 @@ pub enum CliError {
 pub struct Outcome {
     pub text: String,
     pub code: u8,
+    /// What is said beside the output: fluid files that were not read.
+    pub notices: Vec<String>,
 }
 
 /// The arguments, or how the program ends without them: help and version are
@@ -116,34 +125,90 @@ pub fn arguments() -> Result<Arguments, ExitCode> {
 
 /// Runs a headless command: exit 0 or 1 with output, or 2 with one line on stderr.
 pub fn run(command: &Headless) -> ExitCode {
-    let outcome = answer(command).and_then(|outcome| print(&outcome.text).map(|()| outcome.code));
+    let settings = store::settings_folder();
+    let outcome = answer(command, settings.as_deref()).and_then(|outcome| {
+        for notice in &outcome.notices {
+            say(notice);
+        }
+        print(&outcome.text).map(|()| outcome.code)
+    });
     match outcome {
         Ok(code) => ExitCode::from(code),
         Err(error) => {
-            eprintln!("chargewright: {}", one_line(&error.to_string()));
+            say(&error.to_string());
             ExitCode::from(2)
         }
     }
 }
 
-/// A command's answer; writes a file only for `sheet --out`.
+/// A command's answer; writes a file only for `sheet --out`. `settings` is the program's
+/// own folder, which may hold the user's own fluids.
 ///
 /// # Errors
 /// [`CliError`] where input is unreadable or out of range; nothing was printed then.
-pub fn answer(command: &Headless) -> Result<Outcome, CliError> {
+pub fn answer(command: &Headless, settings: Option<&Path>) -> Result<Outcome, CliError> {
     match command {
-        Headless::Sheet { design, out } => sheet(design, out.as_deref()),
-        Headless::Check { design } => check(design),
-        Headless::Saturation { fluid, at } => saturation(fluid, at),
-        Headless::Isochore { fluid, density, at } => isochore(fluid, density, at),
-        Headless::Fluids => Ok(fluids()),
+        Headless::Sheet { design, out } => {
+            let (design_read, shelf) = store::open(design, settings)?;
+            let text = sheet(design, &design_read, &shelf.library, out.as_deref())?;
+            Ok(outcome(text, &shelf))
+        }
+        Headless::Check { design } => {
+            let (design, shelf) = store::open(design, settings)?;
+            let (text, code) = check(&design, &shelf.library);
+            Ok(Outcome {
+                code,
+                ..outcome(text, &shelf)
+            })
+        }
+        Headless::Saturation { fluid, at } => {
+            let shelf = store::shelf(None, settings);
+            let text = saturation(&*find(&shelf, fluid)?, at)?;
+            Ok(outcome(text, &shelf))
+        }
+        Headless::Isochore { fluid, density, at } => {
+            let shelf = store::shelf(None, settings);
+            let text = isochore(&*find(&shelf, fluid)?, density, at)?;
+            Ok(outcome(text, &shelf))
+        }
+        Headless::Fluids => {
+            let shelf = store::shelf(None, settings);
+            Ok(outcome(fluids(&shelf.library.fluids), &shelf))
+        }
     }
+}
+
+fn outcome(text: String, shelf: &Shelf) -> Outcome {
+    Outcome {
+        text,
+        code: 0,
+        notices: shelf.notices(),
+    }
+}
+
+/// A fluid by any of its names; one that is unknown may be in a file that was refused.
+fn find(shelf: &Shelf, name: &str) -> Result<Arc<Fluid>, CliError> {
+    shelf.library.fluids.find(name).map_err(|unknown| {
+        if shelf.refused.is_empty() {
+            CliError::UnknownFluid(unknown)
+        } else {
+            CliError::UnknownBesideRefused {
+                unknown,
+                notices: shelf.notices().join("; "),
+            }
+        }
+    })
+}
+
+/// The sheet of a design of built-in fluids, as [`sheet_with`].
+pub fn sheet_text(design: &Design, file_name: Option<String>) -> String {
+    sheet_with(design, &Library::built_in(), file_name)
 }
 
 /// The sheet of a design file, in the metric system: a file's sheet has the same
 /// bytes on every bench.
-pub fn sheet_text(design: &Design, file_name: Option<String>) -> String {
-    let assessment = assess(design, &Library::built_in());
+pub fn sheet_with(design: &Design, library: &Library, file_name: Option<String>) -> String {
+    let assessment = assess(design, library);
     let head = Head {
         file_name,
         fingerprint: store::fingerprint(design),
@@ -151,27 +216,29 @@ pub fn sheet_text(design: &Design, file_name: Option<String>) -> String {
     render(design, &assessment, &Units::default(), &head)
 }
 
-fn sheet(path: &Path, out: Option<&Path>) -> Result<Outcome, CliError> {
-    let design = store::load(path)?;
+/// The text to print: none where it went into a file.
+fn sheet(
+    path: &Path,
+    design: &Design,
+    library: &Library,
+    out: Option<&Path>,
+) -> Result<String, CliError> {
     let name = path
         .file_name()
         .map(|name| name.to_string_lossy().into_owned());
-    let text = sheet_text(&design, name);
+    let text = sheet_with(design, library, name);
     match out {
         Some(out) => {
             store::write_beside(out, &text, Some(path))?;
-            Ok(Outcome {
-                text: String::new(),
-                code: 0,
-            })
+            Ok(String::new())
         }
-        None => Ok(Outcome { text, code: 0 }),
+        None => Ok(text),
     }
 }
 
-fn check(path: &Path) -> Result<Outcome, CliError> {
-    let design = store::load(path)?;
-    let assessment = assess(&design, &Library::built_in());
+/// One line a finding, and the exit code.
+fn check(design: &Design, library: &Library) -> (String, u8) {
+    let assessment = assess(design, library);
     let units = Units::default();
     let mut text = String::new();
     for finding in &assessment.findings {
@@ -184,14 +251,10 @@ fn check(path: &Path) -> Result<Outcome, CliError> {
         text.push_str(&one_line(&line));
         text.push('\n');
     }
-    Ok(Outcome {
-        text,
-        code: u8::from(assessment.verdict == Verdict::NotFit),
-    })
+    (text, u8::from(assessment.verdict == Verdict::NotFit))
 }
 
-fn saturation(name: &str, at: &str) -> Result<Outcome, CliError> {
-    let fluid = Catalog::built_in().find(name)?;
+fn saturation(fluid: &Fluid, at: &str) -> Result<String, CliError> {
     let mut text = String::from(
         "temperature_k,pressure_pa,liquid_density_kg_per_m3,vapour_density_kg_per_m3,\
          latent_heat_j_per_kg,slope_pa_per_k,surface_tension_n_per_m,liquid_viscosity_pa_s,vapour_viscosity_pa_s\n",
@@ -206,19 +269,18 @@ fn saturation(name: &str, at: &str) -> Result<Outcome, CliError> {
             Some(state.latent_heat_j_per_kg),
             Some(state.slope_pa_per_k),
             fluid.surface_tension(t),
-            None,
-            None,
+            fluid.liquid_viscosity(t),
+            fluid.vapour_viscosity(t),
         ];
         push_row(
             &mut text,
             cells.map(|cell| cell.map_or_else(String::new, digits)),
         );
     }
-    Ok(Outcome { text, code: 0 })
+    Ok(text)
 }
 
-fn isochore(name: &str, density: &str, at: &str) -> Result<Outcome, CliError> {
-    let fluid = Catalog::built_in().find(name)?;
+fn isochore(fluid: &Fluid, density: &str, at: &str) -> Result<String, CliError> {
     let density: Density = quantity(
         "density",
         density,
@@ -228,9 +290,9 @@ fn isochore(name: &str, density: &str, at: &str) -> Result<Outcome, CliError> {
         "temperature_k,density_kg_per_m3,regime,pressure_pa,liquid_share,vapour_quality\n",
     );
     for t in temperatures(at)? {
-        push_row(&mut text, isochore_row(&fluid, density, t)?);
+        push_row(&mut text, isochore_row(fluid, density, t)?);
     }
-    Ok(Outcome { text, code: 0 })
+    Ok(text)
 }
 
 fn isochore_row(fluid: &Fluid, density: Density, t: Temperature) -> Result<[String; 6], CliError> {
@@ -248,24 +310,35 @@ fn isochore_row(fluid: &Fluid, density: Density, t: Temperature) -> Result<[Stri
     ])
 }
 
-fn fluids() -> Outcome {
-    let mut text = String::from("id,name,cas,refrigerant,model,lowest_k,highest_k\n");
-    for fluid in Catalog::built_in().iter() {
-        let (low, high) = fluid.range();
+fn fluids(catalog: &Catalog) -> String {
+    let mut text = String::from("id,name,cas,refrigerant,model,lowest_k,highest_k,own_file\n");
+    for fluid in catalog.entries() {
+        let (low, high) = fluid.range_k();
         push_row(
             &mut text,
             [
                 fluid.id().to_owned(),
-                fluid.name().to_owned(),
+                cell(fluid.name()),
                 fluid.cas().to_owned(),
-                fluid.refrigerant().unwrap_or_default().to_owned(),
+                cell(fluid.refrigerant().unwrap_or_default()),
                 fluid.model_kind().to_owned(),
-                digits(low.kelvin()),
-                digits(high.kelvin()),
+                digits(low),
+                digits(high),
+                cell(fluid.own_file().unwrap_or_default()),
             ],
         );
     }
-    Outcome { text, code: 0 }
+    text
+}
+
+/// A text as a cell of a CSV: in quotes where it holds a comma or a quote.
+fn cell(text: &str) -> String {
+    let plain = one_line(text);
+    if plain.contains([',', '"']) {
+        format!("\"{}\"", plain.replace('"', "\"\""))
+    } else {
+        plain
+    }
 }
 
 /// Every temperature of a list, or the first that is wrong.
@@ -323,6 +396,11 @@ fn digits(value: f64) -> String {
     }
 }
 
+/// One line on stderr.
+fn say(text: &str) {
+    eprintln!("chargewright: {}", one_line(text));
+}
+
 fn one_line(text: &str) -> String {
     let plain = text.replace(|c: char| c.is_control() || c == '\u{a0}', " ");
     plain.split_whitespace().collect::<Vec<_>>().join(" ")
@@ -353,7 +431,8 @@ mod tests {
 
     #[test]
     fn one_bad_temperature_refuses_the_list() {
-        let ask = |at: &str| saturation("water", at);
+        let water = Catalog::built_in().by_id("water").expect("known");
+        let ask = |at: &str| saturation(&water, at);
         // −5 °C is below water's freezing point.
         assert!(matches!(
             ask("300,-5degC"),

@@ -1,10 +1,10 @@
 //! A design: what the user decided, and nothing that can be derived from it.
 
-use serde::{Deserialize, Deserializer, Serialize};
+use serde::{Deserialize, Serialize};
 
 use crate::chamber::{Chamber, Factors};
 use crate::conditions::{Conditions, Room};
-use crate::fluid::Catalog;
+use crate::fluid::{Entry, Fluid};
 use crate::units::{Mass, Ratio, Temperature, TemperatureDifference, Volume};
 
 /// What the user decided.
@@ -37,8 +37,9 @@ pub enum Duty {
     PlainVessel,
 }
 
-/// Id of a fluid in the catalogue; a design file that names another is refused.
-#[derive(Debug, Clone, PartialEq, Eq, Hash, Serialize)]
+/// Id of a fluid in the catalogue that the design is assessed against. In a file any of
+/// the fluid's names may stand: `store` looks it up as it reads, and refuses an unknown one.
+#[derive(Debug, Clone, PartialEq, Eq, Hash, Serialize, Deserialize)]
 #[serde(transparent)]
 pub struct FluidId(String);
 
@@ -129,26 +130,20 @@ impl Design {
 }
 
 impl FluidId {
-    /// The id of a fluid that the built-in catalogue knows.
-    pub fn new(id: &str) -> Option<Self> {
-        Catalog::built_in()
-            .ids()
-            .any(|known| known == id)
-            .then(|| Self(id.to_owned()))
-    }
-
     pub fn as_str(&self) -> &str {
         &self.0
     }
 }
 
-impl<'de> Deserialize<'de> for FluidId {
-    fn deserialize<D: Deserializer<'de>>(deserializer: D) -> Result<Self, D::Error> {
-        let name = String::deserialize(deserializer)?;
-        match Catalog::built_in().find(&name) {
-            Ok(fluid) => Ok(Self(fluid.id().to_owned())),
-            Err(unknown) => Err(serde::de::Error::custom(unknown)),
-        }
+impl From<&Fluid> for FluidId {
+    fn from(fluid: &Fluid) -> Self {
+        Self(fluid.id().to_owned())
+    }
+}
+
+impl From<&Entry> for FluidId {
+    fn from(entry: &Entry) -> Self {
+        Self(entry.id().to_owned())
     }
 }
 

@@ -12,6 +12,8 @@ pub mod solve;
 
 pub mod source;
 
+pub mod text;
+
 pub mod fluid;
 
 pub mod chamber;

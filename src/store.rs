@@ -1,4 +1,5 @@
-//! Designs, settings and drafts on disk: the only user of the file system.
+//! Designs, the user's own fluids, settings and drafts on disk: the only user of the
+//! file system.
 
 use std::fs::{self, File};
 use std::io::{self, Read, Write};
@@ -7,12 +8,16 @@ use std::sync::atomic::{AtomicU32, Ordering};
 
 use serde::{Deserialize, Serialize};
 
-use crate::design::Design;
+use crate::design::{Design, FluidId};
+use crate::fluid::Catalog;
+use crate::text::{self, TextError};
+
+mod shelf;
+
+pub use shelf::{Shelf, carry_fluid, open, shelf};
 
 /// Version of the design file's format.
 pub const FORMAT: u32 = 1;
-/// A design is a few kilobytes; anything far larger is a mistake.
-const LARGEST_BYTES: u64 = 4 << 20;
 
 include!(concat!(env!("OUT_DIR"), "/preset_files.rs"));
 
@@ -21,14 +26,18 @@ include!(concat!(env!("OUT_DIR"), "/preset_files.rs"));
 pub enum StoreError {
     #[error("{} does not exist", path.display())]
     Missing { path: PathBuf },
-    #[error("{} is a folder, not a design file", path.display())]
-    Folder { path: PathBuf },
+    #[error("{} is a folder, not a {kind} file", path.display())]
+    Folder { path: PathBuf, kind: Kind },
     #[error("{} is neither a file nor a folder that can be read here", path.display())]
     NotAFile { path: PathBuf },
     #[error("{} is the design itself: name another file", path.display())]
     OverDesign { path: PathBuf },
-    #[error("{} is {mebibytes} MiB: a design file is at most 4 MiB", path.display())]
-    TooLarge { path: PathBuf, mebibytes: u64 },
+    #[error("{} is {mebibytes} MiB: a {kind} file is at most {} MiB", path.display(), kind.largest_mebibytes)]
+    TooLarge {
+        path: PathBuf,
+        mebibytes: u64,
+        kind: Kind,
+    },
     #[error("{} is not text", path.display())]
     NotText { path: PathBuf },
     #[error("{} cannot be read: {cause}", path.display())]
@@ -37,18 +46,54 @@ pub enum StoreError {
     Write { path: PathBuf, cause: io::Error },
     #[error("{}, {error}", path.display())]
     Parse { path: PathBuf, error: ParseError },
+    #[error("{design}; {notices}")]
+    FluidRefused {
+        design: Box<StoreError>,
+        /// The fluid files that may hold the design's fluid.
+        notices: String,
+    },
+    #[error("{} is another file than the fluid in use: choose another folder, or rename one of them", path.display())]
+    OtherFluid { path: PathBuf },
 }
 
-/// What is wrong in a design's text, and where.
+/// A kind of file that a user may write; anything far larger than one is a mistake.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub struct Kind {
+    name: &'static str,
+    largest_mebibytes: u64,
+}
+
+impl Kind {
+    /// A design is a few kilobytes.
+    const DESIGN: Self = Self {
+        name: "design",
+        largest_mebibytes: 4,
+    };
+    /// The longest equation takes some thirty kilobytes.
+    const FLUID: Self = Self {
+        name: "fluid",
+        largest_mebibytes: 1,
+    };
+
+    const fn largest_bytes(self) -> u64 {
+        self.largest_mebibytes << 20
+    }
+}
+
+impl std::fmt::Display for Kind {
+    fn fmt(&self, f: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
+        f.write_str(self.name)
+    }
+}
+
+/// What is wrong in a file's text, and where.
 #[derive(Debug, Clone, PartialEq, thiserror::Error)]
 pub enum ParseError {
-    #[error("line {line}, column {column}: {}{what}", .field.as_ref().map(|field| format!("{field}: ")).unwrap_or_default())]
-    At {
-        line: usize,
-        column: usize,
-        field: Option<String>,
-        what: String,
-    },
+    #[error(transparent)]
+    At(#[from] TextError),
+    /// A design names a fluid that is not in the catalogue.
+    #[error(transparent)]
+    UnknownFluid(TextError),
     #[error("format {found} is newer than this program reads, {FORMAT}: use a newer version")]
     NewerFormat { found: u32 },
     #[error("format {found} never was: the first is 1")]
@@ -84,11 +129,20 @@ pub fn to_text(design: &Design) -> String {
     text
 }
 
-/// Reads a design's text.
+/// Reads a design's text; its fluid is one that comes with the program.
+///
+/// # Errors
+/// As [`from_text_with`].
+pub fn from_text(text: &str) -> Result<Design, ParseError> {
+    from_text_with(text, &Catalog::built_in())
+}
+
+/// Reads a design's text against a catalogue: its fluid gets the catalogue's id,
+/// whichever of its names stands there.
 ///
 /// # Errors
 /// [`ParseError`] names line, column, field, value and limit.
-pub fn from_text(text: &str) -> Result<Design, ParseError> {
+pub fn from_text_with(text: &str, fluids: &Catalog) -> Result<Design, ParseError> {
     match ron::from_str::<FormatOnly>(text) {
         Ok(FormatOnly { format }) if format > FORMAT => {
             return Err(ParseError::NewerFormat { found: format });
@@ -96,104 +150,50 @@ pub fn from_text(text: &str) -> Result<Design, ParseError> {
         Ok(FormatOnly { format: 0 }) => return Err(ParseError::NoSuchFormat { found: 0 }),
         _ => {}
     }
-    let mut deserializer =
-        ron::Deserializer::from_str(text).map_err(|error| at(text, &error, None))?;
-    let file: DesignFile =
-        serde_path_to_error::deserialize(&mut deserializer).map_err(|error| {
-            let field = error.path().to_string();
-            let field = (field != "." && !field.is_empty()).then_some(field);
-            at(text, &deserializer.span_error(error.into_inner()), field)
-        })?;
-    deserializer
-        .end()
-        .map_err(|error| at(text, &deserializer.span_error(error), None))?;
-    Ok(file.design)
-}
-
-fn at(text: &str, error: &ron::error::SpannedError, field: Option<String>) -> ParseError {
-    // An error within a value is found where the value starts.
-    let position = error.span.start;
-    let what = match &error.code {
-        ron::Error::IntegerOutOfBounds => {
-            let found = value_at(text, position.line, position.col);
-            format!("{found} is not a whole number from 0 to {}", u32::MAX)
+    let DesignFile { mut design, .. } = text::read(text)?;
+    match fluids.find(design.fluid.as_str()) {
+        Ok(fluid) => design.fluid = FluidId::from(&*fluid),
+        Err(unknown) => {
+            let error = TextError::about(text, "design.fluid", unknown.to_string());
+            return Err(ParseError::UnknownFluid(error));
         }
-        code @ (ron::Error::ExpectedFloat
-        | ron::Error::ExpectedInteger
-        | ron::Error::ExpectedBoolean
-        | ron::Error::ExpectedString) => {
-            format!(
-                "{code}, not {}",
-                value_at(text, position.line, position.col)
-            )
-        }
-        code => code.to_string(),
-    };
-    ParseError::At {
-        line: position.line,
-        column: position.col,
-        field,
-        what,
     }
+    Ok(design)
 }
 
-/// The value that stands at a line and column, as it is written there.
-fn value_at(text: &str, line: usize, column: usize) -> String {
-    const LONGEST: usize = 40;
-    let line = text.lines().nth(line.saturating_sub(1)).unwrap_or_default();
-    let ends = |c: char| matches!(c, ',' | ':' | '(' | ')' | '[' | ']') || c.is_whitespace();
-    let at = line
-        .char_indices()
-        .nth(column.saturating_sub(1))
-        .map_or(line.len(), |(at, _)| at);
-    let start = line[..at]
-        .char_indices()
-        .rev()
-        .take_while(|(_, c)| !ends(*c))
-        .last()
-        .map_or(at, |(start, _)| start);
-    line[start..]
-        .trim_start()
-        .chars()
-        .take_while(|c| !ends(*c))
-        .take(LONGEST)
-        .collect()
-}
-
-/// Fingerprint of a design's content: FNV-1a, 64 bits, of its text. It tells
-/// versions of a sheet apart; it is no protection against forgery.
+/// Fingerprint of a design's content: it tells versions of a sheet apart.
 pub fn fingerprint(design: &Design) -> String {
-    let hash = to_text(design)
-        .bytes()
-        .fold(0xcbf2_9ce4_8422_2325_u64, |hash, byte| {
-            (hash ^ u64::from(byte)).wrapping_mul(0x0100_0000_01b3)
-        });
-    format!(
-        "{:04x}-{:04x}-{:04x}-{:04x}",
-        hash >> 48,
-        hash >> 32 & 0xffff,
-        hash >> 16 & 0xffff,
-        hash & 0xffff
-    )
+    text::fingerprint(&to_text(design))
 }
 
-/// Reads a design file.
+/// Reads a design file; its fluid is one that comes with the program.
 ///
 /// # Errors
 /// [`StoreError`] says what is wrong with it.
 pub fn load(path: &Path) -> Result<Design, StoreError> {
-    let text = read_text(path)?;
-    from_text(&text).map_err(|error| StoreError::Parse {
+    load_with(path, &Catalog::built_in())
+}
+
+/// Reads a design file against a catalogue.
+///
+/// # Errors
+/// [`StoreError`] says what is wrong with it.
+pub fn load_with(path: &Path, fluids: &Catalog) -> Result<Design, StoreError> {
+    let text = read_text(path, Kind::DESIGN)?;
+    from_text_with(&text, fluids).map_err(|error| StoreError::Parse {
         path: path.to_owned(),
         error,
     })
 }
 
-fn read_text(path: &Path) -> Result<String, StoreError> {
+fn read_text(path: &Path, kind: Kind) -> Result<String, StoreError> {
     let named = || path.to_owned();
     let failed = |cause: io::Error| match cause.kind() {
         io::ErrorKind::NotFound => StoreError::Missing { path: named() },
-        io::ErrorKind::IsADirectory => StoreError::Folder { path: named() },
+        io::ErrorKind::IsADirectory => StoreError::Folder {
+            path: named(),
+            kind,
+        },
         _ => StoreError::Read {
             path: named(),
             cause,
@@ -201,7 +201,10 @@ fn read_text(path: &Path) -> Result<String, StoreError> {
     };
     let metadata = fs::metadata(path).map_err(failed)?;
     if metadata.is_dir() {
-        return Err(StoreError::Folder { path: named() });
+        return Err(StoreError::Folder {
+            path: named(),
+            kind,
+        });
     }
     if !metadata.is_file() {
         // A pipe would keep us waiting, a device would never end.
@@ -211,17 +214,18 @@ fn read_text(path: &Path) -> Result<String, StoreError> {
         path: named(),
         // Rounded up: just above the limit it does not read as allowed.
         mebibytes: bytes.div_ceil(1 << 20),
+        kind,
     };
-    if metadata.len() > LARGEST_BYTES {
+    if metadata.len() > kind.largest_bytes() {
         return Err(too_large(metadata.len()));
     }
     let mut bytes = Vec::new();
     // A file that grows has no length to trust: read one byte more than allowed.
     let file = File::open(path).map_err(failed)?;
-    file.take(LARGEST_BYTES + 1)
+    file.take(kind.largest_bytes() + 1)
         .read_to_end(&mut bytes)
         .map_err(failed)?;
-    if bytes.len() as u64 > LARGEST_BYTES {
+    if bytes.len() as u64 > kind.largest_bytes() {
         return Err(too_large(bytes.len() as u64));
     }
     String::from_utf8(bytes).map_err(|_| StoreError::NotText { path: named() })
@@ -266,6 +270,7 @@ pub fn write_text(path: &Path, text: &str) -> Result<(), StoreError> {
     if path.is_dir() {
         return Err(StoreError::Folder {
             path: path.to_owned(),
+            kind: Kind::DESIGN,
         });
     }
     // A link to a file that is not there yet has no canonical path: its own target is used.
@@ -383,7 +388,7 @@ pub fn settings_folder() -> Option<PathBuf> {
 
 /// Reads a small RON file of the program's own; `None` where it is missing or damaged.
 pub fn read_own<T: for<'de> Deserialize<'de>>(path: &Path) -> Option<T> {
-    ron::from_str(&read_text(path).ok()?).ok()
+    ron::from_str(&read_text(path, Kind::DESIGN).ok()?).ok()
 }
 
 /// Writes a small RON file of the program's own, with its folder.

@@ -5,7 +5,7 @@ use super::worst::Walls;
 use crate::design::Design;
 use crate::fluid::Fluid;
 use crate::sealed::{PathPoint, SealedUnit, path};
-use crate::units::{Mass, Pressure, Quantity, Temperature, Volume};
+use crate::units::{Density, Mass, Pressure, Quantity, Temperature, Volume};
 
 /// Points of the sealed path.
 const PATH_POINTS: usize = 400;
@@ -167,61 +167,63 @@ fn allowable_line(
 ) -> Figure<Vec<MapPoint>> {
     let mut line = Vec::new();
     let curve = fluid.curve()?;
-    let gap = |t: f64| -> f64 {
-        let Ok(t) = Temperature::from_kelvin(t) else {
-            return f64::NAN;
-        };
-        match (fluid.saturation_pressure(t), walls.allowable_pressure(t)) {
-            (Ok(p), Ok(limit)) => p.pascal() - limit.pascal(),
-            _ => f64::NAN,
-        }
+    let at = |density: f64, temperature: Temperature| {
+        let mass = Mass::from_kilogram(density * volume.cubic_metre()).ok()?;
+        Some(MapPoint { mass, temperature })
     };
-    let grid: Vec<Temperature> = temperatures(range, walls.knots.iter().copied()).collect();
-    for pair in grid.windows(2) {
-        let (here, next) = (pair[0], pair[1]);
-        line.extend(on_contour(fluid, volume, here, walls)?);
-        let (a, b) = (gap(here.kelvin()), gap(next.kelvin()));
-        if a.is_finite()
-            && b.is_finite()
-            && a.signum() != b.signum()
-            && let Ok(t) = crate::solve::bracketed_root(gap, here.kelvin(), next.kelvin(), 1e-9)
-            && let Ok(temperature) = Temperature::from_kelvin(t)
+    let gap_below =
+        |limit: Option<Pressure>, t: Temperature| match (fluid.saturation_pressure(t), limit) {
+            (Ok(p), Some(limit)) => p.pascal() - limit.pascal(),
+            _ => f64::NAN,
+        };
+    let mut before: Option<(Temperature, f64)> = None;
+    let mut behind: [Option<f64>; 2] = [None, None];
+    for temperature in temperatures(range, walls.knots.iter().copied()) {
+        let limit = walls.allowable_pressure(temperature).ok();
+        let gap = gap_below(limit, temperature);
+        if let Some((earlier, gap_before)) = before
+            && gap_before.is_finite()
+            && gap.is_finite()
+            && gap_before.signum() != gap.signum()
+            && let Ok(level) = crate::solve::bracketed_root(
+                |t| {
+                    Temperature::from_kelvin(t)
+                        .map_or(f64::NAN, |t| gap_below(walls.allowable_pressure(t).ok(), t))
+                },
+                earlier.kelvin(),
+                temperature.kelvin(),
+                1e-9,
+            )
+            && let Ok(across) = Temperature::from_kelvin(level)
         {
-            let point = curve.at(t);
-            let (first, second) = if a < 0.0 {
+            let point = curve.at(level);
+            let (first, second) = if gap_before < 0.0 {
                 (point.liquid_kg_per_m3, point.vapour_kg_per_m3)
             } else {
                 (point.vapour_kg_per_m3, point.liquid_kg_per_m3)
             };
-            for density in [first, second] {
-                if let Ok(mass) = Mass::from_kilogram(density * volume.cubic_metre()) {
-                    line.push(MapPoint { mass, temperature });
-                }
-            }
+            line.extend(
+                [first, second]
+                    .into_iter()
+                    .filter_map(|rho| at(rho, across)),
+            );
+            behind = [None, None];
         }
-    }
-    if let Some(last) = grid.last() {
-        line.extend(on_contour(fluid, volume, *last, walls)?);
+        before = Some((temperature, gap));
+        let Some(limit) = limit else { continue };
+        // The contour is followed: each density starts in line with the two before.
+        let near = match behind {
+            [Some(older), Some(last)] => Some(2.0 * last - older),
+            [_, last] => last,
+        };
+        let near = near.and_then(|rho| Density::from_kilogram_per_cubic_metre(rho).ok());
+        let found = fluid
+            .densest_within(limit, temperature, near)?
+            .map(Density::kilogram_per_cubic_metre);
+        line.extend(found.and_then(|rho| at(rho, temperature)));
+        behind = [behind[1], found];
     }
     Ok(line)
-}
-
-fn on_contour(
-    fluid: &Fluid,
-    volume: Volume,
-    temperature: Temperature,
-    walls: &Walls<'_>,
-) -> Figure<Option<MapPoint>> {
-    let Ok(limit) = walls.allowable_pressure(temperature) else {
-        return Ok(None);
-    };
-    let density = fluid.density_at(limit, temperature)?;
-    Ok(density.and_then(|density| {
-        let kilogram = density.kilogram_per_cubic_metre() * volume.cubic_metre();
-        Mass::from_kilogram(kilogram)
-            .ok()
-            .map(|mass| MapPoint { mass, temperature })
-    }))
 }
 
 /// Evenly spaced temperatures with the knots between them, ascending.

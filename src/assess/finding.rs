@@ -162,6 +162,8 @@ pub enum FindingKind {
         source: String,
     },
     Corrosive {
+        /// Water makes it worse.
+        keep_dry: bool,
         source: String,
     },
     Asphyxiant {
@@ -197,6 +199,10 @@ pub enum FindingKind {
     },
     ModelUncertainty {
         percent: f64,
+    },
+    /// The fluid is the user's own: nobody else answers for its figures.
+    OwnFluid {
+        file: String,
     },
     FromMemory {
         what: String,

@@ -8,6 +8,7 @@ mod chart;
 mod figure;
 mod finding;
 mod judge;
+mod ranking;
 mod window;
 mod worst;
 
@@ -24,6 +25,7 @@ pub use charge::{ChargeFigures, Corners};
 pub use chart::{ChargeMap, Charts, LimitPoint, MapPoint};
 pub use figure::{Figure, Missing};
 pub use finding::{Finding, FindingKind, Section, Severity, Verdict};
+pub use ranking::{Objection, Ranked, rank};
 pub use window::{Bound, Requirement, Side, Window};
 pub use worst::{Walls, WorstCase};
 
@@ -37,8 +39,13 @@ pub struct Library {
 impl Library {
     /// The fluids and materials that come with the program.
     pub fn built_in() -> Self {
+        Self::with_fluids(Catalog::built_in())
+    }
+
+    /// Other fluids, with the materials that come with the program.
+    pub fn with_fluids(fluids: Catalog) -> Self {
         Self {
-            fluids: Catalog::built_in(),
+            fluids,
             materials: Materials::built_in(),
         }
     }
@@ -93,12 +100,13 @@ pub struct Assessment {
 /// What physics says about a design.
 ///
 /// # Panics
-/// Never for a design that was read or edited: its fluid id is checked when made.
+/// Never for a design that was read or edited against this library: its fluid is looked
+/// up when it is read.
 pub fn assess(design: &Design, library: &Library) -> Assessment {
     let fluid = library
         .fluids
         .by_id(design.fluid.as_str())
-        .expect("a design's fluid id is checked when it is made");
+        .expect("a design's fluid is looked up when it is read");
     let volumes = design.chamber.volumes().map_err(Missing::from);
     let envelope = Envelope::new(&design.chamber, &library.materials, design.demands.factors);
     let walls = Walls {
@@ -211,9 +219,14 @@ fn side_of(unit: &SealedUnit, side: DomeSide) -> Figure<Option<Temperature>> {
         let is_there = match (unit.state(low), side) {
             (Ok(state), DomeSide::Liquid) => state.regime == Regime::LiquidFull,
             (Ok(state), DomeSide::Vapour) => state.regime == Regime::AllVapour,
-            (Err(FluidError::TooDense { .. } | FluidError::PressureTooHigh { .. }), side) => {
-                side == DomeSide::Liquid
-            }
+            (
+                Err(
+                    FluidError::TooDense { .. }
+                    | FluidError::PressureTooHigh { .. }
+                    | FluidError::NoCompressedLiquid { .. },
+                ),
+                side,
+            ) => side == DomeSide::Liquid,
             _ => false,
         };
         return Ok(is_there.then_some(low));

@@ -268,7 +268,9 @@ fn allowable(
         let Ok(limit) = Pressure::from_pascal(limit) else {
             continue;
         };
-        if let Some(density) = fluid.density_at(limit, t).map_err(Missing::Fluid)?
+        if let Some(density) = fluid
+            .densest_within(limit, t, None)
+            .map_err(Missing::Fluid)?
             && least.is_none_or(|(found, _)| density < found)
         {
             least = Some((density, t));

@@ -3,13 +3,16 @@
 use serde::Deserialize;
 
 use super::Fluid;
-use super::correlated::Correlated;
+use super::correlated::{Correlated, CorrelatedError};
 use super::helmholtz::{Equation, EquationData, EquationError};
+use super::lines::Lines;
 use super::model::Model;
 use super::safety::Safety;
+use super::viscosity::Viscosity;
 use crate::source::{Source, Sourced};
+use crate::text::{self, TextError};
 
-const FORMAT: u32 = 1;
+pub(super) const FORMAT: u32 = 1;
 
 #[derive(Debug, Deserialize)]
 #[serde(deny_unknown_fields)]
@@ -30,6 +33,10 @@ struct FluidFile {
     model: ModelFile,
     #[serde(default)]
     surface_tension: Option<SurfaceTension>,
+    #[serde(default)]
+    viscosity: Viscosity,
+    #[serde(default)]
+    lines: Lines,
     safety: Safety,
 }
 
@@ -53,14 +60,16 @@ pub struct SurfaceTension {
 /// Why a fluid file is refused.
 #[derive(Debug, Clone, PartialEq, thiserror::Error)]
 pub enum FluidFileError {
-    #[error("{0}")]
-    Syntax(Box<ron::error::SpannedError>),
+    #[error(transparent)]
+    Text(#[from] TextError),
     #[error("format {found} is not one this program reads ({FORMAT})")]
     Format { found: u32 },
     #[error("{field} must be a finite number above 0, not {value}")]
     NotPositive { field: &'static str, value: f64 },
     #[error("model: {0}")]
     Equation(#[from] EquationError),
+    #[error("model: {0}")]
+    Correlated(#[from] CorrelatedError),
 }
 
 /// Reads one fluid's file.
@@ -68,7 +77,7 @@ pub enum FluidFileError {
 /// # Errors
 /// [`FluidFileError`] says what is wrong and where.
 pub fn parse(text: &str) -> Result<Fluid, FluidFileError> {
-    let file: FluidFile = ron::from_str(text).map_err(|e| FluidFileError::Syntax(Box::new(e)))?;
+    let file: FluidFile = text::read(text)?;
     if file.format != FORMAT {
         return Err(FluidFileError::Format { found: file.format });
     }
@@ -82,7 +91,10 @@ pub fn parse(text: &str) -> Result<Fluid, FluidFileError> {
     }
     let model = match file.model {
         ModelFile::Helmholtz(data) => Model::Equation(Box::new(Equation::new(*data)?)),
-        ModelFile::Correlated(data) => Model::Correlated(data),
+        ModelFile::Correlated(data) => {
+            data.check(file.molar_mass_kg_per_mol)?;
+            Model::Correlated(data)
+        }
     };
     Ok(Fluid {
         id: file.id,
@@ -95,8 +107,12 @@ pub fn parse(text: &str) -> Result<Fluid, FluidFileError> {
         melting_point: file.melting_point_k,
         solid_density: file.solid_density_kg_per_m3,
         surface_tension: file.surface_tension,
+        viscosity: file.viscosity,
+        lines: file.lines,
         safety: file.safety,
         model,
+        own_file: None,
+        entry: std::sync::OnceLock::new(),
         curve: std::sync::OnceLock::new(),
     })
 }

@@ -4,16 +4,21 @@
 //! the feasibility of superancillary equations", and Bell, I. H. 2021, J. Phys.
 //! Chem. Ref. Data 50, 013102 (cited from memory). What differs here: the
 //! variable is x = √(1 − T/T_c). The densities of an analytic equation are
-//! analytic in x through the critical point, so few pieces are needed.
+//! analytic in x through the critical point, so few pieces are needed; each is
+//! kept as powers, short enough that they lose no digits.
 
-/// Values expanded: ln p (p in Pa), ρ′ and ρ″ (kg/m³, ln for the vapour).
+/// Values expanded: p (Pa), ρ′ and ρ″ (kg/m³).
 const WHAT: usize = 3;
-const DEGREE: usize = 16;
+const DEGREE: usize = 10;
 const NODES: usize = DEGREE + 1;
-/// Relative size of the last coefficients at which a piece is good enough; the
-/// direct solve's own noise is just below.
+/// Size of the last coefficients against the values at which a piece is good enough;
+/// the direct solve's own noise is just below.
 const GOOD: f64 = 2e-13;
+/// A tail that halving a piece does not shrink by this is the noise of the solve.
+const SHRINKS: f64 = 0.25;
 const NARROWEST: f64 = 1e-3;
+/// Cells of the even grid by which a piece is found without a search.
+const CELLS: usize = 128;
 
 /// Saturation pressure and densities over temperature.
 #[derive(Debug, Clone, PartialEq)]
@@ -22,14 +27,20 @@ pub struct SaturationCurve {
     /// Lowest and highest temperature covered, K.
     range_k: (f64, f64),
     pieces: Vec<Piece>,
+    /// The first piece that reaches into each cell of the grid over x.
+    first: Vec<u16>,
+    /// Lower end of the grid and cells per unit of x.
+    grid: (f64, f64),
     /// Where the liquid density stops rising or falling, K, ascending.
     turning_points: Vec<f64>,
 }
 
+/// Powers of u = (x − middle)·scale, which runs from −1 to 1 over the piece.
 #[derive(Debug, Clone, PartialEq)]
 struct Piece {
-    low: f64,
     high: f64,
+    middle: f64,
+    scale: f64,
     /// By degree, then by what is expanded: the three sums run side by side.
     coefficients: [[f64; WHAT]; NODES],
 }
@@ -53,25 +64,37 @@ impl SaturationCurve {
         mut solve: impl FnMut(f64) -> Result<CurvePoint, E>,
     ) -> Result<Self, E> {
         let x = |t: f64| (1.0 - t / critical_temperature_k).max(0.0).sqrt();
+        let (from, to) = (x(range_k.1), x(range_k.0));
         let mut pieces = Vec::new();
-        let mut open = vec![(x(range_k.1), x(range_k.0))];
-        while let Some((low, high)) = open.pop() {
-            let piece = Piece::fit(low, high, |x| {
+        let mut open = vec![(from, to, f64::INFINITY)];
+        while let Some((low, high, tail_before)) = open.pop() {
+            let (piece, tail) = Piece::fit(low, high, |x| {
                 let t = critical_temperature_k * (1.0 - x * x);
                 solve(t.clamp(range_k.0, range_k.1))
             })?;
-            if piece.is_good() || high - low < NARROWEST {
+            let is_noise = tail < 1e-8 && tail > SHRINKS * tail_before;
+            if tail < GOOD || is_noise || high - low < NARROWEST {
                 pieces.push(piece);
             } else {
                 let middle = 0.5 * (low + high);
-                open.push((middle, high));
-                open.push((low, middle));
+                open.push((middle, high, tail));
+                open.push((low, middle, tail));
             }
         }
+        let per_x = CELLS as f64 / (to - from);
+        let first = (0..CELLS)
+            .map(|cell| {
+                let start = from + cell as f64 / per_x;
+                let index = pieces.partition_point(|piece: &Piece| piece.high < start);
+                index.min(pieces.len() - 1) as u16
+            })
+            .collect();
         let mut curve = Self {
             critical_temperature_k,
             range_k,
             pieces,
+            first,
+            grid: (from, per_x),
             turning_points: Vec::new(),
         };
         curve.turning_points = curve.find_turning_points();
@@ -83,9 +106,12 @@ impl SaturationCurve {
         self.range_k
     }
 
-    /// Number of pieces and of stored coefficients.
+    /// Number of pieces and of bytes on the heap.
     pub fn size(&self) -> (usize, usize) {
-        (self.pieces.len(), self.pieces.len() * WHAT * NODES)
+        let bytes = self.pieces.capacity() * size_of::<Piece>()
+            + self.first.capacity() * size_of::<u16>()
+            + self.turning_points.capacity() * size_of::<f64>();
+        (self.pieces.len(), bytes)
     }
 
     /// Temperatures at which the liquid is densest or lightest inside the range, ascending, K.
@@ -95,21 +121,41 @@ impl SaturationCurve {
 
     /// The state at a temperature inside [`Self::range_k`].
     pub fn at(&self, temperature_k: f64) -> CurvePoint {
+        let (piece, u) = self.piece(temperature_k);
+        let [pressure_pa, liquid_kg_per_m3, vapour_kg_per_m3] = sum(&piece.coefficients, u);
+        CurvePoint {
+            pressure_pa,
+            liquid_kg_per_m3,
+            vapour_kg_per_m3,
+        }
+    }
+
+    /// Slope of the vapour pressure over temperature, Pa/K, from the same powers.
+    pub fn slope_at(&self, temperature_k: f64) -> f64 {
+        let (piece, u) = self.piece(temperature_k);
+        let over_u = piece.coefficients[1..]
+            .iter()
+            .enumerate()
+            .rev()
+            .fold(0.0, |sum, (j, row)| sum * u + (j + 1) as f64 * row[0]);
+        // u = (x − middle)·scale and x² = 1 − T/T_c.
+        let x = piece.middle + u / piece.scale;
+        -over_u * piece.scale / (2.0 * x * self.critical_temperature_k)
+    }
+
+    /// The piece for a temperature and the place in it, −1 to 1.
+    fn piece(&self, temperature_k: f64) -> (&Piece, f64) {
         let x = (1.0 - temperature_k / self.critical_temperature_k)
             .max(0.0)
             .sqrt();
-        let index = self
-            .pieces
-            .partition_point(|piece| piece.high < x)
-            .min(self.pieces.len() - 1);
-        let piece = &self.pieces[index];
-        let u = ((2.0 * x - piece.low - piece.high) / (piece.high - piece.low)).clamp(-1.0, 1.0);
-        let [p, liquid, vapour] = clenshaw(&piece.coefficients, u);
-        CurvePoint {
-            pressure_pa: p.exp(),
-            liquid_kg_per_m3: liquid,
-            vapour_kg_per_m3: vapour.exp(),
+        let (from, per_x) = self.grid;
+        let cell = ((x - from) * per_x) as usize;
+        let mut index = usize::from(self.first[cell.min(CELLS - 1)]);
+        while self.pieces[index].high < x && index + 1 < self.pieces.len() {
+            index += 1;
         }
+        let piece = &self.pieces[index];
+        (piece, ((x - piece.middle) * piece.scale).clamp(-1.0, 1.0))
     }
 }
 
@@ -152,65 +198,93 @@ impl SaturationCurve {
 }
 
 impl Piece {
+    /// The piece between two x and the size of its last coefficients against its values.
     fn fit<E>(
         low: f64,
         high: f64,
         mut solve: impl FnMut(f64) -> Result<CurvePoint, E>,
-    ) -> Result<Self, E> {
+    ) -> Result<(Self, f64), E> {
         let mut values = [[0.0; NODES]; WHAT];
         let [p, liquid, vapour] = &mut values;
         for (k, ((p, liquid), vapour)) in p.iter_mut().zip(liquid).zip(vapour).enumerate() {
-            let u = (std::f64::consts::PI * (k as f64 + 0.5) / NODES as f64).cos();
-            let point = solve(0.5 * (low + high) + 0.5 * (high - low) * u)?;
-            *p = point.pressure_pa.ln();
+            let point = solve(0.5 * (low + high) + 0.5 * (high - low) * node(k))?;
+            *p = point.pressure_pa;
             *liquid = point.liquid_kg_per_m3;
-            *vapour = point.vapour_kg_per_m3.ln();
+            *vapour = point.vapour_kg_per_m3;
         }
         let mut coefficients = [[0.0; WHAT]; NODES];
-        for (j, row) in coefficients.iter_mut().enumerate() {
-            let scale = if j == 0 { 1.0 } else { 2.0 } / NODES as f64;
-            for (c, values) in row.iter_mut().zip(&values) {
-                let sum: f64 = values
-                    .iter()
-                    .enumerate()
-                    .map(|(k, v)| {
-                        v * (std::f64::consts::PI * j as f64 * (k as f64 + 0.5) / NODES as f64)
-                            .cos()
-                    })
-                    .sum();
-                *c = scale * sum;
+        let mut tail: f64 = 0.0;
+        for (what, values) in values.iter().enumerate() {
+            let series = chebyshev(values);
+            let least = values
+                .iter()
+                .fold(f64::INFINITY, |least, v| v.abs().min(least));
+            let last = &series[NODES - 2..];
+            tail = tail.max(last.iter().fold(0.0, |most: f64, c| most.max(c.abs())) / least);
+            for (row, c) in coefficients.iter_mut().zip(powers(&series)) {
+                row[what] = c;
             }
         }
-        Ok(Self {
-            low,
+        let piece = Self {
             high,
+            middle: 0.5 * (low + high),
+            scale: 2.0 / (high - low),
             coefficients,
-        })
-    }
-
-    /// The tail of each expansion is below the noise of the solve.
-    fn is_good(&self) -> bool {
-        let tail = |what: usize| {
-            let last = &self.coefficients[NODES - 2..];
-            last.iter()
-                .fold(0.0_f64, |most, row| most.max(row[what].abs()))
         };
-        // ln p and ln ρ″: an absolute tail is a relative error of p and ρ″.
-        let liquid = self.coefficients[0][1].abs();
-        tail(0) < GOOD && tail(1) < GOOD * liquid && tail(2) < GOOD
+        Ok((piece, tail))
     }
 }
 
-/// Clenshaw's sum of each expansion. Side by side, since each waits for itself only.
-fn clenshaw(coefficients: &[[f64; WHAT]; NODES], u: f64) -> [f64; WHAT] {
-    let (mut b1, mut b2) = ([0.0; WHAT], [0.0; WHAT]);
-    let twice = 2.0 * u;
-    for row in coefficients[1..].iter().rev() {
-        for i in 0..WHAT {
-            let next = twice * b1[i] - b2[i] + row[i];
-            b2[i] = b1[i];
-            b1[i] = next;
+/// Chebyshev's nodes, the zeros of T_n.
+fn node(k: usize) -> f64 {
+    (std::f64::consts::PI * (k as f64 + 0.5) / NODES as f64).cos()
+}
+
+/// Coefficients of Σ cⱼ Tⱼ(u) through the values at the nodes.
+fn chebyshev(values: &[f64; NODES]) -> [f64; NODES] {
+    std::array::from_fn(|j| {
+        let scale = if j == 0 { 1.0 } else { 2.0 } / NODES as f64;
+        let angle = |k: usize| std::f64::consts::PI * j as f64 * (k as f64 + 0.5) / NODES as f64;
+        let sum: f64 = values
+            .iter()
+            .enumerate()
+            .map(|(k, v)| v * angle(k).cos())
+            .sum();
+        scale * sum
+    })
+}
+
+/// The same polynomial in powers of u. The series falls off so fast that the powers'
+/// coefficients stay of the size of the values: no digits are lost on −1 to 1.
+fn powers(series: &[f64; NODES]) -> [f64; NODES] {
+    let mut sum = [0.0; NODES];
+    // T₀ and T₁, then T_{j+1} = 2u T_j − T_{j−1}.
+    let (mut before, mut now) = ([0.0; NODES], [0.0; NODES]);
+    before[0] = 1.0;
+    now[1] = 1.0;
+    for c in series {
+        for (total, t) in sum.iter_mut().zip(&before) {
+            *total += c * t;
         }
+        let mut next = before.map(|t| -t);
+        for k in 1..NODES {
+            next[k] += 2.0 * now[k - 1];
+        }
+        (before, now) = (now, next);
     }
-    std::array::from_fn(|i| coefficients[0][i] + u * b1[i] - b2[i])
+    sum
+}
+
+/// Σ cⱼ uʲ of each expansion by pairs (Estrin's scheme): the chain of operations that
+/// wait for each other is four long instead of ten.
+fn sum(c: &[[f64; WHAT]; NODES], u: f64) -> [f64; WHAT] {
+    const { assert!(NODES == 11) };
+    let u2 = u * u;
+    let u4 = u2 * u2;
+    let u8 = u4 * u4;
+    std::array::from_fn(|i| {
+        let pair = |j: usize| c[j][i] + c[j + 1][i] * u;
+        let low = (pair(0) + pair(2) * u2) + (pair(4) + pair(6) * u2) * u4;
+        low + (pair(8) + c[10][i] * u2) * u8
+    })
 }

@@ -49,6 +49,8 @@ pub enum FluidError {
         fluid: String,
         temperature: Temperature,
     },
+    #[error("liquid-full {fluid} cannot be computed: {reason}")]
+    NoCompressedLiquid { fluid: String, reason: String },
     #[error("energies of {fluid} are not computed: its model has no heat capacity")]
     NoEnergy { fluid: String },
 }

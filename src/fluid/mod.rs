@@ -8,19 +8,27 @@ mod asset;
 mod catalog;
 pub mod correlated;
 mod curve;
+mod entry;
 mod error;
 pub mod helmholtz;
+pub mod lines;
 mod model;
+mod own;
+mod rules;
 mod safety;
+mod sound;
 mod state;
+pub mod viscosity;
 
 use std::sync::OnceLock;
 
 pub use asset::{FluidFileError, SurfaceTension, parse as parse_fluid};
-pub use catalog::{Catalog, UnknownFluid};
+pub use catalog::{Catalog, NameTaken, UnknownFluid};
 pub use curve::{CurvePoint, SaturationCurve};
+pub use entry::Entry;
 pub use error::FluidError;
 pub use model::{Critical, Model, SaturationPoint};
+pub use own::{OwnFile, read_own};
 pub use safety::{Safety, Stability, StabilityKind};
 pub use state::{Crossing, DomeSide, Regime, State};
 
@@ -40,15 +48,19 @@ pub struct Fluid {
     melting_point: Sourced<f64>,
     solid_density: Option<Sourced<f64>>,
     surface_tension: Option<SurfaceTension>,
+    viscosity: viscosity::Viscosity,
+    lines: lines::Lines,
     safety: Safety,
     model: Model,
+    own_file: Option<OwnFile>,
+    entry: OnceLock<Entry>,
     curve: OnceLock<Result<SaturationCurve, FluidError>>,
 }
 
 /// One fluid is the same as another if its file is.
 impl PartialEq for Fluid {
     fn eq(&self, other: &Self) -> bool {
-        self.id == other.id && self.model == other.model
+        self.id == other.id && self.model == other.model && self.own_file == other.own_file
     }
 }
 
@@ -94,6 +106,16 @@ impl Fluid {
 
     pub fn safety(&self) -> &Safety {
         &self.safety
+    }
+
+    /// What lists show of it.
+    pub fn entry(&self) -> &Entry {
+        self.entry.get_or_init(|| Entry::of(self))
+    }
+
+    /// The user's file it was read from; `None` for a fluid that comes with the program.
+    pub fn own_file(&self) -> Option<&OwnFile> {
+        self.own_file.as_ref()
     }
 
     pub fn model(&self) -> &Model {
@@ -208,6 +230,11 @@ impl Fluid {
             .map_err(Clone::clone)
     }
 
+    /// Whether [`Self::curve`] answers without building.
+    pub fn has_curve(&self) -> bool {
+        self.curve.get().is_some_and(Result::is_ok)
+    }
+
     /// Vapour pressure from the expansions; the same numbers as [`Self::saturation`] to 1e-10.
     ///
     /// # Errors
@@ -216,6 +243,15 @@ impl Fluid {
         self.saturation_allowed(temperature)?;
         let p = self.curve()?.at(temperature.kelvin()).pressure_pa;
         Ok(Pressure::from_pascal(p).expect("a vapour pressure is finite"))
+    }
+
+    /// Slope of the vapour pressure in Pa/K, from the expansions.
+    ///
+    /// # Errors
+    /// As [`Self::saturation`].
+    pub fn saturation_slope(&self, temperature: Temperature) -> Result<f64, FluidError> {
+        self.saturation_allowed(temperature)?;
+        Ok(self.curve()?.slope_at(temperature.kelvin()))
     }
 
     /// Surface tension in N/m, where known.
@@ -234,6 +270,20 @@ impl Fluid {
                 .map(|(a, n)| a * theta.powf(*n))
                 .sum()
         })
+    }
+
+    /// Mass in molecules of two atoms over the mass of the saturated vapour; `None` for a
+    /// vapour that does not associate, and outside the saturation.
+    pub fn dimer_mass_fraction(&self, temperature: Temperature) -> Option<f64> {
+        let Model::Correlated(model) = &self.model else {
+            return None;
+        };
+        self.saturation_allowed(temperature).ok()?;
+        let t = temperature.kelvin();
+        let vapour = model.saturation(t, self.molar_mass).vapour;
+        model
+            .vapour_isotherm(t, self.molar_mass)
+            .mass_fraction(2.0, vapour)
     }
 
     /// Greatest density given, kg/m³, and greatest pressure.

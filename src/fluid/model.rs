@@ -1,8 +1,8 @@
 //! The two kinds of model behind one interface, in SI mass units and f64.
 
-use super::correlated::Correlated;
+use super::correlated::{Correlated, LiquidIsotherm, VapourIsotherm};
 use super::curve::CurvePoint;
-use super::helmholtz::{CLOSEST_TO_CRITICAL, Equation, NotConverged};
+use super::helmholtz::{CLOSEST_TO_CRITICAL, Equation, Isotherm, NotConverged};
 
 /// What gives a fluid its properties.
 #[derive(Debug, Clone, PartialEq)]
@@ -86,6 +86,14 @@ impl Model {
         }
     }
 
+    /// Why the pressure of the liquid-full state is not known, where it is not.
+    pub fn no_compressed_liquid(&self) -> Option<&str> {
+        match self {
+            Self::Equation(_) => None,
+            Self::Correlated(model) => model.compressed_liquid.not_known(),
+        }
+    }
+
     /// Saturation by the direct solve, inside [`Self::saturation_range_k`].
     pub fn saturation(&self, t: f64, molar_mass: f64) -> Result<SaturationPoint, NotConverged> {
         Ok(match self {
@@ -116,9 +124,9 @@ impl Model {
     pub fn curve_point(&self, t: f64, molar_mass: f64) -> Result<CurvePoint, NotConverged> {
         Ok(match self {
             Self::Equation(equation) => {
-                let (liquid, vapour) = equation.saturated_densities(t)?;
+                let (pressure, liquid, vapour) = equation.saturated_state(t)?;
                 CurvePoint {
-                    pressure_pa: equation.isotherm(t).pressure(vapour),
+                    pressure_pa: pressure,
                     liquid_kg_per_m3: liquid * molar_mass,
                     vapour_kg_per_m3: vapour * molar_mass,
                 }
@@ -134,24 +142,37 @@ impl Model {
         })
     }
 
-    /// Pressure of one phase on an isotherm and its slope over density; `liquid` tells a
-    /// correlated fluid which of its branches is meant.
-    pub fn isotherm(
-        &self,
-        t: f64,
-        molar_mass: f64,
-        liquid: bool,
-    ) -> Box<dyn Fn(f64) -> (f64, f64) + '_> {
-        match self {
-            Self::Equation(equation) => {
-                let isotherm = equation.isotherm(t);
-                Box::new(move |density| {
-                    let (p, slope) = isotherm.pressure_and_slope(density / molar_mass);
-                    (p, slope / molar_mass)
-                })
+    /// Pressure of one phase over density on an isotherm; `liquid` tells a correlated
+    /// fluid which of its branches is meant. `None` where that branch is not known.
+    pub fn isotherm(&self, t: f64, molar_mass: f64, liquid: bool) -> Option<PhaseIsotherm<'_>> {
+        Some(match self {
+            Self::Equation(equation) => PhaseIsotherm::Equation(equation.isotherm(t), molar_mass),
+            Self::Correlated(model) if liquid => {
+                PhaseIsotherm::Liquid(model.liquid_isotherm(t, molar_mass)?)
             }
-            Self::Correlated(model) if liquid => Box::new(model.liquid_isotherm(t, molar_mass)),
-            Self::Correlated(model) => Box::new(model.vapour_isotherm(t, molar_mass)),
+            Self::Correlated(model) => PhaseIsotherm::Vapour(model.vapour_isotherm(t, molar_mass)),
+        })
+    }
+}
+
+/// One phase at one temperature.
+pub enum PhaseIsotherm<'a> {
+    /// With the molar mass in kg/mol.
+    Equation(Isotherm<'a>, f64),
+    Liquid(LiquidIsotherm),
+    Vapour(VapourIsotherm),
+}
+
+impl PhaseIsotherm<'_> {
+    /// Pressure and its slope over density at a density in kg/m³: Pa and Pa m³/kg.
+    pub fn at(&self, density: f64) -> (f64, f64) {
+        match self {
+            Self::Equation(isotherm, molar_mass) => {
+                let (p, slope) = isotherm.pressure_and_slope(density / molar_mass);
+                (p, slope / molar_mass)
+            }
+            Self::Liquid(isotherm) => isotherm.pressure_and_slope(density),
+            Self::Vapour(isotherm) => isotherm.pressure_and_slope(density),
         }
     }
 }

@@ -49,7 +49,7 @@ pub struct Stability {
     pub source: Source,
 }
 
-#[derive(Debug, Clone, Copy, PartialEq, Eq, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash, Deserialize)]
 pub enum StabilityKind {
     SelfDecomposing,
     Oxidising,
@@ -60,11 +60,24 @@ pub enum StabilityKind {
     AcidInFlame,
 }
 
+impl StabilityKind {
+    /// Whether a design with such a fluid is not fit. The others hold while air, water
+    /// and flame are kept away, which a sealed unit does: somebody must answer for the
+    /// filling.
+    pub const fn blocks(self) -> bool {
+        match self {
+            Self::SelfDecomposing | Self::Oxidising | Self::WaterReactive | Self::Pyrophoric => {
+                true
+            }
+            Self::PeroxideForming | Self::Hydrolysing | Self::AcidInFlame => false,
+        }
+    }
+}
+
 impl Safety {
     /// GHS statements H220 to H226: flammable gas or liquid.
     pub fn is_flammable(&self) -> bool {
-        self.lower_flammable_limit.is_some()
-            && self.has_statement(&["H220", "H221", "H224", "H225", "H226", "H206"])
+        self.lower_flammable_limit.is_some() && is_classed_flammable(self.codes())
     }
 
     /// Burns only under conditions: a flammable range without a flammable classification.
@@ -74,21 +87,39 @@ impl Safety {
 
     /// GHS statements of acute or chronic poisoning, or of cancer.
     pub fn is_toxic(&self) -> bool {
-        self.has_statement(&[
-            "H300", "H301", "H302", "H310", "H311", "H330", "H331", "H332", "H340", "H341", "H350",
-            "H351", "H360", "H361", "H370", "H371", "H372", "H373",
-        ])
+        is_classed_toxic(self.codes())
     }
 
     /// GHS statement H314: burns skin and eyes.
     pub fn is_corrosive(&self) -> bool {
-        self.has_statement(&["H314"])
+        is_classed_corrosive(self.codes())
     }
 
-    fn has_statement(&self, codes: &[&str]) -> bool {
-        self.statements
-            .value
-            .iter()
-            .any(|s| codes.iter().any(|code| s.starts_with(code)))
+    fn codes(&self) -> impl Iterator<Item = &str> {
+        self.statements.value.iter().map(String::as_str)
     }
+}
+
+// The same classes for a fluid whose file is not read: by its statement codes alone.
+
+pub(super) fn is_classed_flammable<'a>(codes: impl Iterator<Item = &'a str>) -> bool {
+    has(codes, &["H220", "H221", "H224", "H225", "H226", "H206"])
+}
+
+pub(super) fn is_classed_toxic<'a>(codes: impl Iterator<Item = &'a str>) -> bool {
+    has(
+        codes,
+        &[
+            "H300", "H301", "H302", "H310", "H311", "H330", "H331", "H332", "H340", "H341", "H350",
+            "H351", "H360", "H361", "H370", "H371", "H372", "H373",
+        ],
+    )
+}
+
+pub(super) fn is_classed_corrosive<'a>(codes: impl Iterator<Item = &'a str>) -> bool {
+    has(codes, &["H314"])
+}
+
+fn has<'a>(mut codes: impl Iterator<Item = &'a str>, wanted: &[&str]) -> bool {
+    codes.any(|s| wanted.iter().any(|code| s.starts_with(code)))
 }

@@ -1,7 +1,7 @@
 //! The state at a density and a temperature: regime, pressure, how much is liquid.
 
 use super::correlated::GAS_CONSTANT;
-use super::model::Model;
+use super::model::{Model, PhaseIsotherm};
 use super::{Fluid, FluidError, clamped};
 use crate::solve::{rising_root, roots_between};
 use crate::units::{Density, Pressure, Temperature};
@@ -157,11 +157,24 @@ impl Fluid {
     /// with a superheated vapour.
     ///
     /// # Errors
-    /// [`FluidError`] outside the model's temperatures, or frozen.
+    /// [`FluidError`] outside the model's temperatures, frozen, or of an unknown compressed liquid.
     pub fn density_at(
         &self,
         pressure: Pressure,
         temperature: Temperature,
+    ) -> Result<Option<Density>, FluidError> {
+        self.density_near(pressure, temperature, None)
+    }
+
+    /// [`Self::density_at`], sooner found from a density that is `near` it.
+    ///
+    /// # Errors
+    /// As [`Self::density_at`].
+    pub fn density_near(
+        &self,
+        pressure: Pressure,
+        temperature: Temperature,
+        near: Option<Density>,
     ) -> Result<Option<Density>, FluidError> {
         self.not_frozen(temperature)?;
         self.not_outside(temperature)?;
@@ -186,27 +199,51 @@ impl Fluid {
         } else {
             (1e-9 * critical.density_kg_per_m3, most, false)
         };
-        let isotherm = self.model.isotherm(t, self.molar_mass, liquid);
+        let isotherm = self.isotherm(temperature, liquid)?;
         let gap = |rho: f64| {
-            let (found, slope) = isotherm(rho);
+            let (found, slope) = isotherm.at(rho);
             (found - p, slope)
         };
-        if gap(to).0 <= 0.0 {
-            return Ok(None);
-        }
-        if gap(from).0 >= 0.0 {
-            return Ok(Density::from_kilogram_per_cubic_metre(from).ok());
-        }
         // A liquid from its saturated density, anything else from the ideal gas. After a
         // step of 1e-8 an error of some 1e-16 is left.
         let ideal = p * self.molar_mass / (GAS_CONSTANT * t);
-        let start = if liquid { from } else { ideal };
+        let start = match near.map(Density::kilogram_per_cubic_metre) {
+            Some(near) if (from..=to).contains(&near) => near,
+            _ if liquid => from,
+            _ => ideal,
+        };
         let root = rising_root(gap, (from, to), start, 1e-8);
         let root = root.map_err(|_| FluidError::NotConverged {
             fluid: self.name.clone(),
             temperature,
         })?;
-        Ok(Density::from_kilogram_per_cubic_metre(root).ok())
+        // Driven to the densest state, the pressure may still not be reached there. A vapour
+        // at its own line may miss the vapour pressure by a rounding only.
+        let at_end = root > to * (1.0 - 1e-6);
+        let is_out = at_end && (liquid || t >= critical.temperature_k) && gap(to).0 <= 0.0;
+        Ok(Density::from_kilogram_per_cubic_metre(root)
+            .ok()
+            .filter(|_| !is_out))
+    }
+
+    /// As [`Self::density_near`], but where the pressure of a liquid-full unit is not known
+    /// it answers with the saturated liquid: nothing denser is known to stay within.
+    ///
+    /// # Errors
+    /// [`FluidError`] outside the model's temperatures, or frozen.
+    pub fn densest_within(
+        &self,
+        pressure: Pressure,
+        temperature: Temperature,
+        near: Option<Density>,
+    ) -> Result<Option<Density>, FluidError> {
+        match self.density_near(pressure, temperature, near) {
+            Err(FluidError::NoCompressedLiquid { .. }) => {
+                let liquid = self.curve()?.at(temperature.kelvin()).liquid_kg_per_m3;
+                Ok(Density::from_kilogram_per_cubic_metre(liquid).ok())
+            }
+            answer => answer,
+        }
     }
 
     /// Specific internal energy and entropy of a homogeneous state, J/kg and J/(kg K).
@@ -230,6 +267,24 @@ impl Fluid {
                 fluid: self.name.clone(),
             }),
         }
+    }
+
+    /// One branch at one temperature, Pa and Pa m³/kg over kg/m³.
+    fn isotherm(
+        &self,
+        temperature: Temperature,
+        liquid: bool,
+    ) -> Result<PhaseIsotherm<'_>, FluidError> {
+        self.model
+            .isotherm(temperature.kelvin(), self.molar_mass, liquid)
+            .ok_or_else(|| FluidError::NoCompressedLiquid {
+                fluid: self.name.clone(),
+                reason: self
+                    .model
+                    .no_compressed_liquid()
+                    .unwrap_or_default()
+                    .to_owned(),
+            })
     }
 
     fn frozen_state(&self) -> Result<State, FluidError> {
@@ -266,9 +321,7 @@ impl Fluid {
             });
         }
         let liquid = regime == Regime::LiquidFull;
-        let (p, _) = self
-            .model
-            .isotherm(temperature.kelvin(), self.molar_mass, liquid)(rho);
+        let (p, _) = self.isotherm(temperature, liquid)?.at(rho);
         if p.is_nan() || p > most_pressure {
             let high = Pressure::from_pascal(most_pressure)
                 .expect("a fluid file's limits are checked when read");

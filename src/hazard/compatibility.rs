@@ -1,5 +1,6 @@
 //! Fluid and wall as a pair: what the fluid does to the material.
 
+use std::collections::HashMap;
 use std::sync::LazyLock;
 
 use serde::Deserialize;
@@ -34,21 +35,29 @@ pub struct Compatibility {
 
 /// The table compiled in.
 #[derive(Debug, Clone, PartialEq)]
-pub struct CompatibilityTable(Vec<Compatibility>);
+pub struct CompatibilityTable {
+    rows: Vec<Compatibility>,
+    /// Rows that name a fluid, by its id: the ranking asks for every fluid.
+    of_fluid: HashMap<String, Vec<usize>>,
+}
 
 impl CompatibilityTable {
     /// The table that comes with the program.
     pub fn built_in() -> &'static Self {
         static TABLE: LazyLock<CompatibilityTable> = LazyLock::new(|| {
-            let rows = |text| {
-                ron::from_str::<Vec<Compatibility>>(text).expect("a test parses the table")
-            };
-            CompatibilityTable(
-                COMPATIBILITY_FILES
-                    .iter()
-                    .flat_map(|(_, text)| rows(text))
-                    .collect(),
-            )
+            let rows =
+                |text| ron::from_str::<Vec<Compatibility>>(text).expect("a test parses the table");
+            let rows: Vec<_> = COMPATIBILITY_FILES
+                .iter()
+                .flat_map(|(_, text)| rows(text))
+                .collect();
+            let mut of_fluid: HashMap<String, Vec<usize>> = HashMap::new();
+            for (index, row) in rows.iter().enumerate() {
+                for id in &row.fluids {
+                    of_fluid.entry(id.clone()).or_default().push(index);
+                }
+            }
+            CompatibilityTable { rows, of_fluid }
         });
         &TABLE
     }
@@ -60,23 +69,20 @@ impl CompatibilityTable {
             Verdict::Caution => 1,
             Verdict::Never => 2,
         };
-        self.0
+        self.of_fluid
+            .get(fluid)?
             .iter()
+            .map(|index| &self.rows[*index])
             .filter(|row| {
-                row.fluids.iter().any(|id| id == fluid)
-                    && row
-                        .materials
-                        .iter()
-                        .any(|id| material.starts_with(id.as_str()))
+                let mut materials = row.materials.iter();
+                materials.any(|id| material.starts_with(id.as_str()))
             })
             .max_by_key(|row| rank(row.verdict))
     }
 
     /// Every fluid id the table names.
     pub fn fluids(&self) -> impl Iterator<Item = &str> {
-        self.0
-            .iter()
-            .flat_map(|row| row.fluids.iter().map(String::as_str))
+        self.of_fluid.keys().map(String::as_str)
     }
 }
 

@@ -127,6 +127,9 @@ impl SealedUnit {
                 Ok(state) => state.pressure,
                 // Beyond the model it is at least the model's greatest pressure.
                 Err(FluidError::PressureTooHigh { high, .. }) => high,
+                // Not known, but a liquid that fills its vessel gains megapascals per kelvin:
+                // the limit counts as reached where the vessel is full.
+                Err(FluidError::NoCompressedLiquid { .. }) => return limit(at).and(Some(1e9)),
                 Err(_) => return None,
             };
             Some(pressure.pascal() - limit(at)?.pascal())

@@ -41,6 +41,9 @@ pub fn fluid(page: &mut Page, a: &Assessment) {
     let fluid = &a.fluid;
     page.heading("FLUID");
     page.row("Name", fluid.name());
+    if let Some(own) = fluid.own_file() {
+        page.row("The user's own, from", &own.name);
+    }
     page.row("CAS", fluid.cas());
     page.row("Formula", fluid.formula());
     if let Some(number) = fluid.refrigerant() {
@@ -208,11 +211,23 @@ pub fn warnings(page: &mut Page, design: &Design, a: &Assessment, units: &Units)
 
 pub fn basis(page: &mut Page, design: &Design, a: &Assessment) {
     page.heading("BASIS");
-    for source in a.fluid.model_sources() {
-        page.row("Fluid", &source);
+    if let Some(own) = a.fluid.own_file() {
+        page.row(
+            "The user's own fluid file",
+            &format!("{}, fingerprint {}", own.name, own.fingerprint),
+        );
     }
-    page.row("Its uncertainty", &a.fluid.uncertainty());
-    page.row("Melting point", &a.fluid.melting_point().source.to_string());
+    // Sources of the user's own fluid are what the user says they are.
+    let stated = |source: String| match a.fluid.own_file() {
+        Some(_) => format!("the user states: {source}"),
+        None => source,
+    };
+    for source in a.fluid.model_sources() {
+        page.row("Fluid", &stated(source));
+    }
+    page.row("Its uncertainty", &stated(a.fluid.uncertainty()));
+    let melting = &a.fluid.melting_point().source;
+    page.row("Melting point", &stated(melting.to_string()));
     let mut unconfirmed = !a.fluid.melting_point().source.is_confirmed();
     if let Ok(case) = &a.worst
         && let Ok(weakest) = &case.weakest
@@ -246,7 +261,7 @@ pub fn basis(page: &mut Page, design: &Design, a: &Assessment) {
     ] {
         if let Some(source) = source {
             unconfirmed |= !source.is_confirmed();
-            page.row(what, &source.to_string());
+            page.row(what, &stated(source.to_string()));
         }
     }
     if unconfirmed {

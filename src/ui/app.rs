@@ -9,7 +9,7 @@ use super::desk::{Desk, Draft};
 use super::dialogs::Dialog;
 use super::orders::{first_design, sheet_text};
 use super::panels::{
-    Behaviour, DesignPanel, DiskAnswer, behaviour_ui, design_ui, editing_text_id, meaning_ui,
+    Behaviour, DesignPanel, DiskAnswer, Wish, behaviour_ui, design_ui, editing_text_id, meaning_ui,
     menu_ui, status_ui,
 };
 use super::settings::Settings;
@@ -32,6 +32,8 @@ pub struct App {
     pub(super) orders: Vec<Command>,
     /// The user has agreed to close; the next close request goes through.
     pub(super) closing: bool,
+    /// The catalogue is read, or being read, in the background.
+    reading: bool,
     title: String,
 }
 
@@ -49,6 +51,7 @@ impl App {
             notice: None,
             orders: Vec::new(),
             closing: false,
+            reading: false,
             title: String::new(),
             folder,
         };
@@ -56,6 +59,7 @@ impl App {
         theme::apply(ctx, app.settings.theme);
         ctx.set_zoom_factor(app.settings.zoom);
         app.desk.start_watching(ctx);
+        app.notice = app.fluid_notice();
         if let Some(path) = path {
             app.open_path(path);
         }
@@ -151,7 +155,7 @@ impl App {
         let ground = Frame::NONE
             .fill(palette.ground)
             .inner_margin(Margin::symmetric(8, 6));
-        let dragged = CentralPanel::default()
+        let wish = CentralPanel::default()
             .frame(ground)
             .show(ui, |ui| {
                 let desk = &self.desk;
@@ -160,6 +164,7 @@ impl App {
                     ui,
                     &desk.design,
                     desk.assessment(),
+                    desk.library(),
                     &units,
                     sheet,
                     &mut self.behaviour,
@@ -167,9 +172,27 @@ impl App {
                 )
             })
             .inner;
-        if let Some(mass) = dragged {
-            self.desk.design.apply(Change::SetCharge(mass));
+        match wish {
+            Some(Wish::Charge(mass)) => self.desk.design.apply(Change::SetCharge(mass)),
+            Some(Wish::Fluid(fluid, charge)) => {
+                self.desk.design.fluid = fluid;
+                self.desk.design.charge = charge;
+            }
+            None => {}
         }
+    }
+
+    /// Once the first frame is drawn, every fluid is read in the background, so that the
+    /// table of fluids does not wait.
+    fn read_catalogue(&mut self, ctx: &egui::Context) {
+        if std::mem::replace(&mut self.reading, true) {
+            return;
+        }
+        let (fluids, ctx) = (self.desk.library().fluids.clone(), ctx.clone());
+        std::thread::spawn(move || {
+            fluids.read_all();
+            ctx.request_repaint();
+        });
     }
 
     /// An undo point where a gesture ends: no pointer or key is down and no text is
@@ -256,6 +279,7 @@ impl App {
 impl eframe::App for App {
     fn ui(&mut self, ui: &mut Ui, _frame: &mut eframe::Frame) {
         self.frame_ui(ui);
+        self.read_catalogue(ui.ctx());
     }
 
     fn on_exit(&mut self, _gl: Option<&eframe::glow::Context>) {

@@ -10,7 +10,7 @@ use serde::{Deserialize, Serialize};
 use super::history::History;
 use crate::assess::{Assessment, Library, assess};
 use crate::design::Design;
-use crate::store::{self, Stamp, StoreError};
+use crate::store::{self, Shelf, Stamp, StoreError};
 
 /// What the window works on.
 pub struct Desk {
@@ -20,7 +20,10 @@ pub struct Desk {
     saved: Option<Design>,
     path: Option<PathBuf>,
     history: History,
-    library: Library,
+    /// The program's own folder, where the user's own fluids may be.
+    folder: Option<PathBuf>,
+    /// What the design, its history and its draft are read and assessed against.
+    shelf: Shelf,
     assessment: Assessment,
     assessed: Design,
     drafts: DraftWriter,
@@ -46,15 +49,16 @@ struct Watched {
 impl Desk {
     /// A desk with an untitled design on it; drafts go to `folder`, if there is one.
     pub fn new(design: Design, folder: Option<&Path>) -> Self {
-        let library = Library::built_in();
-        let assessment = assess(&design, &library);
+        let shelf = store::shelf(None, folder);
+        let assessment = assess(&design, &shelf.library);
         Self {
             saved: Some(design.clone()),
             path: None,
             history: History::new(design.clone()),
             assessed: design.clone(),
             assessment,
-            library,
+            shelf,
+            folder: folder.map(Path::to_owned),
             drafts: DraftWriter::new(folder.map(Draft::own_path)),
             watched: Arc::default(),
             design,
@@ -62,7 +66,12 @@ impl Desk {
     }
 
     pub fn library(&self) -> &Library {
-        &self.library
+        &self.shelf.library
+    }
+
+    /// One sentence for each of the user's fluid files that was not read.
+    pub fn notices(&self) -> Vec<String> {
+        self.shelf.notices()
     }
 
     pub fn assessment(&self) -> &Assessment {
@@ -71,7 +80,7 @@ impl Desk {
 
     /// Lets a panel edit the design beside what was last said of it.
     pub fn edit(&mut self, edit: impl FnOnce(&mut Design, &Assessment, &Library)) {
-        edit(&mut self.design, &self.assessment, &self.library);
+        edit(&mut self.design, &self.assessment, &self.shelf.library);
     }
 
     pub fn path(&self) -> Option<&Path> {
@@ -96,9 +105,13 @@ impl Desk {
         if self.design == self.assessed {
             return false;
         }
-        self.assessment = assess(&self.design, &self.library);
-        self.assessed = self.design.clone();
+        self.assess();
         true
+    }
+
+    fn assess(&mut self) {
+        self.assessment = assess(&self.design, &self.shelf.library);
+        self.assessed = self.design.clone();
     }
 
     /// Ends a gesture: an undo point, and a draft against a crash.
@@ -132,35 +145,46 @@ impl Desk {
 
     /// Puts an untitled design on the desk.
     pub fn start_untitled(&mut self, design: Design) {
-        self.replace(design, None);
+        let shelf = store::shelf(None, self.folder.as_deref());
+        self.replace(design, None, shelf);
     }
 
-    /// Reads a design file; the open design stays if that fails.
+    /// Reads a design file and the fluids beside it; the open design stays if that fails.
     ///
     /// # Errors
     /// [`StoreError`].
     pub fn open(&mut self, path: &Path) -> Result<(), StoreError> {
-        let design = store::load(path)?;
-        self.replace(design, Some(path.to_owned()));
+        let (design, shelf) = store::open(path, self.folder.as_deref())?;
+        self.replace(design, Some(path.to_owned()), shelf);
         Ok(())
     }
 
     /// Takes a crashed window's draft as the unsaved design.
     pub fn restore(&mut self, draft: &Draft) {
-        let Ok(design) = store::from_text(&draft.text) else {
+        let Some((design, shelf)) = draft.read(self.folder.as_deref()) else {
             return;
         };
-        let on_disk = draft.path.as_ref().and_then(|path| store::load(path).ok());
-        self.replace(design, draft.path.clone().filter(|_| on_disk.is_some()));
+        let on_disk = draft
+            .path
+            .as_ref()
+            .and_then(|path| store::load_with(path, &shelf.library.fluids).ok());
+        let path = draft.path.clone().filter(|_| on_disk.is_some());
+        self.replace(design, path, shelf);
         self.saved = on_disk;
         self.write_draft();
     }
 
-    /// Writes the design to its file.
+    /// Writes the design to its file; a fluid file that stands beside it is taken along to
+    /// another folder.
     ///
     /// # Errors
     /// [`StoreError`]; the design stays unsaved.
     pub fn save_to(&mut self, path: &Path) -> Result<(), StoreError> {
+        let own = self.library().fluids.by_id(self.design.fluid.as_str());
+        if let (Some(own), Some(before)) = (own.as_ref().and_then(|own| own.own_file()), &self.path)
+        {
+            store::carry_fluid(&own.name, before, path)?;
+        }
         store::save(path, &self.design)?;
         self.saved = Some(self.design.clone());
         self.path = Some(path.to_owned());
@@ -178,7 +202,9 @@ impl Desk {
     pub fn keep_mine(&mut self) {
         self.watch();
         // What is on the desk is no longer what is on disk.
-        self.saved = self.path.as_ref().and_then(|path| store::load(path).ok());
+        let fluids = &self.shelf.library.fluids;
+        let path = self.path.as_ref();
+        self.saved = path.and_then(|path| store::load_with(path, fluids).ok());
     }
 
     /// Starts the watcher; it asks for a frame only when the file changed.
@@ -206,8 +232,12 @@ impl Desk {
         self.drafts.remove();
     }
 
-    fn replace(&mut self, design: Design, path: Option<PathBuf>) {
+    /// A design comes with the shelf it was read against: the same id may be another fluid
+    /// there, so it is assessed at once.
+    fn replace(&mut self, design: Design, path: Option<PathBuf>, shelf: Shelf) {
         self.design = design;
+        self.shelf = shelf;
+        self.assess();
         self.saved = Some(self.design.clone());
         self.path = path;
         self.history = History::new(self.design.clone());
@@ -302,10 +332,15 @@ impl Draft {
                 return None;
             }
             let draft = store::read_own::<Self>(&path)?;
-            store::from_text(&draft.text)
-                .is_ok()
-                .then_some((path, draft))
+            draft.read(Some(folder)).is_some().then_some((path, draft))
         })
+    }
+
+    /// The design with the fluids beside its file and in the program's own folder.
+    fn read(&self, folder: Option<&Path>) -> Option<(Design, Shelf)> {
+        let shelf = store::shelf(self.path.as_deref(), folder);
+        let design = store::from_text_with(&self.text, &shelf.library.fluids).ok()?;
+        Some((design, shelf))
     }
 
     fn own_path(folder: &Path) -> PathBuf {

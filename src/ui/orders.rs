@@ -13,6 +13,7 @@ use crate::design::Design;
 use crate::sheet::{Head, render};
 use crate::store;
 use crate::units::Units;
+use crate::words::upper;
 
 impl App {
     pub(super) fn show_dialog(&mut self, ctx: &egui::Context) {
@@ -42,6 +43,7 @@ impl App {
                 self.desk.restore(&draft);
                 store::remove_own(&file);
                 self.behaviour.forget();
+                self.notice = self.fluid_notice();
             }
             Decision::DropDraft { file } => {
                 self.dialog = None;
@@ -118,7 +120,18 @@ impl App {
     pub(super) fn start_untitled(&mut self, design: Design) {
         self.desk.start_untitled(design);
         self.behaviour.forget();
-        self.notice = None;
+        self.notice = self.fluid_notice();
+    }
+
+    /// What is said of the user's fluid files that were not read.
+    pub(super) fn fluid_notice(&self) -> Option<String> {
+        let said = self
+            .desk
+            .notices()
+            .iter()
+            .map(|notice| upper(notice))
+            .collect::<Vec<_>>();
+        (!said.is_empty()).then(|| format!("{}.", said.join(". ")))
     }
 
     pub(super) fn open_path(&mut self, path: &Path) {
@@ -126,7 +139,7 @@ impl App {
             Ok(()) => {
                 self.settings.remember(path);
                 self.behaviour.forget();
-                self.notice = None;
+                self.notice = self.fluid_notice();
             }
             Err(error) => {
                 let text = format!("{error}. The design that was open stays.");
@@ -194,6 +207,7 @@ impl App {
                     self.dialog = None;
                     self.settings.remember(path);
                     self.behaviour.forget();
+                    self.notice = self.fluid_notice();
                 }
                 Err(error) => self.failed(error.to_string()),
             },

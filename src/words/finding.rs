@@ -240,9 +240,13 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
                 .try_this("Ventilate; leave the room if a unit breaks.")
                 .source(source)
         }
-        FindingKind::Corrosive { source } => {
+        FindingKind::Corrosive { keep_dry, source } => {
             say("Burns skin and eyes", "Liquid and vapour are corrosive.".to_owned())
-                .try_this("Goggles, gloves, and water at hand.")
+                .try_this(if *keep_dry {
+                    "Goggles, face shield, dry gloves; no water near it. Take it off the skin dry, then rinse long."
+                } else {
+                    "Goggles, gloves, and water at hand."
+                })
                 .source(source)
         }
         FindingKind::Asphyxiant { oxygen } => say(
@@ -289,6 +293,11 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
                 figures(careful_up(*percent, 2), 2)
             ),
         ),
+        FindingKind::OwnFluid { file } => say(
+            "Your own fluid",
+            format!("Its hazards and all its figures are your own, from {file}; nobody else has checked them."),
+        )
+        .try_this("Hold every figure of that file against its source, and have a second person do so."),
         FindingKind::FromMemory { what } => {
             say("To be confirmed", format!("From memory of a named document: {what}."))
         }

@@ -8,9 +8,9 @@ mod missing;
 pub use finding::{Said, finding};
 pub use missing::{chamber_fault, condition_fault, missing, upper};
 
-use crate::assess::{Bound, EventKind, Requirement, Severity, Side, Verdict};
+use crate::assess::{Bound, EventKind, Objection, Requirement, Severity, Side, Verdict};
 use crate::chamber::AllowableBasis;
-use crate::fluid::Regime;
+use crate::fluid::{Regime, StabilityKind};
 use crate::units::Units;
 
 /// The care that is always said.
@@ -66,6 +66,27 @@ pub const fn event(event: EventKind) -> &'static str {
     }
 }
 
+/// Why a fluid is excluded, in a cell of a table.
+pub const fn objection(objection: Objection) -> &'static str {
+    match objection {
+        Objection::Unstable(StabilityKind::SelfDecomposing) => "can decompose",
+        Objection::Unstable(StabilityKind::Oxidising) => "oxidising",
+        Objection::Unstable(StabilityKind::WaterReactive) => "reacts with water",
+        Objection::Unstable(StabilityKind::Pyrophoric) => "ignites in air",
+        Objection::Unstable(StabilityKind::PeroxideForming) => "forms peroxides",
+        Objection::Unstable(StabilityKind::Hydrolysing) => "hydrolyses",
+        Objection::Unstable(StabilityKind::AcidInFlame) => "gives acid in a flame",
+        Objection::TooHotForFluid => "too hot for it",
+        Objection::NotForConsumers => "not for consumers",
+        Objection::Incompatible => "attacks the wall",
+        Objection::OverAllowable => "above the allowable",
+        Objection::LiquidFull => "liquid-full too soon",
+        Objection::Frozen => "frozen in work",
+        Objection::Dry => "dry in work",
+        Objection::OutsideModel => "outside its model",
+    }
+}
+
 pub const fn severity(severity: Severity) -> &'static str {
     match severity {
         Severity::Error => "not fit",
@@ -97,27 +118,40 @@ pub const fn basis(basis: AllowableBasis) -> &'static str {
 
 /// What a GHS hazard statement code says, shortened.
 pub fn statement(code: &str) -> &'static str {
+    if code == "EUH014" {
+        return "reacts violently with water";
+    }
     match code.get(..4).unwrap_or(code) {
         "H220" => "extremely flammable gas",
         "H221" => "flammable gas",
         "H224" => "extremely flammable liquid and vapour",
         "H225" => "highly flammable liquid and vapour",
         "H226" => "flammable liquid and vapour",
+        "H230" => "may react explosively even without air",
+        "H231" => "may react explosively even without air, under pressure or hot",
+        "H250" => "catches fire by itself in air",
+        "H260" => "water sets free gases that may ignite by themselves",
+        "H270" => "may cause or intensify fire; oxidiser",
         "H280" => "gas under pressure; may explode if heated",
         "H281" => "refrigerated gas; cold burns",
         "H301" => "toxic if swallowed",
         "H302" => "harmful if swallowed",
         "H304" => "may be fatal if swallowed and enters airways",
         "H311" => "toxic in contact with skin",
+        "H312" => "harmful in contact with skin",
         "H314" => "severe skin burns and eye damage",
         "H315" => "skin irritation",
         "H318" => "serious eye damage",
         "H319" => "serious eye irritation",
+        "H330" => "fatal if inhaled",
         "H331" => "toxic if inhaled",
         "H332" => "harmful if inhaled",
         "H335" => "may irritate the airways",
         "H336" => "may cause drowsiness or dizziness",
+        "H340" => "may cause genetic defects",
+        "H350" => "may cause cancer",
         "H351" => "suspected of causing cancer",
+        "H360" => "may damage fertility or the unborn child",
         "H361" => "suspected of damaging fertility or the unborn child",
         "H370" => "damages organs",
         "H372" => "damages organs through long exposure",

@@ -9,11 +9,15 @@ use chargewright::store;
 use crate::files::Folder;
 use crate::given::preset_with;
 
-fn program() -> Command {
+pub fn program() -> Command {
     let mut command = Command::new(env!("CARGO_BIN_EXE_chargewright"));
     // No display: a test must never open a window.
     for name in ["DISPLAY", "WAYLAND_DISPLAY", "WAYLAND_SOCKET"] {
         command.env_remove(name);
+    }
+    // Whoever runs the tests may have fluids of their own.
+    for name in ["XDG_CONFIG_HOME", "HOME", "APPDATA"] {
+        command.env(name, "/nowhere");
     }
     command
 }

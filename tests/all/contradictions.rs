@@ -181,10 +181,10 @@ fn every_number_of_every_ready_design_at_its_extremes() {
 #[test]
 fn every_fluid_and_every_duty_in_every_ready_design() {
     for (name, design) in store::presets() {
-        for id in Catalog::built_in().ids() {
+        for entry in Catalog::built_in().entries() {
             let mut design = design.clone();
-            design.fluid = FluidId::new(id).expect("known");
-            let what = format!("{name} with {id}");
+            design.fluid = FluidId::from(entry);
+            let what = format!("{name} with {}", entry.id());
             let a = holds(&design, &what);
             remedies_mend(&design, &a, &what);
         }

@@ -6,10 +6,11 @@ use std::path::{Path, PathBuf};
 
 /// Modules in reading order, as `src/lib.rs` lists them: each may use itself and
 /// earlier ones.
-const ORDER: [&str; 15] = [
+const ORDER: [&str; 16] = [
     "units",
     "solve",
     "source",
+    "text",
     "fluid",
     "chamber",
     "conditions",

@@ -203,16 +203,17 @@ fn fluids_lists_every_fluid() {
     let text = printed(&["fluids"], 0);
     assert_eq!(
         text.lines().next(),
-        Some("id,name,cas,refrigerant,model,lowest_k,highest_k")
+        Some("id,name,cas,refrigerant,model,lowest_k,highest_k,own_file")
     );
     assert_eq!(text.lines().count(), 1 + Catalog::built_in().ids().count());
     for line in text.lines().skip(1) {
         let cells = cells(line);
         assert_eq!(
             cells.len(),
-            7,
-            "a name with a comma breaks the table: {line}"
+            8,
+            "a name with a comma is put in quotes: {line}"
         );
+        assert_eq!(cells[7], "", "of the program: {line}");
         assert!(["equation", "correlations"].contains(&cells[4]), "{line}");
         assert!(cells[5].parse::<f64>().expect(line) < cells[6].parse::<f64>().expect(line));
     }

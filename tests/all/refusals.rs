@@ -17,18 +17,13 @@ fn wrong(old: &str, new: &str, field: &str, parts: &[&str]) {
         Err(error) => error,
     };
     let said = error.to_string();
-    let ParseError::At {
-        line: found,
-        column,
-        ..
-    } = error
-    else {
+    let (ParseError::At(at) | ParseError::UnknownFluid(at)) = error else {
         panic!("“{new}”: {said}")
     };
-    assert_eq!(found, line, "“{new}”: {said}");
-    assert!(column > 1, "“{new}”: {said}");
+    assert_eq!(at.line, line, "“{new}”: {said}");
+    assert!(at.column > 1, "“{new}”: {said}");
     assert!(
-        said.starts_with(&format!("line {line}, column {column}: ")),
+        said.starts_with(&format!("line {line}, column {}: ", at.column)),
         "{said}"
     );
     assert!(

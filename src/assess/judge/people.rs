@@ -69,16 +69,10 @@ impl Judge<'_> {
     pub(super) fn stability(&mut self) {
         let safety = self.a.fluid.safety();
         for stability in &safety.stability {
-            let severity = match stability.kind {
-                StabilityKind::SelfDecomposing
-                | StabilityKind::Pyrophoric
-                | StabilityKind::Oxidising
-                | StabilityKind::WaterReactive => Severity::Error,
-                // These hold while air, water and flame are kept away, which a sealed
-                // unit does: somebody must answer for the filling.
-                StabilityKind::PeroxideForming
-                | StabilityKind::Hydrolysing
-                | StabilityKind::AcidInFlame => Severity::Warning,
+            let severity = if stability.kind.blocks() {
+                Severity::Error
+            } else {
+                Severity::Warning
             };
             let kind = FindingKind::Unstable {
                 kind: stability.kind,
@@ -160,12 +154,14 @@ impl Judge<'_> {
             }
         }
         if safety.is_corrosive() {
-            let source = safety.statements.source.to_string();
-            self.add(
-                Severity::Warning,
-                Section::Fluid,
-                FindingKind::Corrosive { source },
-            );
+            let kind = FindingKind::Corrosive {
+                keep_dry: safety
+                    .stability
+                    .iter()
+                    .any(|s| s.kind == StabilityKind::WaterReactive),
+                source: safety.statements.source.to_string(),
+            };
+            self.add(Severity::Warning, Section::Fluid, kind);
         }
         if release.oxygen < LEAST_OXYGEN {
             let kind = FindingKind::Asphyxiant {
@@ -236,6 +232,17 @@ impl Judge<'_> {
                 self.add(Severity::Warning, Section::Chamber, kind);
             }
             _ => {}
+        }
+    }
+
+    pub(super) fn own_fluid(&mut self) {
+        if let Some(own) = self.a.fluid.own_file() {
+            let file = own.name.clone();
+            self.add(
+                Severity::Warning,
+                Section::Fluid,
+                FindingKind::OwnFluid { file },
+            );
         }
     }
 

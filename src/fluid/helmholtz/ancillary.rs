@@ -38,12 +38,10 @@ impl Ancillary {
     /// it is the reducing value.
     pub fn at(&self, temperature_k: f64) -> f64 {
         let theta = (1.0 - temperature_k / self.reducing_temperature_k).max(0.0);
-        let sum: f64 = self
-            .n
-            .iter()
-            .zip(&self.t)
-            .map(|(n, t)| n * theta.powf(*t))
-            .sum();
+        let ln_theta = theta.ln();
+        // θ = 0 gives exp(−∞) = 0 for every positive exponent.
+        let power = |t: f64| if t == 0.0 { 1.0 } else { (t * ln_theta).exp() };
+        let sum: f64 = self.n.iter().zip(&self.t).map(|(n, t)| n * power(*t)).sum();
         let sum = if self.tau_first {
             sum * self.reducing_temperature_k / temperature_k
         } else {

@@ -7,6 +7,7 @@
 mod ancillary;
 mod ideal;
 mod non_analytic;
+mod powers;
 mod residual;
 mod saturation;
 mod tau;
@@ -17,7 +18,7 @@ use serde::Deserialize;
 use crate::source::Citation;
 use ancillary::Ancillaries;
 use ideal::IdealTerms;
-use residual::{EXPONENT_LIMIT, Residual, ResidualIsotherm};
+use residual::{Residual, ResidualIsotherm, TERM_LIMIT};
 use terms::ResidualTerms;
 
 pub use residual::{Derivatives, UnequalLists};
@@ -71,8 +72,10 @@ pub struct Equation {
 pub enum EquationError {
     #[error(transparent)]
     Lists(#[from] UnequalLists),
-    #[error("more than {limit} distinct exponents of density")]
-    TooManyExponents { limit: usize },
+    #[error(
+        "more than {limit} residual terms that differ in density, or too many broken exponents"
+    )]
+    TooManyTerms { limit: usize },
     #[error("{field} must be a finite number above 0, not {value}")]
     NotPositive { field: &'static str, value: f64 },
     #[error("temperature_range_k must rise, not {low} to {high}")]
@@ -105,10 +108,8 @@ impl Equation {
     /// [`EquationError`] names the field that is wrong.
     pub fn new(data: EquationData) -> Result<Self, EquationError> {
         let residual = Residual::new(&data.residual)?;
-        if residual.distinct_exponents() > EXPONENT_LIMIT {
-            return Err(EquationError::TooManyExponents {
-                limit: EXPONENT_LIMIT,
-            });
+        if !residual.fits() {
+            return Err(EquationError::TooManyTerms { limit: TERM_LIMIT });
         }
         let (low, high) = data.temperature_range_k;
         if low.partial_cmp(&high) != Some(std::cmp::Ordering::Less) {
@@ -153,6 +154,27 @@ impl Equation {
             rt: self.data.gas_constant_j_per_mol_k * temperature_k,
             reducing_density: self.data.reducing.density_mol_per_m3,
         }
+    }
+
+    /// Scaled derivatives of the residual energy at (T, ρ).
+    pub fn residual_derivatives(&self, temperature_k: f64, density: f64) -> Derivatives {
+        let tau = self.data.reducing.temperature_k / temperature_k;
+        let delta = density / self.data.reducing.density_mol_per_m3;
+        self.residual.derivatives(tau, delta)
+    }
+
+    /// Entropy less that of the ideal gas at the same temperature and density, J/(mol K).
+    pub fn residual_entropy(&self, temperature_k: f64, density: f64) -> f64 {
+        let x = self.residual_derivatives(temperature_k, density);
+        self.data.gas_constant_j_per_mol_k * (x.t1 - x.a)
+    }
+
+    /// Entropy from one density up to another of the same temperature, J/(mol K).
+    fn entropy_step(&self, temperature_k: f64, from: f64, to: f64) -> f64 {
+        let tau = self.data.reducing.temperature_k / temperature_k;
+        let deltas = [from, to].map(|density| density / self.data.reducing.density_mol_per_m3);
+        let [below, above] = self.residual.entropies(tau, deltas);
+        self.data.gas_constant_j_per_mol_k * (above - below - (to / from).ln())
     }
 
     /// Energies and heat capacities at (T, ρ).

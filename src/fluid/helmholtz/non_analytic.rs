@@ -14,6 +14,9 @@ pub(super) struct NonAnalytic {
     pub(super) big_d: f64,
 }
 
+/// exp(−80) is 2e-35; the derivatives' prefactors are below 1e6.
+const FADED: f64 = 80.0;
+
 impl NonAnalytic {
     /// IAPWS R6-95(2018), table 5, scaled by powers of δ and τ.
     pub(super) fn derivatives(&self, tau: f64, delta: f64) -> Derivatives {
@@ -35,6 +38,11 @@ impl NonAnalytic {
             big_d,
         } = *self;
         let square = off * off;
+        // Far from the critical point ψ puts the term below the last digit of everything.
+        let fade = big_c * square + big_d * (tau - 1.0).powi(2);
+        if fade > FADED {
+            return Derivatives::default();
+        }
         let root = square.powf(0.5 / beta);
         let theta = (1.0 - tau) + big_a * root;
         let bump = big_b * square.powf(a);
@@ -42,7 +50,7 @@ impl NonAnalytic {
         if distance <= 0.0 {
             return Derivatives::default();
         }
-        let psi = (-big_c * square - big_d * (tau - 1.0).powi(2)).exp();
+        let psi = (-fade).exp();
         let psi_d = -2.0 * big_c * off * psi;
         let psi_dd = (2.0 * big_c * square - 1.0) * 2.0 * big_c * psi;
         let psi_t = -2.0 * big_d * (tau - 1.0) * psi;

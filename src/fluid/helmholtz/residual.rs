@@ -3,10 +3,11 @@
 //! Every form but the non-analytic one is a product `n·A(τ)·B(δ)`. On an
 //! isotherm the A(τ) are constants, so they are worked out once and a density
 //! costs three multiplications a term. That is what makes a saturation solve,
-//! which asks for a dozen densities at one temperature, cheap.
+//! which asks for half a dozen densities at one temperature, cheap.
 
 use super::non_analytic::NonAnalytic;
-use super::tau::{TauFactor, TauTerm, raise};
+use super::powers::{Exponents, Powers};
+use super::tau::{TauFactor, TauTerm};
 use super::terms::ResidualTerms;
 
 /// Scaled derivatives of αʳ: `d1 = δ·∂αʳ/∂δ`, `d2 = δ²·∂²αʳ/∂δ²`, and with τ
@@ -21,38 +22,50 @@ pub struct Derivatives {
     pub d1t1: f64,
 }
 
-/// δᵈ of a block that shares exp(−g δˡ).
+/// Terms that share exp(−g δˡ).
 #[derive(Debug, Clone, PartialEq)]
 struct DecayBlock {
     g: f64,
     l: f64,
+    l_slot: usize,
     /// First and one past the last term, in `Residual::decay_terms`.
     range: (usize, usize),
 }
 
+/// δᵈ inside a block. Published terms that differ in τ only are one term here.
 #[derive(Debug, Clone, Copy, PartialEq)]
-struct DeltaPower {
-    /// Index into the table of distinct exponents.
-    slot: usize,
+struct DecayTerm {
     d: f64,
+    slot: usize,
 }
 
 #[derive(Debug, Clone, Copy, PartialEq)]
 struct Bell {
     d: f64,
+    slot: usize,
     eta: f64,
     epsilon: f64,
+}
+
+/// The τ side of a published term and the term of δ that it belongs to.
+#[derive(Debug, Clone, Copy, PartialEq)]
+struct Published {
+    tau: TauTerm,
+    term: usize,
 }
 
 /// The residual part, sorted for evaluation.
 #[derive(Debug, Clone, Default, PartialEq)]
 pub struct Residual {
-    exponents: Vec<f64>,
+    exponents: Exponents,
     decays: Vec<DecayBlock>,
-    decay_powers: Vec<DeltaPower>,
-    decay_tau: Vec<TauTerm>,
+    decay_terms: Vec<DecayTerm>,
     bells: Vec<Bell>,
-    bell_tau: Vec<TauTerm>,
+    /// Published terms n τᵗ by their exponent, with the term of δ each belongs to: a power
+    /// of τ that several share is worked out once.
+    plain: Vec<(f64, Vec<(f64, usize)>)>,
+    /// The others. The bells' terms count on from the decays'.
+    tau: Vec<Published>,
     non_analytic: Vec<NonAnalytic>,
 }
 
@@ -71,6 +84,7 @@ impl Residual {
     /// [`UnequalLists`] if the lists of a block differ in length.
     pub fn new(blocks: &[ResidualTerms]) -> Result<Self, UnequalLists> {
         let mut decays: Vec<(f64, f64, f64, TauTerm)> = Vec::new();
+        let mut bell_tau = Vec::new();
         let mut residual = Self::default();
         for (block, terms) in blocks.iter().enumerate() {
             let lists = terms.lists();
@@ -79,38 +93,63 @@ impl Residual {
                 return Err(UnequalLists { block, expected });
             }
             for i in 0..expected {
-                residual.add(terms, i, &mut decays);
+                residual.add(terms, i, &mut decays, &mut bell_tau);
             }
         }
         decays.sort_by(|x, y| {
-            (x.1, x.0)
-                .partial_cmp(&(y.1, y.0))
-                .unwrap_or(std::cmp::Ordering::Equal)
+            x.1.total_cmp(&y.1)
+                .then(x.0.total_cmp(&y.0))
+                .then(x.2.total_cmp(&y.2))
         });
         for (g, l, d, tau) in decays {
-            let slot = match residual.exponents.iter().position(|known| *known == d) {
-                Some(slot) => slot,
-                None => {
-                    residual.exponents.push(d);
-                    residual.exponents.len() - 1
-                }
-            };
-            let index = residual.decay_powers.len();
-            residual.decay_powers.push(DeltaPower { slot, d });
-            residual.decay_tau.push(tau);
-            match residual.decays.last_mut() {
-                Some(last) if last.g == g && last.l == l => last.range.1 = index + 1,
-                _ => residual.decays.push(DecayBlock {
+            let block_goes_on =
+                matches!(residual.decays.last(), Some(last) if last.g == g && last.l == l);
+            let same_term =
+                block_goes_on && matches!(residual.decay_terms.last(), Some(last) if last.d == d);
+            if !same_term {
+                let slot = residual.exponents.slot(d);
+                residual.decay_terms.push(DecayTerm { d, slot });
+            }
+            let end = residual.decay_terms.len();
+            if !block_goes_on {
+                let l_slot = residual.exponents.slot(l);
+                residual.decays.push(DecayBlock {
                     g,
                     l,
-                    range: (index, index + 1),
-                }),
+                    l_slot,
+                    range: (end - 1, end),
+                });
             }
+            if let Some(block) = residual.decays.last_mut() {
+                block.range.1 = end;
+            }
+            residual.add_tau(tau, end - 1);
+        }
+        let first_bell = residual.decay_terms.len();
+        for (i, tau) in bell_tau.into_iter().enumerate() {
+            residual.add_tau(tau, first_bell + i);
         }
         Ok(residual)
     }
 
-    fn add(&mut self, terms: &ResidualTerms, i: usize, decays: &mut Vec<(f64, f64, f64, TauTerm)>) {
+    fn add_tau(&mut self, tau: TauTerm, term: usize) {
+        if tau.factor != TauFactor::One {
+            self.tau.push(Published { tau, term });
+            return;
+        }
+        match self.plain.iter_mut().find(|(t, _)| *t == tau.t) {
+            Some((_, published)) => published.push((tau.n, term)),
+            None => self.plain.push((tau.t, vec![(tau.n, term)])),
+        }
+    }
+
+    fn add(
+        &mut self,
+        terms: &ResidualTerms,
+        i: usize,
+        decays: &mut Vec<(f64, f64, f64, TauTerm)>,
+        bell_tau: &mut Vec<TauTerm>,
+    ) {
         let plain = |n: f64, t: f64| TauTerm {
             n,
             t,
@@ -172,8 +211,10 @@ impl Residual {
                 beta,
                 gamma,
             } => {
+                let slot = self.exponents.slot(d[i]);
                 self.bells.push(Bell {
                     d: d[i],
+                    slot,
                     eta: eta[i],
                     epsilon: epsilon[i],
                 });
@@ -181,7 +222,7 @@ impl Residual {
                     beta: beta[i],
                     gamma: gamma[i],
                 };
-                self.bell_tau.push(TauTerm {
+                bell_tau.push(TauTerm {
                     n: n[i],
                     t: t[i],
                     factor,
@@ -198,8 +239,10 @@ impl Residual {
                 b,
             } => {
                 // Published with exp(+η(δ−ε)²) and η negative.
+                let slot = self.exponents.slot(d[i]);
                 self.bells.push(Bell {
                     d: d[i],
+                    slot,
                     eta: -eta[i],
                     epsilon: epsilon[i],
                 });
@@ -208,7 +251,7 @@ impl Residual {
                     beta: beta[i],
                     gamma: gamma[i],
                 };
-                self.bell_tau.push(TauTerm {
+                bell_tau.push(TauTerm {
                     n: n[i],
                     t: t[i],
                     factor,
@@ -238,31 +281,82 @@ impl Residual {
         }
     }
 
+    /// Terms of δ, each with a τ-factor of its own.
+    pub fn count(&self) -> usize {
+        self.decay_terms.len() + self.bells.len()
+    }
+
+    /// Whether every exponent of δ has a place in the table of powers.
+    pub fn fits(&self) -> bool {
+        self.count() <= TERM_LIMIT && self.exponents.other.len() <= Exponents::MOST_OTHER
+    }
+
     /// The terms' τ-factors at one reduced inverse temperature τ = T_r/T.
     pub fn isotherm(&self, tau: f64) -> ResidualIsotherm<'_> {
         let ln_tau = tau.ln();
-        let factors =
-            |terms: &[TauTerm]| terms.iter().map(|term| term.value(tau, ln_tau)).collect();
+        let mut factors = [0.0; TERM_LIMIT];
+        for (t, published) in &self.plain {
+            let power = (t * ln_tau).exp();
+            for (n, term) in published {
+                factors[*term] += n * power;
+            }
+        }
+        for published in &self.tau {
+            factors[published.term] += published.tau.value(tau, ln_tau);
+        }
         ResidualIsotherm {
             terms: self,
             tau,
-            decay: factors(&self.decay_tau),
-            bell: factors(&self.bell_tau),
+            factors,
         }
+    }
+
+    /// Residual entropy over R, τ·∂αʳ/∂τ − αʳ, at two densities of one temperature.
+    pub fn entropies(&self, tau: f64, deltas: [f64; 2]) -> [f64; 2] {
+        let ln_tau = tau.ln();
+        let mut factors = [0.0; TERM_LIMIT];
+        for (t, published) in &self.plain {
+            let power = (t * ln_tau).exp() * (t - 1.0);
+            for (n, term) in published {
+                factors[*term] += n * power;
+            }
+        }
+        for published in &self.tau {
+            let value = published.tau.value(tau, ln_tau);
+            factors[published.term] += value * (published.tau.log_derivatives(tau)[1] - 1.0);
+        }
+        deltas.map(|delta| {
+            let powers = self.exponents.powers(delta);
+            let [separable, ..] = self.sum(&factors, delta, &powers);
+            let others = self.non_analytic.iter().map(|term| {
+                let x = term.derivatives(tau, delta);
+                x.t1 - x.a
+            });
+            separable + others.sum::<f64>()
+        })
     }
 
     /// All derivatives to second order at (τ, δ).
     pub fn derivatives(&self, tau: f64, delta: f64) -> Derivatives {
         let ln_tau = tau.ln();
-        let mut by_order = [(); 3].map(|()| (Vec::new(), Vec::new()));
-        for (order, (decay, bell)) in by_order.iter_mut().enumerate() {
-            let scaled =
-                |term: &TauTerm| term.value(tau, ln_tau) * term.log_derivatives(tau)[order];
-            decay.extend(self.decay_tau.iter().map(scaled));
-            bell.extend(self.bell_tau.iter().map(scaled));
+        let mut by_order = [[0.0; TERM_LIMIT]; 3];
+        for (t, published) in &self.plain {
+            let power = (t * ln_tau).exp();
+            for (factors, derivative) in by_order.iter_mut().zip([1.0, *t, t * (t - 1.0)]) {
+                for (n, term) in published {
+                    factors[*term] += n * power * derivative;
+                }
+            }
         }
-        let powers = self.powers(delta);
-        let [s0, s1, s2] = by_order.map(|(decay, bell)| self.sum(&decay, &bell, delta, &powers));
+        for published in &self.tau {
+            let value = published.tau.value(tau, ln_tau);
+            let derivatives = published.tau.log_derivatives(tau);
+            for (factors, derivative) in by_order.iter_mut().zip(derivatives) {
+                factors[published.term] += value * derivative;
+            }
+        }
+        let powers = self.exponents.powers(delta);
+        let [s0, s1, s2] = by_order.map(|factors| self.sum(&factors, delta, &powers));
         let mut total = Derivatives {
             a: s0[0],
             d1: s0[1],
@@ -283,39 +377,25 @@ impl Residual {
         total
     }
 
-    fn powers(&self, delta: f64) -> [f64; MOST_EXPONENTS] {
-        let mut powers = [0.0; MOST_EXPONENTS];
-        for (power, d) in powers.iter_mut().zip(&self.exponents) {
-            *power = raise(delta, *d);
-        }
-        powers
-    }
-
     /// (αʳ, δαʳ_δ, δ²αʳ_δδ) of the separable terms for given τ-factors.
-    fn sum(
-        &self,
-        decay: &[f64],
-        bell: &[f64],
-        delta: f64,
-        powers: &[f64; MOST_EXPONENTS],
-    ) -> [f64; 3] {
+    fn sum(&self, factors: &[f64; TERM_LIMIT], delta: f64, powers: &Powers) -> [f64; 3] {
         let (mut a, mut d1, mut d2) = (0.0, 0.0, 0.0);
         for block in &self.decays {
             let (mut s0, mut s1, mut s2) = (0.0, 0.0, 0.0);
             let (from, to) = block.range;
-            for (power, c) in self.decay_powers[from..to].iter().zip(&decay[from..to]) {
-                let x = c * powers[power.slot];
-                let y = x * power.d;
+            for (term, c) in self.decay_terms[from..to].iter().zip(&factors[from..to]) {
+                let x = c * powers[term.slot];
+                let y = x * term.d;
                 s0 += x;
                 s1 += y;
-                s2 += y * (power.d - 1.0);
+                s2 += y * (term.d - 1.0);
             }
             if block.g == 0.0 {
                 a += s0;
                 d1 += s1;
                 d2 += s2;
             } else {
-                let decayed = block.g * raise(delta, block.l);
+                let decayed = block.g * powers[block.l_slot];
                 let e = (-decayed).exp();
                 let u = block.l * decayed;
                 a += e * s0;
@@ -323,9 +403,9 @@ impl Residual {
                 d2 += e * (s2 - 2.0 * u * s1 + u * (1.0 + u - block.l) * s0);
             }
         }
-        for (term, c) in self.bells.iter().zip(bell) {
+        for (term, c) in self.bells.iter().zip(&factors[self.decay_terms.len()..]) {
             let off = delta - term.epsilon;
-            let x = c * raise(delta, term.d) * (-term.eta * off * off).exp();
+            let x = c * powers[term.slot] * (-term.eta * off * off).exp();
             let q = term.d - 2.0 * term.eta * delta * off;
             a += x;
             d1 += x * q;
@@ -335,26 +415,23 @@ impl Residual {
     }
 }
 
-/// More distinct exponents of δ than any published equation has (at most 16 so far).
-const MOST_EXPONENTS: usize = 32;
-
-/// Largest number of distinct exponents of δ that an equation may have.
-pub const EXPONENT_LIMIT: usize = MOST_EXPONENTS;
+/// Largest number of terms of δ that an equation may have; the published ones have 44
+/// at most once terms that differ in τ only are one.
+pub const TERM_LIMIT: usize = 64;
 
 /// αʳ on one isotherm.
 #[derive(Debug, Clone)]
 pub struct ResidualIsotherm<'a> {
     terms: &'a Residual,
     tau: f64,
-    decay: Vec<f64>,
-    bell: Vec<f64>,
+    factors: [f64; TERM_LIMIT],
 }
 
 impl ResidualIsotherm<'_> {
     /// (αʳ, δαʳ_δ, δ²αʳ_δδ) at a reduced density δ = ρ/ρ_r.
     pub fn at(&self, delta: f64) -> [f64; 3] {
-        let powers = self.terms.powers(delta);
-        let mut sum = self.terms.sum(&self.decay, &self.bell, delta, &powers);
+        let powers = self.terms.exponents.powers(delta);
+        let mut sum = self.terms.sum(&self.factors, delta, &powers);
         for term in &self.terms.non_analytic {
             let x = term.derivatives(self.tau, delta);
             sum[0] += x.a;
@@ -362,12 +439,5 @@ impl ResidualIsotherm<'_> {
             sum[2] += x.d2;
         }
         sum
-    }
-}
-
-impl Residual {
-    /// Number of distinct exponents of δ.
-    pub fn distinct_exponents(&self) -> usize {
-        self.exponents.len()
     }
 }

@@ -32,41 +32,45 @@ impl Equation {
     /// # Errors
     /// [`NotConverged`] if no guess leads to an equilibrium.
     pub fn saturation(&self, temperature_k: f64) -> Result<SaturatedPair, NotConverged> {
-        let (liquid, vapour) = self.saturated_densities(temperature_k)?;
-        Ok(self.pair(temperature_k, liquid, vapour))
+        let (pressure, liquid, vapour) = self.saturated_state(temperature_k)?;
+        let entropy = self.entropy_step(temperature_k, liquid, vapour);
+        Ok(SaturatedPair {
+            pressure,
+            liquid,
+            vapour,
+            slope: entropy / (1.0 / vapour - 1.0 / liquid),
+            latent_heat: temperature_k * entropy,
+        })
+    }
+
+    /// Vapour pressure in Pa and the two densities.
+    ///
+    /// # Errors
+    /// As [`Self::saturation`].
+    pub fn saturated_state(&self, temperature_k: f64) -> Result<(f64, f64, f64), NotConverged> {
+        let isotherm = self.isotherm(temperature_k);
+        let (liquid, vapour) = self.densities_on(&isotherm, temperature_k)?;
+        // The liquid side loses digits at low pressure: p from the vapour.
+        Ok((isotherm.pressure(vapour), liquid, vapour))
     }
 
     /// Both phases from guesses tried in order: the ancillary equations; then,
     /// near the critical point, a walk towards it along ρ − ρ_c ∝ √(T_c − T).
-    pub fn saturated_densities(&self, temperature_k: f64) -> Result<(f64, f64), NotConverged> {
-        let isotherm = self.isotherm(temperature_k);
+    fn densities_on(
+        &self,
+        isotherm: &Isotherm<'_>,
+        temperature_k: f64,
+    ) -> Result<(f64, f64), NotConverged> {
         let ancillary = &self.data.ancillary;
         let guess = (
             ancillary.liquid_density.at(temperature_k),
             ancillary.vapour_density.at(temperature_k),
         );
-        if let Some(pair) = self.equilibrium(&isotherm, guess, temperature_k) {
+        if let Some(pair) = self.equilibrium(isotherm, guess, temperature_k) {
             return Ok(pair);
         }
         self.walk_to(temperature_k)
             .ok_or(NotConverged { temperature_k })
-    }
-
-    /// The pair and what follows from it.
-    fn pair(&self, temperature_k: f64, liquid: f64, vapour: f64) -> SaturatedPair {
-        // The liquid side loses digits at low pressure: p from the vapour.
-        let pressure = self.isotherm(temperature_k).pressure(vapour);
-        let entropy = self.caloric(temperature_k, vapour).entropy
-            - self.caloric(temperature_k, liquid).entropy;
-        let latent_heat = temperature_k * entropy;
-        let slope = entropy / (1.0 / vapour - 1.0 / liquid);
-        SaturatedPair {
-            pressure,
-            liquid,
-            vapour,
-            slope,
-            latent_heat,
-        }
     }
 
     /// Steps from 0.98 T_c towards `temperature_k`, each guess scaled from the
@@ -115,8 +119,11 @@ impl Equation {
     /// equal in both phases (Akasaka, R. 2008, J. Therm. Sci. Technol. 3,
     /// 442–451, doi 10.1299/jtst.3.442).
     ///
-    /// Stops when a step no longer shrinks: at that point the densities carry
-    /// all the digits the equation has in double precision. Never judged by the
+    /// Newton squares the error: a step whose square is below the last digit is the
+    /// last one. The factor of that square grows as 1/(T_c − T). Beside the critical
+    /// point rounding keeps the steps larger: there it stops when they no longer
+    /// shrink. At that point the densities carry all the digits the equation has in
+    /// double precision. Never judged by the
     /// difference of two pressures, which is noise at low pressure.
     fn equilibrium(
         &self,
@@ -129,6 +136,7 @@ impl Equation {
         let near_critical = temperature_k > 0.98 * critical.temperature_k;
         let (mut liquid, mut vapour) = (guess.0 / reducing, guess.1 / reducing);
         let mut last_step = f64::INFINITY;
+        let last_step_below = 1e-8 * (1.0 - temperature_k / critical.temperature_k).abs();
         for _ in 0..60 {
             let [a, d1, d2] = isotherm.residual.at(liquid);
             let (jl, kl) = (liquid * (1.0 + d1), a + d1 + liquid.ln());
@@ -157,7 +165,7 @@ impl Equation {
             if !step.is_finite() || liquid <= vapour {
                 return None;
             }
-            if step < 1e-15 || (step >= 0.5 * last_step && last_step < 1e-8) {
+            if step < last_step_below || (step >= 0.5 * last_step && last_step < 1e-8) {
                 return (spread > 1e-9 * liquid).then_some((liquid * reducing, vapour * reducing));
             }
             last_step = step;

@@ -2,8 +2,9 @@
 
 use eframe::egui::{Align, Layout, RichText, ScrollArea, TextStyle, Ui, vec2};
 
-use crate::assess::Assessment;
-use crate::design::Design;
+use super::fluids::{FluidTable, fluid_table_ui};
+use crate::assess::{Assessment, Library};
+use crate::design::{Charge, Design, FluidId};
 use crate::ui::command::Command;
 use crate::ui::plots::{
     Picture, PlotState, charge_map_ui, liquid_share_ui, pressure_ui, scrubber_ui,
@@ -19,6 +20,7 @@ pub struct Behaviour {
     second: Picture,
     scrubber: Option<Temperature>,
     plots: PlotState,
+    fluids: FluidTable,
     /// The sheet of this design, made when it was last asked for.
     sheet: Option<(Design, String)>,
 }
@@ -26,7 +28,15 @@ pub struct Behaviour {
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 enum Tab {
     Behaviour,
+    Fluids,
     Sheet,
+}
+
+/// What the user wants in the design.
+#[derive(Debug, Clone, PartialEq)]
+pub enum Wish {
+    Charge(Mass),
+    Fluid(FluidId, Charge),
 }
 
 /// At this width the middle column shows three pictures.
@@ -41,6 +51,7 @@ impl Default for Behaviour {
             second: Picture::Pressure,
             scrubber: None,
             plots: PlotState::default(),
+            fluids: FluidTable::default(),
             sheet: None,
         }
     }
@@ -59,29 +70,34 @@ impl Behaviour {
     }
 }
 
-/// Shows how it behaves; `Some` is the mass the user dragged the charge to.
+/// Shows how it behaves; a [`Wish`] where the user dragged the charge or tries a fluid.
 pub fn behaviour_ui(
     ui: &mut Ui,
     design: &Design,
     a: &Assessment,
+    library: &Library,
     units: &Units,
     sheet_of: impl FnOnce() -> String,
     state: &mut Behaviour,
     out: &mut Vec<Command>,
-) -> Option<Mass> {
-    let mut dragged = None;
+) -> Option<Wish> {
     ui.horizontal(|ui| {
         ui.selectable_value(&mut state.tab, Tab::Behaviour, "Behaviour");
+        ui.selectable_value(&mut state.tab, Tab::Fluids, "Fluids");
         ui.selectable_value(&mut state.tab, Tab::Sheet, "Sheet");
         if state.tab == Tab::Behaviour {
             picture_selector(ui, state);
         }
     });
     match state.tab {
-        Tab::Behaviour => dragged = pictures_ui(ui, design, a, units, state),
-        Tab::Sheet => sheet_ui(ui, design, sheet_of, state, out),
+        Tab::Behaviour => pictures_ui(ui, design, a, units, state).map(Wish::Charge),
+        Tab::Fluids => fluid_table_ui(ui, design, a, library, units, &mut state.fluids)
+            .map(|(fluid, charge)| Wish::Fluid(fluid, charge)),
+        Tab::Sheet => {
+            sheet_ui(ui, design, sheet_of, state, out);
+            None
+        }
     }
-    dragged
 }
 
 /// Where there is room for two pictures only, the second is chosen here; an enlarged

@@ -5,7 +5,7 @@ use eframe::egui::{Align, RichText, Role, ScrollArea, TextEdit, Ui, WidgetInfo};
 use super::section::fact_ui;
 use crate::assess::{Assessment, Library};
 use crate::design::{Design, FluidId};
-use crate::fluid::Fluid;
+use crate::fluid::{Entry, Fluid};
 
 /// View-only state of the picker.
 #[derive(Debug, Default)]
@@ -16,7 +16,7 @@ pub struct FluidPanel {
 }
 
 pub fn decision(a: &Assessment) -> String {
-    format!("{}, {}", a.fluid.name(), nature(&a.fluid))
+    format!("{}, {}", a.fluid.name(), nature(a.fluid.entry()))
 }
 
 pub fn fluid_ui(
@@ -41,23 +41,22 @@ pub fn fluid_ui(
             let mut any = false;
             for fluid in library
                 .fluids
-                .iter()
+                .entries()
                 .filter(|fluid| matches(fluid, &wanted))
             {
                 any = true;
                 let chosen = fluid.id() == design.fluid.as_str();
-                let label = format!("{}   {}", fluid.name(), nature(&fluid));
+                let own = fluid.own_file().map_or("", |_| "your own, ");
+                let label = format!("{}   {own}{}", fluid.name(), nature(fluid));
                 let row = ui.selectable_label(chosen, label);
                 if chosen && panel.in_sight.as_ref() != Some(&design.fluid) {
                     // Another fluid than last time, by whatever way: bring it into sight.
                     row.scroll_to_me(Some(Align::Center));
                     panel.in_sight = Some(design.fluid.clone());
                 }
-                if row.clicked()
-                    && let Some(id) = FluidId::new(fluid.id())
-                {
-                    panel.in_sight = Some(id.clone());
-                    design.fluid = id;
+                if row.clicked() {
+                    design.fluid = FluidId::from(fluid);
+                    panel.in_sight = Some(design.fluid.clone());
                 }
             }
             if !any {
@@ -71,6 +70,9 @@ pub fn fluid_ui(
 fn facts_ui(ui: &mut Ui, fluid: &Fluid) {
     const LABELS: f32 = 76.0;
     ui.add_space(4.0);
+    if let Some(own) = fluid.own_file() {
+        fact_ui(ui, LABELS, "Your own", &own.name);
+    }
     fact_ui(ui, LABELS, "CAS", fluid.cas());
     fact_ui(ui, LABELS, "Formula", fluid.formula());
     if let Some(number) = fluid.refrigerant() {
@@ -90,16 +92,15 @@ fn facts_ui(ui: &mut Ui, fluid: &Fluid) {
 }
 
 /// What it does to people, in a few words.
-fn nature(fluid: &Fluid) -> String {
-    let safety = fluid.safety();
+pub(super) fn nature(fluid: &Entry) -> String {
     let mut words = Vec::new();
-    if safety.is_flammable() {
+    if fluid.is_flammable() {
         words.push("flammable");
     }
-    if safety.is_toxic() {
+    if fluid.is_toxic() {
         words.push("harmful");
     }
-    if safety.is_corrosive() {
+    if fluid.is_corrosive() {
         words.push("corrosive");
     }
     if words.is_empty() {
@@ -109,7 +110,7 @@ fn nature(fluid: &Fluid) -> String {
     }
 }
 
-fn matches(fluid: &Fluid, wanted: &str) -> bool {
+pub(super) fn matches(fluid: &Entry, wanted: &str) -> bool {
     if wanted.is_empty() {
         return true;
     }
@@ -119,5 +120,5 @@ fn matches(fluid: &Fluid, wanted: &str) -> bool {
         || hit(fluid.cas())
         || hit(fluid.formula())
         || fluid.refrigerant().is_some_and(hit)
-        || fluid.also().iter().any(|name| hit(name))
+        || fluid.also().any(hit)
 }

@@ -7,12 +7,13 @@ mod conditions;
 mod design;
 mod findings;
 mod fluid;
+mod fluids;
 mod meaning;
 mod menu;
 mod section;
 mod status;
 
-pub use behaviour::{Behaviour, behaviour_ui};
+pub use behaviour::{Behaviour, Wish, behaviour_ui};
 pub use design::{DesignPanel, design_ui, editing_text_id};
 pub use meaning::meaning_ui;
 pub use menu::menu_ui;

@@ -87,6 +87,9 @@ pub(super) fn fluid(error: &FluidError, units: &Units) -> String {
                 pressure(*high, units, 3)
             )
         }
+        FluidError::NoCompressedLiquid { fluid, .. } => {
+            format!("liquid-full {fluid}: its pressure is not known")
+        }
         FluidError::NotConverged { .. } | FluidError::NoEnergy { .. } => error.to_string(),
     }
 }
