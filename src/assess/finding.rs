@@ -165,6 +165,8 @@ pub enum FindingKind {
         source: String,
     },
     Corrosive {
+        /// Water makes it worse.
+        keep_dry: bool,
         source: String,
     },
     Asphyxiant {

@@ -17,6 +17,7 @@ import sys
 from mpmath import findroot, mp, mpf
 
 import correlated
+import metals
 import phase_lines
 import viscosity
 from helmholtz import Equation, load_equations
@@ -334,10 +335,11 @@ def main(data):
             model = block("model: Helmholtz((", equation_lines(record, papers, fluid.get("uncertainty")), ")),")
             borders = surface_tension(record, tension_papers) + transport_and_lines(fluid, cas, record, papers)
         else:
-            coefficients = correlated.record(data / "correlation-coefficients.json", fluid["data"])
+            forms = metals if fluid["data"] in metals.ELEMENTS else correlated
+            coefficients = forms.record(data / "correlation-coefficients.json", fluid["data"])
             cas, molar_mass = coefficients["CAS"], float(f"{coefficients['MW']['value']}e-3")
-            model = block("model: Correlated((", correlated.model_lines(coefficients, number, numbers, text), ")),")
-            borders = correlated.surface_tension_lines(coefficients, number, numbers, text)
+            model = block("model: Correlated((", forms.model_lines(coefficients, number, numbers, text), ")),")
+            borders = forms.surface_tension_lines(coefficients, number, numbers, text)
             borders += transport_and_lines(fluid, cas, None, papers, coefficients["Tc"]["value"])
         (ASSETS / f"{identity}.ron").write_text(
             fluid_file(identity, fluid, cas, molar_mass, model, borders), encoding="utf-8"
