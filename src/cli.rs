@@ -10,7 +10,7 @@ use clap::{Parser, Subcommand};
 
 use crate::assess::{Library, Verdict, assess};
 use crate::design::Design;
-use crate::fluid::{Catalog, Fluid, FluidError, Regime, UnknownFluid};
+use crate::fluid::{Catalog, Fluid, FluidError, UnknownFluid};
 use crate::sheet::{Head, render};
 use crate::store::{self, Shelf, StoreError};
 use crate::units::{
@@ -298,8 +298,8 @@ fn isochore(fluid: &Fluid, density: &str, at: &str) -> Result<String, CliError> 
 fn isochore_row(fluid: &Fluid, density: Density, t: Temperature) -> Result<[String; 6], CliError> {
     let state = fluid.state(density, t)?;
     let cell = |value: Option<f64>| value.map_or_else(String::new, digits);
-    // A frozen fluid's pressure is only bounded: the cell stays empty.
-    let pressure = (state.regime != Regime::Frozen).then(|| state.pressure.pascal());
+    // A pressure that is only bounded is not known: the cell stays empty.
+    let pressure = (!state.is_bound).then(|| state.pressure.pascal());
     Ok([
         digits(t.kelvin()),
         digits(density.kilogram_per_cubic_metre()),

@@ -5,7 +5,7 @@ use super::window::Requirement;
 use crate::chamber::ChamberFault;
 use crate::conditions::ConditionFault;
 use crate::design::Change;
-use crate::fluid::StabilityKind;
+use crate::fluid::{FrozenPressure, StabilityKind};
 use crate::units::{Energy, Mass, Pressure, Temperature, TemperatureDifference};
 
 /// How much a finding weighs; worst first.
@@ -91,6 +91,7 @@ pub enum FindingKind {
     FrozenOnBench {
         freezing: Temperature,
         bench: Temperature,
+        pressure: Option<FrozenPressure>,
     },
     /// Under outside pressure a wall can collapse; that is not computed here.
     CollapseNotJudged {
@@ -113,10 +114,12 @@ pub enum FindingKind {
     Freezes {
         freezing: Temperature,
         coldest: Temperature,
+        pressure: Option<FrozenPressure>,
     },
     FrozenInWork {
         freezing: Temperature,
         working_low: Temperature,
+        pressure: Option<FrozenPressure>,
     },
     FrozenVolume {
         greatest: Mass,

@@ -223,6 +223,7 @@ fn side_of(unit: &SealedUnit, side: DomeSide) -> Figure<Option<Temperature>> {
                 Err(
                     FluidError::TooDense { .. }
                     | FluidError::PressureTooHigh { .. }
+                    | FluidError::Solid { .. }
                     | FluidError::NoCompressedLiquid { .. },
                 ),
                 side,

@@ -227,7 +227,12 @@ impl<'a> Yardstick<'a> {
                 (Ok((pressure, _)), Some(limit)) => {
                     pressure.pascal() * (1.0 + fluid.pressure_uncertainty()) > limit.pascal()
                 }
-                (Err(Missing::Fluid(FluidError::PressureTooHigh { .. })), Some(_)) => true,
+                (
+                    Err(Missing::Fluid(
+                        FluidError::PressureTooHigh { .. } | FluidError::Solid { .. },
+                    )),
+                    Some(_),
+                ) => true,
                 _ => false,
             };
         object(
@@ -248,7 +253,7 @@ impl<'a> Yardstick<'a> {
                 && ranked.dry_out.is_some_and(|t| t < conditions.working_high),
             Objection::Dry,
         );
-        let outside = |missing: &Missing| matches!(missing, Missing::Fluid(error) if !matches!(error, FluidError::Frozen { .. } | FluidError::PressureTooHigh { .. }));
+        let outside = |missing: &Missing| matches!(missing, Missing::Fluid(error) if !matches!(error, FluidError::Frozen { .. } | FluidError::PressureTooHigh { .. } | FluidError::Solid { .. }));
         object(
             [&ranked.at_hottest, &ranked.at_coldest]
                 .into_iter()

@@ -44,6 +44,16 @@ pub enum FluidError {
     },
     #[error("the pressure would be above {} Pa, where the model of {fluid} ends", .high.pascal())]
     PressureTooHigh { fluid: String, high: Pressure },
+    #[error(
+        "{fluid} is solid at {} K above {} Pa, its melting pressure",
+        .temperature.kelvin(), .melting.pascal()
+    )]
+    Solid {
+        fluid: String,
+        temperature: Temperature,
+        /// At this temperature.
+        melting: Pressure,
+    },
     #[error("the saturation of {fluid} was not found at {} K", .temperature.kelvin())]
     NotConverged {
         fluid: String,

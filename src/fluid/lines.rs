@@ -111,15 +111,18 @@ enum SublimationForm {
 pub enum FrozenPressure {
     /// By the sublimation equation.
     Known(Pressure),
-    /// Not above this one: the sublimation pressure where the equation starts, or the triple
-    /// point's.
-    AtMost(Pressure),
+    /// Colder than the sublimation equation reaches: below its lowest pressure.
+    BelowEquation(Pressure),
+    /// No sublimation equation: at most the pressure where the liquid freezes.
+    AtMostTriplePoint(Pressure),
 }
 
 impl FrozenPressure {
     pub fn highest(self) -> Pressure {
         match self {
-            Self::Known(pressure) | Self::AtMost(pressure) => pressure,
+            Self::Known(pressure)
+            | Self::BelowEquation(pressure)
+            | Self::AtMostTriplePoint(pressure) => pressure,
         }
     }
 }
@@ -242,10 +245,10 @@ impl Fluid {
             .filter(|line| t < line.temperature_range_k.0)
             .and_then(|line| line.at(line.temperature_range_k.0))
             .and_then(pascal)
-            .map(FrozenPressure::AtMost);
+            .map(FrozenPressure::BelowEquation);
         Ok(known.or(below).unwrap_or_else(|| {
             let triple = Pressure::from_pascal(triple).expect("a vapour pressure is finite");
-            FrozenPressure::AtMost(triple)
+            FrozenPressure::AtMostTriplePoint(triple)
         }))
     }
 }

@@ -27,6 +27,7 @@ pub use catalog::{Catalog, NameTaken, UnknownFluid};
 pub use curve::{CurvePoint, SaturationCurve};
 pub use entry::Entry;
 pub use error::FluidError;
+pub use lines::FrozenPressure;
 pub use model::{Critical, Model, SaturationPoint};
 pub use own::{OwnFile, read_own};
 pub use safety::{Safety, Stability, StabilityKind};

@@ -1,10 +1,14 @@
 //! The state at a density and a temperature: regime, pressure, how much is liquid.
 
 use super::correlated::GAS_CONSTANT;
+use super::lines::FrozenPressure;
 use super::model::{Model, PhaseIsotherm};
 use super::{Fluid, FluidError, clamped};
 use crate::solve::{rising_root, roots_between};
 use crate::units::{Density, Pressure, Temperature};
+
+/// A density found for the melting pressure gives it back with a rounding.
+const MELTING_SLACK: f64 = 1e-9;
 
 /// What the inside of a sealed unit looks like.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Hash)]
@@ -20,8 +24,11 @@ pub enum Regime {
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct State {
     pub regime: Regime,
-    /// Absolute. For a frozen fluid the vapour pressure is not above this.
+    /// Absolute.
     pub pressure: Pressure,
+    /// The pressure is not known, only that it is not above this: a frozen fluid without a
+    /// sublimation equation, or too little of it for any solid.
+    pub is_bound: bool,
     /// Volume of liquid over the whole volume; none where the phases are not told apart.
     pub liquid_share: Option<f64>,
     /// Mass of vapour over the whole mass.
@@ -55,7 +62,7 @@ impl Fluid {
         let rho = density.kilogram_per_cubic_metre();
         let t = temperature.kelvin();
         if temperature < self.freezing_point() {
-            return self.frozen_state();
+            return self.frozen_state(density, temperature);
         }
         self.not_outside(temperature)?;
         let critical = self.critical();
@@ -88,6 +95,7 @@ impl Fluid {
                 regime: Regime::TwoPhase,
                 pressure: Pressure::from_pascal(at.pressure_pa)
                     .expect("a vapour pressure is finite"),
+                is_bound: false,
                 liquid_share: Some((rho - v) / (l - v)),
                 quality: Some((1.0 / rho - 1.0 / l) / (1.0 / v - 1.0 / l)),
             })
@@ -154,7 +162,8 @@ impl Fluid {
     ///
     /// Below the critical temperature the pressure is constant through the dome:
     /// a pressure above saturation answers with a compressed liquid, one below
-    /// with a superheated vapour.
+    /// with a superheated vapour. Above the melting pressure it answers with the densest
+    /// liquid there is, that at the melting pressure.
     ///
     /// # Errors
     /// [`FluidError`] outside the model's temperatures, frozen, or of an unknown compressed liquid.
@@ -179,7 +188,9 @@ impl Fluid {
         self.not_frozen(temperature)?;
         self.not_outside(temperature)?;
         let t = temperature.kelvin();
-        let p = pressure.pascal();
+        let melting = self.melting_pressure(temperature);
+        let most = melting.map_or(f64::INFINITY, Pressure::pascal);
+        let p = pressure.pascal().min(most);
         let critical = self.critical();
         let (_, most) = self.model.limits(self.molar_mass);
         let (from, to, liquid) = if t < critical.temperature_k {
@@ -287,15 +298,22 @@ impl Fluid {
             })
     }
 
-    fn frozen_state(&self) -> Result<State, FluidError> {
-        let (low, _) = self.saturation_range();
-        let pressure = self
-            .curve()?
-            .at(self.freezing_point().max(low).kelvin())
-            .pressure_pa;
+    fn frozen_state(
+        &self,
+        density: Density,
+        temperature: Temperature,
+    ) -> Result<State, FluidError> {
+        let solid = self.frozen_pressure(temperature)?;
+        // As a gas the whole charge would stand no higher than an ideal one.
+        let gas = density.kilogram_per_cubic_metre() * GAS_CONSTANT * temperature.kelvin()
+            / self.molar_mass;
+        let gas = Pressure::from_pascal(gas)
+            .ok()
+            .filter(|gas| *gas < solid.highest());
         Ok(State {
             regime: Regime::Frozen,
-            pressure: Pressure::from_pascal(pressure).expect("a vapour pressure is finite"),
+            pressure: gas.unwrap_or(solid.highest()),
+            is_bound: gas.is_some() || !matches!(solid, FrozenPressure::Known(_)),
             liquid_share: None,
             quality: None,
         })
@@ -339,9 +357,21 @@ impl Fluid {
             Regime::AllVapour => Some(1.0),
             _ => None,
         };
+        let dense = matches!(regime, Regime::LiquidFull | Regime::Supercritical);
+        if dense
+            && let Some(melting) = self.melting_pressure(temperature)
+            && pressure.pascal() > melting.pascal() * (1.0 + MELTING_SLACK)
+        {
+            return Err(FluidError::Solid {
+                fluid: fluid(),
+                temperature,
+                melting,
+            });
+        }
         Ok(State {
             regime,
             pressure,
+            is_bound: false,
             liquid_share,
             quality,
         })

@@ -127,6 +127,8 @@ impl SealedUnit {
                 Ok(state) => state.pressure,
                 // Beyond the model it is at least the model's greatest pressure.
                 Err(FluidError::PressureTooHigh { high, .. }) => high,
+                // The solid may stand at more.
+                Err(FluidError::Solid { melting, .. }) => melting,
                 // Not known, but a liquid that fills its vessel gains megapascals per kelvin:
                 // the limit counts as reached where the vessel is full.
                 Err(FluidError::NoCompressedLiquid { .. }) => return limit(at).and(Some(1e9)),

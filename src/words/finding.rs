@@ -5,7 +5,7 @@ use super::requirement;
 use crate::assess::{Finding, FindingKind};
 use crate::chamber::Chamber;
 use crate::design::Change;
-use crate::fluid::StabilityKind;
+use crate::fluid::{FrozenPressure, StabilityKind};
 use crate::units::{Units, careful_up, figures};
 
 /// What is said of a finding.
@@ -125,9 +125,14 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
                 units.show(*hottest)
             ),
         ),
-        FindingKind::FrozenOnBench { freezing, bench } => say(
+        FindingKind::FrozenOnBench { freezing, bench, pressure } => say(
             "Frozen on the bench",
-            format!("It freezes at {}; the bench is at {}.", units.show(*freezing), units.show(*bench)),
+            format!(
+                "It freezes at {}; the bench is at {}.{}",
+                units.show(*freezing),
+                units.show(*bench),
+                solid_says(*pressure, units)
+            ),
         )
         .try_this("Dispense it warm, and weigh it: volumes and fill ratios on the bench do not exist."),
         FindingKind::CollapseNotJudged { inside, outside } => say(
@@ -164,14 +169,24 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
                 units.show(*hottest)
             ),
         ),
-        FindingKind::Freezes { freezing, coldest } => say(
+        FindingKind::Freezes { freezing, coldest, pressure } => say(
             "Freezes in the cold",
-            format!("It freezes at {}; the coldest is {}.", units.show(*freezing), units.show(*coldest)),
+            format!(
+                "It freezes at {}; the coldest is {}.{}",
+                units.show(*freezing),
+                units.show(*coldest),
+                solid_says(*pressure, units)
+            ),
         )
         .try_this("Check that the frozen fluid harms neither wick nor wall, and that the unit starts from frozen."),
-        FindingKind::FrozenInWork { freezing, working_low } => say(
+        FindingKind::FrozenInWork { freezing, working_low, pressure } => say(
             "Frozen in the working range",
-            format!("It freezes at {}; the working range starts at {}.", units.show(*freezing), units.show(*working_low)),
+            format!(
+                "It freezes at {}; the working range starts at {}.{}",
+                units.show(*freezing),
+                units.show(*working_low),
+                solid_says(*pressure, units)
+            ),
         )
         .try_this("Another fluid."),
         FindingKind::FrozenVolume { greatest, allowed } => say(
@@ -301,6 +316,24 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
         FindingKind::FromMemory { what } => {
             say("To be confirmed", format!("From memory of a named document: {what}."))
         }
+    }
+}
+
+/// What is known of the vapour pressure over the solid, as a sentence after others.
+fn solid_says(pressure: Option<FrozenPressure>, units: &Units) -> String {
+    let show = |pressure: FrozenPressure| units.show_to(pressure.highest(), 3);
+    match pressure {
+        None => String::new(),
+        Some(known @ FrozenPressure::Known(_)) => {
+            format!(" The solid then has a vapour pressure of {} abs.", show(known))
+        }
+        Some(below @ FrozenPressure::BelowEquation(_)) => {
+            format!(" The solid then has a vapour pressure below {} abs.", show(below))
+        }
+        Some(most @ FrozenPressure::AtMostTriplePoint(_)) => format!(
+            " The vapour pressure of the solid is not known: at most {} abs, that at the freezing point.",
+            show(most)
+        ),
     }
 }
 

@@ -91,6 +91,16 @@ fn fluid_error(error: &FluidError, units: &Units) -> String {
             "The pressure would be above {} abs, where the model of {fluid} ends: the unit is liquid-full.",
             units.show(*high)
         ),
+        FluidError::Solid {
+            fluid,
+            temperature,
+            melting,
+        } => format!(
+            "{} turns solid at {} when pressed above {} abs, its melting pressure: the unit would be full of solid.",
+            upper(fluid),
+            units.show(*temperature),
+            units.show(*melting)
+        ),
         other => format!("{}.", upper(&other.to_string())),
     }
 }

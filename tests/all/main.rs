@@ -13,6 +13,7 @@ mod layers;
 mod metals;
 mod own_fluid_refusals;
 mod own_fluids;
+mod phase_lines;
 mod presets;
 mod printed_tables;
 mod random_states;
@@ -21,5 +22,6 @@ mod refusals;
 mod second_source;
 mod tables;
 mod transport;
+mod viscosity;
 #[cfg(feature = "window")]
 mod window;

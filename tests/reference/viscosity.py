@@ -339,9 +339,10 @@ def residual_entropy(form, record):
 def conformal(form):
     like = choice.REFERENCE_FLUIDS[form["reference_fluid"]]
     psi = form["psi"]
+    powers = psi["t"][:len(psi["a"])]  # ethylbenzene carries one exponent more than coefficients
     return (
         f"ConformalFluid((like: {text(like)}, molecule: {molecule(form)}, reducing_density_mol_per_m3: {number(psi['rhomolar_reducing'])}, "
-        f"stretch: {tuples(psi['a'], psi['t'][: len(psi['a'])])}))"
+        f"stretch: {tuples(psi['a'], powers)}))"
     )
 
 

@@ -154,12 +154,13 @@ impl Judge<'_> {
     pub(super) fn freezing(&mut self) {
         let conditions = &self.design.conditions;
         let freezing = self.a.fluid.freezing_point();
+        let pressure = |t| self.a.fluid.frozen_pressure(t).ok();
         if conditions.bench < freezing {
             let bench = conditions.bench;
             self.add(
                 Severity::Warning,
                 Section::Conditions,
-                FindingKind::FrozenOnBench { freezing, bench },
+                FindingKind::FrozenOnBench { freezing, bench, pressure: pressure(bench) },
             );
         }
         if conditions.coldest >= freezing {
@@ -169,12 +170,14 @@ impl Judge<'_> {
             let kind = FindingKind::FrozenInWork {
                 freezing,
                 working_low: conditions.working_low,
+                pressure: pressure(conditions.working_low),
             };
             self.add(Severity::Error, Section::Conditions, kind);
         } else {
             let kind = FindingKind::Freezes {
                 freezing,
                 coldest: conditions.coldest,
+                pressure: pressure(conditions.coldest),
             };
             self.add(Severity::Warning, Section::Conditions, kind);
         }

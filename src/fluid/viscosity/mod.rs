@@ -97,6 +97,13 @@ impl Here<'_> {
     }
 }
 
+impl Reference {
+    /// Scaled from another fluid, whose state is searched for.
+    pub fn is_by_corresponding_states(&self) -> bool {
+        matches!(self.form, Form::ConformalFluid(_))
+    }
+}
+
 impl Form {
     fn at(&self, here: Here) -> Option<f64> {
         Some(match self {

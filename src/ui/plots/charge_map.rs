@@ -244,7 +244,7 @@ fn pointed(
         Ok(state) => format!(
             "{} · {}",
             words::regime(state.regime),
-            say::pressure(state.pressure, units, 3)
+            say::state_pressure(&state, units, 3)
         ),
         Err(error) => say::fluid(&error, units),
     };

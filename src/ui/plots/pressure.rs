@@ -162,7 +162,7 @@ fn plot_ui(
         && let Ok(corners) = &a.corners
     {
         let text = match corners.nominal.state(at) {
-            Ok(state) => say::pressure(state.pressure, units, 4),
+            Ok(state) => say::state_pressure(&state, units, 4),
             Err(error) => say::fluid(&error, units),
         };
         canvas.read_out(

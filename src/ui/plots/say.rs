@@ -3,7 +3,7 @@
 use crate::assess::Bound;
 use crate::chamber::{StrengthGap, StrengthUnknown};
 use crate::conditions::Conditions;
-use crate::fluid::FluidError;
+use crate::fluid::{FluidError, State};
 use crate::units::{Kind, NBSP, Pressure, Quantity, Temperature, Units};
 use crate::words;
 
@@ -22,6 +22,16 @@ pub(super) fn temperature(at: Temperature, units: &Units) -> String {
 /// A pressure that says it is absolute.
 pub(super) fn pressure(pressure: Pressure, units: &Units, digits: usize) -> String {
     format!("{}{NBSP}abs", units.show_to(pressure, digits))
+}
+
+/// The pressure of a state, or that it is only bounded.
+pub(super) fn state_pressure(state: &State, units: &Units, digits: usize) -> String {
+    let shown = pressure(state.pressure, units, digits);
+    if state.is_bound {
+        format!("at most {shown}")
+    } else {
+        shown
+    }
 }
 
 /// A share as a percentage.
@@ -86,6 +96,9 @@ pub(super) fn fluid(error: &FluidError, units: &Units) -> String {
                 "above {}, where the model of {fluid} ends",
                 pressure(*high, units, 3)
             )
+        }
+        FluidError::Solid { fluid, melting, .. } => {
+            format!("{fluid} is solid above {}", pressure(*melting, units, 3))
         }
         FluidError::NoCompressedLiquid { fluid, .. } => {
             format!("liquid-full {fluid}: its pressure is not known")

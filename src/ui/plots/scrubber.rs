@@ -32,7 +32,7 @@ pub(super) fn read_out(a: &Assessment, units: &Units, at: Temperature) -> String
     let mut text = format!("at {}: ", units.show(at));
     match a.corners.as_ref().map(|corners| corners.nominal.state(at)) {
         Ok(Ok(state)) => {
-            text += &say::pressure(state.pressure, units, 4);
+            text += &say::state_pressure(&state, units, 4);
             if let Some(share) = state.liquid_share {
                 text += &format!(" · {} liquid", say::percent(share, units, 3));
             }
