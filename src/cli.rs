@@ -269,8 +269,8 @@ fn saturation(fluid: &Fluid, at: &str) -> Result<String, CliError> {
             Some(state.latent_heat_j_per_kg),
             Some(state.slope_pa_per_k),
             fluid.surface_tension(t),
-            None,
-            None,
+            fluid.liquid_viscosity(t),
+            fluid.vapour_viscosity(t),
         ];
         push_row(
             &mut text,

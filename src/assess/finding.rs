@@ -162,6 +162,8 @@ pub enum FindingKind {
         source: String,
     },
     Corrosive {
+        /// Water makes it worse.
+        keep_dry: bool,
         source: String,
     },
     Asphyxiant {

@@ -5,8 +5,10 @@ use serde::Deserialize;
 use super::Fluid;
 use super::correlated::{Correlated, CorrelatedError};
 use super::helmholtz::{Equation, EquationData, EquationError};
+use super::lines::Lines;
 use super::model::Model;
 use super::safety::Safety;
+use super::viscosity::Viscosity;
 use crate::source::{Source, Sourced};
 use crate::text::{self, TextError};
 
@@ -31,6 +33,10 @@ struct FluidFile {
     model: ModelFile,
     #[serde(default)]
     surface_tension: Option<SurfaceTension>,
+    #[serde(default)]
+    viscosity: Viscosity,
+    #[serde(default)]
+    lines: Lines,
     safety: Safety,
 }
 
@@ -113,6 +119,8 @@ pub fn parse(text: &str) -> Result<Fluid, FluidFileError> {
         melting_point: file.melting_point_k,
         solid_density: file.solid_density_kg_per_m3,
         surface_tension: file.surface_tension,
+        viscosity: file.viscosity,
+        lines: file.lines,
         safety: file.safety,
         model,
         own_file: None,

@@ -11,12 +11,14 @@ mod curve;
 mod entry;
 mod error;
 pub mod helmholtz;
+pub mod lines;
 mod model;
 mod own;
 mod rules;
 mod safety;
 mod sound;
 mod state;
+pub mod viscosity;
 
 use std::sync::OnceLock;
 
@@ -46,6 +48,8 @@ pub struct Fluid {
     melting_point: Sourced<f64>,
     solid_density: Option<Sourced<f64>>,
     surface_tension: Option<SurfaceTension>,
+    viscosity: viscosity::Viscosity,
+    lines: lines::Lines,
     safety: Safety,
     model: Model,
     own_file: Option<OwnFile>,

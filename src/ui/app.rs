@@ -32,6 +32,8 @@ pub struct App {
     pub(super) orders: Vec<Command>,
     /// The user has agreed to close; the next close request goes through.
     pub(super) closing: bool,
+    /// The catalogue is read, or being read, in the background.
+    reading: bool,
     title: String,
 }
 
@@ -49,6 +51,7 @@ impl App {
             notice: None,
             orders: Vec::new(),
             closing: false,
+            reading: false,
             title: String::new(),
             folder,
         };
@@ -179,6 +182,19 @@ impl App {
         }
     }
 
+    /// Once the first frame is drawn, every fluid is read in the background, so that the
+    /// table of fluids does not wait.
+    fn read_catalogue(&mut self, ctx: &egui::Context) {
+        if std::mem::replace(&mut self.reading, true) {
+            return;
+        }
+        let (fluids, ctx) = (self.desk.library().fluids.clone(), ctx.clone());
+        std::thread::spawn(move || {
+            fluids.read_all();
+            ctx.request_repaint();
+        });
+    }
+
     /// An undo point where a gesture ends: no pointer or key is down and no text is
     /// half typed.
     fn end_gesture(&mut self, ctx: &egui::Context) {
@@ -263,6 +279,7 @@ impl App {
 impl eframe::App for App {
     fn ui(&mut self, ui: &mut Ui, _frame: &mut eframe::Frame) {
         self.frame_ui(ui);
+        self.read_catalogue(ui.ctx());
     }
 
     fn on_exit(&mut self, _gl: Option<&eframe::glow::Context>) {

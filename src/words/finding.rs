@@ -240,9 +240,13 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
                 .try_this("Ventilate; leave the room if a unit breaks.")
                 .source(source)
         }
-        FindingKind::Corrosive { source } => {
+        FindingKind::Corrosive { keep_dry, source } => {
             say("Burns skin and eyes", "Liquid and vapour are corrosive.".to_owned())
-                .try_this("Goggles, gloves, and water at hand.")
+                .try_this(if *keep_dry {
+                    "Goggles, face shield, dry gloves; no water near it. Take it off the skin dry, then rinse long."
+                } else {
+                    "Goggles, gloves, and water at hand."
+                })
                 .source(source)
         }
         FindingKind::Asphyxiant { oxygen } => say(

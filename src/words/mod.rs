@@ -118,6 +118,9 @@ pub const fn basis(basis: AllowableBasis) -> &'static str {
 
 /// What a GHS hazard statement code says, shortened.
 pub fn statement(code: &str) -> &'static str {
+    if code == "EUH014" {
+        return "reacts violently with water";
+    }
     match code.get(..4).unwrap_or(code) {
         "H220" => "extremely flammable gas",
         "H221" => "flammable gas",
@@ -126,6 +129,8 @@ pub fn statement(code: &str) -> &'static str {
         "H226" => "flammable liquid and vapour",
         "H230" => "may react explosively even without air",
         "H231" => "may react explosively even without air, under pressure or hot",
+        "H250" => "catches fire by itself in air",
+        "H260" => "water sets free gases that may ignite by themselves",
         "H270" => "may cause or intensify fire; oxidiser",
         "H280" => "gas under pressure; may explode if heated",
         "H281" => "refrigerated gas; cold burns",
@@ -133,6 +138,7 @@ pub fn statement(code: &str) -> &'static str {
         "H302" => "harmful if swallowed",
         "H304" => "may be fatal if swallowed and enters airways",
         "H311" => "toxic in contact with skin",
+        "H312" => "harmful in contact with skin",
         "H314" => "severe skin burns and eye damage",
         "H315" => "skin irritation",
         "H318" => "serious eye damage",

@@ -43,7 +43,7 @@ pub fn equation(fluid: &Fluid) -> Option<&Equation> {
 
 /// `steps` temperatures from `low` to `high`, both included, K.
 pub fn grid(low: f64, high: f64, steps: usize) -> impl Iterator<Item = f64> {
-    (0..steps).map(move |i| low + (high - low) * i as f64 / (steps - 1) as f64)
+    (0..steps).map(move |i| (low + (high - low) * i as f64 / (steps - 1) as f64).min(high))
 }
 
 pub fn assessed(design: &Design) -> Assessment {

@@ -9,6 +9,7 @@ mod facts;
 mod files;
 mod given;
 mod layers;
+mod metals;
 mod own_fluid_refusals;
 mod own_fluids;
 mod presets;
@@ -16,6 +17,7 @@ mod printed_tables;
 mod random_states;
 mod reference_equations;
 mod refusals;
+mod second_source;
 mod tables;
 mod transport;
 #[cfg(feature = "window")]

@@ -134,22 +134,26 @@ FLUIDS = {
     # Chlorobenzene. VDI and DIPPR 101 within 1.1 %; calorimetry 3 % below both at 257 K.
     "108-90-7": Choice(lowest=255.0, liquid_from=228.0, second_slope=("DIPPR 101", 260.0, 600.0)),
     # Naphthalene. Five rows within 1.5 % in their own ranges, from the melting point.
-    "91-20-3": Choice(lowest=353.4, liquid_from=353.4, second_slope=("DIPPR 101", 353.4, 711.0)),
+    "91-20-3": Choice(lowest=353.4, liquid_from=353.4, joint=900.0, second_slope=("DIPPR 101", 353.4, 711.0)),
     # Biphenyl. VDI and McGarry are one curve and take 789 K for the critical temperature; the CRC Handbook and IUPAC say
-    # 773 K, so the range ends at 0.95 of that. Below 395 K DIPPR 101 and Antoine fall away by up to 10 %.
+    # 773 K, so the range ends at 0.95 of that. At the melting point DIPPR 101 is 10 % below, above 445 K within 1.3 %.
     "92-52-4": Choice(
-        lowest=395.0, liquid_from=342.6, highest=734.0, tension="Jasper", second_slope=("DIPPR 101", 450.0, 734.0)
+        lowest=342.6, liquid_from=342.6, highest=734.0, tension="Jasper", joint=2000.0, second_slope=("DIPPR 101", 450.0, 734.0)
     ),
     # Diphenyl ether. Not in the VDI tables. McGarry and Landolt are one curve from 477 to 544 K and, beyond their ranges,
-    # within 1 % from 407 to 640 K; DIPPR 101 boils half a kelvin late and climbs to 5 % above them at 465 K, 10 % at 435 K.
+    # within 1 % from 407 to 640 K. DIPPR 101 boils half a kelvin late and climbs to twice McGarry at the melting point, with
+    # a latent heat of 58.6 kJ/mol at 25 degC; the compilation of Gharagheizi (as carried by chemicals 1.5.2) says 66.1, and
+    # McGarry's slope 65.6. So McGarry is followed to the melting point, and 10 % is stated for what 1 % of the latent heat
+    # makes there of the vapour pressure.
     "101-84-8": Choice(
-        lowest=465.0, liquid_from=300.2, pressure=MCGARRY_PRESSURE, density=PerryDensity(0.000503), tension="Jasper",
-        second_slope=("DIPPR 101", 500.0, 720.0), least_density_uncertainty=1.0,
+        lowest=301.0, liquid_from=300.2, pressure=MCGARRY_PRESSURE, density=PerryDensity(0.000503), tension="Jasper",
+        left_out={"DIPPR 101": "twice McGarry at the melting point, against the latent heat there"},
+        second_slope=("DIPPR 101", 500.0, 720.0), joint=3000.0, least_pressure_uncertainty=10.0, least_density_uncertainty=1.0,
     ),
     # Phenol. VDI, DIPPR 101 and Antoine agree within 1.5 %. McGarry climbs to 5 % above them at 630 K; Landolt's row, for
     # 315 to 351 K, is 15 % below them at 335 K and 29 % at 314 K.
     "108-95-2": Choice(
-        lowest=335.0, liquid_from=314.1, joint=10000.0, second_slope=("DIPPR 101", 340.0, 659.0),
+        lowest=314.1, liquid_from=314.1, joint=10000.0, second_slope=("DIPPR 101", 340.0, 659.0),
         left_out={"McGarry": "5 % above three other rows at 630 K", "Landolt": "15 % below three other rows at 335 K"},
         impossible_heats=("DIPPR 106",),
     ),
@@ -177,6 +181,12 @@ FLUIDS = {
             437.7, 0.05031, 1.232, 150.7, 393.93,
             "Mulero, A.; Cachadina, I. 2014, J. Phys. Chem. Ref. Data 43, 023104, doi 10.1063/1.4878755, as carried by chemicals 1.5.2",
         ),
+    ),
+    # Iodine. VDI and Antoine agree within 0.3 % in the latter's range. Above 650 K nothing is at hand to compare with. The
+    # surface tension of the VDI tables is 40 % above the measured values at the melting point: left out.
+    "7553-56-2": Choice(
+        lowest=386.8, liquid_from=386.8, highest=650.0, tension=None, joint=12000.0, second_slope=("Antoine", 393.0, 487.0),
+        least_pressure_uncertainty=2.0, least_density_uncertainty=1.0,
     ),
     # Titanium tetrachloride. Measured vapour pressures are at hand only from memory (Stull's table). At 298 K they give 1.65 kPa;
     # calorimetry from the boiling point (41.0 kJ/mol at 298 K from the enthalpies of formation, 36.2 kJ/mol at the boiling

@@ -17,6 +17,9 @@ import sys
 from mpmath import findroot, mp, mpf
 
 import correlated
+import metals
+import phase_lines
+import viscosity
 from helmholtz import Equation, load_equations
 
 HERE = pathlib.Path(__file__).resolve().parent
@@ -257,6 +260,21 @@ def surface_tension(record, papers):
     ]
 
 
+def transport_and_lines(facts, cas, record, papers, critical=None):
+    """The sections `viscosity` and `lines`; `record` is None for a correlated fluid, `critical` its critical temperature."""
+    name, melting = facts["data"], facts["melting_point_k"]["value"]
+    lowest, highest, paper = None, None, None
+    if record is not None:
+        state = record["EOS"][0]
+        lowest, highest, critical = lower_limit(state), state["T_max"], state["STATES"]["reducing"]["T"]
+        cited = papers[state["BibTeX_EOS"]]
+        paper = f"{cited['authors']} {cited['year']}, {cited['publication']}"
+    return [
+        *viscosity.viscosity_lines(name, cas, record, critical, melting, lowest, highest),
+        *phase_lines.phase_lines(name, cas, record, melting, paper),
+    ]
+
+
 # ---- one fluid ------------------------------------------------------------------------------------------------------
 
 
@@ -287,7 +305,7 @@ def safety_lines(facts):
     ], "),")
 
 
-def fluid_file(identity, facts, cas, molar_mass, model, tension):
+def fluid_file(identity, facts, cas, molar_mass, model, borders):
     also = "[" + ", ".join(text(name) for name in facts["also"]) + "]"
     body = [
         "format: 1,",
@@ -301,7 +319,7 @@ def fluid_file(identity, facts, cas, molar_mass, model, tension):
         f"melting_point_k: {sourced(facts['melting_point_k'])},",
         *optional("solid_density_kg_per_m3", facts.get("solid_density_kg_per_m3")),
         *model,
-        *tension,
+        *borders,
         *safety_lines(facts),
     ]
     first = "// Written by tests/reference/make_fluids.py; do not edit by hand."
@@ -326,14 +344,16 @@ def main(data):
             record = equations[fluid["data"]]
             cas, molar_mass = record["INFO"]["CAS"], record["EOS"][0]["molar_mass"]
             model = block("model: Helmholtz((", equation_lines(record, papers, fluid.get("uncertainty")), ")),")
-            tension = surface_tension(record, tension_papers)
+            borders = surface_tension(record, tension_papers) + transport_and_lines(fluid, cas, record, papers)
         else:
-            coefficients = correlated.record(data / "correlation-coefficients.json", fluid["data"])
+            forms = metals if fluid["data"] in metals.ELEMENTS else correlated
+            coefficients = forms.record(data / "correlation-coefficients.json", fluid["data"])
             cas, molar_mass = coefficients["CAS"], float(f"{coefficients['MW']['value']}e-3")
-            model = block("model: Correlated((", correlated.model_lines(coefficients, number, numbers, text), ")),")
-            tension = correlated.surface_tension_lines(coefficients, number, numbers, text)
+            model = block("model: Correlated((", forms.model_lines(coefficients, number, numbers, text), ")),")
+            borders = forms.surface_tension_lines(coefficients, number, numbers, text)
+            borders += transport_and_lines(fluid, cas, None, papers, coefficients["Tc"]["value"])
         (ASSETS / f"{identity}.ron").write_text(
-            fluid_file(identity, fluid, cas, molar_mass, model, tension), encoding="utf-8"
+            fluid_file(identity, fluid, cas, molar_mass, model, borders), encoding="utf-8"
         )
         print(f"assets/fluids/{identity}.ron")
 

@@ -3,7 +3,7 @@
 use super::Judge;
 use crate::assess::finding::{FindingKind, Section, Severity};
 use crate::chamber::MaterialKind;
-use crate::fluid::{FluidError, Model};
+use crate::fluid::{FluidError, Model, StabilityKind};
 use crate::hazard::{Compatibility, CompatibilityTable, EnergyError, PairVerdict};
 use crate::units::Temperature;
 
@@ -154,12 +154,14 @@ impl Judge<'_> {
             }
         }
         if safety.is_corrosive() {
-            let source = safety.statements.source.to_string();
-            self.add(
-                Severity::Warning,
-                Section::Fluid,
-                FindingKind::Corrosive { source },
-            );
+            let kind = FindingKind::Corrosive {
+                keep_dry: safety
+                    .stability
+                    .iter()
+                    .any(|s| s.kind == StabilityKind::WaterReactive),
+                source: safety.statements.source.to_string(),
+            };
+            self.add(Severity::Warning, Section::Fluid, kind);
         }
         if release.oxygen < LEAST_OXYGEN {
             let kind = FindingKind::Asphyxiant {

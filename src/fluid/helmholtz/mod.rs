@@ -156,6 +156,19 @@ impl Equation {
         }
     }
 
+    /// Scaled derivatives of the residual energy at (T, ρ).
+    pub fn residual_derivatives(&self, temperature_k: f64, density: f64) -> Derivatives {
+        let tau = self.data.reducing.temperature_k / temperature_k;
+        let delta = density / self.data.reducing.density_mol_per_m3;
+        self.residual.derivatives(tau, delta)
+    }
+
+    /// Entropy less that of the ideal gas at the same temperature and density, J/(mol K).
+    pub fn residual_entropy(&self, temperature_k: f64, density: f64) -> f64 {
+        let x = self.residual_derivatives(temperature_k, density);
+        self.data.gas_constant_j_per_mol_k * (x.t1 - x.a)
+    }
+
     /// Entropy from one density up to another of the same temperature, J/(mol K).
     fn entropy_step(&self, temperature_k: f64, from: f64, to: f64) -> f64 {
         let tau = self.data.reducing.temperature_k / temperature_k;

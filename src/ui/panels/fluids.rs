@@ -9,7 +9,7 @@ use eframe::egui::{
 };
 
 use crate::assess::{Assessment, Figure, Library, Ranked, rank};
-use crate::design::{Charge, ChargeAim, Design, FluidId};
+use crate::design::{Charge, ChargeAim, Design, Duty, FluidId};
 use crate::fluid::Regime;
 use crate::ui::theme::Palette;
 use crate::ui::widgets::is_typing;
@@ -46,17 +46,25 @@ enum Column {
 }
 
 impl Column {
-    const ALL: [Self; 9] = [
-        Self::Name,
-        Self::Hottest,
-        Self::Coldest,
-        Self::Slope,
-        Self::Merit,
-        Self::DryOut,
-        Self::LiquidFull,
-        Self::Charge,
-        Self::Objection,
-    ];
+    /// The columns of a duty: a wick lives on the merit, a bulb on the slope.
+    const fn all(duty: Duty) -> [Self; COLUMNS] {
+        let own = match duty {
+            Duty::HeatPipe | Duty::VapourChamber | Duty::Thermosyphon | Duty::PulsatingLoop => {
+                Self::Merit
+            }
+            Duty::SensingBulb | Duty::LiquidLift | Duty::PlainVessel => Self::Slope,
+        };
+        [
+            Self::Name,
+            Self::Hottest,
+            Self::Coldest,
+            own,
+            Self::DryOut,
+            Self::LiquidFull,
+            Self::Charge,
+            Self::Objection,
+        ]
+    }
 
     const fn title(self) -> &'static str {
         match self {
@@ -90,12 +98,12 @@ impl Column {
         }
     }
 
-    /// Share of the width that the name and the objection leave.
+    /// At the narrowest; all grow together.
     const fn width(self) -> f32 {
         match self {
-            Self::Name => 148.0,
-            Self::Objection => 150.0,
-            _ => 62.0,
+            Self::Name => 140.0,
+            Self::Objection => 144.0,
+            _ => 60.0,
         }
     }
 
@@ -192,7 +200,30 @@ impl Scale {
     }
 }
 
+/// The columns shown, each with the unit of all its figures.
+struct Columns([(Column, Scale); COLUMNS]);
+
+impl Columns {
+    fn new(duty: Duty, present: Option<&Ranked>, units: &Units) -> Self {
+        Self(Column::all(duty).map(|column| (column, Scale::of(column, present, units))))
+    }
+
+    /// Left ends of the columns and the right end of the last.
+    fn lefts(&self, available: f32) -> Vec<f32> {
+        let natural: f32 = self.0.iter().map(|(column, _)| column.width()).sum();
+        let stretch = (available / natural).max(1.0);
+        let mut x = 0.0;
+        let mut lefts = vec![x];
+        for (column, _) in &self.0 {
+            x += column.width() * stretch;
+            lefts.push(x);
+        }
+        lefts
+    }
+}
+
 const ROW: f32 = 21.0;
+const COLUMNS: usize = 8;
 
 /// Shows the table; a [`Trial`] is the fluid that the user wants in the design.
 pub fn fluid_table_ui(
@@ -221,7 +252,7 @@ pub fn fluid_table_ui(
             None => (0, None),
         };
         if let Some(rows) = copied {
-            ui.ctx().copy_text(as_text(rows, units));
+            ui.ctx().copy_text(as_text(rows, design.duty, units));
         }
         let count = if read < known {
             format!("{read} of {known} fluids read so far")
@@ -242,7 +273,7 @@ pub fn fluid_table_ui(
     let present = rows
         .iter()
         .find(|row| row.fluid.id() == design.fluid.as_str());
-    let scales = Column::ALL.map(|column| Scale::of(column, present, units));
+    let columns = Columns::new(design.duty, present, units);
     let mut sort = table.sort;
     ScrollArea::horizontal()
         .id_salt("fluid table")
@@ -256,7 +287,7 @@ pub fn fluid_table_ui(
                     ui.spacing_mut().item_spacing.y = 0.0;
                     for row in &shown[range] {
                         let chosen = row.fluid.id() == design.fluid.as_str();
-                        if row_ui(ui, row, chosen, &lefts, &scales, units).clicked() && !chosen {
+                        if row_ui(ui, row, chosen, &lefts, &columns, units).clicked() && !chosen {
                             trial = trial_of(design, row);
                         }
                     }
@@ -329,31 +360,24 @@ fn trial_of(design: &Design, row: &Ranked) -> Option<Trial> {
         let grams = crate::units::careful_down(same_fill.kilogram(), 4);
         *mass = Mass::from_kilogram(grams).unwrap_or(*same_fill);
     }
-    Some((FluidId::new(row.fluid.id())?, charge))
+    Some((FluidId::from(&*row.fluid), charge))
 }
 
-/// Left ends of the columns and the right end of the last.
-fn lefts(available: f32) -> Vec<f32> {
-    let natural: f32 = Column::ALL.iter().map(|column| column.width()).sum();
-    let stretch = (available / natural).max(1.0);
-    let mut x = 0.0;
-    let mut lefts = vec![x];
-    for column in Column::ALL {
-        x += column.width() * stretch;
-        lefts.push(x);
-    }
-    lefts
-}
-
-fn header_ui(ui: &mut Ui, lefts: &[f32], scales: &[Scale; 9], sort: &mut Option<(Column, bool)>) {
+fn header_ui(
+    ui: &mut Ui,
+    lefts: &[f32],
+    columns: &Columns,
+    sort: &mut Option<(Column, bool)>,
+) {
     let palette = Palette::in_use(ui);
     let width = lefts[lefts.len() - 1];
     let (rect, _) = ui.allocate_exact_size(vec2(width, 34.0), Sense::hover());
     let font = TextStyle::Small.resolve(ui.style());
-    for (i, column) in Column::ALL.into_iter().enumerate() {
+    for (i, (column, scale)) in columns.0.iter().enumerate() {
+        let column = *column;
         let cell = cell(rect, lefts, i);
         let response = ui
-            .interact(cell, ui.id().with(("column", i)), Sense::click())
+            .interact(cell, ui.scope_id().with(("column", i)), Sense::click())
             .on_hover_text(column.tooltip());
         let title = column.title();
         response
@@ -375,7 +399,7 @@ fn header_ui(ui: &mut Ui, lefts: &[f32], scales: &[Scale; 9], sort: &mut Option<
         painter.text(
             pos2(x, cell.bottom() - 3.0),
             align.1,
-            &scales[i].symbol,
+            &scale.symbol,
             font.clone(),
             palette.text_faint,
         );
@@ -414,7 +438,7 @@ fn row_ui(
     row: &Ranked,
     chosen: bool,
     lefts: &[f32],
-    scales: &[Scale; 9],
+    columns: &Columns,
     units: &Units,
 ) -> Response {
     let palette = Palette::in_use(ui);
@@ -436,14 +460,15 @@ fn row_ui(
         (false, false) => palette.text,
     };
     let font = TextStyle::Body.resolve(ui.style());
-    for (i, column) in Column::ALL.into_iter().enumerate() {
+    for (i, (column, scale)) in columns.0.iter().enumerate() {
+        let column = *column;
         let cell = cell(rect, lefts, i);
         let text = match column {
             Column::Name => row.fluid.name().to_owned(),
             Column::Objection => objection_text(row),
             _ => column
                 .value(row)
-                .map_or("–".to_owned(), |si| scales[i].text(si, units)),
+                .map_or("–".to_owned(), |si| scale.text(si, units)),
         };
         let (x, (align, _)) = anchor(column, cell);
         let align = Align2([align.x(), eframe::egui::Align::Center]);
@@ -501,9 +526,9 @@ fn anchor(column: Column, cell: Rect) -> (f32, (Align2, Align2)) {
 }
 
 /// Tab-separated, units in the header, for a spreadsheet.
-fn as_text(rows: &[Ranked], units: &Units) -> String {
-    let scales = Column::ALL.map(|column| Scale::of(column, rows.first(), units));
-    let heads = Column::ALL.iter().zip(&scales).map(|(column, scale)| {
+fn as_text(rows: &[Ranked], duty: Duty, units: &Units) -> String {
+    let columns = Columns::new(duty, rows.first(), units);
+    let heads = columns.0.iter().map(|(column, scale)| {
         if scale.symbol.is_empty() {
             column.title().to_owned()
         } else {
