@@ -258,20 +258,7 @@ impl Fluid {
 
     /// Surface tension in N/m, where known.
     pub fn surface_tension(&self, temperature: Temperature) -> Option<f64> {
-        let form = self.surface_tension.as_ref()?;
-        let t = temperature.kelvin();
-        let (low, high) = form.temperature_range_k;
-        if !(low..=high).contains(&t) {
-            return None;
-        }
-        let theta = 1.0 - t / form.critical_temperature_k;
-        (theta > 0.0).then(|| {
-            form.a
-                .iter()
-                .zip(&form.n)
-                .map(|(a, n)| a * theta.powf(*n))
-                .sum()
-        })
+        self.surface_tension.as_ref()?.at(temperature.kelvin())
     }
 
     /// Mass in molecules of two atoms over the mass of the saturated vapour; `None` for a

@@ -232,6 +232,17 @@ def equation_lines(record, papers, uncertainty=None):
     ]
 
 
+def end_of_tension(curve):
+    """Highest temperature at which the correlation is a surface tension: its critical temperature, unless it falls
+    below zero before. Then it bends away from the usual power, near 1.2, well before its zero, and ends at three times
+    its zero's distance from there (a choice, no source; sulphur dioxide loses most, all above 0.91 of the critical)."""
+    def sigma(theta):
+        return sum(a * theta**n for a, n in zip(curve["a"], curve["n"]))
+
+    below = [theta for theta in (10 ** (-i / 50) for i in range(50, 300)) if sigma(theta) < 0]
+    return float(f"{curve['Tc'] * (1 - 3 * max(below)):.6g}") if below else curve["Tc"]
+
+
 def surface_tension(record, papers):
     """The correlation, in the range it shares with the equation."""
     curve = record["ANCILLARIES"].get("surface_tension")
@@ -239,7 +250,7 @@ def surface_tension(record, papers):
         return []
     lowest = lower_limit(record["EOS"][0])
     critical, _, _ = own_critical_point(Equation(record["EOS"][0]), record)
-    highest = min(curve["Tc"], float(critical))
+    highest = min(end_of_tension(curve), float(critical))
     return [
         f"surface_tension: Some((critical_temperature_k: {number(curve['Tc'])}, a: {numbers(curve['a'])}, "
         f"n: {numbers(curve['n'])}, temperature_range_k: ({number(lowest)}, {number(highest)}), "
