@@ -43,6 +43,8 @@ pub enum Objection {
     OverAllowable,
     LiquidFull,
     Frozen,
+    /// Solid where it is filled: no fill ratio.
+    FrozenOnBench,
     Dry,
     /// The model does not reach a temperature that is asked for.
     OutsideModel,
@@ -247,6 +249,10 @@ impl<'a> Yardstick<'a> {
         object(
             fluid.freezing_point() > conditions.working_low,
             Objection::Frozen,
+        );
+        object(
+            fluid.freezing_point() > conditions.bench,
+            Objection::FrozenOnBench,
         );
         object(
             self.design.duty != Duty::PlainVessel

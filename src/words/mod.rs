@@ -82,6 +82,7 @@ pub const fn objection(objection: Objection) -> &'static str {
         Objection::OverAllowable => "above the allowable",
         Objection::LiquidFull => "liquid-full too soon",
         Objection::Frozen => "frozen in work",
+        Objection::FrozenOnBench => "solid on the bench",
         Objection::Dry => "dry in work",
         Objection::OutsideModel => "outside its model",
     }
