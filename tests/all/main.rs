@@ -5,6 +5,7 @@ mod charge_window;
 mod commands;
 mod consistency;
 mod contradictions;
+mod expansions;
 mod facts;
 mod files;
 mod fixed_points;
