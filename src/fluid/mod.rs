@@ -37,7 +37,7 @@ use crate::source::Sourced;
 use crate::units::{Density, Pressure, Temperature};
 
 /// A working fluid with everything that is known of it.
-#[derive(Debug)]
+#[derive(Debug, Clone)]
 pub struct Fluid {
     id: String,
     name: String,

@@ -161,6 +161,14 @@ impl Model {
             Self::Correlated(model) => PhaseIsotherm::Vapour(model.vapour_isotherm(t, molar_mass)),
         })
     }
+
+    /// Pressure of one phase at one density, as [`Self::isotherm`], which it does not keep.
+    pub fn pressure(&self, t: f64, molar_mass: f64, density: f64, liquid: bool) -> Option<f64> {
+        Some(match self {
+            Self::Equation(equation) => equation.isotherm(t).pressure(density / molar_mass),
+            Self::Correlated(_) => self.isotherm(t, molar_mass, liquid)?.at(density).0,
+        })
+    }
 }
 
 /// One phase at one temperature.
