@@ -214,7 +214,10 @@ fn fluids_lists_every_fluid() {
             "a name with a comma is put in quotes: {line}"
         );
         assert_eq!(cells[7], "", "of the program: {line}");
-        assert!(["equation", "correlations"].contains(&cells[4].as_str()), "{line}");
+        assert!(
+            ["equation", "correlations"].contains(&cells[4].as_str()),
+            "{line}"
+        );
         assert!(cells[5].parse::<f64>().expect(line) < cells[6].parse::<f64>().expect(line));
     }
 }
