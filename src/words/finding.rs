@@ -325,10 +325,16 @@ fn solid_says(pressure: Option<FrozenPressure>, units: &Units) -> String {
     match pressure {
         None => String::new(),
         Some(known @ FrozenPressure::Known(_)) => {
-            format!(" The solid then has a vapour pressure of {} abs.", show(known))
+            format!(
+                " The solid then has a vapour pressure of {} abs.",
+                show(known)
+            )
         }
         Some(below @ FrozenPressure::BelowEquation(_)) => {
-            format!(" The solid then has a vapour pressure below {} abs.", show(below))
+            format!(
+                " The solid then has a vapour pressure below {} abs.",
+                show(below)
+            )
         }
         Some(most @ FrozenPressure::AtMostTriplePoint(_)) => format!(
             " The vapour pressure of the solid is not known: at most {} abs, that at the freezing point.",

@@ -23,8 +23,15 @@ fn fluid(id: &str) -> std::sync::Arc<Fluid> {
 
 /// Corresponding states: CoolProp stops its search for the conformal state at 1e-9.
 fn tolerance(fluid: &Fluid) -> f64 {
-    let form = fluid.viscosity_forms().reference().expect("a reference form");
-    if form.is_by_corresponding_states() { 1e-6 } else { 1e-9 }
+    let form = fluid
+        .viscosity_forms()
+        .reference()
+        .expect("a reference form");
+    if form.is_by_corresponding_states() {
+        1e-6
+    } else {
+        1e-9
+    }
 }
 
 #[test]
@@ -81,7 +88,10 @@ fn water_gives_the_values_of_the_release() {
         let found = 1e6 * viscosity(&water, t, rho).expect("in range");
         let off = (found / expected - 1.0).abs();
         println!("water {t} K {rho} kg/m3: {found:.6} µPa·s, printed {expected}, off {off:.1e}");
-        assert!(off < digits, "{t} K, {rho} kg/m3: {found} against {expected}");
+        assert!(
+            off < digits,
+            "{t} K, {rho} kg/m3: {found} against {expected}"
+        );
     }
 }
 
@@ -143,7 +153,10 @@ fn known_liquids_at_room_temperature() {
                 .unwrap_or(f64::NAN);
         let off = 100.0 * (found / expected - 1.0);
         println!("{id}: {found:.1} µPa·s, {source} {expected}: {off:+.1} %");
-        assert!(off.abs() <= percent, "{id}: {found} against {expected}, {source}");
+        assert!(
+            off.abs() <= percent,
+            "{id}: {found} against {expected}, {source}"
+        );
     }
 }
 
@@ -173,7 +186,8 @@ fn at_saturation_every_answer_is_possible() {
                 );
             }
             // A joint between a form and a table may step by their disagreement.
-            if let (Some(here), Some(next)) = (liquid, fluid.liquid_viscosity(at((i + 1).min(60)))) {
+            if let (Some(here), Some(next)) = (liquid, fluid.liquid_viscosity(at((i + 1).min(60))))
+            {
                 assert!(
                     next < 1.12 * here,
                     "{} thickens with warmth at {t:?}: {here} to {next}",
@@ -191,7 +205,9 @@ fn at_saturation_every_answer_is_possible() {
             ));
         }
     }
-    println!("liquid known of {known} fluids; share of the saturation range, liquid/vapour, where not whole:");
+    println!(
+        "liquid known of {known} fluids; share of the saturation range, liquid/vapour, where not whole:"
+    );
     partly.iter().for_each(|line| println!("  {line}"));
     assert!(known >= 90, "only {known} fluids have a liquid viscosity");
 }

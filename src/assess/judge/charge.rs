@@ -160,7 +160,11 @@ impl Judge<'_> {
             self.add(
                 Severity::Warning,
                 Section::Conditions,
-                FindingKind::FrozenOnBench { freezing, bench, pressure: pressure(bench) },
+                FindingKind::FrozenOnBench {
+                    freezing,
+                    bench,
+                    pressure: pressure(bench),
+                },
             );
         }
         if conditions.coldest >= freezing {

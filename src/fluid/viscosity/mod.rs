@@ -191,7 +191,9 @@ impl Fluid {
             self.reference_viscosity(t, density(&self.curve().ok()?.at(t)))
         };
         by_reference().or_else(|| {
-            let table = tables.iter().find(|table| holds(table.temperature_range_k, t))?;
+            let table = tables
+                .iter()
+                .find(|table| holds(table.temperature_range_k, t))?;
             possible(table.form.at(t))
         })
     }
