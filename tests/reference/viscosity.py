@@ -367,8 +367,8 @@ def reference_lines(name, record, lowest, highest):
     form = reference_form(name, record)
     if form is None:
         return []
-    low, high, uncertainty, paper = choice.PAPERS[name]
-    low, high = max(low or 0, lowest), min(high or math.inf, highest)
+    low, _, uncertainty, paper = choice.PAPERS[name]
+    low, high = max(low or 0, lowest), min(choice.highest_temperature(name, record), highest)
     return [
         "reference: Some((",
         f"    form: {form},",

@@ -123,6 +123,9 @@ TAKEN_OF_TWO = {"R1234yf": 0, "R1234ze(E)": 0, "R124": 0, "R152A": 1, "R22": 1, 
 # Reference fluids of corresponding states: name in the data, id here.
 REFERENCE_FLUIDS = {"R134a": "r-134a", "Propane": "propane", "Nitrogen": "nitrogen"}
 
+# Highest temperature over the critical one: above it the conformal state leaves the reference fluid's own equation.
+HIGHEST_CONFORMAL = {"R134a": 1.15, "Propane": 1.65, "Nitrogen": 7.0}
+
 # With a reference form, tables go on beyond its range only where they join it within some 10 %.
 TABLES_BESIDE_A_FORM = {
     "R152A": ("liquid", "vapour"), "m-Xylene": ("liquid",), "EthylBenzene": ("liquid", "vapour"),
@@ -136,6 +139,17 @@ NARROWED = {
     ("75-37-6", "liquid"): (200.0, 343.15),  # R-152a: 20 % from the residual entropy form at 180 K
     ("67-64-1", "liquid"): (190.0, 329.44),
 }
+
+
+def highest_temperature(name, record):
+    """Of the form taken, K; infinite where the equation's own end counts."""
+    carried = record["TRANSPORT"]["viscosity"]
+    if isinstance(carried, list):
+        carried = carried[TAKEN_OF_TWO[name]]
+    reach = HIGHEST_CONFORMAL.get(carried.get("reference_fluid"))
+    conformal = reach * record["EOS"][0]["STATES"]["reducing"]["T"] if reach else float("inf")
+    return min(PAPERS[name][1] or float("inf"), float(f"{conformal:.0f}") if reach else conformal)
+
 
 # Liquid metals: (form, coefficients, range, source).
 METALS = {

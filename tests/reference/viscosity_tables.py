@@ -85,7 +85,8 @@ def main(data):
         record, identity = equations[name], facts[name]
         end = record["EOS"][0]
         lowest = max(float(f"{end['STATES']['sat_min_liquid']['T']:.6f}"), end["Ttriple"])
-        low, high = max(choice.PAPERS[name][0] or 0, lowest) + 1e-3, min(choice.PAPERS[name][1] or math.inf, end["T_max"])
+        low = max(choice.PAPERS[name][0] or 0, lowest) + 1e-3
+        high = min(choice.highest_temperature(name, record), end["T_max"])
         asked = reader(name)
         asked.specify_phase(CoolProp.iphase_gas)
         for t, rho in states(name, record, low, high, random.Random(name)):
