@@ -7,6 +7,9 @@ use super::{Fluid, FluidError, clamped};
 use crate::solve::{rising_root, roots_between};
 use crate::units::{Density, Pressure, Temperature};
 
+/// A liquid this little above its vapour pressure is not solid: the melting line meets the
+/// triple point of the equation within its own error only.
+const BESIDE_THE_LINE: f64 = 1e-3;
 /// A density found for the melting pressure gives it back with a rounding.
 const MELTING_SLACK: f64 = 1e-9;
 
@@ -299,6 +302,11 @@ impl Fluid {
         }
     }
 
+    fn is_beside_its_line(&self, pressure: Pressure, temperature: Temperature) -> bool {
+        self.saturation_pressure(temperature)
+            .is_ok_and(|p| pressure.pascal() <= p.pascal() * (1.0 + BESIDE_THE_LINE))
+    }
+
     fn frozen_state(
         &self,
         density: Density,
@@ -365,6 +373,7 @@ impl Fluid {
         if dense
             && let Some(melting) = self.melting_pressure(temperature)
             && pressure.pascal() > melting.pascal() * (1.0 + MELTING_SLACK)
+            && !self.is_beside_its_line(pressure, temperature)
         {
             return Err(FluidError::Solid {
                 fluid: fluid(),

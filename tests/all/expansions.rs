@@ -36,7 +36,12 @@ pub fn noise(fluid: &Fluid) -> f64 {
     let top = fluid.curve().expect(fluid.id()).range_k().1;
     let densities: Vec<f64> = (0..64)
         .map(|k| top * (1.0 - f64::from(k) * f64::EPSILON))
-        .map(|t| fluid.model().curve_point(t, fluid.molar_mass()).expect(fluid.id()))
+        .map(|t| {
+            fluid
+                .model()
+                .curve_point(t, fluid.molar_mass())
+                .expect(fluid.id())
+        })
         .flat_map(|at| [at.liquid_kg_per_m3, at.vapour_kg_per_m3])
         .collect();
     let spread = |phase: usize| {
@@ -67,7 +72,10 @@ fn looked_up_saturation_is_the_solved_one() {
         let near = deviation(&fluid, &[top, top * (1.0 - 1e-9), top * (1.0 - 3e-7)]);
         let noise = noise(&fluid);
         println!("{id}: {off:.1e}, beside the critical point {near:.1e}, noise there {noise:.1e}");
-        assert!(near <= 10.0 * noise.max(1e-11), "{id}: {near:.1e}, noise {noise:.1e}");
+        assert!(
+            near <= 10.0 * noise.max(1e-11),
+            "{id}: {near:.1e}, noise {noise:.1e}"
+        );
     }
     println!("worst: {} {:.1e}", worst.1, worst.0);
 }

@@ -43,7 +43,7 @@ fn cells(line: &str) -> Vec<String> {
     cells
 }
 
-/// °C would do as well: temperature at which the vapour pressure is one atmosphere.
+/// Temperature in K at which the vapour pressure is one atmosphere.
 fn boiling_point(id: &str) -> f64 {
     const ATMOSPHERE: f64 = 101_325.0;
     let fluid = fluid(id);
@@ -61,6 +61,18 @@ fn boiling_point(id: &str) -> f64 {
         }
     }
     0.5 * (low + high)
+}
+
+/// Computed less printed normal boiling point, K, of each fluid that has one.
+pub fn boiling_points() -> Vec<(String, f64)> {
+    table()
+        .into_iter()
+        .filter_map(|(id, boiling, _)| {
+            let (printed, ..) = boiling?;
+            let off = boiling_point(&id) - printed;
+            Some((id, off))
+        })
+        .collect()
 }
 
 #[test]

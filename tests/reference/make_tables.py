@@ -154,6 +154,8 @@ class Fluid:
             molar = mpf(shown) / self.unit
             pressure = self.equation.pressure(temperature, molar)
             c_v, c_p, sound = self.equation.heat_capacities_and_sound(temperature, molar)
+            if c_v <= 0:
+                continue  # past the melting line, where helium's equation means nothing
             self.forced.update(CoolProp.DmolarT_INPUTS, float(molar), temperature)
             theirs = self.forced
             off = max(
