@@ -7,9 +7,10 @@ use super::{Fluid, FluidError, clamped};
 use crate::solve::{rising_root, roots_between};
 use crate::units::{Density, Pressure, Temperature};
 
-/// A liquid this little above its vapour pressure is not solid: the melting line meets the
-/// triple point of the equation within its own error only.
-const BESIDE_THE_LINE: f64 = 1e-3;
+/// A liquid this little above its vapour pressure, as a share of it or in Pa, is not solid:
+/// the melting line meets the triple point of the equation within its own error only, and a
+/// kilopascal of it is a tenth of a millikelvin.
+const BESIDE_THE_LINE: (f64, f64) = (1e-3, 1e3);
 /// A density found for the melting pressure gives it back with a rounding.
 const MELTING_SLACK: f64 = 1e-9;
 
@@ -304,7 +305,8 @@ impl Fluid {
 
     fn is_beside_its_line(&self, pressure: Pressure, temperature: Temperature) -> bool {
         self.saturation_pressure(temperature)
-            .is_ok_and(|p| pressure.pascal() <= p.pascal() * (1.0 + BESIDE_THE_LINE))
+            .map(Pressure::pascal)
+            .is_ok_and(|p| pressure.pascal() - p <= BESIDE_THE_LINE.1.max(BESIDE_THE_LINE.0 * p))
     }
 
     fn frozen_state(

@@ -19,6 +19,7 @@ mod phase_lines;
 mod presets;
 mod printed_tables;
 mod random_states;
+mod ranking;
 mod reference_equations;
 mod refusals;
 mod second_source;

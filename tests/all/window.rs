@@ -192,6 +192,73 @@ fn another_fluid_is_one_click_and_its_hazards_are_said() {
     harness.get_by_label_contains("Not fit");
 }
 
+/// The table ranks every fluid; a row tries its fluid at the same fill ratio, Escape puts
+/// the old one back, and an excluded fluid says why.
+#[test]
+fn a_row_of_the_table_tries_a_fluid_and_escape_puts_the_old_one_back() {
+    let folder = Folder::new("table");
+    let path = preset(&folder, "copper-water-heat-pipe");
+    let mut harness = window(Some(&path), None);
+    app(&mut harness).desk().library().fluids.read_all();
+    harness.get_by_label("Fluids").click();
+    harness.run();
+    let before = app(&mut harness).desk().design.clone();
+    assert_eq!(before.fluid.as_str(), "water");
+    harness
+        .get_by_role_and_label(Role::TextInput, "Find in the table")
+        .type_text("67-56-1");
+    harness.run();
+    harness
+        .get_by_role_and_label(Role::Button, "methanol")
+        .click();
+    harness.run();
+    let tried = app(&mut harness).desk().design.clone();
+    assert_eq!(tried.fluid.as_str(), "methanol");
+    let fill = |harness: &mut Harness<'static, Window>| {
+        let charge = app(harness).desk().assessment().charge.clone();
+        charge.expect("a charge").bench_fill.expect("a fill ratio")
+    };
+    let methanol = fill(&mut harness);
+    harness.key_press(Key::Escape);
+    harness.run();
+    harness.key_press(Key::Escape);
+    harness.run();
+    assert_eq!(app(&mut harness).desk().design, before);
+    let water = fill(&mut harness);
+    // The tried mass has four figures.
+    assert!(
+        (methanol / water - 1.0).abs() < 2e-3,
+        "{methanol} against {water}"
+    );
+}
+
+#[test]
+fn an_excluded_fluid_stays_in_the_table_with_its_reason() {
+    let folder = Folder::new("excluded");
+    let path = preset(&folder, "copper-water-heat-pipe");
+    let mut harness = window(Some(&path), None);
+    app(&mut harness).desk().library().fluids.read_all();
+    harness.get_by_label("Fluids").click();
+    harness.run();
+    harness
+        .get_by_role_and_label(Role::TextInput, "Find in the table")
+        .type_text("7664-41-7");
+    harness.run();
+    assert!(
+        harness
+            .query_by_label_contains("ammonia, attacks the wall")
+            .is_some(),
+        "ammonia in copper"
+    );
+    harness.get_by_label("without objection").click();
+    harness.run();
+    assert!(
+        harness
+            .query_by_label_contains("ammonia, attacks the wall")
+            .is_none()
+    );
+}
+
 #[test]
 fn saving_opening_and_a_wrong_file() {
     let folder = Folder::new("save");
