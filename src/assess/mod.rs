@@ -257,6 +257,15 @@ fn reaches_allowable(
         Pressure::from_pascal(allowable.pascal() / (1.0 + added)).ok()
     };
     let between = (low.max(fluid.freezing_point()), high);
+    // A unit that is full, or past its walls, where the fluid melts is so from there on.
+    let is_over = match unit.state(between.0) {
+        Ok(state) => limit(between.0).is_some_and(|limit| state.pressure >= limit),
+        Err(FluidError::NoCompressedLiquid { .. } | FluidError::PressureTooHigh { .. }) => true,
+        Err(_) => false,
+    };
+    if is_over {
+        return Ok(Some(between.0));
+    }
     Ok(unit.meets(limit, between, &walls.knots)?.first().copied())
 }
 

@@ -43,6 +43,8 @@ pub enum Objection {
     OverAllowable,
     LiquidFull,
     Frozen,
+    /// Solid where it is filled: no fill ratio.
+    FrozenOnBench,
     Dry,
     /// The model does not reach a temperature that is asked for.
     OutsideModel,
@@ -92,6 +94,17 @@ fn worth(duty: Duty, ranked: &Ranked) -> f64 {
         Duty::SensingBulb | Duty::LiquidLift => known(ranked.slope.as_ref().ok().copied()),
         Duty::PlainVessel => known(ranked.at_hottest.as_ref().ok().map(|(p, _)| -p.pascal())),
     }
+}
+
+/// The merit number ρ′ σ h / μ′ (P. D. Dunn and D. A. Reay, Heat Pipes, from memory), W/m²,
+/// where surface tension and viscosity are known.
+fn merit(fluid: &Fluid, t: Temperature) -> Option<f64> {
+    let slope = fluid.saturation_slope(t).ok()?;
+    let at = fluid.curve().ok()?.at(t.kelvin());
+    let (liquid, vapour) = (at.liquid_kg_per_m3, at.vapour_kg_per_m3);
+    // Clausius and Clapeyron.
+    let latent_heat = t.kelvin() * slope * (1.0 / vapour - 1.0 / liquid);
+    Some(liquid * fluid.surface_tension(t)? * latent_heat / fluid.liquid_viscosity(t)?)
 }
 
 impl<'a> Yardstick<'a> {
@@ -153,7 +166,7 @@ impl<'a> Yardstick<'a> {
                 .map_err(|_| Missing::NoCharge)
         });
         let mut ranked = Ranked {
-            merit: None,
+            merit: merit(&fluid, self.middle),
             fluid,
             mass,
             at_hottest,
@@ -236,6 +249,10 @@ impl<'a> Yardstick<'a> {
         object(
             fluid.freezing_point() > conditions.working_low,
             Objection::Frozen,
+        );
+        object(
+            fluid.freezing_point() > conditions.bench,
+            Objection::FrozenOnBench,
         );
         object(
             self.design.duty != Duty::PlainVessel

@@ -57,6 +57,18 @@ pub struct SurfaceTension {
     pub source: Source,
 }
 
+impl SurfaceTension {
+    /// What the form says at a temperature in K, inside its range and below its critical
+    /// temperature.
+    pub(super) fn at(&self, temperature_k: f64) -> Option<f64> {
+        let (low, high) = self.temperature_range_k;
+        let theta = 1.0 - temperature_k / self.critical_temperature_k;
+        let terms = self.a.iter().zip(&self.n);
+        ((low..=high).contains(&temperature_k) && theta > 0.0)
+            .then(|| terms.map(|(a, n)| a * theta.powf(*n)).sum())
+    }
+}
+
 /// Why a fluid file is refused.
 #[derive(Debug, Clone, PartialEq, thiserror::Error)]
 pub enum FluidFileError {
@@ -92,7 +104,7 @@ pub fn parse(text: &str) -> Result<Fluid, FluidFileError> {
     let model = match file.model {
         ModelFile::Helmholtz(data) => Model::Equation(Box::new(Equation::new(*data)?)),
         ModelFile::Correlated(data) => {
-            data.check(file.molar_mass_kg_per_mol)?;
+            data.check()?;
             Model::Correlated(data)
         }
     };

@@ -54,19 +54,33 @@ pub struct CurvePoint {
 }
 
 impl SaturationCurve {
-    /// Expands `solve` (K to a point) between two temperatures.
+    /// Expands `solve` (K to a point) between two temperatures. At `joints_k` the model
+    /// passes from one form to another and a slope may jump: pieces end there.
     ///
     /// # Errors
     /// The first error of `solve`.
     pub fn build<E>(
         critical_temperature_k: f64,
         range_k: (f64, f64),
+        joints_k: &[f64],
         mut solve: impl FnMut(f64) -> Result<CurvePoint, E>,
     ) -> Result<Self, E> {
         let x = |t: f64| (1.0 - t / critical_temperature_k).max(0.0).sqrt();
         let (from, to) = (x(range_k.1), x(range_k.0));
         let mut pieces = Vec::new();
-        let mut open = vec![(from, to, f64::INFINITY)];
+        let mut ends: Vec<f64> = [from, to]
+            .into_iter()
+            .chain(joints_k.iter().map(|&t| x(t)))
+            .filter(|end| (from..=to).contains(end))
+            .collect();
+        ends.sort_by(f64::total_cmp);
+        // The last in is the first out: pieces come in rising order.
+        let mut open: Vec<_> = ends
+            .windows(2)
+            .filter(|pair| pair[0] < pair[1])
+            .map(|pair| (pair[0], pair[1], f64::INFINITY))
+            .rev()
+            .collect();
         while let Some((low, high, tail_before)) = open.pop() {
             let (piece, tail) = Piece::fit(low, high, |x| {
                 let t = critical_temperature_k * (1.0 - x * x);

@@ -37,7 +37,7 @@ use crate::source::Sourced;
 use crate::units::{Density, Pressure, Temperature};
 
 /// A working fluid with everything that is known of it.
-#[derive(Debug)]
+#[derive(Debug, Clone)]
 pub struct Fluid {
     id: String,
     name: String,
@@ -220,6 +220,7 @@ impl Fluid {
                 SaturationCurve::build(
                     self.critical().temperature_k,
                     self.model.saturation_range_k(),
+                    &self.model.joints_k(),
                     |t| self.model.curve_point(t, self.molar_mass),
                 )
                 .map_err(|e| FluidError::NotConverged {
@@ -257,20 +258,7 @@ impl Fluid {
 
     /// Surface tension in N/m, where known.
     pub fn surface_tension(&self, temperature: Temperature) -> Option<f64> {
-        let form = self.surface_tension.as_ref()?;
-        let t = temperature.kelvin();
-        let (low, high) = form.temperature_range_k;
-        if !(low..=high).contains(&t) {
-            return None;
-        }
-        let theta = 1.0 - t / form.critical_temperature_k;
-        (theta > 0.0).then(|| {
-            form.a
-                .iter()
-                .zip(&form.n)
-                .map(|(a, n)| a * theta.powf(*n))
-                .sum()
-        })
+        self.surface_tension.as_ref()?.at(temperature.kelvin())
     }
 
     /// Mass in molecules of two atoms over the mass of the saturated vapour; `None` for a

@@ -71,6 +71,14 @@ impl Model {
         }
     }
 
+    /// Temperatures at which saturation passes from one form to another, K.
+    pub fn joints_k(&self) -> Vec<f64> {
+        match self {
+            Self::Equation(_) => Vec::new(),
+            Self::Correlated(model) => model.joint_k().into_iter().collect(),
+        }
+    }
+
     /// Greatest pressure and density given, Pa and kg/m³.
     pub fn limits(&self, molar_mass: f64) -> (f64, f64) {
         match self {
@@ -151,6 +159,14 @@ impl Model {
                 PhaseIsotherm::Liquid(model.liquid_isotherm(t, molar_mass)?)
             }
             Self::Correlated(model) => PhaseIsotherm::Vapour(model.vapour_isotherm(t, molar_mass)),
+        })
+    }
+
+    /// Pressure of one phase at one density, as [`Self::isotherm`], which it does not keep.
+    pub fn pressure(&self, t: f64, molar_mass: f64, density: f64, liquid: bool) -> Option<f64> {
+        Some(match self {
+            Self::Equation(equation) => equation.isotherm(t).pressure(density / molar_mass),
+            Self::Correlated(_) => self.isotherm(t, molar_mass, liquid)?.at(density).0,
         })
     }
 }

@@ -4,7 +4,7 @@
 //! of nature, except where a line says otherwise.
 
 use super::helmholtz::Equation;
-use super::{Fluid, FluidError, Model, SaturationPoint};
+use super::{Fluid, FluidError, Model, SaturationPoint, SurfaceTension};
 use crate::units::{Density, Temperature};
 
 /// Temperatures looked at, besides the ends.
@@ -17,6 +17,9 @@ const LEAST_HEAT_CAPACITY: f64 = 1.5 - 0.01;
 /// How far the pressure at the stated critical point may be off, as a share of it, and
 /// its slope, as a share of p/ρ: a mistyped digit gives a hundred times more.
 const CRITICAL_SLACK: f64 = 1e-3;
+/// No sealed unit goes beyond, Pa; far above it an equation's own range reaches into the
+/// solid, where it need not make sense (hydrogen at 33 K).
+const HIGHEST_PRESSURE: f64 = 100e6;
 
 /// What contradicts physics, and where.
 #[derive(Debug, Clone, PartialEq, thiserror::Error)]
@@ -90,6 +93,9 @@ pub fn check(fluid: &Fluid) -> Result<(), Unsound> {
         single_phase(fluid, t, here)?;
         before = Some(here);
     }
+    if let Some(form) = &fluid.surface_tension {
+        surface_tension(form)?;
+    }
     let critical = fluid.critical().pressure_pa;
     if let Some(last) = before.filter(|last| last.pressure_pa >= critical) {
         return Err(Unsound::AboveCritical {
@@ -153,13 +159,26 @@ fn saturated(
             value,
         });
     }
-    match fluid.surface_tension(t) {
-        Some(value) if !(value >= 0.0 && value.is_finite()) => Err(Unsound::SurfaceTension {
-            temperature_k,
-            value,
-        }),
-        _ => Ok(()),
+    Ok(())
+}
+
+/// The tension is not below zero anywhere in its own range; where a form misses its zero
+/// at the critical point, it does so close to it.
+fn surface_tension(form: &SurfaceTension) -> Result<(), Unsound> {
+    let (low, high) = form.temperature_range_k;
+    let close = (1..=50).map(|i| high - (high - low) * 10_f64.powf(-0.1 * f64::from(i)));
+    let even = (0..=SAMPLES).map(|i| low + (high - low) * i as f64 / SAMPLES as f64);
+    for temperature_k in even.chain(close) {
+        if let Some(value) = form.at(temperature_k)
+            && !(value >= 0.0 && value.is_finite())
+        {
+            return Err(Unsound::SurfaceTension {
+                temperature_k,
+                value,
+            });
+        }
     }
+    Ok(())
 }
 
 /// Off the dome the pressure rises with density; heat capacities are above 0.
@@ -260,7 +279,7 @@ fn above_critical(fluid: &Fluid, equation: &Equation) -> Result<(), Unsound> {
         for j in 1..=steps {
             let density = densest * f64::from(j) / f64::from(steps);
             let (pressure, slope) = isotherm.pressure_and_slope(density / fluid.molar_mass());
-            if pressure > fluid.limits().1.pascal() {
+            if pressure > fluid.limits().1.pascal().min(HIGHEST_PRESSURE) {
                 break;
             }
             if slope.is_nan() || slope <= 0.0 {

@@ -288,14 +288,15 @@ impl Fluid {
     ) -> Result<PhaseIsotherm<'_>, FluidError> {
         self.model
             .isotherm(temperature.kelvin(), self.molar_mass, liquid)
-            .ok_or_else(|| FluidError::NoCompressedLiquid {
-                fluid: self.name.clone(),
-                reason: self
-                    .model
-                    .no_compressed_liquid()
-                    .unwrap_or_default()
-                    .to_owned(),
-            })
+            .ok_or_else(|| self.no_compressed_liquid())
+    }
+
+    fn no_compressed_liquid(&self) -> FluidError {
+        let reason = self.model.no_compressed_liquid().unwrap_or_default();
+        FluidError::NoCompressedLiquid {
+            fluid: self.name.clone(),
+            reason: reason.to_owned(),
+        }
     }
 
     fn frozen_state(
@@ -339,7 +340,10 @@ impl Fluid {
             });
         }
         let liquid = regime == Regime::LiquidFull;
-        let (p, _) = self.isotherm(temperature, liquid)?.at(rho);
+        let p = self
+            .model
+            .pressure(temperature.kelvin(), self.molar_mass, rho, liquid)
+            .ok_or_else(|| self.no_compressed_liquid())?;
         if p.is_nan() || p > most_pressure {
             let high = Pressure::from_pascal(most_pressure)
                 .expect("a fluid file's limits are checked when read");

@@ -10,7 +10,7 @@ pub use missing::{chamber_fault, condition_fault, missing, upper};
 
 use crate::assess::{Bound, EventKind, Objection, Requirement, Severity, Side, Verdict};
 use crate::chamber::AllowableBasis;
-use crate::fluid::{Regime, StabilityKind};
+use crate::fluid::{FrozenPressure, Regime, StabilityKind};
 use crate::units::Units;
 
 /// The care that is always said.
@@ -51,6 +51,18 @@ pub const fn requirement(requirement: Requirement) -> &'static str {
     }
 }
 
+/// The vapour pressure over the solid, as far as it is known.
+pub fn solid_pressure(pressure: FrozenPressure, units: &Units) -> String {
+    let shown = units.show_to(pressure.highest(), 3);
+    match pressure {
+        FrozenPressure::Known(_) => format!("{shown} abs"),
+        FrozenPressure::BelowEquation(_) => format!("below {shown} abs"),
+        FrozenPressure::AtMostTriplePoint(_) => {
+            format!("at most {shown} abs, that at the freezing point")
+        }
+    }
+}
+
 /// A bound's mass, rounded into the window.
 pub fn bound_mass(bound: &Bound, units: &Units) -> String {
     units.show_careful(bound.mass, 4, bound.side == Side::AtMost)
@@ -82,6 +94,7 @@ pub const fn objection(objection: Objection) -> &'static str {
         Objection::OverAllowable => "above the allowable",
         Objection::LiquidFull => "liquid-full too soon",
         Objection::Frozen => "frozen in work",
+        Objection::FrozenOnBench => "solid on the bench",
         Objection::Dry => "dry in work",
         Objection::OutsideModel => "outside its model",
     }

@@ -127,10 +127,19 @@ fn no_line_of_a_sheet_is_wider_than_78_characters() {
 
 /// What a design of this verdict may print: the readings, or DO NOT FILL.
 pub fn sheet_fits_the_verdict(sheet: &str, verdict: Verdict) {
+    // "from 12.3 g to 12.5 g": a number, a unit of mass, and how far. A fluid's note may say
+    // from what temperature to what.
     let reading = |line: &str| {
-        line.split("from ")
-            .skip(1)
-            .any(|rest| rest.starts_with(|c: char| c.is_ascii_digit()) && rest.contains(" to "))
+        line.split("from ").skip(1).any(|rest| {
+            let mut words = rest.split([' ', '\u{a0}']);
+            let number = words
+                .next()
+                .is_some_and(|word| word.starts_with(|c: char| c.is_ascii_digit()));
+            let of_mass = words
+                .next()
+                .is_some_and(|word| ["g", "kg", "mg", "oz", "lb"].contains(&word));
+            number && of_mass && rest.contains(" to ")
+        })
     };
     // The titles of papers, below, also say from where to where.
     let (bench, _) = sheet.split_once("\nBASIS\n").expect("a basis");

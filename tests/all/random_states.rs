@@ -159,7 +159,10 @@ fn beside_the_lines_the_pressure_stays_on_its_side() {
             at.liquid_kg_per_m3 * (1.0 + beside),
             at.vapour_kg_per_m3 * (1.0 - beside),
         ] {
-            let state = fluid.state(density(rho), kelvin(t)).expect(&place);
+            let state = match fluid.state(density(rho), kelvin(t)) {
+                Err(FluidError::NoCompressedLiquid { .. }) => continue,
+                state => state.expect(&place),
+            };
             let p = state.pressure.pascal() / at.pressure_pa;
             match state.regime {
                 Regime::LiquidFull => prop_assert!(p >= 1.0 - 1e-9, "{place}: {p} of saturation"),

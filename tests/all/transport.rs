@@ -12,13 +12,94 @@ use chargewright::fluid::Regime;
 
 use crate::given::{Vessel, celsius, density, fluid};
 
-/// Fluid, filling ratio in kg/L, test pressure in bar.
-const TABLE: [(&str, f64, f64); 4] = [
-    ("ammonia", 0.54, 29.0),
-    ("propane", 0.43, 23.0),
-    ("isobutane", 0.49, 10.0),
-    ("r-134a", 1.05, 18.0),
+/// Fluid, filling ratio in kg/L, and test pressure in bar where the table follows its own
+/// rule. For the others it carries an older, higher figure.
+const TABLE: [(&str, f64, Option<f64>); 21] = [
+    ("ammonia", 0.54, Some(29.0)),
+    ("carbonyl-sulfide", 0.87, Some(30.0)),
+    ("cyclopropane", 0.55, Some(18.0)),
+    ("dimethyl-ether", 0.59, None),
+    ("ethylene-oxide", 0.78, None),
+    ("isobutane", 0.49, Some(10.0)),
+    ("n-butane", 0.52, Some(10.0)),
+    ("propane", 0.43, Some(23.0)),
+    ("propylene", 0.43, Some(27.0)),
+    ("r-114", 1.30, Some(10.0)),
+    ("r-12", 1.15, None),
+    ("r-124", 1.20, Some(10.0)),
+    ("r-134a", 1.05, Some(18.0)),
+    ("r-142b", 0.99, Some(10.0)),
+    ("r-152a", 0.79, Some(16.0)),
+    ("r-22", 1.03, None),
+    ("r-227ea", 1.21, None),
+    ("r-40", 0.81, None),
+    ("r-c318", 1.32, None),
+    ("sulfur-dioxide", 1.23, Some(12.0)),
+    ("hydrogen-sulfide", 0.67, None),
 ];
+
+/// High-pressure liquefied gases: fluid, filling ratio in kg/L, test pressure in bar. At
+/// 65 °C the pressure of the full receptacle is the test pressure: P200(5)(b), seen in ADR
+/// 4.3.3.2; the pairs are from memory of P200, table 2. No equation was fitted to them.
+const HIGH_PRESSURE: [(&str, f64, f64); 22] = [
+    ("carbon-dioxide", 0.68, 190.0),
+    ("carbon-dioxide", 0.76, 250.0),
+    ("ethane", 0.25, 95.0),
+    ("ethane", 0.30, 120.0),
+    ("ethane", 0.40, 300.0),
+    ("ethylene", 0.34, 225.0),
+    ("ethylene", 0.38, 300.0),
+    ("nitrous-oxide", 0.68, 180.0),
+    ("nitrous-oxide", 0.74, 225.0),
+    ("r-116", 1.13, 200.0),
+    ("r-13", 0.83, 100.0),
+    ("r-13", 0.90, 120.0),
+    ("r-13", 1.04, 190.0),
+    ("r-13", 1.11, 250.0),
+    ("r-14", 0.71, 200.0),
+    ("r-14", 0.90, 300.0),
+    ("r-23", 0.88, 190.0),
+    ("r-23", 0.96, 250.0),
+    ("r-41", 0.63, 300.0),
+    ("sulfur-hexafluoride", 1.06, 70.0),
+    ("sulfur-hexafluoride", 1.34, 140.0),
+    ("xenon", 1.28, 130.0),
+];
+
+/// The published pressure lies between those of the ratio's rounding, 0.006 kg/L to either
+/// side, 1 % allowed for the data of then.
+#[test]
+fn high_pressure_gases_stand_at_their_test_pressure_at_65_degrees() {
+    for (id, ratio, published) in HIGH_PRESSURE {
+        let gauge = |ratio: f64| {
+            let state = fluid(id).state(density(1000.0 * ratio), celsius(65.0));
+            state.expect(id).pressure.pascal() * 1e-5 - 1.0
+        };
+        let (low, high) = (gauge(ratio - 0.006), gauge(ratio + 0.006));
+        assert!(
+            (0.99 * low..=1.01 * high).contains(&published),
+            "{id} at {ratio} kg/L: {low:.1} to {high:.1} bar against {published}"
+        );
+    }
+}
+
+/// Seen: TRG 300, annex 1, filling of pressurised packages, kg/L in metal and in glass. The
+/// glass ones are filled to 90 % of their volume at 50 °C, to the rounding of the ratio
+/// (0.895 to 0.907).
+#[test]
+fn glass_packages_are_filled_to_nine_tenths_at_50_degrees() {
+    for (id, ratio) in [
+        ("r-12", 1.09),
+        ("r-21", 1.17),
+        ("r-114", 1.23),
+        ("r-227ea", 1.14),
+        ("r-c318", 1.26),
+    ] {
+        let state = fluid(id).state(density(1000.0 * ratio), celsius(50.0));
+        let share = state.expect(id).liquid_share.expect("two phases");
+        assert!((0.890..=0.907).contains(&share), "{id}: {share:.4}");
+    }
+}
 
 /// Tolerance 0.006 kg/L: the table has two decimals (half a digit, 0.005) and the
 /// densities behind it a few parts in a thousand.
@@ -65,7 +146,7 @@ fn a_receptacle_filled_by_the_table_is_not_liquid_full_at_60_degrees() {
 /// below 10 bar.
 #[test]
 fn test_pressures_are_the_vapour_pressure_at_65_degrees_less_1_bar() {
-    for (id, _, published) in TABLE {
+    for (id, published) in TABLE.iter().filter_map(|(id, _, p)| Some((*id, (*p)?))) {
         let p = fluid(id).saturation_pressure(celsius(65.0)).expect(id);
         let found = (p.pascal() * 1e-5 - 1.0).max(10.0);
         assert!(

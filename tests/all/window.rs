@@ -510,3 +510,51 @@ fn the_charge_is_dragged_and_everything_follows() {
     let charge = app.desk().assessment().charge.clone().expect("a charge");
     assert!(charge.nominal.kilogram() > 0.0045);
 }
+
+/// The user's own fluid travels with the desk: opened, undone, saved elsewhere, restored.
+#[test]
+fn the_desk_carries_the_fluid_beside_the_design() {
+    let folder = Folder::new("own-fluid");
+    let fluid_file = "example-ethyl-acetate.fluid.ron";
+    let kept = Path::new(env!("CARGO_MANIFEST_DIR")).join("tests/own-fluid");
+    for name in ["solvent-bulb.ron", fluid_file] {
+        std::fs::copy(kept.join(name), folder.file(name)).expect("copied");
+    }
+    let path = folder.file("solvent-bulb.ron");
+    let first = store::preset("refrigerant-vessel").expect("a ready design");
+    let mut desk = chargewright::ui::Desk::new(first.clone(), Some(&folder.0));
+    desk.open(&path).expect("opens");
+    let own = |desk: &chargewright::ui::Desk| {
+        let file = desk.assessment().fluid.own_file();
+        file.map(|own| own.name.clone())
+    };
+    assert_eq!(own(&desk).as_deref(), Some(fluid_file));
+    assert!(!desk.is_unsaved() && desk.notices().is_empty());
+    // To another fluid and back.
+    desk.commit();
+    desk.design.fluid = first.fluid.clone();
+    desk.refresh();
+    desk.commit();
+    assert_eq!(own(&desk), None);
+    desk.undo();
+    desk.refresh();
+    assert_eq!(own(&desk).as_deref(), Some(fluid_file));
+    // Saved elsewhere it opens alike: the fluid went along.
+    let there = folder.file("there");
+    std::fs::create_dir_all(&there).expect("a folder");
+    desk.save_to(&there.join("a.ron")).expect("saved");
+    assert!(there.join(fluid_file).exists());
+    desk.open(&there.join("a.ron")).expect("opens there");
+    // A draft is read with the fluids beside its file.
+    let draft = chargewright::ui::Draft {
+        path: Some(path),
+        text: store::to_text(&desk.design),
+    };
+    let file = folder.file("draft-999999999.ron");
+    store::write_own(&file, &draft).expect("writes");
+    let (_, found) = chargewright::ui::Draft::left_behind(&folder.0).expect("offered");
+    desk.start_untitled(first);
+    assert_eq!(own(&desk), None);
+    desk.restore(&found);
+    assert_eq!(own(&desk).as_deref(), Some(fluid_file));
+}

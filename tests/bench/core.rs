@@ -83,6 +83,7 @@ fn expansions_built(bencher: Bencher<'_, '_>, id: &str) {
         SaturationCurve::build(
             fluid.critical().temperature_k,
             fluid.model().saturation_range_k(),
+            &fluid.model().joints_k(),
             |t| fluid.model().curve_point(t, m),
         )
     });

@@ -24,7 +24,11 @@ fn main() {
     }
     println!("job,fluid,nanoseconds");
     for id in FLUIDS {
-        single_states(&Catalog::built_in().by_id(id).expect("a fluid of the catalogue"));
+        single_states(
+            &Catalog::built_in()
+                .by_id(id)
+                .expect("a fluid of the catalogue"),
+        );
     }
     for name in store::preset_names() {
         let design = store::preset(name).expect("a ready design");
@@ -51,14 +55,20 @@ fn single_states(fluid: &Fluid) {
         let state = |t: &f64| {
             let at = curve.at(*t);
             let rho = of(at.liquid_kg_per_m3, at.vapour_kg_per_m3);
-            (density(rho), Temperature::from_kelvin(*t).expect("a temperature"))
+            (
+                density(rho),
+                Temperature::from_kelvin(*t).expect("a temperature"),
+            )
         };
         kelvin.iter().map(state).collect()
     };
     for (job, states) in [
         ("p of liquid", states(&|liquid, _| 1.005 * liquid)),
         ("p of vapour", states(&|_, vapour| 0.7 * vapour)),
-        ("p of two phases", states(&|liquid, vapour| 0.4 * liquid + 0.6 * vapour)),
+        (
+            "p of two phases",
+            states(&|liquid, vapour| 0.4 * liquid + 0.6 * vapour),
+        ),
     ] {
         report(job, id, 20_000, |i| fluid.state(states[i].0, states[i].1));
     }
@@ -72,7 +82,9 @@ fn ranking() {
     catalog.read_all();
     let fluids: Vec<Arc<Fluid>> = catalog.iter().collect();
     let label = format!("{} fluids", fluids.len());
-    report("ranking", &label, 50, |_| rank(&design, &a, fluids.iter().cloned()));
+    report("ranking", &label, 50, |_| {
+        rank(&design, &a, fluids.iter().cloned())
+    });
     for count in [1_000, 10_000] {
         let copies: Vec<Arc<Fluid>> = fluids
             .iter()

@@ -15,9 +15,9 @@ Caesium. Vapour pressure of the Naval Research Laboratory from memory; the equat
 within 1.4 %. Cs2 by McBride et al.; the straight line of the CRC Handbook ends at 783 K, so the liquid's density is a
 parabola through it and the handbook values that J. Thermodyn. Catal. 7 (2016) 163 lists for 800 to 1100 K.
 Rubidium. No published equation was at hand that holds at the boiling point: the vapour pressure is fitted to atoms and Rb2
-in equilibrium with the liquid by McBride et al.; it boils at the handbooks' temperature within 1 K. Rb2 (missing there) from the
-spectroscopic constants as a vibrating rotor. Done for Na2 and Cs2 the same calculation is within 7 % of McBride et al. from
-600 to 1200 K, which is 0.5 % of the vapour's density; it gives 7.4 % of Rb2 at 950 K, as is published.
+in equilibrium with the liquid by McBride et al.; it boils 1.3 K below the handbooks. Rb2 (missing there) from the
+spectroscopic constants as a vibrating rotor. Done for Na2 and Cs2 the same calculation is within 7 and 14 % of McBride et al.
+from 600 to 1200 K, which is 0.6 % of the vapour's density; it gives 7.4 % of Rb2 at 950 K, as is published.
 """
 
 from mpmath import mp, mpf

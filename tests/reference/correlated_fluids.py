@@ -26,7 +26,7 @@ HFE_PREPRINT = (
 MATTHEWS = "Matthews, J. F. 1972, Chem. Rev. 72, 71-100, doi 10.1021/cr60275a004, as carried by chemicals 1.5.2"
 STULL = (
     "form Wagner 2.5/5, fitted by tests/reference/correlated.py through Stull, D. R. 1947, Ind. Eng. Chem. 39, 540-550, table for {} "
-    "from 10 to 760 mmHg, the boiling point of the CRC Handbook, and above it the equation of Lee and Kesler 1975"
+    "from 5 to 760 mmHg, the boiling point of the CRC Handbook, and above it the equation of Lee and Kesler 1975"
 )
 
 
@@ -134,7 +134,7 @@ FLUIDS = {
     # Chlorobenzene. VDI and DIPPR 101 within 1.1 %; calorimetry 3 % below both at 257 K.
     "108-90-7": Choice(lowest=255.0, liquid_from=228.0, second_slope=("DIPPR 101", 260.0, 600.0)),
     # Naphthalene. Five rows within 1.5 % in their own ranges, from the melting point.
-    "91-20-3": Choice(lowest=353.4, liquid_from=353.4, joint=900.0, second_slope=("DIPPR 101", 353.4, 711.0)),
+    "91-20-3": Choice(lowest=353.4, liquid_from=353.4, second_slope=("DIPPR 101", 353.4, 711.0)),
     # Biphenyl. VDI and McGarry are one curve and take 789 K for the critical temperature; the CRC Handbook and IUPAC say
     # 773 K, so the range ends at 0.95 of that. At the melting point DIPPR 101 is 10 % below, above 445 K within 1.3 %.
     "92-52-4": Choice(
@@ -193,37 +193,37 @@ FLUIDS = {
     # point) 1.35 kPa, the Gibbs energies of formation of the CRC Handbook 1.23 kPa, Lee and Kesler 1.19 kPa. The measured ones
     # are taken and the whole disagreement stated. The range ends with the density's, at the boiling point.
     "7550-45-0": Choice(
-        lowest=294.0, liquid_from=249.1, highest=410.0,
+        lowest=283.0, liquid_from=249.1, highest=410.0,
         pressure=FittedWagner(
             638.0, 4660950.0, STULL.format("titanium tetrachloride"), MATTHEWS, kind="Memory", rows=(("Lee-Kesler", 430.0, 600.0),),
             points=from_millimetres((
-                (21.3, 10), (34.2, 20), (48.4, 40), (58.0, 60), (71.0, 100), (90.5, 200), (112.7, 400), (136.0, 760), (136.45, 760),
+                (9.4, 5), (21.3, 10), (34.2, 20), (48.4, 40), (58.0, 60), (71.0, 100), (90.5, 200), (112.7, 400), (136.0, 760), (136.45, 760),
             )),
         ),
         density=StraightDensity(0.00034), tension=None, least_density_uncertainty=1.0,
-        left_out={"Lee-Kesler": "28 % below the measured table at 294 K; fitted above the boiling point"},
+        left_out={"Lee-Kesler": "a third below the measured table at 283 K; fitted above the boiling point"},
         extra_pressures={
             "Lee-Kesler": (forms.lee_kesler_pressure(638.0, 4660950.0, 409.6), 200.0, 638.0),
             "calorimetry": (
-                calorimetric_pressure(638.0, 4660950.0, 0.265, 409.6, (298.15, 41000), (409.6, 36200), 1.15e-4), 280.0, 410.0,
+                calorimetric_pressure(638.0, 4660950.0, 0.265, 409.6, (298.15, 41000), (409.6, 36200), 1.15e-4), 273.0, 410.0,
             ),
         },
     ),
     # Tin tetrachloride. As titanium tetrachloride: at 298 K Stull's table 3.1 kPa, Lee and Kesler 3.3, calorimetry 2.9. (The
     # Gibbs energies of formation give 4.1 kPa; two of them rounded to 0.1 kJ/mol are good for 8 %.)
     "7646-78-8": Choice(
-        lowest=283.0, liquid_from=239.1, highest=411.0,
+        lowest=273.0, liquid_from=239.1, highest=411.0,
         pressure=FittedWagner(
             592.0, 3749025.0, STULL.format("stannic chloride"), MATTHEWS, kind="Memory", rows=(("Lee-Kesler", 410.0, 560.0),),
             points=from_millimetres((
-                (10.0, 10), (22.0, 20), (35.2, 40), (43.5, 60), (54.7, 100), (72.0, 200), (92.1, 400), (113.0, 760), (114.15, 760),
+                (-1.0, 5), (10.0, 10), (22.0, 20), (35.2, 40), (43.5, 60), (54.7, 100), (72.0, 200), (92.1, 400), (113.0, 760), (114.15, 760),
             )),
         ),
         density=StraightDensity(0.000351), tension=None, least_density_uncertainty=1.0,
         extra_pressures={
             "Lee-Kesler": (forms.lee_kesler_pressure(592.0, 3749025.0, 387.3), 200.0, 592.0),
             "calorimetry": (
-                calorimetric_pressure(592.0, 3749025.0, 0.262, 387.3, (298.15, 39800), (387.3, 34900), 1.25e-4), 280.0, 411.0,
+                calorimetric_pressure(592.0, 3749025.0, 0.262, 387.3, (298.15, 39800), (387.3, 34900), 1.25e-4), 270.0, 411.0,
             ),
         },
     ),

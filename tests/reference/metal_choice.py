@@ -16,7 +16,7 @@ GOLDEN_K = "the Naval Research Laboratory's measurements in the form of Golden e
 MCBRIDE = "McBride, B. J.; Zehe, M. J.; Gordon, S. 2002, NASA/TP-2002-211556, as the package CEA_Wrap 2.1.2 carries it"
 NOT_KNOWN = "no published equation of its compressed liquid is carried"
 OHSE = "Ohse, R. W. (ed.) 1985, Handbook of Thermodynamic and Transport Properties of Alkali Metals, Blackwell, {}"
-BYSTROV = "Bystrov, P. I.; Kagan, D. N.; Krechetova, G. A.; Shpilrain, E. E. 1990, Liquid-Metal Coolants for Heat Pipes and Power Plants, as the public code cfe316/livapordata carries it"
+BYSTROV = "Bystrov, P. I.; Kagan, D. N.; Krechetova, G. A.; Shpilrain, E. E. 1988, Liquid Metal Heat Carriers, Thermal Pipes and Power Installations, Nauka, Moscow, as the public code cfe316/livapordata carries it"
 HUBER = "Huber, M. L.; Laesecke, A.; Friend, D. G. 2006, Ind. Eng. Chem. Res. 45, 7351-7361, doi 10.1021/ie060560s, as the package thermo carries it; uncertainty by its abstract, 3 % near the triple point, 0.5 % from 400 to 900 K"
 HANDBOOK = "J. Thermodyn. Catal. 7 (2016) 163, table 4"
 

@@ -142,6 +142,20 @@ impl Correlated {
         }
     }
 
+    /// Where the saturated vapour passes from Clapeyron's density to a constant second
+    /// virial coefficient, K; none where the range has no such place.
+    pub fn joint_k(&self) -> Option<f64> {
+        let VapourForm::Clapeyron { lowest_pressure_pa } = self.vapour else {
+            return None;
+        };
+        let range = self.temperature_range_k();
+        let reached = |t| self.vapour_pressure.at(t).0 >= lowest_pressure_pa;
+        (!reached(range.0) && reached(range.1)).then(|| {
+            self.vapour_pressure
+                .temperature_at(lowest_pressure_pa, range)
+        })
+    }
+
     /// ρ″ at the vapour pressure, kg/m³.
     fn saturated_vapour(&self, temperature: f64, molar_mass: f64, pressure: f64) -> f64 {
         let rt = GAS_CONSTANT / molar_mass * temperature;
@@ -154,9 +168,7 @@ impl Correlated {
         if pressure >= lowest_pressure_pa {
             return self.clapeyron(temperature, molar_mass).1;
         }
-        let joint = self
-            .vapour_pressure
-            .temperature_at(lowest_pressure_pa, self.temperature_range_k());
+        let joint = self.joint_k().unwrap_or(temperature);
         let (p1, rho1) = self.clapeyron(joint, molar_mass);
         let z1 = p1 * molar_mass / (rho1 * GAS_CONSTANT * joint);
         let z = 1.0 - (1.0 - z1) * (pressure / p1) * (joint / temperature);

@@ -147,6 +147,7 @@ impl Equation {
     }
 
     /// The equation at one temperature in K, ready for many densities.
+    #[inline]
     pub fn isotherm(&self, temperature_k: f64) -> Isotherm<'_> {
         let tau = self.data.reducing.temperature_k / temperature_k;
         Isotherm {
@@ -212,6 +213,7 @@ pub struct Isotherm<'a> {
 
 impl Isotherm<'_> {
     /// Pressure in Pa and its slope ∂p/∂ρ in Pa m³/mol at a density in mol/m³.
+    #[inline]
     pub fn pressure_and_slope(&self, density: f64) -> (f64, f64) {
         let [_, d1, d2] = self.residual.at(density / self.reducing_density);
         (

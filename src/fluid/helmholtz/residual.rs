@@ -292,6 +292,7 @@ impl Residual {
     }
 
     /// The terms' τ-factors at one reduced inverse temperature τ = T_r/T.
+    #[inline]
     pub fn isotherm(&self, tau: f64) -> ResidualIsotherm<'_> {
         let ln_tau = tau.ln();
         let mut factors = [0.0; TERM_LIMIT];
@@ -429,6 +430,7 @@ pub struct ResidualIsotherm<'a> {
 
 impl ResidualIsotherm<'_> {
     /// (αʳ, δαʳ_δ, δ²αʳ_δδ) at a reduced density δ = ρ/ρ_r.
+    #[inline]
     pub fn at(&self, delta: f64) -> [f64; 3] {
         let powers = self.terms.exponents.powers(delta);
         let mut sum = self.terms.sum(&self.factors, delta, &powers);

@@ -91,6 +91,8 @@ fn facts_ui(ui: &mut Ui, fluid: &Fluid) {
     });
 }
 
+pub(super) const HARMLESS: &str = "no fire or poison class";
+
 /// What it does to people, in a few words.
 pub(super) fn nature(fluid: &Entry) -> String {
     let mut words = Vec::new();
@@ -104,7 +106,7 @@ pub(super) fn nature(fluid: &Entry) -> String {
         words.push("corrosive");
     }
     if words.is_empty() {
-        "no fire or poison class".to_owned()
+        HARMLESS.to_owned()
     } else {
         words.join(", ")
     }

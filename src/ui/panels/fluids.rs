@@ -76,7 +76,7 @@ impl Column {
             Self::DryOut => "dries out",
             Self::LiquidFull => "full from",
             Self::Charge => "charge",
-            Self::Objection => "objection",
+            Self::Objection => "objection, hazard",
         }
     }
 
@@ -94,7 +94,9 @@ impl Column {
             Self::DryOut => "Temperature at which the last liquid evaporates",
             Self::LiquidFull => "Temperature at which the unit is full of liquid",
             Self::Charge => "Mass that gives the fill ratio of this design",
-            Self::Objection => "Why the fluid cannot be used here as it is",
+            Self::Objection => {
+                "Why the fluid cannot be used here as it is; without objection, what it does to people"
+            }
         }
     }
 
@@ -255,9 +257,9 @@ pub fn fluid_table_ui(
             ui.ctx().copy_text(as_text(rows, design.duty, units));
         }
         let count = if read < known {
-            format!("{read} of {known} fluids read so far")
+            format!("{read} of {known} fluids read")
         } else {
-            format!("{known} fluids at the fill ratio of this design")
+            format!("{known} fluids, same fill ratio")
         };
         ui.label(RichText::new(count).color(Palette::in_use(ui).text_faint));
     });
@@ -278,13 +280,14 @@ pub fn fluid_table_ui(
     ScrollArea::horizontal()
         .id_salt("fluid table")
         .show(ui, |ui| {
-            let lefts = lefts(ui.available_width());
-            header_ui(ui, &lefts, &scales, &mut sort);
+            let lefts = columns.lefts(ui.available_width());
+            header_ui(ui, &lefts, &columns, &mut sort);
+            // The rows are counted with the spacing between them.
+            ui.spacing_mut().item_spacing.y = 0.0;
             ScrollArea::vertical()
                 .id_salt("fluid rows")
                 .auto_shrink(false)
                 .show_rows(ui, ROW, shown.len(), |ui, range| {
-                    ui.spacing_mut().item_spacing.y = 0.0;
                     for row in &shown[range] {
                         let chosen = row.fluid.id() == design.fluid.as_str();
                         if row_ui(ui, row, chosen, &lefts, &columns, units).clicked() && !chosen {
@@ -363,12 +366,7 @@ fn trial_of(design: &Design, row: &Ranked) -> Option<Trial> {
     Some((FluidId::from(&*row.fluid), charge))
 }
 
-fn header_ui(
-    ui: &mut Ui,
-    lefts: &[f32],
-    columns: &Columns,
-    sort: &mut Option<(Column, bool)>,
-) {
+fn header_ui(ui: &mut Ui, lefts: &[f32], columns: &Columns, sort: &mut Option<(Column, bool)>) {
     let palette = Palette::in_use(ui);
     let width = lefts[lefts.len() - 1];
     let (rect, _) = ui.allocate_exact_size(vec2(width, 34.0), Sense::hover());
@@ -472,6 +470,10 @@ fn row_ui(
         };
         let (x, (align, _)) = anchor(column, cell);
         let align = Align2([align.x(), eframe::egui::Align::Center]);
+        let colour = match column {
+            Column::Objection if !chosen => palette.text_faint,
+            _ => colour,
+        };
         let painter = ui.painter().with_clip_rect(cell.intersect(ui.clip_rect()));
         painter.text(pos2(x, cell.center().y), align, text, font.clone(), colour);
     }
@@ -492,7 +494,10 @@ fn row_ui(
 /// The first objection, and how many more there are.
 fn objection_text(row: &Ranked) -> String {
     match row.objections.as_slice() {
-        [] => String::new(),
+        [] => match super::fluid::nature(row.fluid.entry()) {
+            nature if nature == super::fluid::HARMLESS => String::new(),
+            nature => nature,
+        },
         [only] => words::objection(*only).to_owned(),
         [first, others @ ..] => {
             format!("{} +{}", words::objection(*first), others.len())
@@ -537,21 +542,18 @@ fn as_text(rows: &[Ranked], duty: Duty, units: &Units) -> String {
     });
     let mut text = heads.collect::<Vec<_>>().join("\t");
     for row in rows {
-        let cells = Column::ALL
-            .iter()
-            .zip(&scales)
-            .map(|(column, scale)| match column {
-                Column::Name => row.fluid.name().to_owned(),
-                Column::Objection => row
-                    .objections
-                    .iter()
-                    .map(|objection| words::objection(*objection))
-                    .collect::<Vec<_>>()
-                    .join("; "),
-                _ => column
-                    .value(row)
-                    .map_or(String::new(), |si| scale.text(si, units)),
-            });
+        let cells = columns.0.iter().map(|(column, scale)| match column {
+            Column::Name => row.fluid.name().to_owned(),
+            Column::Objection => row
+                .objections
+                .iter()
+                .map(|objection| words::objection(*objection))
+                .collect::<Vec<_>>()
+                .join("; "),
+            _ => column
+                .value(row)
+                .map_or(String::new(), |si| scale.text(si, units)),
+        });
         text.push('\n');
         text.push_str(&cells.collect::<Vec<_>>().join("\t"));
     }
