@@ -226,7 +226,13 @@ fn expected_pressure(
     let state = |unit: &SealedUnit| unit.state(t).ok().filter(|s| s.regime != Regime::Frozen);
     let low = corners.lightest.as_ref().and_then(state);
     let (Some(low), Some(high), Ok(warmer)) = (low, state(&corners.heaviest), warmer) else {
-        return "not known, or frozen".to_owned();
+        let frozen = (t < a.fluid.freezing_point())
+            .then(|| a.fluid.frozen_pressure(t).ok())
+            .flatten();
+        return frozen.map_or_else(
+            || "not known".to_owned(),
+            |pressure| format!("frozen: {}", words::solid_pressure(pressure, units)),
+        );
     };
     let low = low.pressure.pascal() * (1.0 - uncertainty);
     let high = high.pressure.pascal() * (1.0 + uncertainty);

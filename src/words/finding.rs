@@ -1,7 +1,7 @@
 //! A finding in words: what, why, what to try.
 
 use super::missing::{chamber_fault, condition_fault, missing, upper};
-use super::requirement;
+use super::{requirement, solid_pressure};
 use crate::assess::{Finding, FindingKind};
 use crate::chamber::Chamber;
 use crate::design::Change;
@@ -321,26 +321,12 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
 
 /// What is known of the vapour pressure over the solid, as a sentence after others.
 fn solid_says(pressure: Option<FrozenPressure>, units: &Units) -> String {
-    let show = |pressure: FrozenPressure| units.show_to(pressure.highest(), 3);
-    match pressure {
-        None => String::new(),
-        Some(known @ FrozenPressure::Known(_)) => {
-            format!(
-                " The solid then has a vapour pressure of {} abs.",
-                show(known)
-            )
-        }
-        Some(below @ FrozenPressure::BelowEquation(_)) => {
-            format!(
-                " The solid then has a vapour pressure below {} abs.",
-                show(below)
-            )
-        }
-        Some(most @ FrozenPressure::AtMostTriplePoint(_)) => format!(
-            " The vapour pressure of the solid is not known: at most {} abs, that at the freezing point.",
-            show(most)
-        ),
-    }
+    pressure.map_or_else(String::new, |pressure| {
+        format!(
+            " The solid's vapour pressure is then {}.",
+            solid_pressure(pressure, units)
+        )
+    })
 }
 
 fn stability(kind: StabilityKind) -> &'static str {

@@ -10,7 +10,7 @@ pub use missing::{chamber_fault, condition_fault, missing, upper};
 
 use crate::assess::{Bound, EventKind, Objection, Requirement, Severity, Side, Verdict};
 use crate::chamber::AllowableBasis;
-use crate::fluid::{Regime, StabilityKind};
+use crate::fluid::{FrozenPressure, Regime, StabilityKind};
 use crate::units::Units;
 
 /// The care that is always said.
@@ -48,6 +48,18 @@ pub const fn requirement(requirement: Requirement) -> &'static str {
         Requirement::LiquidFullMargin => "temperature margin to liquid-full",
         Requirement::FrozenVolume => "room for the frozen fluid",
         Requirement::AllowablePressure => "allowable pressure",
+    }
+}
+
+/// The vapour pressure over the solid, as far as it is known.
+pub fn solid_pressure(pressure: FrozenPressure, units: &Units) -> String {
+    let shown = units.show_to(pressure.highest(), 3);
+    match pressure {
+        FrozenPressure::Known(_) => format!("{shown} abs"),
+        FrozenPressure::BelowEquation(_) => format!("below {shown} abs"),
+        FrozenPressure::AtMostTriplePoint(_) => {
+            format!("at most {shown} abs, that at the freezing point")
+        }
     }
 }
 

@@ -58,6 +58,9 @@ fn saturation_prints_its_columns_to_twelve_digits() {
     }
     assert_eq!(text.lines().count(), 4);
     assert!(text.ends_with('\n'));
+    // Not known: empty, not zero. No viscosity of this fluid is carried.
+    let text = printed(&["saturation", "hfe-347mcc3", "--at", "300"], 0);
+    assert_eq!(cells(text.lines().nth(1).expect("a row"))[7..], ["", ""]);
 }
 
 #[test]
@@ -178,6 +181,12 @@ fn isochore_says_the_regime_in_one_of_five_words() {
     let ice: f64 = rows[0][3].parse().expect("a pressure");
     assert!((ice / 195.8 - 1.0).abs() < 1e-4, "{ice} Pa");
     assert_eq!(rows[0][4..], ["", ""]);
+    // Where only a bound is known, the cell is empty.
+    let bounded = printed(
+        &["isochore", "acetone", "--density", "800", "--at", "170"],
+        0,
+    );
+    assert!(bounded.ends_with(",frozen,,,\n"), "{bounded}");
     assert!(rows[1][3..].iter().all(|cell| !cell.is_empty()));
     assert_eq!(rows[2][4..], ["1", "0"]);
     assert_eq!(rows[3][4..], ["", ""]);

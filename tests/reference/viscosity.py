@@ -348,11 +348,9 @@ def conformal(form):
 
 def reference_form(name, record):
     """The form's text, or None where none is taken."""
-    carried = record.get("TRANSPORT", {}).get("viscosity")
-    if carried is None or name not in choice.PAPERS:
+    if name not in choice.PAPERS:
         return None
-    if isinstance(carried, list):
-        carried = carried[choice.TAKEN_OF_TWO[name]]
+    carried = choice.form_taken(name, record)
     if "hardcoded" in carried:
         return HARD_CODED[carried["hardcoded"]]
     kind = carried.get("type")

@@ -141,12 +141,19 @@ NARROWED = {
 }
 
 
+def form_taken(name, record):
+    """The form of the record that is taken."""
+    carried = record["TRANSPORT"]["viscosity"]
+    return carried[TAKEN_OF_TWO[name]] if isinstance(carried, list) else carried
+
+
+def is_conformal(name, record):
+    return form_taken(name, record).get("type") == "ECS"
+
+
 def highest_temperature(name, record):
     """Of the form taken, K; infinite where the equation's own end counts."""
-    carried = record["TRANSPORT"]["viscosity"]
-    if isinstance(carried, list):
-        carried = carried[TAKEN_OF_TWO[name]]
-    reach = HIGHEST_CONFORMAL.get(carried.get("reference_fluid"))
+    reach = HIGHEST_CONFORMAL.get(form_taken(name, record).get("reference_fluid"))
     conformal = reach * record["EOS"][0]["STATES"]["reducing"]["T"] if reach else float("inf")
     return min(PAPERS[name][1] or float("inf"), float(f"{conformal:.0f}") if reach else conformal)
 

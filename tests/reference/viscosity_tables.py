@@ -5,8 +5,9 @@
 
 Saturated liquid and vapour, and single-phase states drawn with a fixed seed, for every fluid whose reference form is taken
 (viscosity_choice.py). CoolProp is asked at (T, rho); the densities are its own. Of a record with two forms CoolProp uses the
-first: where the second is taken, it is given a copy of its own record that holds only that. States where CoolProp finds no conformal
-state are left out. Running it twice writes the same bytes.
+first: where the second is taken, it is given a copy of its own record that holds only that. Left out are states where CoolProp finds
+no conformal state, and vapours below a hundredth of the critical density: there the two equations for it become one, and searches
+end in different places, though the gas is dilute in all of them. Running it twice writes the same bytes.
 """
 
 import copy
@@ -23,6 +24,7 @@ import viscosity_choice as choice
 
 HERE = pathlib.Path(__file__).resolve().parent
 SATURATION_POINTS, SINGLE_POINTS, NEAREST = 7, 8, 0.98
+THINNEST_CONFORMAL = 0.01
 
 HEADER = """\
 # Viscosity of the reference forms that are in use: saturated liquid, saturated vapour, and single-phase states drawn at random.
@@ -88,8 +90,11 @@ def main(data):
         low = max(choice.PAPERS[name][0] or 0, lowest) + 1e-3
         high = min(choice.highest_temperature(name, record), end["T_max"])
         asked = reader(name)
+        least = THINNEST_CONFORMAL * asked.rhomass_critical() if choice.is_conformal(name, record) else 0.0
         asked.specify_phase(CoolProp.iphase_gas)
         for t, rho in states(name, record, low, high, random.Random(name)):
+            if rho < least:
+                continue
             try:
                 asked.update(CoolProp.DmassT_INPUTS, rho, t)
                 eta = asked.viscosity()
