@@ -204,10 +204,7 @@ fn a_row_of_the_table_tries_a_fluid_and_escape_puts_the_old_one_back() {
     harness.run();
     let before = app(&mut harness).desk().design.clone();
     assert_eq!(before.fluid.as_str(), "water");
-    harness
-        .get_by_role_and_label(Role::TextInput, "Find in the table")
-        .type_text("67-56-1");
-    harness.run();
+    type_into(&mut harness, "Find in the table", "67-56-1");
     harness
         .get_by_role_and_label(Role::Button, "methanol")
         .click();
@@ -219,8 +216,6 @@ fn a_row_of_the_table_tries_a_fluid_and_escape_puts_the_old_one_back() {
         charge.expect("a charge").bench_fill.expect("a fill ratio")
     };
     let methanol = fill(&mut harness);
-    harness.key_press(Key::Escape);
-    harness.run();
     harness.key_press(Key::Escape);
     harness.run();
     assert_eq!(app(&mut harness).desk().design, before);
@@ -240,10 +235,7 @@ fn an_excluded_fluid_stays_in_the_table_with_its_reason() {
     app(&mut harness).desk().library().fluids.read_all();
     harness.get_by_label("Fluids").click();
     harness.run();
-    harness
-        .get_by_role_and_label(Role::TextInput, "Find in the table")
-        .type_text("7664-41-7");
-    harness.run();
+    type_into(&mut harness, "Find in the table", "7664-41-7");
     assert!(
         harness
             .query_by_label_contains("ammonia, attacks the wall")

@@ -236,7 +236,8 @@ pub fn fluid_table_ui(
     units: &Units,
     table: &mut FluidTable,
 ) -> Option<Trial> {
-    let mut trial = table.put_back(ui, design);
+    let put_back = table.put_back(ui, design);
+    let mut picked = None;
     table.refresh(design, a, library);
     let known = library.fluids.ids().count();
     ui.horizontal(|ui| {
@@ -265,7 +266,7 @@ pub fn fluid_table_ui(
     });
     let wanted = table.search.trim().to_lowercase();
     let Some((_, _, rows)) = &table.ranked else {
-        return trial;
+        return put_back;
     };
     let shown: Vec<&Ranked> = rows
         .iter()
@@ -291,7 +292,7 @@ pub fn fluid_table_ui(
                     for row in &shown[range] {
                         let chosen = row.fluid.id() == design.fluid.as_str();
                         if row_ui(ui, row, chosen, &lefts, &columns, units).clicked() && !chosen {
-                            trial = trial_of(design, row);
+                            picked = Some(trial_of(design, row));
                         }
                     }
                 });
@@ -304,17 +305,18 @@ pub fn fluid_table_ui(
         table.ranked = None;
         ui.ctx().request_repaint();
     }
-    if let Some((fluid, _)) = &trial
-        && table
-            .tried
-            .as_ref()
-            .is_none_or(|(tried, ..)| *tried != design.fluid)
-    {
-        table.tried = Some((fluid.clone(), design.fluid.clone(), design.charge.clone()));
-    } else if let (Some((fluid, _)), Some(tried)) = (&trial, &mut table.tried) {
-        tried.0 = fluid.clone();
+    if let Some((fluid, charge)) = picked {
+        let (old_fluid, old_charge) = match table.tried.take() {
+            // One fluid after another: Escape goes back to what stood before the first.
+            Some((tried, old_fluid, old_charge)) if tried == design.fluid => {
+                (old_fluid, old_charge)
+            }
+            _ => (design.fluid.clone(), design.charge.clone()),
+        };
+        table.tried = Some((fluid.clone(), old_fluid, old_charge));
+        return Some((fluid, charge));
     }
-    trial
+    put_back
 }
 
 impl FluidTable {
@@ -357,13 +359,13 @@ impl FluidTable {
 }
 
 /// The fluid in the design, at the same fill ratio where the charge is a mass.
-fn trial_of(design: &Design, row: &Ranked) -> Option<Trial> {
+fn trial_of(design: &Design, row: &Ranked) -> Trial {
     let mut charge = design.charge.clone();
     if let (ChargeAim::Mass { mass }, Ok(same_fill)) = (&mut charge.aim, &row.mass) {
         let grams = crate::units::careful_down(same_fill.kilogram(), 4);
         *mass = Mass::from_kilogram(grams).unwrap_or(*same_fill);
     }
-    Some((FluidId::from(&*row.fluid), charge))
+    (FluidId::from(&*row.fluid), charge)
 }
 
 fn header_ui(ui: &mut Ui, lefts: &[f32], columns: &Columns, sort: &mut Option<(Column, bool)>) {
