@@ -196,7 +196,15 @@ impl Scale {
 
     fn text(&self, si: f64, units: &Units) -> String {
         match self.unit {
-            Some(unit) => units.number(self.kind, si * self.factor, unit, 4),
+            Some(unit) => {
+                // Leading noughts take the room of figures.
+                let digits = match unit.number_of(si * self.factor).abs() {
+                    small if small < 0.01 => 2,
+                    small if small < 0.1 => 3,
+                    _ => 4,
+                };
+                units.number(self.kind, si * self.factor, unit, digits)
+            }
             None => crate::units::figures(si * self.factor, 3),
         }
     }
