@@ -172,6 +172,10 @@ impl Model {
 }
 
 /// One phase at one temperature.
+#[expect(
+    clippy::large_enum_variant,
+    reason = "made on the stack for one solve, never kept"
+)]
 pub enum PhaseIsotherm<'a> {
     /// With the molar mass in kg/mol.
     Equation(Isotherm<'a>, f64),

@@ -162,9 +162,7 @@ impl App {
                 let sheet = || sheet_text(desk, &units);
                 behaviour_ui(
                     ui,
-                    &desk.design,
-                    desk.assessment(),
-                    desk.library(),
+                    desk,
                     &units,
                     sheet,
                     &mut self.behaviour,

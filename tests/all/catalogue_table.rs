@@ -55,10 +55,11 @@ fn digits(fluid: &Fluid, table: &[crate::tables::Row]) -> f64 {
         .iter()
         .filter(|row| row.name == fluid.id())
         .fold(0.0, |most: f64, row| {
+            let id = fluid.id();
             let at = fluid
                 .model()
                 .saturation(row.values[0], fluid.molar_mass())
-                .expect(fluid.id());
+                .expect(id);
             let found = [
                 at.pressure_pa,
                 at.liquid_kg_per_m3,
@@ -88,7 +89,7 @@ fn table() -> String {
             .map_or(String::new(), |(_, off)| format!("{off:+.2}"));
         let (model, deviation) = match fluid.model() {
             Model::Equation(_) => {
-                let top = fluid.curve().expect(fluid.id()).range_k().1;
+                let top = expansions::curve(&fluid).range_k().1;
                 let deviation = format!(
                     "digits {}; looked up {}, noise {}",
                     about(digits(&fluid, &exact)),

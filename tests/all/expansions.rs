@@ -1,11 +1,17 @@
 //! The looked-up saturation against the direct solve, fluid by fluid.
 
-use chargewright::fluid::{Catalog, Fluid, Model};
+use chargewright::fluid::{Catalog, Fluid, Model, SaturationCurve};
+
+pub fn curve(fluid: &Fluid) -> &SaturationCurve {
+    fluid
+        .curve()
+        .unwrap_or_else(|e| panic!("{}: {e}", fluid.id()))
+}
 
 /// Temperatures evenly spaced in √(1 − T/T_c), the variable of the expansions.
 fn temperatures(fluid: &Fluid, points: usize, highest_share: f64) -> Vec<f64> {
     let critical = fluid.critical().temperature_k;
-    let (low, high) = fluid.curve().expect(fluid.id()).range_k();
+    let (low, high) = curve(fluid).range_k();
     let x = |t: f64| (1.0 - t / critical).max(0.0).sqrt();
     let (from, to) = (x(high.min(highest_share * critical)), x(low));
     (0..points)
@@ -16,12 +22,13 @@ fn temperatures(fluid: &Fluid, points: usize, highest_share: f64) -> Vec<f64> {
 
 /// Greatest relative deviation of pressure and of either density from the direct solve.
 pub fn deviation(fluid: &Fluid, at: &[f64]) -> f64 {
-    let curve = fluid.curve().expect(fluid.id());
+    let id = fluid.id();
+    let curve = curve(fluid);
     at.iter().fold(0.0, |most: f64, t| {
         let solved = fluid
             .model()
             .curve_point(*t, fluid.molar_mass())
-            .unwrap_or_else(|e| panic!("{}: {e}", fluid.id()));
+            .unwrap_or_else(|e| panic!("{id}: {e}"));
         let found = curve.at(*t);
         let off = |a: f64, b: f64| (a / b - 1.0).abs();
         most.max(off(found.pressure_pa, solved.pressure_pa))
@@ -33,15 +40,11 @@ pub fn deviation(fluid: &Fluid, at: &[f64]) -> f64 {
 /// The direct solve's own noise at 0.9999 T_c: how far the liquid's density jumps beside
 /// itself over temperatures some last digits apart, where the true change is below 1e-12.
 pub fn noise(fluid: &Fluid) -> f64 {
-    let top = fluid.curve().expect(fluid.id()).range_k().1;
+    let id = fluid.id();
+    let top = curve(fluid).range_k().1;
     let densities: Vec<f64> = (0..64)
         .map(|k| top * (1.0 - f64::from(k) * f64::EPSILON))
-        .map(|t| {
-            fluid
-                .model()
-                .curve_point(t, fluid.molar_mass())
-                .expect(fluid.id())
-        })
+        .map(|t| fluid.model().curve_point(t, fluid.molar_mass()).expect(id))
         .flat_map(|at| [at.liquid_kg_per_m3, at.vapour_kg_per_m3])
         .collect();
     let spread = |phase: usize| {

@@ -44,6 +44,9 @@ impl Helium {
     }
 }
 
+/// A coefficient and its exponent.
+type Pair = (f64, f64);
+
 /// The gas of Stockmayer spheres with two viscosity virials, and Enskog's hard spheres of a
 /// diameter that shrinks with temperature, crossed over at the critical density.
 ///
@@ -57,7 +60,7 @@ pub struct Methanol {
     polarity: f64,
     /// Correction of the Lennard-Jones integral: (a, t), then (a, exponent), (a, exponent);
     /// and the factor of δ⁶.
-    stockmayer: ((f64, f64), (f64, f64), (f64, f64), f64),
+    stockmayer: (Pair, Pair, Pair, f64),
     /// (b, t) of the second virial.
     second: Vec<(f64, f64)>,
     /// c·T*³·exp(e·T*^(−1/2)) of the third.

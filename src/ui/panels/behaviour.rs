@@ -3,9 +3,10 @@
 use eframe::egui::{Align, Layout, RichText, ScrollArea, TextStyle, Ui, vec2};
 
 use super::fluids::{FluidTable, fluid_table_ui};
-use crate::assess::{Assessment, Library};
+use crate::assess::Assessment;
 use crate::design::{Charge, Design, FluidId};
 use crate::ui::command::Command;
+use crate::ui::desk::Desk;
 use crate::ui::plots::{
     Picture, PlotState, charge_map_ui, liquid_share_ui, pressure_ui, scrubber_ui,
 };
@@ -73,14 +74,13 @@ impl Behaviour {
 /// Shows how it behaves; a [`Wish`] where the user dragged the charge or tries a fluid.
 pub fn behaviour_ui(
     ui: &mut Ui,
-    design: &Design,
-    a: &Assessment,
-    library: &Library,
+    desk: &Desk,
     units: &Units,
     sheet_of: impl FnOnce() -> String,
     state: &mut Behaviour,
     out: &mut Vec<Command>,
 ) -> Option<Wish> {
+    let (design, a) = (&desk.design, desk.assessment());
     ui.horizontal(|ui| {
         ui.selectable_value(&mut state.tab, Tab::Behaviour, "Behaviour");
         ui.selectable_value(&mut state.tab, Tab::Fluids, "Fluids");
@@ -91,7 +91,7 @@ pub fn behaviour_ui(
     });
     match state.tab {
         Tab::Behaviour => pictures_ui(ui, design, a, units, state).map(Wish::Charge),
-        Tab::Fluids => fluid_table_ui(ui, design, a, library, units, &mut state.fluids)
+        Tab::Fluids => fluid_table_ui(ui, design, a, desk.library(), units, &mut state.fluids)
             .map(|(fluid, charge)| Wish::Fluid(fluid, charge)),
         Tab::Sheet => {
             sheet_ui(ui, design, sheet_of, state, out);
