@@ -77,7 +77,11 @@ fn write_index(text: &mut String, paths: &[PathBuf]) {
         let list = |key: &str| {
             let items = (0..).map_while(|i| values.get(&format!("{key}[{i}]")).copied());
             let lines: Vec<&str> = items.collect();
-            format!("concat!({})", lines.join(", \"\\n\", "))
+            match lines[..] {
+                [] => "\"\"".to_owned(),
+                [one] => one.to_owned(),
+                _ => format!("concat!({})", lines.join(", \"\\n\", ")),
+            }
         };
         let kind = if need("model").starts_with("Helmholtz") {
             "equation"
