@@ -1,6 +1,7 @@
 //! All integration tests, in one binary so that it links once.
 
 mod boundaries;
+mod catalogue;
 mod catalogue_table;
 mod charge_window;
 mod commands;
