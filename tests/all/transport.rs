@@ -83,6 +83,32 @@ fn high_pressure_gases_stand_at_their_test_pressure_at_65_degrees() {
     }
 }
 
+/// Seen: 49 CFR 173.304a, table 1 (the last four from memory of it): filling density in per
+/// cent of the mass of water at 60 °F, 999.04 kg/m³. The liquid may not fill the cylinder at
+/// 55 °C; for the three whose density the rule sets it does so within 2 K above.
+#[test]
+fn filling_densities_leave_room_at_55_degrees() {
+    for (id, percent, is_set_by_the_rule) in [
+        ("ammonia", 54.0, false),
+        ("r-142b", 100.0, false),
+        ("r-22", 105.0, true),
+        ("r-115", 110.0, true),
+        ("cyclopropane", 55.0, false),
+        ("r-12", 119.0, true),
+        ("sulfur-dioxide", 125.0, false),
+        ("r-40", 84.0, false),
+        ("r-152a", 79.0, false),
+        ("hydrogen-sulfide", 62.5, false),
+    ] {
+        let crossings = fluid(id)
+            .crossings(density(percent / 100.0 * 999.04))
+            .expect(id);
+        let full = crossings.last().expect(id).temperature.celsius();
+        assert!(full > 55.0, "{id}: {full:.2} °C");
+        assert!(!is_set_by_the_rule || full < 57.0, "{id}: {full:.2} °C");
+    }
+}
+
 /// Seen: TRG 300, annex 1, filling of pressurised packages, kg/L in metal and in glass. The
 /// glass ones are filled to 90 % of their volume at 50 °C, to the rounding of the ratio
 /// (0.895 to 0.907).
