@@ -8,6 +8,7 @@ mod asset;
 mod catalog;
 pub mod correlated;
 mod curve;
+mod density;
 mod entry;
 mod error;
 pub mod helmholtz;
