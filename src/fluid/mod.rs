@@ -158,10 +158,14 @@ impl Fluid {
     }
 
     /// Relative uncertainty of the saturation pressure that a worst case must carry.
-    /// Reference equations state tenths of a per cent, far inside the wall factors: 0.
+    /// Reference equations state tenths of a per cent, far inside the wall factors: 0,
+    /// but for the few whose file states more.
     pub fn pressure_uncertainty(&self) -> f64 {
         match &self.model {
-            Model::Equation(_) => 0.0,
+            Model::Equation(equation) => {
+                let percent = equation.data().pressure_uncertainty_percent;
+                percent.unwrap_or(0.0) / 100.0
+            }
             Model::Correlated(model) => model.pressure_uncertainty(),
         }
     }

@@ -302,9 +302,9 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
             say("Stored energy not computed", format!("{}. Treat it as high.", upper(reason)))
         }
         FindingKind::ModelUncertainty { percent } => say(
-            "Correlated fluid",
+            "Pressure less well known",
             format!(
-                "No reference equation exists for it: its pressure is known within {} %, which the worst case includes.",
+                "The model of this fluid gives its pressure within {} %, which the worst case includes.",
                 figures(careful_up(*percent, 2), 2)
             ),
         ),

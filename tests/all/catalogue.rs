@@ -192,3 +192,21 @@ fn impossible_densities_do_not_get_in() {
         );
     }
 }
+
+/// Four equations are so far from other published tables that the worst case carries it.
+#[test]
+fn a_weak_equation_says_so_and_the_worst_case_carries_it() {
+    for (id, percent) in [
+        ("cyclopropane", 6.0),
+        ("propyne", 3.5),
+        ("r-161", 4.0),
+        ("r-40", 2.0),
+    ] {
+        assert!(
+            (100.0 * fluid(id).pressure_uncertainty() - percent).abs() < 1e-9,
+            "{id}"
+        );
+    }
+    assert_eq!(fluid("water").pressure_uncertainty(), 0.0);
+    assert!(fluid("sodium").pressure_uncertainty() > 0.04);
+}

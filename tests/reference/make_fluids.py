@@ -198,7 +198,7 @@ def highest_density(equation, record, lowest):
     return float(f"{float(max(squeezed, mpf('1.05') * liquid)):.6g}")
 
 
-def equation_lines(record, papers, uncertainty=None):
+def equation_lines(record, papers, uncertainty=None, pressure_percent=None):
     """The lines inside `Helmholtz(( ... ))`; a paper on many fluids states its uncertainty fluid by fluid."""
     state = record["EOS"][0]
     equation = Equation(state)
@@ -215,6 +215,7 @@ def equation_lines(record, papers, uncertainty=None):
         "// the larger of 1.05 saturated liquid densities at the lower limit and the density at (lower limit, highest pressure)",
         f"highest_density_mol_per_m3: {number(highest_density(equation, record, lowest))},",
         f"uncertainty: {text(uncertainty or paper['uncertainty'])},",
+        *optional("pressure_uncertainty_percent", pressure_percent, number),
         f"gas_constant_j_per_mol_k: {number(state['gas_constant'])},",
         f"reducing: (temperature_k: {number(equation.reducing_temperature)}, "
         f"density_mol_per_m3: {number(equation.reducing_density)}),",
@@ -341,7 +342,9 @@ def main(data):
         if fluid["data"] in equations:
             record = equations[fluid["data"]]
             cas, molar_mass = record["INFO"]["CAS"], record["EOS"][0]["molar_mass"]
-            model = block("model: Helmholtz((", equation_lines(record, papers, fluid.get("uncertainty")), ")),")
+            model = block("model: Helmholtz((", equation_lines(
+                record, papers, fluid.get("uncertainty"), fluid.get("pressure_uncertainty_percent"),
+            ), ")),")
             borders = surface_tension(record, tension_papers) + transport_and_lines(fluid, cas, record, papers)
         else:
             forms = metals if fluid["data"] in metals.ELEMENTS else correlated

@@ -3,7 +3,7 @@
 use super::Judge;
 use crate::assess::finding::{FindingKind, Section, Severity};
 use crate::chamber::MaterialKind;
-use crate::fluid::{FluidError, Model, StabilityKind};
+use crate::fluid::{FluidError, StabilityKind};
 use crate::hazard::{Compatibility, CompatibilityTable, EnergyError, PairVerdict};
 use crate::units::Temperature;
 
@@ -247,8 +247,8 @@ impl Judge<'_> {
     }
 
     pub(super) fn provenance(&mut self) {
-        if let Model::Correlated(model) = self.a.fluid.model() {
-            let percent = 100.0 * model.pressure_uncertainty();
+        let percent = 100.0 * self.a.fluid.pressure_uncertainty();
+        if percent > 0.0 {
             self.add(
                 Severity::Note,
                 Section::Fluid,

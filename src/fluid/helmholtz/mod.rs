@@ -34,6 +34,9 @@ pub struct EquationData {
     pub highest_density_mol_per_m3: f64,
     /// The paper's own statement.
     pub uncertainty: String,
+    /// Of the vapour pressure, where it is so great that a worst case must carry it.
+    #[serde(default)]
+    pub pressure_uncertainty_percent: Option<f64>,
     pub gas_constant_j_per_mol_k: f64,
     pub reducing: ReducingPoint,
     /// The equation's own: ∂p/∂ρ = ∂²p/∂ρ² = 0.
@@ -78,6 +81,8 @@ pub enum EquationError {
     TooManyTerms { limit: usize },
     #[error("{field} must be a finite number above 0, not {value}")]
     NotPositive { field: &'static str, value: f64 },
+    #[error("pressure_uncertainty_percent must be from 0 to 50, not {percent}")]
+    NotAShare { percent: f64 },
     #[error("temperature_range_k must rise, not {low} to {high}")]
     EmptyRange { low: f64, high: f64 },
 }
@@ -138,6 +143,11 @@ impl Equation {
             if !(value.is_finite() && value > 0.0) {
                 return Err(EquationError::NotPositive { field, value });
             }
+        }
+        if let Some(percent) = data.pressure_uncertainty_percent
+            && !(0.0..=50.0).contains(&percent)
+        {
+            return Err(EquationError::NotAShare { percent });
         }
         Ok(Self { data, residual })
     }
