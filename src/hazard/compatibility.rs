@@ -89,7 +89,22 @@ impl CompatibilityTable {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::chamber::Materials;
     use crate::fluid::Catalog;
+
+    /// A row of a metal that no file has would never be read.
+    #[test]
+    fn every_row_holds_for_a_material_that_comes_with_the_program() {
+        let materials = Materials::built_in();
+        for row in &CompatibilityTable::built_in().rows {
+            for beginning in &row.materials {
+                let known = materials
+                    .iter()
+                    .any(|known| known.id.starts_with(beginning));
+                assert!(known, "{beginning} with {:?}", row.fluids);
+            }
+        }
+    }
 
     /// Consensus of the heat-pipe handbooks (from memory of Reay and Kew, Faghri).
     #[test]
