@@ -3,8 +3,8 @@
 use std::fmt::Write as _;
 
 use eframe::egui::{
-    Align, Align2, Pos2, Rect, Response, RichText, Role, Sense, Shape, Stroke, TextStyle, Ui, Vec2,
-    WidgetInfo, pos2, vec2,
+    Align, Align2, Pos2, Rect, Response, RichText, Role, Sense, Shape, Stroke, TextStyle,
+    TextWrapMode, Ui, Vec2, WidgetInfo, WidgetText, pos2, vec2,
 };
 
 use super::columns::{Column, Columns};
@@ -113,7 +113,6 @@ pub(super) fn row_ui(
         (false, true) => palette.text_faint,
         (false, false) => palette.text,
     };
-    let font = TextStyle::Body.resolve(ui.style());
     for (i, (column, scale)) in columns.0.iter().enumerate() {
         let column = *column;
         let cell = cell(rect, lefts, i);
@@ -130,8 +129,13 @@ pub(super) fn row_ui(
             Column::Objection if !chosen => palette.text_faint,
             _ => colour,
         };
+        // A name too long for its cell ends in an ellipsis; the hover says it whole.
+        let text = WidgetText::from(RichText::new(text).color(colour));
+        let room = cell.right() - cell.left();
+        let galley = text.into_galley(ui, Some(TextWrapMode::Truncate), room, TextStyle::Body);
+        let place = align.anchor_size(pos2(x, cell.center().y), galley.size());
         let painter = ui.painter().with_clip_rect(cell.intersect(ui.clip_rect()));
-        painter.text(pos2(x, cell.center().y), align, text, font.clone(), colour);
+        painter.galley(place.min, galley, colour);
     }
     response.on_hover_ui(|ui| {
         ui.label(RichText::new(row.fluid.name()).strong());
