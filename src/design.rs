@@ -82,6 +82,12 @@ pub enum ChargeAim {
 pub enum NamedVolume {
     /// The whole inside.
     Inside,
+    /// The inside without the space of wicks.
+    VapourCore,
+    /// The pores, grooves and arteries of all wicks.
+    WickVoid,
+    /// The inside of all parts in the evaporator zone.
+    Evaporator,
     /// The parts of this name together, each with all of its count.
     Part(String),
 }

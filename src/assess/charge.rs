@@ -3,11 +3,11 @@
 use std::sync::Arc;
 
 use super::figure::{Figure, Missing};
-use crate::chamber::Volumes;
+use crate::chamber::{Movement, NamedVolumes, Volumes};
 use crate::design::{ChargeAim, Design, NamedVolume};
 use crate::fluid::Fluid;
 use crate::sealed::SealedUnit;
-use crate::units::{Mass, Temperature, Volume};
+use crate::units::{Mass, Pressure, Volume};
 
 /// The sealed mass and what the bench sees of it.
 #[derive(Debug, Clone, PartialEq)]
@@ -16,7 +16,9 @@ pub struct ChargeFigures {
     pub nominal: Mass,
     pub least: Mass,
     pub greatest: Mass,
-    /// What is dispensed: sealed mass and purge loss.
+    /// Vapour in the stub as it is parted at bench temperature.
+    pub stub_content: Mass,
+    /// What is dispensed: sealed mass, purge loss and what leaves in the stub.
     pub dispensed: Mass,
     /// Liquid volume dispensed at bench temperature.
     pub dispensed_volume: Figure<Volume>,
@@ -36,19 +38,35 @@ pub struct Corners {
 }
 
 /// The sealed mass that a design's charge means.
-pub fn charge_figures(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<ChargeFigures> {
+pub fn charge_figures(
+    design: &Design,
+    fluid: &Fluid,
+    named: &NamedVolumes,
+    movement: Movement,
+) -> Figure<ChargeFigures> {
     let bench = design.conditions.bench;
-    let nominal = sealed_mass(design, fluid, volumes, bench)?;
+    let nominal = sealed_mass(design, fluid, named, movement)?;
     let tolerance = design.charge.tolerance.kilogram();
     let mass =
         |kilogram: f64| Mass::from_kilogram(kilogram.max(0.0)).map_err(|_| Missing::NoCharge);
-    let dispensed = mass(nominal.kilogram() + design.bench.purge_loss.kilogram())?;
     let liquid = fluid.saturation(bench).map_err(Missing::Fluid);
+    let stub = design
+        .chamber
+        .closure
+        .as_ref()
+        .and_then(|c| c.stub.as_ref());
+    let stub_content = mass(match (&liquid, stub) {
+        (Ok(at), Some(stub)) => at.vapour_kg_per_m3 * stub.volume.nominal.cubic_metre(),
+        _ => 0.0,
+    })?;
+    let lost = design.bench.purge_loss.kilogram() + stub_content.kilogram();
+    let dispensed = mass(nominal.kilogram() + lost)?;
     let dispensed_volume = liquid.clone().and_then(|at| {
         Volume::from_cubic_metre(dispensed.kilogram() / at.liquid_kg_per_m3)
             .map_err(|_| Missing::NoCharge)
     });
-    let density = nominal.kilogram() / volumes.nominal.cubic_metre();
+    let inside_m3 = named.inside.nominal.cubic_metre() * movement.growth(bench.kelvin());
+    let density = nominal.kilogram() / inside_m3;
     let bench_fill = liquid.map(|at| {
         ((density - at.vapour_kg_per_m3) / (at.liquid_kg_per_m3 - at.vapour_kg_per_m3))
             .clamp(0.0, 1.0)
@@ -57,6 +75,7 @@ pub fn charge_figures(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figu
         nominal,
         least: mass(nominal.kilogram() - tolerance)?,
         greatest: mass(nominal.kilogram() + tolerance)?,
+        stub_content,
         dispensed,
         dispensed_volume,
         bench_fill,
@@ -64,9 +83,17 @@ pub fn charge_figures(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figu
 }
 
 /// The corners as sealed units.
-pub fn corners(fluid: &Arc<Fluid>, charge: &ChargeFigures, volumes: &Volumes) -> Figure<Corners> {
+pub fn corners(
+    fluid: &Arc<Fluid>,
+    charge: &ChargeFigures,
+    volumes: &Volumes,
+    movement: Movement,
+    outside: Pressure,
+) -> Figure<Corners> {
     let unit = |mass, volume| {
-        SealedUnit::new(Arc::clone(fluid), mass, volume).map_err(|_| Missing::NoCharge)
+        SealedUnit::new(Arc::clone(fluid), mass, volume)
+            .map(|unit| unit.with_walls(movement, outside))
+            .map_err(|_| Missing::NoCharge)
     };
     Ok(Corners {
         nominal: unit(charge.nominal, volumes.nominal)?,
@@ -78,9 +105,10 @@ pub fn corners(fluid: &Arc<Fluid>, charge: &ChargeFigures, volumes: &Volumes) ->
 fn sealed_mass(
     design: &Design,
     fluid: &Fluid,
-    volumes: &Volumes,
-    bench: Temperature,
+    volumes: &NamedVolumes,
+    movement: Movement,
 ) -> Figure<Mass> {
+    let bench = design.conditions.bench;
     let checked = |kilogram: f64| {
         Mass::from_kilogram(kilogram)
             .ok()
@@ -91,22 +119,39 @@ fn sealed_mass(
         ChargeAim::Mass { mass } => checked(mass.kilogram()),
         ChargeAim::Dispensed { volume } => {
             let at = fluid.saturation(bench)?;
-            checked(volume.cubic_metre() * at.liquid_kg_per_m3 - design.bench.purge_loss.kilogram())
+            let stub = design
+                .chamber
+                .closure
+                .as_ref()
+                .and_then(|c| c.stub.as_ref());
+            let stub = stub.map_or(0.0, |stub| stub.volume.nominal.cubic_metre());
+            let lost = design.bench.purge_loss.kilogram() + at.vapour_kg_per_m3 * stub;
+            checked(volume.cubic_metre() * at.liquid_kg_per_m3 - lost)
         }
         ChargeAim::FillRatio {
             ratio,
             temperature,
             of,
         } => {
-            let at = fluid.saturation(temperature.unwrap_or(bench))?;
-            let inside = volumes.nominal.cubic_metre();
+            let temperature = temperature.unwrap_or(bench);
+            let at = fluid.saturation(temperature)?;
+            let inside = volumes.inside.nominal.cubic_metre();
             let named = match of {
                 NamedVolume::Inside => inside,
+                NamedVolume::VapourCore => volumes.vapour_core.nominal.cubic_metre(),
+                NamedVolume::WickVoid => match volumes.wick_void.nominal.cubic_metre() {
+                    0.0 => return Err(Missing::NoWick),
+                    void => void,
+                },
+                NamedVolume::Evaporator => match &volumes.evaporator {
+                    Some(evaporator) => evaporator.nominal.cubic_metre(),
+                    None => return Err(Missing::NoEvaporator),
+                },
                 NamedVolume::Part(name) => {
                     let parts = design.chamber.parts.iter();
                     let named: Vec<f64> = parts
                         .filter(|part| part.name == *name)
-                        .map(|part| part.volumes().nominal_m3.abs())
+                        .map(|part| part.volumes().inside.nominal_m3.abs())
                         .collect();
                     if named.is_empty() {
                         return Err(Missing::NoSuchPart { name: name.clone() });
@@ -120,7 +165,11 @@ fn sealed_mass(
                     share: liquid / inside,
                 });
             }
-            checked(at.liquid_kg_per_m3 * liquid + at.vapour_kg_per_m3 * (inside - liquid))
+            // Liquid and the volume it is counted in, both at that temperature.
+            let growth = movement.growth(temperature.kelvin());
+            checked(
+                growth * (at.liquid_kg_per_m3 * liquid + at.vapour_kg_per_m3 * (inside - liquid)),
+            )
         }
     }
 }

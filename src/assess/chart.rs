@@ -5,7 +5,7 @@ use super::worst::Walls;
 use crate::design::Design;
 use crate::fluid::Fluid;
 use crate::sealed::{PathPoint, SealedUnit, path};
-use crate::units::{Density, Mass, Pressure, Quantity, Temperature, Volume};
+use crate::units::{Density, Mass, Pressure, Quantity, Temperature};
 
 /// Points of the sealed path.
 const PATH_POINTS: usize = 400;
@@ -80,7 +80,7 @@ pub fn charts(
     window_end: Option<Mass>,
 ) -> Charts {
     let fluid = unit.fluid();
-    let map = charge_map(fluid, unit.volume(), span, walls);
+    let map = charge_map(unit, span, walls);
     let rightmost = map
         .liquid_full
         .iter()
@@ -115,18 +115,14 @@ fn limits(fluid: &Fluid, span: (Temperature, Temperature), walls: &Walls<'_>) ->
         .collect()
 }
 
-fn charge_map(
-    fluid: &Fluid,
-    volume: Volume,
-    span: (Temperature, Temperature),
-    walls: &Walls<'_>,
-) -> ChargeMap {
+fn charge_map(unit: &SealedUnit, span: (Temperature, Temperature), walls: &Walls<'_>) -> ChargeMap {
+    let fluid = unit.fluid();
     let mut map = ChargeMap::default();
     let (low, high) = fluid.saturation_range();
     let freezing = fluid.freezing_point();
     let critical = fluid.critical();
     let at = |density: f64, temperature: Temperature| {
-        let mass = Mass::from_kilogram(density * volume.cubic_metre()).ok()?;
+        let mass = Mass::from_kilogram(density * unit.volume_at_m3(temperature)).ok()?;
         Some(MapPoint { mass, temperature })
     };
     let from = span.0.max(low).max(freezing);
@@ -152,7 +148,7 @@ fn charge_map(
     let (_, top) = fluid.range();
     let range = (span.0.max(fluid.range().0).max(freezing), span.1.min(top));
     if range.0 < range.1 {
-        map.allowable = allowable_line(fluid, volume, range, walls).unwrap_or_default();
+        map.allowable = allowable_line(unit, range, walls).unwrap_or_default();
     }
     map
 }
@@ -160,15 +156,15 @@ fn charge_map(
 /// The contour p(m, T) = allowable. It follows the liquid line, crosses the dome
 /// level where the vapour pressure meets the allowable, and leaves along the vapour.
 fn allowable_line(
-    fluid: &Fluid,
-    volume: Volume,
+    unit: &SealedUnit,
     range: (Temperature, Temperature),
     walls: &Walls<'_>,
 ) -> Figure<Vec<MapPoint>> {
+    let fluid = unit.fluid();
     let mut line = Vec::new();
     let curve = fluid.curve()?;
     let at = |density: f64, temperature: Temperature| {
-        let mass = Mass::from_kilogram(density * volume.cubic_metre()).ok()?;
+        let mass = Mass::from_kilogram(density * unit.volume_at_m3(temperature)).ok()?;
         Some(MapPoint { mass, temperature })
     };
     let gap_below =

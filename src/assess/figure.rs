@@ -20,6 +20,10 @@ pub enum Missing {
     NoCharge,
     #[error("the fill ratio names the part “{name}”, which is not in the parts list")]
     NoSuchPart { name: String },
+    #[error("the fill ratio is of the wick, and no part is one")]
+    NoWick,
+    #[error("the fill ratio is of the evaporator, and no part is said to be in that zone")]
+    NoEvaporator,
     #[error("the temperatures contradict each other")]
     Conditions,
     #[error("the room has no volume")]

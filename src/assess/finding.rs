@@ -23,6 +23,7 @@ pub enum Severity {
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Hash)]
 pub enum Section {
     Conditions,
+    Exposures,
     Demands,
     Fluid,
     Chamber,
@@ -58,6 +59,7 @@ pub enum FindingKind {
         allowable: Pressure,
         temperature: Temperature,
         part: String,
+        formula: &'static str,
     },
     LiquidFull {
         at: Temperature,
@@ -93,10 +95,37 @@ pub enum FindingKind {
         bench: Temperature,
         pressure: Option<FrozenPressure>,
     },
-    /// Under outside pressure a wall can collapse; that is not computed here.
-    CollapseNotJudged {
-        inside: Pressure,
-        outside: Pressure,
+    /// More pressure outside than a wall may bear.
+    Collapses {
+        part: String,
+        stretch: String,
+        temperature: Temperature,
+        load: Pressure,
+        allowable: Pressure,
+        formula: &'static str,
+    },
+    CollapseNotKnown {
+        stretch: String,
+        missing: Missing,
+    },
+    ClosureNotStated,
+    /// A stub comes off, and nothing is said of it.
+    StubNotStated {
+        closure: &'static str,
+    },
+    /// Neither a relief device nor a reason for none.
+    NoReliefReason,
+    ReliefTooHigh {
+        opens_at: Pressure,
+        allowable: Pressure,
+    },
+    ReliefOpensInUse {
+        opens_at: Pressure,
+        load: Pressure,
+    },
+    /// What lies inside has no material: nothing is known of it with the fluid.
+    MadeOfUnknown {
+        parts: String,
     },
     /// Above the critical temperature ullage means nothing; the pressure governs.
     AboveCritical {
@@ -175,6 +204,8 @@ pub enum FindingKind {
     NoHazardLimits,
     BrittleGlass {
         part: String,
+        /// Difference to a bath that it bears without load.
+        bears: Option<TemperatureDifference>,
     },
     NotForConsumers {
         reason: String,
@@ -193,6 +224,7 @@ pub enum FindingKind {
     FactorsBelowDefault {
         on_burst: f64,
         on_yield: f64,
+        on_collapse: f64,
     },
     Rupture {
         energy: Energy,

@@ -8,13 +8,15 @@ mod chart;
 mod figure;
 mod finding;
 mod judge;
+mod life;
+mod outside;
 mod ranking;
 mod window;
 mod worst;
 
 use std::sync::Arc;
 
-use crate::chamber::{Envelope, Materials, Volumes};
+use crate::chamber::{Envelope, Materials, Movement, NamedVolumes, Volumes};
 use crate::design::Design;
 use crate::fluid::{Catalog, DomeSide, Fluid, FluidError, Regime};
 use crate::hazard::{EnergyError, Release, release, rupture_energy};
@@ -25,6 +27,8 @@ pub use charge::{ChargeFigures, Corners};
 pub use chart::{ChargeMap, Charts, LimitPoint, MapPoint};
 pub use figure::{Figure, Missing};
 pub use finding::{Finding, FindingKind, Section, Severity, Verdict};
+pub use life::Stretch;
+pub use outside::OutsideCase;
 pub use ranking::{Objection, Ranked, rank};
 pub use window::{Bound, Requirement, Side, Window};
 pub use worst::{Walls, WorstCase};
@@ -72,7 +76,10 @@ pub enum EventKind {
 #[derive(Debug, Clone, PartialEq)]
 pub struct Assessment {
     pub fluid: Arc<Fluid>,
+    /// The inside at the reference temperature.
     pub volumes: Figure<Volumes>,
+    pub named: Figure<NamedVolumes>,
+    pub movement: Movement,
     pub envelope: Envelope,
     pub least_outside: Pressure,
     pub charge: Figure<ChargeFigures>,
@@ -87,6 +94,10 @@ pub struct Assessment {
     /// Dry-out temperature of the lightest corner.
     pub lightest_dry_at: Figure<Option<Temperature>>,
     pub worst: Figure<WorstCase>,
+    /// The hottest at which the empty unit may be pumped out in the air, from the bench up.
+    pub vacuum_stands_to: Option<Temperature>,
+    /// The worst moment of every stretch of life in which the outside presses.
+    pub outside: Vec<OutsideCase>,
     pub window: Figure<Window>,
     pub charts: Figure<Charts>,
     pub release: Figure<Release>,
@@ -107,19 +118,35 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         .fluids
         .by_id(design.fluid.as_str())
         .expect("a design's fluid is looked up when it is read");
-    let volumes = design.chamber.volumes().map_err(Missing::from);
-    let envelope = Envelope::new(&design.chamber, &library.materials, design.demands.factors);
+    let chamber = &design.chamber;
+    let named = chamber
+        .named_volumes(&library.materials)
+        .map_err(Missing::from);
+    let volumes = named
+        .as_ref()
+        .map(|named| named.inside)
+        .map_err(Clone::clone);
+    let movement = Movement::of(chamber, &library.materials);
+    let envelope = Envelope::new(
+        chamber,
+        &library.materials,
+        design.demands.factors,
+        design.conditions.across_wall,
+    );
     let walls = Walls {
         envelope: &envelope,
         least_outside: design.conditions.least_outside,
         knots: envelope.knots(),
     };
-    let charge = volumes
+    let charge = named
         .as_ref()
         .map_err(Clone::clone)
-        .and_then(|v| charge::charge_figures(design, &fluid, v));
+        .and_then(|v| charge::charge_figures(design, &fluid, v, movement));
     let corners = match (&charge, &volumes) {
-        (Ok(charge), Ok(volumes)) => charge::corners(&fluid, charge, volumes),
+        (Ok(charge), Ok(volumes)) => {
+            let outside = design.conditions.least_outside;
+            charge::corners(&fluid, charge, volumes, movement, outside)
+        }
         (Err(missing), _) | (_, Err(missing)) => Err(missing.clone()),
     };
     let with_corners = || corners.as_ref().map_err(Missing::clone);
@@ -132,7 +159,11 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         // A charge that may be nothing has a finding of its own.
         None => Ok(None),
     });
-    let worst = with_corners().and_then(|c| worst::worst_case(design, c, &walls));
+    let stretches = life::stretches(design);
+    let worst = with_corners().and_then(|c| worst::worst_case(&stretches, c, &walls));
+    let vacuum_stands_to =
+        outside::vacuum_stands_to(&walls, design.conditions.bench, design.conditions.barometer);
+    let outside = outside::outside_cases(&stretches, corners.as_ref().ok(), &walls);
     let walls_known = match &worst {
         Ok(case) => case
             .weakest
@@ -141,10 +172,14 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
             .map_err(|e| Missing::Strength(e.clone())),
         Err(missing) => Err(missing.clone()),
     };
-    let window = volumes
-        .as_ref()
-        .map_err(Missing::clone)
-        .and_then(|v| window::window(design, &fluid, v, &walls_known));
+    let window = volumes.as_ref().map_err(Missing::clone).and_then(|v| {
+        window::window(
+            design,
+            &fluid,
+            &window::Space::new(v, movement),
+            &walls_known,
+        )
+    });
     let charts = with_corners().map(|c| {
         let kinks: Vec<Temperature> = events
             .iter()
@@ -165,6 +200,8 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
     let mut assessment = Assessment {
         fluid,
         volumes,
+        named,
+        movement,
         least_outside: design.conditions.least_outside,
         charge,
         corners,
@@ -173,6 +210,8 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         heaviest_over_at,
         lightest_dry_at,
         worst,
+        vacuum_stands_to,
+        outside,
         window,
         charts,
         release,
@@ -187,6 +226,11 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
 }
 
 impl Assessment {
+    /// The moment at which the walls are nearest to giving way from outside.
+    pub fn worst_outside(&self) -> Option<&OutsideCase> {
+        outside::governing(&self.outside)
+    }
+
     /// Allowable and burst pressure of the weakest part at a temperature, absolute.
     pub fn limits_at(&self, temperature: Temperature) -> Option<(Pressure, Option<Pressure>)> {
         let weakest = self.envelope.weakest(temperature).ok()?;
@@ -233,9 +277,13 @@ fn side_of(unit: &SealedUnit, side: DomeSide) -> Figure<Option<Temperature>> {
         return Ok(is_there.then_some(low));
     }
     // At the critical point a unit denser than critical leaves by the liquid's side.
-    let critical = match unit.mean_density().kilogram_per_cubic_metre() {
-        rho if rho >= fluid.critical().density_kg_per_m3 => DomeSide::Liquid,
-        _ => DomeSide::Vapour,
+    let critical = fluid.critical();
+    let at_critical = Temperature::from_kelvin(critical.temperature_k)
+        .map_or(0.0, |t| unit.mean_density_at(t).kilogram_per_cubic_metre());
+    let critical = if at_critical >= critical.density_kg_per_m3 {
+        DomeSide::Liquid
+    } else {
+        DomeSide::Vapour
     };
     let on_side = crossings.iter().rfind(|crossing| {
         crossing.side == side || (crossing.side == DomeSide::Critical && side == critical)

@@ -9,6 +9,7 @@ use std::sync::Arc;
 
 use super::figure::Missing;
 use super::{Assessment, Figure};
+use crate::chamber::Movement;
 use crate::design::{Design, Duty};
 use crate::fluid::{DomeSide, Fluid, FluidError, Regime, StabilityKind};
 use crate::hazard::{CompatibilityTable, PairVerdict};
@@ -56,6 +57,7 @@ struct Yardstick<'a> {
     /// Fill ratio of the inside at the bench.
     fill: Figure<f64>,
     volume_m3: f64,
+    movement: Movement,
     middle: Temperature,
     /// Liquid-full is too near below this.
     full_from: Temperature,
@@ -113,14 +115,6 @@ impl<'a> Yardstick<'a> {
         let kelvin = |t: f64| Temperature::from_kelvin(t).unwrap_or(conditions.working_high);
         let middle = 0.5 * (conditions.working_low.kelvin() + conditions.working_high.kelvin());
         let limit = |t| a.limits_at(t).map(|(allowable, _)| allowable);
-        let mut materials: Vec<&str> = design
-            .chamber
-            .parts
-            .iter()
-            .filter_map(|part| Some(part.wall.as_ref()?.material.as_str()))
-            .collect();
-        materials.sort_unstable();
-        materials.dedup();
         let fill = match &a.charge {
             Ok(charge) => charge.bench_fill.clone(),
             Err(missing) => Err(missing.clone()),
@@ -129,12 +123,13 @@ impl<'a> Yardstick<'a> {
             design,
             fill,
             volume_m3: a.volumes.as_ref().map_or(0.0, |v| v.nominal.cubic_metre()),
+            movement: a.movement,
             middle: kelvin(middle),
             full_from: conditions
                 .hottest
                 .shifted(design.demands.liquid_full_margin),
             allowable: [limit(conditions.hottest), limit(conditions.coldest)],
-            materials,
+            materials: design.chamber.materials(),
         }
     }
 
@@ -142,7 +137,11 @@ impl<'a> Yardstick<'a> {
         let conditions = &self.design.conditions;
         let density = self.density(&fluid);
         let state = |t: Temperature| {
-            let state = fluid.state(density.clone()?, t)?;
+            let density = density.clone()?.kilogram_per_cubic_metre();
+            let there =
+                Density::from_kilogram_per_cubic_metre(density / self.movement.growth(t.kelvin()))
+                    .map_err(|_| Missing::NoCharge)?;
+            let state = fluid.state(there, t)?;
             Ok((state.pressure, state.regime))
         };
         let at_hottest = state(conditions.hottest);
@@ -152,7 +151,10 @@ impl<'a> Yardstick<'a> {
         for crossing in density
             .clone()
             .ok()
-            .and_then(|density| fluid.crossings(density).ok())
+            .and_then(|density| {
+                let growth = |t| self.movement.growth(t);
+                fluid.crossings_growing(density, growth).ok()
+            })
             .into_iter()
             .flatten()
         {
@@ -180,14 +182,15 @@ impl<'a> Yardstick<'a> {
         ranked
     }
 
-    /// Mean density at the design's fill ratio.
+    /// Mean density in the volume at its reference, at the design's fill ratio.
     fn density(&self, fluid: &Fluid) -> Figure<Density> {
         let fill = self.fill.clone()?;
         let bench = self.design.conditions.bench;
         fluid.saturation_pressure(bench)?;
         let at = fluid.curve()?.at(bench.kelvin());
         Density::from_kilogram_per_cubic_metre(
-            fill * at.liquid_kg_per_m3 + (1.0 - fill) * at.vapour_kg_per_m3,
+            self.movement.growth(bench.kelvin())
+                * (fill * at.liquid_kg_per_m3 + (1.0 - fill) * at.vapour_kg_per_m3),
         )
         .map_err(|_| Missing::NoCharge)
     }

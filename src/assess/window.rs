@@ -1,8 +1,9 @@
 //! The window of allowed mass: every requirement is a bound at a temperature.
 
 use super::figure::{Figure, Missing};
+use super::life::{Stretch, stretches};
 use super::worst::Walls;
-use crate::chamber::Volumes;
+use crate::chamber::{Movement, Volumes};
 use crate::design::{Design, Duty};
 use crate::fluid::{Fluid, FluidError};
 use crate::units::{Density, Mass, Pressure, Temperature, careful_down, careful_up};
@@ -81,6 +82,26 @@ impl Window {
     }
 }
 
+/// The inside at its corners, at any temperature.
+pub struct Space<'a> {
+    volumes: &'a Volumes,
+    movement: Movement,
+}
+
+impl<'a> Space<'a> {
+    pub const fn new(volumes: &'a Volumes, movement: Movement) -> Self {
+        Self { volumes, movement }
+    }
+
+    fn least_m3(&self, temperature: Temperature) -> f64 {
+        self.volumes.least.cubic_metre() * self.movement.growth(temperature.kelvin())
+    }
+
+    fn greatest_m3(&self, temperature: Temperature) -> f64 {
+        self.volumes.greatest.cubic_metre() * self.movement.growth(temperature.kelvin())
+    }
+}
+
 /// Share of the smallest volume that the frozen fluid may fill.
 const FROZEN_SHARE: f64 = 0.95;
 
@@ -91,18 +112,18 @@ const FROZEN_SHARE: f64 = 0.95;
 pub fn window(
     design: &Design,
     fluid: &Fluid,
-    volumes: &Volumes,
+    space: &Space<'_>,
     walls: &Figure<Walls<'_>>,
 ) -> Figure<Window> {
     let mut bounds = Vec::new();
-    if let Some(bound) = liquid_when_hot(design, fluid, volumes)? {
+    if let Some(bound) = liquid_when_hot(design, fluid, space)? {
         bounds.push(bound);
     }
-    bounds.extend(ullage(design, fluid, volumes)?);
-    bounds.extend(liquid_full_margin(design, fluid, volumes)?);
-    bounds.extend(frozen_volume(design, fluid, volumes));
+    bounds.extend(ullage(design, fluid, space)?);
+    bounds.extend(liquid_full_margin(design, fluid, space)?);
+    bounds.extend(frozen_volume(design, fluid, space));
     if let Ok(walls) = walls {
-        bounds.extend(allowable(design, fluid, volumes, walls)?);
+        bounds.extend(allowable(&stretches(design), fluid, space, walls)?);
     }
     let end = |side: Side, better: fn(f64, f64) -> bool| {
         bounds
@@ -149,7 +170,7 @@ fn bound(
     })
 }
 
-fn liquid_when_hot(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<Option<Bound>> {
+fn liquid_when_hot(design: &Design, fluid: &Fluid, space: &Space<'_>) -> Figure<Option<Bound>> {
     if design.duty == Duty::PlainVessel {
         return Ok(None);
     }
@@ -160,13 +181,13 @@ fn liquid_when_hot(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<
         Requirement::LiquidWhenHot,
         Side::AtLeast,
         vapour,
-        volumes.greatest.cubic_metre(),
+        space.greatest_m3(t),
         t,
     ))
 }
 
 /// Undefined above the critical temperature: there the pressure governs.
-fn ullage(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<Option<Bound>> {
+fn ullage(design: &Design, fluid: &Fluid, space: &Space<'_>) -> Figure<Option<Bound>> {
     let t = design.conditions.hottest;
     let share = design.demands.ullage.fraction();
     match fluid.saturation_pressure(t) {
@@ -177,7 +198,7 @@ fn ullage(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<Option<Bo
                 Requirement::Ullage,
                 Side::AtMost,
                 density,
-                volumes.least.cubic_metre(),
+                space.least_m3(t),
                 t,
             ))
         }
@@ -193,7 +214,7 @@ fn ullage(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<Option<Bo
 /// that lies above the critical temperature and the hottest below it, the unit must
 /// dry out and not fill: the critical density. Water's liquid is lightest at one of
 /// the two ends of the range, so both are asked.
-fn liquid_full_margin(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figure<Option<Bound>> {
+fn liquid_full_margin(design: &Design, fluid: &Fluid, space: &Space<'_>) -> Figure<Option<Bound>> {
     let conditions = &design.conditions;
     let t = conditions
         .hottest
@@ -203,8 +224,9 @@ fn liquid_full_margin(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figu
     if conditions.hottest.kelvin() >= critical.temperature_k {
         return Ok(None);
     }
-    let density = if t > top && is_equation(fluid) {
-        critical.density_kg_per_m3
+    let mass_kg = if t > top && is_equation(fluid) {
+        let at = Temperature::from_kelvin(critical.temperature_k).unwrap_or(t);
+        critical.density_kg_per_m3 * space.least_m3(at.min(t))
     } else {
         match fluid.saturation_pressure(t) {
             Ok(_) => {}
@@ -217,21 +239,19 @@ fn liquid_full_margin(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Figu
             .max(low)
             .max(fluid.freezing_point())
             .min(t);
-        curve
-            .at(t.kelvin())
-            .liquid_kg_per_m3
-            .min(curve.at(cold.kelvin()).liquid_kg_per_m3)
+        let full = |t: Temperature| curve.at(t.kelvin()).liquid_kg_per_m3 * space.least_m3(t);
+        full(t).min(full(cold))
     };
     Ok(bound(
         Requirement::LiquidFullMargin,
         Side::AtMost,
-        density,
-        volumes.least.cubic_metre(),
+        mass_kg,
+        1.0,
         t,
     ))
 }
 
-fn frozen_volume(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Option<Bound> {
+fn frozen_volume(design: &Design, fluid: &Fluid, space: &Space<'_>) -> Option<Bound> {
     let freezing = fluid.freezing_point();
     let solid = fluid.solid_density()?;
     if design.conditions.coldest >= freezing {
@@ -241,7 +261,7 @@ fn frozen_volume(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Option<Bo
         Requirement::FrozenVolume,
         Side::AtMost,
         FROZEN_SHARE * solid.value,
-        volumes.least.cubic_metre(),
+        space.least_m3(freezing),
         freezing,
     )
 }
@@ -249,22 +269,24 @@ fn frozen_volume(design: &Design, fluid: &Fluid, volumes: &Volumes) -> Option<Bo
 /// The mass that stands at the allowable pressure, least over the hottest and every
 /// temperature in range where a strength bends: between those the hottest governs.
 fn allowable(
-    design: &Design,
+    stretches: &[Stretch],
     fluid: &Fluid,
-    volumes: &Volumes,
+    space: &Space<'_>,
     walls: &Walls<'_>,
 ) -> Figure<Option<Bound>> {
-    let conditions = &design.conditions;
     let freezing = fluid.freezing_point();
-    let temperatures = walls
-        .knots
-        .iter()
-        .copied()
-        .filter(|t| *t > conditions.coldest && *t < conditions.hottest)
-        .chain([conditions.hottest]);
     let mut least: Option<(Density, Temperature)> = None;
-    for t in temperatures.filter(|t| *t >= freezing) {
-        let limit = walls.allowable_pressure(t)?.pascal() / (1.0 + fluid.pressure_uncertainty());
+    let moments = stretches
+        .iter()
+        .filter(|stretch| stretch.is_sealed())
+        .flat_map(|stretch| {
+            let temperatures = stretch.temperatures(&walls.knots);
+            let warm = temperatures.filter(|t| *t > stretch.coldest || *t == stretch.hottest);
+            warm.map(move |t| (stretch.least_outside, t))
+        });
+    for (outside, t) in moments.filter(|(_, t)| *t >= freezing) {
+        let allowable = walls.envelope.weakest(t)?.allowable.pressure;
+        let limit = (allowable.pascal() + outside.pascal()) / (1.0 + fluid.pressure_uncertainty());
         let Ok(limit) = Pressure::from_pascal(limit) else {
             continue;
         };
@@ -282,7 +304,7 @@ fn allowable(
             Requirement::AllowablePressure,
             Side::AtMost,
             density,
-            volumes.least.cubic_metre(),
+            space.least_m3(t),
             t,
         )
     }))

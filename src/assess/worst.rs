@@ -1,9 +1,11 @@
 //! The worst case: greatest pressure of the worst corner against the weakest wall.
 
+use std::sync::Arc;
+
 use super::charge::Corners;
 use super::figure::{Figure, Missing};
+use super::life::Stretch;
 use crate::chamber::{Envelope, StrengthUnknown, Weakest};
-use crate::design::Design;
 use crate::fluid::State;
 use crate::units::{Pressure, Temperature};
 
@@ -19,11 +21,15 @@ pub struct Walls<'a> {
 /// One condition's pressure and what the walls say to it.
 #[derive(Debug, Clone, PartialEq)]
 pub struct WorstCase {
+    /// The stretch of life in which it occurs.
+    pub stretch: Arc<str>,
     pub temperature: Temperature,
     /// Absolute, with the model's uncertainty in it.
     pub pressure: Pressure,
     pub state: State,
-    /// Inside minus least outside.
+    /// Least pressure outside there, absolute.
+    pub outside: Pressure,
+    /// Inside minus outside.
     pub load: Pressure,
     pub weakest: Result<Weakest, StrengthUnknown>,
     /// Load over allowable: 1 is the limit.
@@ -56,28 +62,30 @@ pub fn absolute(load: Pressure, outside: Pressure) -> Pressure {
 
 /// The governing condition of the heaviest corner.
 ///
-/// Every temperature of the conditions is asked, and every strength knot between
+/// The ends of every sealed stretch are asked, and every strength knot between
 /// them; the one with the greatest share of the allowable governs, or the greatest
 /// pressure where the strength is not known.
 ///
 /// # Errors
 /// The fluid's, where a condition lies outside its model.
-pub fn worst_case(design: &Design, corners: &Corners, walls: &Walls<'_>) -> Figure<WorstCase> {
-    let conditions = &design.conditions;
-    if conditions.hottest < conditions.coldest {
-        return Err(Missing::Conditions);
-    }
-    let knots = walls
-        .knots
-        .iter()
-        .copied()
-        .filter(|t| *t > conditions.coldest && *t < conditions.hottest);
+pub fn worst_case(
+    stretches: &[Stretch],
+    corners: &Corners,
+    walls: &Walls<'_>,
+) -> Figure<WorstCase> {
     let mut worst: Option<WorstCase> = None;
-    for temperature in [conditions.hottest, conditions.coldest]
-        .into_iter()
-        .chain(knots)
-    {
-        let case = at_temperature(corners, walls, temperature)?;
+    let moments = stretches
+        .iter()
+        .filter(|stretch| stretch.is_sealed())
+        .flat_map(|stretch| {
+            let temperatures = stretch.temperatures(&walls.knots);
+            temperatures.map(move |temperature| (stretch, temperature))
+        });
+    for (stretch, temperature) in moments {
+        if stretch.hottest < stretch.coldest {
+            return Err(Missing::Conditions);
+        }
+        let case = at_temperature(corners, walls, stretch, temperature)?;
         let worse = match &worst {
             None => true,
             Some(worst) => match (&case.of_allowable, &worst.of_allowable) {
@@ -95,25 +103,30 @@ pub fn worst_case(design: &Design, corners: &Corners, walls: &Walls<'_>) -> Figu
     worst.ok_or(Missing::Conditions)
 }
 
+/// Load over its limit. A wall under less pressure than on its other side carries no
+/// load; a wall that the tolerances take away altogether carries none at all.
+pub fn share_of(load: Pressure, limit: Pressure) -> f64 {
+    match load.pascal().max(0.0) {
+        0.0 => 0.0,
+        load if limit.pascal() <= 0.0 => load * f64::MAX.sqrt(),
+        load => load / limit.pascal(),
+    }
+}
+
 fn at_temperature(
     corners: &Corners,
     walls: &Walls<'_>,
+    stretch: &Stretch,
     temperature: Temperature,
 ) -> Figure<WorstCase> {
     let state = corners.heaviest.state(temperature)?;
     let uncertainty = corners.heaviest.fluid().pressure_uncertainty();
     let pressure = Pressure::from_pascal(state.pressure.pascal() * (1.0 + uncertainty))
         .unwrap_or(state.pressure);
-    let load =
-        Pressure::from_pascal(pressure.pascal() - walls.least_outside.pascal()).unwrap_or(pressure);
+    let outside = stretch.least_outside;
+    let load = Pressure::from_pascal(pressure.pascal() - outside.pascal()).unwrap_or(pressure);
     let weakest = walls.envelope.weakest(temperature);
-    // A wall under less inside than outside carries no inside load; a wall that the
-    // tolerances take away altogether carries none at all.
-    let share = |limit: Pressure| match load.pascal().max(0.0) {
-        0.0 => 0.0,
-        load if limit.pascal() <= 0.0 => load * f64::MAX.sqrt(),
-        load => load / limit.pascal(),
-    };
+    let share = |limit: Pressure| share_of(load, limit);
     let of_allowable = weakest
         .as_ref()
         .map(|w| share(w.allowable.pressure))
@@ -127,9 +140,11 @@ fn at_temperature(
         Err(error) => Err(Missing::Strength(error.clone())),
     };
     Ok(WorstCase {
+        stretch: Arc::clone(&stretch.name),
         temperature,
         pressure,
         state,
+        outside,
         load,
         weakest,
         of_allowable,

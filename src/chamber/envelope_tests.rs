@@ -17,18 +17,22 @@ fn one(shape: &str, thickness_mm: f64, material: &str, treatment: HeatTreatment)
     }
     let thickness = Length::from_metre(0.001 * thickness_mm).map(Dimension::exact);
     let thickness = thickness.expect("a length");
-    let material = material.to_owned();
     chamber.parts[0].wall = Some(Wall {
-        material,
-        thickness,
         treatment,
+        ..Wall::new(material, thickness)
     });
     chamber.parts[0].shape = shape;
     chamber
 }
 
 fn envelope(chamber: &Chamber) -> Envelope {
-    Envelope::new(chamber, &Materials::built_in(), Factors::default())
+    across(chamber, 0.0)
+}
+
+/// The same with this difference of temperature across the walls, K.
+fn across(chamber: &Chamber, kelvin: f64) -> Envelope {
+    let across = TemperatureDifference::from_kelvin(kelvin).expect("a difference");
+    Envelope::new(chamber, &Materials::built_in(), Factors::default(), across)
 }
 
 fn celsius(value: f64) -> Temperature {
@@ -199,7 +203,12 @@ fn the_weakest_governs_and_the_unknown_comes_first() {
 fn factors_and_joint_efficiency_divide_and_multiply() {
     let chamber = chamber(TUBE);
     let factors: Factors = ron::from_str("(on_burst: 8.0, joint_efficiency: 0.7)").expect("reads");
-    let weak = Envelope::new(&chamber, &Materials::built_in(), factors);
+    let weak = Envelope::new(
+        &chamber,
+        &Materials::built_in(),
+        factors,
+        TemperatureDifference::from_kelvin(0.0).expect("0"),
+    );
     let at = celsius(25.0);
     let (weak, usual) = (weak.weakest(at), envelope(&chamber).weakest(at));
     let (weak, usual) = (weak.expect("known"), usual.expect("known"));

@@ -17,12 +17,15 @@ pub struct JointEfficiency(f64);
 /// What stands between strength and allowable pressure.
 ///
 /// The defaults are burst 4, after NASA's payload safety rule for ground systems
-/// without a code (burst over working pressure), and yield 1.5, common practice.
+/// without a code (burst over working pressure), yield 1.5, common practice, and collapse
+/// 3, as in ASME BPVC VIII-1, UG-28 [from memory].
 #[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
 #[serde(deny_unknown_fields, default)]
 pub struct Factors {
     pub on_burst: Factor,
     pub on_yield: Factor,
+    /// Divides elastic collapse under outside pressure.
+    pub on_collapse: Factor,
     /// Multiplies every strength of every metal wall, the burst pressure as well.
     pub joint_efficiency: JointEfficiency,
 }
@@ -31,7 +34,9 @@ impl Factors {
     /// Whether any factor demands less than the default does.
     pub fn below_default(&self) -> bool {
         let default = Self::default();
-        self.on_burst < default.on_burst || self.on_yield < default.on_yield
+        self.on_burst < default.on_burst
+            || self.on_yield < default.on_yield
+            || self.on_collapse < default.on_collapse
     }
 }
 
@@ -40,6 +45,7 @@ impl Default for Factors {
         Self {
             on_burst: Factor(4.0),
             on_yield: Factor(1.5),
+            on_collapse: Factor(3.0),
             joint_efficiency: JointEfficiency(1.0),
         }
     }

@@ -1,12 +1,18 @@
 //! Contradictions in a chamber: data about data, never a panic.
 
+use super::closure::ClosureKind;
+use super::dimension::Pick;
+use super::material::MaterialKind;
 use super::materials::Materials;
-use super::part::{Part, Wall};
-use super::shape::Shape;
-use super::{Chamber, ChamberError};
+use super::part::{HeatTreatment, Part, Rating, Wall};
+use super::shape::{Role, Shape};
+use super::water::WaterFillError;
+use super::wick::{Lies, WickForm};
+use super::{Chamber, ChamberError, WickError};
 
-/// What contradicts itself; `part` is an index in [`Chamber::parts`], `dimension` the
-/// name that [`Shape::dimensions`] gives it, or [`ChamberFault::THICKNESS`].
+/// What contradicts itself; `part` is an index in [`Chamber::parts`], one past its end for
+/// the closure; `dimension` the name that [`Shape::dimensions`] gives it, or
+/// [`ChamberFault::THICKNESS`].
 #[derive(Debug, Clone, PartialEq)]
 pub enum ChamberFault {
     NoParts,
@@ -18,6 +24,9 @@ pub enum ChamberFault {
     TooLarge {
         volume_m3: f64,
     },
+    WaterFill(WaterFillError),
+    /// A volume stated as measured and a weighed fill beside it.
+    MeasuredTwice,
     /// There is a volume, but not at the worst corner of the tolerances.
     NothingLeftAtWorst,
     CountZero {
@@ -32,6 +41,11 @@ pub enum ChamberFault {
         part: usize,
         dimension: &'static str,
     },
+    /// The sizes of one shape do not go together.
+    Shape {
+        part: usize,
+        why: ShapeFault,
+    },
     WallMissing {
         part: usize,
     },
@@ -41,10 +55,47 @@ pub enum ChamberFault {
     WallThickerThanBore {
         part: usize,
     },
+    /// Tolerance and corrosion allowance leave nothing of the wall.
+    WallUsedUp {
+        part: usize,
+    },
     UnknownMaterial {
         part: usize,
         material: String,
     },
+    RatingReversed {
+        part: usize,
+    },
+    /// Closed in the flame, and no wall is glass with flame-sealed strength.
+    FlameSealWithoutGlass,
+}
+
+/// Sizes of one shape that do not go together.
+#[derive(Debug, Clone, Copy, PartialEq, thiserror::Error)]
+pub enum ShapeFault {
+    #[error("the neck is as wide as the bulb: draw it as a tube")]
+    NeckAsWideAsBulb,
+    #[error("the width is below the height: swap them")]
+    NarrowerThanHigh,
+    #[error("the core fills the bore")]
+    CoreFillsBore,
+    #[error("the wall of the core is thicker than the core")]
+    CoreWallFillsCore,
+    #[error("the convolutions are no wider at their crest than at their root")]
+    CrestWithinRoot,
+    #[error("the stroke is longer than the bellows")]
+    StrokeLongerThanBellows,
+    #[error("the bend is tighter than the tube is wide")]
+    BendTighterThanTube,
+    #[error("the pillars leave no room between them")]
+    PillarsTouch,
+    #[error("the wick is thicker than the bore leaves room for")]
+    WickThickerThanBore,
+    #[error("{0}")]
+    Wick(WickError),
+    /// Of what must be at least one.
+    #[error("{0} is 0")]
+    NoneOf(&'static str),
 }
 
 impl ChamberFault {
@@ -58,13 +109,19 @@ impl ChamberFault {
             | Self::ZeroVolume
             | Self::InsertsTooLarge { .. }
             | Self::TooLarge { .. }
+            | Self::WaterFill(_)
+            | Self::MeasuredTwice
+            | Self::FlameSealWithoutGlass
             | Self::NothingLeftAtWorst => None,
             Self::CountZero { part }
             | Self::ZeroDimension { part, .. }
             | Self::ToleranceLargerThanDimension { part, .. }
+            | Self::Shape { part, .. }
             | Self::WallMissing { part }
             | Self::WallOnInsert { part }
             | Self::WallThickerThanBore { part }
+            | Self::WallUsedUp { part }
+            | Self::RatingReversed { part }
             | Self::UnknownMaterial { part, .. } => Some(*part),
         }
     }
@@ -72,7 +129,7 @@ impl ChamberFault {
 
 pub(super) fn faults(chamber: &Chamber, materials: &Materials) -> Vec<ChamberFault> {
     let mut faults = Vec::new();
-    match chamber.volumes() {
+    match chamber.volumes(materials) {
         Ok(volumes) if volumes.least.cubic_metre() == 0.0 => {
             faults.push(ChamberFault::NothingLeftAtWorst);
         }
@@ -90,6 +147,10 @@ pub(super) fn faults(chamber: &Chamber, materials: &Materials) -> Vec<ChamberFau
         Err(ChamberError::TooLarge { volume_m3 }) => {
             faults.push(ChamberFault::TooLarge { volume_m3 });
         }
+        Err(ChamberError::WaterFill(error)) => faults.push(ChamberFault::WaterFill(error)),
+    }
+    if chamber.measured.is_some() && chamber.water_fill.is_some() {
+        faults.push(ChamberFault::MeasuredTwice);
     }
     // Also where the volume is measured: without parts there is no wall to judge.
     if chamber.parts.is_empty() {
@@ -98,6 +159,7 @@ pub(super) fn faults(chamber: &Chamber, materials: &Materials) -> Vec<ChamberFau
     for (index, part) in chamber.parts.iter().enumerate() {
         of_part(index, part, materials, &mut faults);
     }
+    of_closure(chamber, materials, &mut faults);
     faults
 }
 
@@ -111,53 +173,180 @@ fn of_part(part: usize, data: &Part, materials: &Materials, faults: &mut Vec<Cha
     }
     for (dimension, size) in dimensions {
         let (nominal_m, tolerance_m) = (size.nominal.metre(), size.tolerance.metre());
-        if nominal_m == 0.0 && !closes_a_cone(&data.shape, dimension) {
+        if nominal_m == 0.0 && !may_be_zero(&data.shape, dimension) {
             faults.push(ChamberFault::ZeroDimension { part, dimension });
         } else if nominal_m > 0.0 && tolerance_m >= nominal_m {
             faults.push(ChamberFault::ToleranceLargerThanDimension { part, dimension });
         }
     }
-    match (&data.wall, data.shape.is_insert()) {
-        (Some(_), true) => faults.push(ChamberFault::WallOnInsert { part }),
-        (None, false) => faults.push(ChamberFault::WallMissing { part }),
-        (Some(wall), false) => of_wall(part, wall, &data.shape, materials, faults),
-        (None, true) => {}
+    for (what, count) in data.shape.counts() {
+        if count == 0 {
+            let why = ShapeFault::NoneOf(what);
+            faults.push(ChamberFault::Shape { part, why });
+        }
     }
-}
-
-fn of_wall(
-    part: usize,
-    wall: &Wall,
-    shape: &Shape,
-    materials: &Materials,
-    faults: &mut Vec<ChamberFault>,
-) {
-    if shape
-        .bore_m()
-        .is_some_and(|bore_m| wall.thickness.nominal.metre() > bore_m)
+    if let Some(why) = of_shape(&data.shape) {
+        faults.push(ChamberFault::Shape { part, why });
+    }
+    match (&data.wall, data.shape.role()) {
+        (Some(_), Role::Insert | Role::Wick) => faults.push(ChamberFault::WallOnInsert { part }),
+        (None, Role::Cavity | Role::Lid) => faults.push(ChamberFault::WallMissing { part }),
+        (Some(wall), Role::Cavity | Role::Lid | Role::Rated) => {
+            of_wall(part, wall, &data.shape, faults);
+        }
+        (None, _) => {}
+    }
+    if let Some(id) = data.material()
+        && materials.get(id).is_none()
     {
-        faults.push(ChamberFault::WallThickerThanBore { part });
-    }
-    if materials.get(&wall.material).is_none() {
         faults.push(ChamberFault::UnknownMaterial {
             part,
-            material: wall.material.clone(),
+            material: id.to_owned(),
         });
+    }
+    of_rating(part, data.rating.as_ref(), faults);
+}
+
+fn of_wall(part: usize, wall: &Wall, shape: &Shape, faults: &mut Vec<ChamberFault>) {
+    let thickness_m = wall.thickness.nominal.metre();
+    if shape.bore_m().is_some_and(|bore_m| thickness_m > bore_m) {
+        faults.push(ChamberFault::WallThickerThanBore { part });
+    }
+    let allowance_m = wall.corrosion_allowance.metre();
+    if allowance_m > 0.0 && thickness_m > 0.0 && wall.least_thickness_m() == 0.0 {
+        faults.push(ChamberFault::WallUsedUp { part });
     }
 }
 
-/// One end of a cone may come to a point.
-fn closes_a_cone(shape: &Shape, dimension: &str) -> bool {
-    let Shape::ConeFrustum {
-        first_diameter,
-        second_diameter,
-        ..
-    } = shape
-    else {
-        return false;
+fn of_rating(part: usize, rating: Option<&Rating>, faults: &mut Vec<ChamberFault>) {
+    if rating.is_some_and(|rating| rating.hottest < rating.coldest) {
+        faults.push(ChamberFault::RatingReversed { part });
+    }
+}
+
+fn of_closure(chamber: &Chamber, materials: &Materials, faults: &mut Vec<ChamberFault>) {
+    let Some(closure) = &chamber.closure else {
+        return;
     };
-    dimension.ends_with("diameter")
-        && (first_diameter.nominal.metre() > 0.0 || second_diameter.nominal.metre() > 0.0)
+    of_rating(chamber.parts.len(), closure.rating.as_ref(), faults);
+    let is_flamed_glass = |part: &Part| {
+        part.wall.as_ref().is_some_and(|wall| {
+            let material = materials.get(&wall.material);
+            let glass = material.is_some_and(|m| matches!(m.kind, MaterialKind::Glass(_)));
+            glass && wall.treatment == HeatTreatment::FlameSealed
+        })
+    };
+    if closure.kind == ClosureKind::FlameSeal && !chamber.parts.iter().any(is_flamed_glass) {
+        faults.push(ChamberFault::FlameSealWithoutGlass);
+    }
+}
+
+/// What the nominal sizes of one shape contradict.
+fn of_shape(shape: &Shape) -> Option<ShapeFault> {
+    let m = |dimension: &super::Dimension| dimension.nominal.metre();
+    let fault = |wrong: bool, why: ShapeFault| wrong.then_some(why);
+    match shape {
+        Shape::Tube {
+            inside_diameter,
+            course,
+            ..
+        } => {
+            let radius_m = course.least_radius_m()?;
+            let tight = radius_m > 0.0 && radius_m <= 0.5 * m(inside_diameter);
+            fault(tight, ShapeFault::BendTighterThanTube)
+        }
+        Shape::Bulb {
+            inside_diameter,
+            neck_diameter,
+            ..
+        } => fault(
+            m(neck_diameter) >= m(inside_diameter) && m(inside_diameter) > 0.0,
+            ShapeFault::NeckAsWideAsBulb,
+        ),
+        Shape::FlattenedTube { width, height, .. } => {
+            fault(m(width) < m(height), ShapeFault::NarrowerThanHigh)
+        }
+        Shape::Annulus {
+            inside_diameter,
+            core_diameter,
+            core_thickness,
+            ..
+        } => fault(
+            m(core_diameter) >= m(inside_diameter) && m(inside_diameter) > 0.0,
+            ShapeFault::CoreFillsBore,
+        )
+        .or_else(|| {
+            fault(
+                2.0 * m(core_thickness) > m(core_diameter),
+                ShapeFault::CoreWallFillsCore,
+            )
+        }),
+        Shape::Bellows {
+            root_diameter,
+            crest_diameter,
+            length,
+            stroke,
+        } => fault(
+            m(crest_diameter) <= m(root_diameter) && m(root_diameter) > 0.0,
+            ShapeFault::CrestWithinRoot,
+        )
+        .or_else(|| fault(m(stroke) > m(length), ShapeFault::StrokeLongerThanBellows)),
+        Shape::Box {
+            width,
+            depth,
+            pillars: Some(pillars),
+            ..
+        } => {
+            let (across, along) = pillars.cell_m(m(width), m(depth));
+            let diameter_m = m(&pillars.diameter);
+            fault(
+                diameter_m > 0.0 && across.min(along) <= diameter_m,
+                ShapeFault::PillarsTouch,
+            )
+        }
+        Shape::Wick(wick) => {
+            if let Some(Lies::Lining { bore, .. }) = wick.lies()
+                && let Some(thickness_m) = wick.thickness_m(Pick::Nominal)
+                && m(bore) > 0.0
+                && 2.0 * thickness_m > m(bore)
+            {
+                return Some(ShapeFault::WickThickerThanBore);
+            }
+            // What the sizes give only: a size of 0 has a fault of its own.
+            let has_sizes = shape.dimensions().iter().all(|(_, size)| m(size) > 0.0)
+                || matches!(wick.form, WickForm::Grooves { .. });
+            let figures = wick.figures();
+            let errors = [
+                figures.porosity.err(),
+                figures.permeability_m2.err(),
+                figures.pore_radius_m.err(),
+            ];
+            errors
+                .into_iter()
+                .flatten()
+                .next()
+                .filter(|_| has_sizes)
+                .map(ShapeFault::Wick)
+        }
+        _ => None,
+    }
+}
+
+/// One end of a cone may come to a point, a bellows may stand still, a groove may be a V.
+fn may_be_zero(shape: &Shape, dimension: &str) -> bool {
+    match shape {
+        Shape::ConeFrustum {
+            first_diameter,
+            second_diameter,
+            ..
+        } => {
+            dimension.ends_with("diameter")
+                && (first_diameter.nominal.metre() > 0.0 || second_diameter.nominal.metre() > 0.0)
+        }
+        Shape::Bellows { .. } => dimension == "stroke",
+        Shape::Wick(_) => dimension == "floor width",
+        _ => false,
+    }
 }
 
 #[cfg(test)]
@@ -224,14 +413,22 @@ mod tests {
     #[test]
     fn a_faulty_part_leaves_the_rest_standing() {
         let mut chamber = chamber(TUBE);
-        let whole = chamber.volumes().expect("a volume").nominal.cubic_metre();
-        let ends = chamber.parts[1].volumes().nominal_m3;
+        let whole = chamber
+            .volumes(&Materials::built_in())
+            .expect("a volume")
+            .nominal
+            .cubic_metre();
+        let ends = chamber.parts[1].volumes().inside.nominal_m3;
         for (_, dimension) in chamber.parts[1].shape.dimensions_mut() {
             dimension.nominal = length_m(0.0);
         }
         let faults = chamber.faults(&Materials::built_in());
         assert!(faults.iter().all(|fault| fault.part() == Some(1)) && !faults.is_empty());
-        let left = chamber.volumes().expect("a volume").nominal.cubic_metre();
+        let left = chamber
+            .volumes(&Materials::built_in())
+            .expect("a volume")
+            .nominal
+            .cubic_metre();
         assert!((left - (whole - ends)).abs() < 1e-15);
     }
 

@@ -2,7 +2,7 @@
 
 use serde::{Deserialize, Serialize};
 
-use super::curve::{Positive, Strength};
+use super::curve::{Curve, Positive, Strength};
 use super::part::HeatTreatment;
 use crate::source::Sourced;
 use crate::units::{Density, Ratio, Temperature};
@@ -19,6 +19,9 @@ pub struct Material {
     pub kind: MaterialKind,
     #[serde(rename = "modulus_pa")]
     pub modulus: Sourced<Positive>,
+    /// Where the metal is hot; without it the modulus holds up to the hottest service.
+    #[serde(default)]
+    pub hot_modulus: Option<Curve>,
     #[serde(deserialize_with = "below_a_half")]
     pub poisson_ratio: Sourced<Ratio>,
     /// Linear, mean over the range its source names.
@@ -93,6 +96,8 @@ pub struct Glass {
     pub permissible: Sourced<Positive>,
     /// Share of it left where the flame has worked the glass.
     pub flame_worked: Sourced<Ratio>,
+    /// Share of it left in glass that has been handled, cleaned or exposed for years.
+    pub worn: Sourced<Ratio>,
     /// Short-term tensile strength, characteristic value.
     #[serde(default, rename = "short_term_pa")]
     pub short_term: Option<Sourced<Positive>>,
@@ -106,6 +111,20 @@ impl Material {
         match &self.kind {
             MaterialKind::Glass(glass) => Some(glass),
             MaterialKind::Metal(_) => None,
+        }
+    }
+
+    /// Modulus at a temperature, Pa: the curve's end values hold beyond it, and the
+    /// room-temperature value where there is no curve and in the cold, where it only rises.
+    pub fn modulus_pa(&self, temperature: Temperature) -> f64 {
+        let room_pa = self.modulus.value.get();
+        let Some(curve) = &self.hot_modulus else {
+            return room_pa;
+        };
+        match curve.at(temperature) {
+            Ok(pa) => pa.min(room_pa),
+            Err(_) if temperature.kelvin() < curve.first().0 => room_pa.min(curve.first().1),
+            Err(_) => curve.last().1.min(room_pa),
         }
     }
 
@@ -150,13 +169,13 @@ impl Condition {
 
 impl Glass {
     /// Permissible tensile stress, Pa: the published one, less where the flame has
-    /// worked the glass, and never above the divided short-term strength.
-    pub fn permissible_pa(&self, flame_worked: bool) -> f64 {
-        let share = if flame_worked {
-            self.flame_worked.value.fraction()
-        } else {
-            1.0
+    /// worked the glass or years have worn it, and never above the divided short-term
+    /// strength. Flame and wear both count.
+    pub fn permissible_pa(&self, flame_worked: bool, worn: bool) -> f64 {
+        let left = |applies: bool, share: &Sourced<Ratio>| {
+            if applies { share.value.fraction() } else { 1.0 }
         };
+        let share = left(flame_worked, &self.flame_worked) * left(worn, &self.worn);
         let permissible_pa = share * self.permissible.value.get();
         match &self.short_term {
             Some(short_term) => {

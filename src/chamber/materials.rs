@@ -244,7 +244,10 @@ mod tests {
             let glass = materials.get(id).and_then(|material| material.glass());
             let glass = glass.expect("glass");
             assert_eq!(
-                (glass.permissible_pa(false), glass.permissible_pa(true)),
+                (
+                    glass.permissible_pa(false, false),
+                    glass.permissible_pa(true, false)
+                ),
                 (whole_pa, flamed_pa),
                 "{id}"
             );

@@ -5,149 +5,126 @@
 //! part, and the rest still counts. Strengths are loads: inside minus outside.
 
 mod bounds;
+mod capacity;
+pub mod capillary;
+mod closure;
 mod curve;
 mod dimension;
 mod envelope;
+mod face;
 mod factors;
 mod fault;
+mod fields;
+mod formula;
+pub mod groove;
 mod material;
 mod materials;
 mod menu;
+mod movement;
+mod outside;
 mod part;
 mod resistance;
 mod shape;
 mod solid;
 pub mod strength;
+mod volumes;
+pub mod water;
+mod wick;
 
+pub use capacity::Capacity;
+pub use capillary::WickError;
+pub use closure::{Closure, ClosureKind, Relief, Stub};
 pub use curve::{Curve, CurveError, Positive, ROOM_K, RoomValue, Strength, StrengthAt};
 pub use dimension::{Dimension, Pick};
 pub use envelope::{
-    Allowable, AllowableBasis, Envelope, PartStrength, StrengthGap, StrengthUnknown, Weakest,
+    Allowable, AllowableBasis, Envelope, OutsideAllowable, OutsideBasis, PartStrength, StrengthGap,
+    StrengthUnknown, Weakest, WeakestOutside,
 };
 pub use factors::{Factor, Factors, JointEfficiency};
-pub use fault::ChamberFault;
+pub use fault::{ChamberFault, ShapeFault};
+pub use fields::Field;
 pub use material::{AfterAnnealing, Condition, Glass, Material, MaterialKind, Metal, ServiceRange};
 pub use materials::{MaterialError, Materials};
-pub use part::{HeatTreatment, Part, PartVolumes, Wall};
-pub use shape::{DishedForm, InsertForm, PlateEdge, Shape};
+pub use movement::{Movement, REFERENCE_K};
+pub use part::{HeatTreatment, Part, PartVolumes, Rating, Spread, Wall, Zone};
+pub use shape::{Course, DishedForm, InsertForm, Pillars, PlateEdge, Role, Shape};
+pub use volumes::{ChamberError, MeasuredVolume, NamedVolumes, Volumes, WaterFill};
+pub use wick::{Entered, Lies, Wick, WickFigures, WickForm};
 
 use serde::{Deserialize, Serialize};
 
-use crate::units::Volume;
+use crate::units::Tilt;
 
-#[derive(Debug, Clone, PartialEq, Default, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
 #[serde(deny_unknown_fields)]
 pub struct Chamber {
+    /// Along the axis, the lowest first where it stands.
     pub parts: Vec<Part>,
     /// Takes the place of the parts' sum.
     #[serde(default)]
     pub measured: Option<MeasuredVolume>,
+    /// The same, by weighing it empty and full of water.
+    #[serde(default)]
+    pub water_fill: Option<WaterFill>,
+    #[serde(default)]
+    pub closure: Option<Closure>,
+    /// Of the axis against the horizontal, the first part low.
+    #[serde(rename = "tilt_rad", default = "upright")]
+    pub tilt: Tilt,
+    /// Whether the walls' yielding to pressure counts in the volume.
+    #[serde(default)]
+    pub elastic_growth: bool,
 }
 
-/// Inside volume as measured, by a weighed water fill for instance.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
-#[serde(deny_unknown_fields)]
-pub struct MeasuredVolume {
-    #[serde(rename = "volume_m3")]
-    pub volume: Volume,
-    /// Plus and minus, at the worst.
-    #[serde(rename = "uncertainty_m3")]
-    pub uncertainty: Volume,
-}
-
-/// Inside volume: nominal and at the worst tolerance corners.
-#[derive(Debug, Clone, Copy, PartialEq)]
-pub struct Volumes {
-    pub nominal: Volume,
-    /// Least cavities with greatest inserts; 0 where nothing is left, which is the
-    /// fault [`ChamberFault::NothingLeftAtWorst`].
-    pub least: Volume,
-    /// Greatest cavities with least inserts.
-    pub greatest: Volume,
-}
-
-/// Why a chamber has no volume.
-#[derive(Debug, Clone, Copy, PartialEq, thiserror::Error)]
-pub enum ChamberError {
-    #[error("the chamber has no parts")]
-    NoParts,
-    #[error("the parts enclose no volume")]
-    ZeroVolume,
-    #[error("the inserts take {inserts_m3:e} m3 out of a cavity of {cavity_m3:e} m3")]
-    InsertsTooLarge { cavity_m3: f64, inserts_m3: f64 },
-    #[error("a volume of {volume_m3:e} m3 is beyond all measure")]
-    TooLarge { volume_m3: f64 },
+impl Default for Chamber {
+    fn default() -> Self {
+        Self {
+            parts: Vec::new(),
+            measured: None,
+            water_fill: None,
+            closure: None,
+            tilt: upright(),
+            elastic_growth: false,
+        }
+    }
 }
 
 impl Chamber {
-    /// Inside volume, with the measured one in the place of the sum where there is one.
-    /// A faulty part counts for what its sizes give, which may be nothing.
-    ///
-    /// # Errors
-    /// [`ChamberError`] where nothing is enclosed.
-    pub fn volumes(&self) -> Result<Volumes, ChamberError> {
-        let (nominal_m3, least_m3, greatest_m3) = match &self.measured {
-            Some(measured) => measured.corners_m3()?,
-            None => self.sum_m3()?,
-        };
-        Ok(Volumes {
-            nominal: volume(nominal_m3)?,
-            least: volume(least_m3.max(0.0))?,
-            greatest: volume(greatest_m3)?,
-        })
-    }
-
     /// Everything that contradicts itself, in the order of the parts.
     pub fn faults(&self, materials: &Materials) -> Vec<ChamberFault> {
         fault::faults(self, materials)
     }
 
-    fn sum_m3(&self) -> Result<(f64, f64, f64), ChamberError> {
-        if self.parts.is_empty() {
-            return Err(ChamberError::NoParts);
-        }
-        let (mut cavity_m3, mut inserts_m3) = (0.0, 0.0);
-        let (mut least_m3, mut greatest_m3) = (0.0, 0.0);
-        for part in &self.parts {
-            let volumes = part.volumes();
-            if part.shape.is_insert() {
-                inserts_m3 -= volumes.nominal_m3;
-            } else {
-                cavity_m3 += volumes.nominal_m3;
-            }
-            least_m3 += volumes.least_m3;
-            greatest_m3 += volumes.greatest_m3;
-        }
-        if cavity_m3 <= 0.0 {
-            Err(ChamberError::ZeroVolume)
-        } else if inserts_m3 >= cavity_m3 {
-            Err(ChamberError::InsertsTooLarge {
-                cavity_m3,
-                inserts_m3,
-            })
-        } else {
-            Ok((cavity_m3 - inserts_m3, least_m3, greatest_m3))
-        }
+    /// The parts, and the closure as the last of them.
+    pub(crate) fn all_parts(&self) -> impl Iterator<Item = std::borrow::Cow<'_, Part>> {
+        let closure = self.closure.as_ref().map(Closure::part);
+        let parts = self.parts.iter().map(std::borrow::Cow::Borrowed);
+        parts.chain(closure.map(std::borrow::Cow::Owned))
+    }
+
+    /// Ids of the materials that the fluid touches, in the order of the parts.
+    pub fn materials_in_order(&self) -> impl Iterator<Item = &str> {
+        self.parts.iter().filter_map(Part::material)
+    }
+
+    /// Ids of the materials that the fluid touches, each once, sorted.
+    pub fn materials(&self) -> Vec<&str> {
+        let mut ids: Vec<&str> = self.materials_in_order().collect();
+        ids.sort_unstable();
+        ids.dedup();
+        ids
     }
 }
 
-impl MeasuredVolume {
-    fn corners_m3(&self) -> Result<(f64, f64, f64), ChamberError> {
-        let (volume, off) = (self.volume.cubic_metre(), self.uncertainty.cubic_metre());
-        if volume <= 0.0 {
-            return Err(ChamberError::ZeroVolume);
-        }
-        Ok((volume, volume - off, volume + off))
-    }
-}
-
-fn volume(volume_m3: f64) -> Result<Volume, ChamberError> {
-    Volume::from_cubic_metre(volume_m3).map_err(|_| ChamberError::TooLarge { volume_m3 })
+fn upright() -> Tilt {
+    use crate::units::Quantity;
+    Tilt::from_radian(Tilt::RANGE.1).expect("the end of its range")
 }
 
 #[cfg(test)]
 pub(crate) mod tests {
     use super::*;
+    use crate::units::Volume;
     use std::f64::consts::PI;
 
     /// A copper tube with ends, a rod inside; for the tests of this room.
@@ -178,7 +155,9 @@ pub(crate) mod tests {
 
     #[test]
     fn volume_is_cavities_less_inserts_at_every_corner() {
-        let volumes = chamber(TUBE).volumes().expect("a volume");
+        let volumes = chamber(TUBE)
+            .volumes(&Materials::built_in())
+            .expect("a volume");
         let ends = 2.0 * PI * 0.011f64.powi(3) / 12.0;
         let expected = |d: f64, l: f64, rod: f64| 0.25 * PI * (d * d * l - rod * rod * 0.1) + ends;
         close(volumes.nominal, expected(0.011, 0.2, 0.004));
@@ -196,8 +175,9 @@ pub(crate) mod tests {
             let volumes = Chamber {
                 parts,
                 measured: Some(measured),
+                ..Chamber::default()
             }
-            .volumes()
+            .volumes(&Materials::built_in())
             .expect("a volume");
             close(volumes.nominal, 50e-6);
             close(volumes.least, 49.8e-6);
@@ -207,22 +187,28 @@ pub(crate) mod tests {
 
     #[test]
     fn nothing_enclosed_is_an_error_that_says_why() {
-        assert_eq!(Chamber::default().volumes(), Err(ChamberError::NoParts));
+        assert_eq!(
+            Chamber::default().volumes(&Materials::built_in()),
+            Err(ChamberError::NoParts)
+        );
         let mut chamber = chamber(TUBE);
         chamber.parts[2].count = 1000;
         assert!(matches!(
-            chamber.volumes(),
+            chamber.volumes(&Materials::built_in()),
             Err(ChamberError::InsertsTooLarge { .. })
         ));
         chamber.parts[0].count = 0;
         chamber.parts[1].count = 0;
-        assert_eq!(chamber.volumes(), Err(ChamberError::ZeroVolume));
+        assert_eq!(
+            chamber.volumes(&Materials::built_in()),
+            Err(ChamberError::ZeroVolume)
+        );
         chamber.parts[0].count = u32::MAX;
         for (_, dimension) in chamber.parts[0].shape.dimensions_mut() {
             *dimension = Dimension::exact(crate::units::Length::from_metre(1e4).expect("a length"));
         }
         assert!(matches!(
-            chamber.volumes(),
+            chamber.volumes(&Materials::built_in()),
             Err(ChamberError::TooLarge { .. })
         ));
     }

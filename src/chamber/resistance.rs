@@ -1,9 +1,10 @@
 //! What a wall of a given shape bears per unit of stress.
 
-use super::dimension::Pick;
+use super::dimension::{Dimension, Pick};
 use super::envelope::StrengthGap;
-use super::shape::{DishedForm, PlateEdge, Shape};
-use super::strength::{cylinder, glass, head, plate, sphere};
+use super::face;
+use super::shape::{Course, DishedForm, PlateEdge, Shape};
+use super::strength::{bend, compliance, cylinder, glass, head, plate, sphere};
 
 /// Pressure over stress, from the sizes alone: every formula is linear in stress.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -24,12 +25,18 @@ impl PressurePerStress {
     /// At the least thickness and the greatest inside sizes.
     ///
     /// # Errors
-    /// [`StrengthGap`] for an insert, a size of 0 and a cone too steep.
+    /// [`StrengthGap`] for what has no wall, bears by rating, a size of 0, a cone too steep
+    /// and a bend too tight.
     pub(super) fn of(shape: &Shape, least_t_m: f64, nu: f64) -> Result<Self, StrengthGap> {
         let t = least_t_m;
-        let m = |dimension: &super::Dimension| dimension.at(Pick::Greatest).metre();
+        let m = |dimension: &Dimension| dimension.at(Pick::Greatest).metre();
         let per_stress = match shape {
             Shape::Tube {
+                inside_diameter,
+                course,
+                ..
+            } => Self::cylinder(m(inside_diameter), t).bent(course, m(inside_diameter), t)?,
+            Shape::Capillary {
                 inside_diameter, ..
             } => Self::cylinder(m(inside_diameter), t),
             Shape::Sphere { inside_diameter }
@@ -37,6 +44,11 @@ impl PressurePerStress {
                 inside_diameter,
                 form: DishedForm::Hemispherical,
             } => Self::sphere(m(inside_diameter), t),
+            Shape::Bulb {
+                inside_diameter,
+                neck_diameter,
+                ..
+            } => Self::sphere(m(inside_diameter), t).or(Self::cylinder(m(neck_diameter), t)),
             Shape::DishedEnd {
                 inside_diameter,
                 form: DishedForm::TwoToOneEllipsoidal,
@@ -51,11 +63,7 @@ impl PressurePerStress {
                 length,
             } => {
                 // The steepest cone that the tolerances allow.
-                let (wide, narrow) = if first_diameter.nominal >= second_diameter.nominal {
-                    (first_diameter, second_diameter)
-                } else {
-                    (second_diameter, first_diameter)
-                };
+                let (wide, narrow) = wide_and_narrow(first_diameter, second_diameter);
                 let half_angle_degrees = head::half_angle_degrees(
                     m(wide),
                     narrow.least().metre(),
@@ -70,18 +78,43 @@ impl PressurePerStress {
                 inside_diameter,
                 edge,
             } => Self::flat_end(m(inside_diameter), t, nu, *edge),
+            Shape::PlateEnd {
+                width,
+                height,
+                edge,
+            } => {
+                let bending = plate::rectangular_stress_pa(1.0, m(width), m(height), t, *edge);
+                Self::alike(1.0 / (bending + 1.0))
+            }
             Shape::Box {
                 width,
                 height,
                 depth,
-            } => Self::alike(weakest_face([m(width), m(height), m(depth)], t)),
-            Shape::Insert { .. } => return Err(StrengthGap::NoWall),
+                pillars,
+            } => {
+                let sides = [m(width), m(height), m(depth)];
+                Self::alike(face::of_box(sides, pillars.as_ref(), t))
+            }
+            Shape::FlattenedTube { width, height, .. } => {
+                Self::alike(face::of_flattened_tube(m(width), m(height), t))
+            }
+            // Its core bears from outside: see `outside`.
+            Shape::Annulus {
+                inside_diameter, ..
+            } => Self::cylinder(m(inside_diameter), t),
+            Shape::Bellows { .. } | Shape::Fitting { .. } => return Err(StrengthGap::NoRating),
+            Shape::Insert { .. } | Shape::Wick(_) => return Err(StrengthGap::NoWall),
         };
         if per_stress.all().iter().all(|x| x.is_finite()) {
             Ok(per_stress)
         } else {
             Err(StrengthGap::NoSize)
         }
+    }
+
+    /// A closed tube by itself: the core of an annulus under pressure from its own inside.
+    pub(super) fn tube(inside_diameter_m: f64, t: f64) -> Self {
+        Self::cylinder(inside_diameter_m, t)
     }
 
     pub(super) fn burst_pa(&self, sy_pa: f64, su_pa: f64) -> f64 {
@@ -134,6 +167,33 @@ impl PressurePerStress {
         }
     }
 
+    /// The weaker of two in each respect.
+    fn or(self, other: Self) -> Self {
+        Self {
+            plastic: self.plastic.min(other.plastic),
+            tensile: self.tensile.min(other.tensile),
+            first_yield: self.first_yield.min(other.first_yield),
+            code_form: self.code_form.min(other.code_form),
+            permissible: self.permissible.min(other.permissible),
+        }
+    }
+
+    /// The same tube in its bend.
+    fn bent(self, course: &Course, bore_m: f64, t: f64) -> Result<Self, StrengthGap> {
+        let Some(radius_m) = course.least_radius_m() else {
+            return Ok(self);
+        };
+        let share =
+            bend::pressure_factor(bore_m + 2.0 * t, radius_m).ok_or(StrengthGap::BendTooTight)?;
+        Ok(Self {
+            plastic: share * self.plastic,
+            tensile: share * self.tensile,
+            first_yield: share * self.first_yield,
+            code_form: share * self.code_form,
+            permissible: share * self.permissible,
+        })
+    }
+
     /// One figure for a shape with one formula: greatest elastic stress, or code form.
     /// With σ_y (2 − σ_y/σ_u) against σ_u, burst is by [`head::flow_strength_pa`].
     const fn alike(per_stress: f64) -> Self {
@@ -157,81 +217,64 @@ impl PressurePerStress {
     }
 }
 
-/// Which formulas judge a shape, for "why this number".
-pub(super) const fn formula(shape: &Shape, glass: bool) -> &'static str {
-    match (shape, glass) {
-        (Shape::Tube { .. }, false) => {
-            "burst: the lower of Faupel and tensile strength on the mean diameter; yield: Lamé with von Mises; code form: UG-27(c)"
+/// What a wall yields to pressure, m³/Pa, by its nominal sizes; 0 where no formula is at
+/// hand.
+pub(super) fn growth_m3_per_pa(shape: &Shape, t: f64, modulus_pa: f64, nu: f64) -> f64 {
+    let m = |dimension: &Dimension| dimension.nominal.metre();
+    let volume_m3 = shape.volume(Pick::Nominal);
+    let radii = |bore: &Dimension| (0.5 * m(bore), 0.5 * m(bore) + t);
+    let grown = match shape {
+        Shape::Tube {
+            inside_diameter, ..
         }
-        (Shape::Tube { .. }, true) => "permissible stress: EN 1595 form, Lamé where thick",
-        (
-            Shape::Sphere { .. }
-            | Shape::DishedEnd {
-                form: DishedForm::Hemispherical,
-                ..
-            },
-            false,
-        ) => {
-            "burst: the lower of full plasticity with hardening and tensile strength on the mean diameter; yield: Lamé; code form: UG-27(d)"
+        | Shape::Capillary {
+            inside_diameter, ..
+        } => {
+            let (ri, ro) = radii(inside_diameter);
+            volume_m3 * compliance::cylinder_per_pa(modulus_pa, nu, ri, ro)
         }
-        (
-            Shape::Sphere { .. }
-            | Shape::DishedEnd {
-                form: DishedForm::Hemispherical,
-                ..
-            },
-            true,
-        ) => "permissible stress: thin sphere on the mean diameter, Lamé where thick",
-        (Shape::ConeFrustum { .. }, false) => {
-            "as a tube of the radius square to the wall at the wide end; code form: UG-32(g)"
+        Shape::Sphere { inside_diameter }
+        | Shape::Bulb {
+            inside_diameter, ..
         }
-        (Shape::ConeFrustum { .. }, true) => {
-            "as a tube of the radius square to the wall at the wide end; permissible stress: EN 1595 form"
+        | Shape::DishedEnd {
+            inside_diameter,
+            form: DishedForm::Hemispherical,
+        } => {
+            let (ri, ro) = radii(inside_diameter);
+            volume_m3 * compliance::sphere_per_pa(modulus_pa, nu, ri, ro)
         }
-        (
-            Shape::DishedEnd {
-                form: DishedForm::TwoToOneEllipsoidal,
-                ..
-            },
-            _,
-        ) => "code form of the 2:1 ellipsoid, UG-32(d), with each strength",
-        (
-            Shape::DishedEnd {
-                form: DishedForm::Torispherical,
-                ..
-            },
-            _,
-        ) => "code form of the torisphere, UG-32(e) and appendix 1-4, with each strength",
-        (Shape::FlatEnd { .. }, _) => {
-            "circular plate (Roark), elastic bending with each strength; code form: UG-34, C = 0.33"
+        Shape::FlatEnd {
+            inside_diameter,
+            edge,
+        } => {
+            let radius = 0.5 * m(inside_diameter);
+            compliance::circular_plate_m3_per_pa(modulus_pa, nu, radius, t, *edge)
         }
-        (Shape::Box { .. }, _) => {
-            "rectangular plates (Roark), the worse of clamped and supported edges, with the pull of the neighbouring faces"
-        }
-        (Shape::Insert { .. }, _) => "none: an insert has no wall",
-    }
+        // Cones, dished ends and flat faces yield more than this, or by what is not known
+        // of their edges: nothing is credited.
+        _ => 0.0,
+    };
+    if grown.is_finite() { grown } else { 0.0 }
 }
 
-/// Pressure over stress of the weakest face of a box.
-///
-/// Each face bends as a plate (its rim turns somewhat, so the worse of clamped and
-/// supported), is pulled by the pressure on its neighbours, at most c/(2 t) along
-/// either side, c being the box's size square to the face, and has the pressure itself
-/// on its inside (Tresca).
-/// The code would allow 1.5 S in bending; that is not taken.
-fn weakest_face(sides_m: [f64; 3], t: f64) -> f64 {
-    let [w, h, d] = sides_m;
-    let face = |a: f64, b: f64, c: f64| {
-        let bending = |edge| plate::rectangular_stress_pa(1.0, a, b, t, edge);
-        let worst = bending(PlateEdge::Clamped).max(bending(PlateEdge::SimplySupported));
-        1.0 / (worst + c / (2.0 * t) + 1.0)
-    };
-    face(w, h, d).min(face(h, d, w)).min(face(d, w, h))
+/// The wider end of a cone first.
+pub(super) fn wide_and_narrow<'a>(
+    first: &'a Dimension,
+    second: &'a Dimension,
+) -> (&'a Dimension, &'a Dimension) {
+    if first.nominal >= second.nominal {
+        (first, second)
+    } else {
+        (second, first)
+    }
 }
 
 #[cfg(test)]
 mod tests {
     use super::*;
+
+    use super::super::shape::Role;
 
     const NU: f64 = 0.3;
 
@@ -283,7 +326,7 @@ mod tests {
             if let Ok(bare) = PressurePerStress::of(&shape, 0.0, NU) {
                 assert_eq!(bare.all(), [0.0; 5], "{}", shape.kind_name());
             } else {
-                assert!(shape.is_insert());
+                assert!(!matches!(shape.role(), Role::Cavity | Role::Lid));
             }
         }
     }
@@ -292,10 +335,17 @@ mod tests {
     fn a_thicker_wall_bears_more_and_a_wider_part_less() {
         for shape in Shape::default_of_each_kind()
             .iter()
-            .filter(|shape| !shape.is_insert())
+            .filter(|shape| matches!(shape.role(), Role::Cavity | Role::Lid))
+            // In a bend a thicker tube is also a tighter one.
+            .filter(
+                |shape| !matches!(shape, Shape::Tube { course, .. } if *course != Course::Straight),
+            )
         {
             let mut wide = shape.clone();
-            for (_, dimension) in wide.dimensions_mut() {
+            for (name, dimension) in wide.dimensions_mut() {
+                if name == "pillar diameter" {
+                    continue;
+                }
                 *dimension = super::super::Dimension::exact(super::super::dimension::length_m(
                     1.3 * dimension.greatest().metre(),
                 ));
@@ -310,6 +360,31 @@ mod tests {
                 }
             }
         }
+    }
+
+    /// At R = 30 mm and D = 11 mm the inside of the bend bears (4 R/D − 2)/(4 R/D − 1).
+    #[test]
+    fn a_bend_takes_its_share_and_must_be_wider_than_the_tube() {
+        let at = |course: &str| {
+            let shape = format!(
+                "Tube(inside_diameter: (nominal_m: 0.010), length: (nominal_m: 0.2), course: {course})"
+            );
+            PressurePerStress::of(&ron::from_str(&shape).expect(&shape), 0.0005, NU)
+        };
+        let straight = at("Straight").expect("strength").all();
+        let bent = at("Bent(radius: (nominal_m: 0.03))")
+            .expect("strength")
+            .all();
+        let coiled = at("Coiled(diameter: (nominal_m: 0.06))").expect("strength");
+        let share = (4.0 * 30.0 / 11.0 - 2.0) / (4.0 * 30.0 / 11.0 - 1.0);
+        for (bent, straight) in bent.iter().zip(straight) {
+            assert!((bent / straight - share).abs() < 1e-12, "{bent} {straight}");
+        }
+        assert_eq!(coiled.all(), bent);
+        assert_eq!(
+            at("Bent(radius: (nominal_m: 0.005))"),
+            Err(StrengthGap::BendTooTight)
+        );
     }
 
     #[test]

@@ -114,44 +114,57 @@ impl Fluid {
     /// # Errors
     /// [`FluidError::NotConverged`] if the fluid's saturation cannot be solved.
     pub fn crossings(&self, density: Density) -> Result<Vec<Crossing>, FluidError> {
+        self.crossings_growing(density, |_| 1.0)
+    }
+
+    /// The same for a volume that grows: `growth` is the volume at a temperature (K) over
+    /// the one that `density` is counted in, smooth and near 1.
+    ///
+    /// # Errors
+    /// As [`Self::crossings`].
+    pub fn crossings_growing(
+        &self,
+        density: Density,
+        growth: impl Fn(f64) -> f64,
+    ) -> Result<Vec<Crossing>, FluidError> {
         let rho = density.kilogram_per_cubic_metre();
         let curve = self.curve()?;
+        let liquid = |t: f64| curve.at(t).liquid_kg_per_m3 * growth(t);
+        let vapour = |t: f64| curve.at(t).vapour_kg_per_m3 * growth(t);
         let (low, high) = curve.range_k();
         let top = curve.at(high);
         let critical = self.critical();
         let from = self.freezing_point().kelvin().max(low);
         let mut found = Vec::new();
         let tolerance = 1e-11 * critical.temperature_k;
+        let at_critical = rho / growth(critical.temperature_k);
         let knots: Vec<f64> = std::iter::once(from)
             .chain(
                 curve
                     .turning_points()
                     .iter()
-                    .copied()
+                    .map(|&t| turning_near(t, (from, high), liquid))
                     .filter(|t| *t > from && *t < high),
             )
             .chain([high])
             .collect();
-        if rho >= critical.density_kg_per_m3 {
-            for t in roots_between(|t| curve.at(t).liquid_kg_per_m3 - rho, &knots, tolerance) {
+        if at_critical >= critical.density_kg_per_m3 {
+            for t in roots_between(|t| liquid(t) - rho, &knots, tolerance) {
                 found.push(Crossing {
                     temperature: clamped(t),
                     side: DomeSide::Liquid,
                 });
             }
         } else {
-            for t in roots_between(
-                |t| curve.at(t).vapour_kg_per_m3 - rho,
-                &[from, high],
-                tolerance,
-            ) {
+            for t in roots_between(|t| vapour(t) - rho, &[from, high], tolerance) {
                 found.push(Crossing {
                     temperature: clamped(t),
                     side: DomeSide::Vapour,
                 });
             }
         }
-        let inside_at_top = rho < top.liquid_kg_per_m3 && rho > top.vapour_kg_per_m3;
+        let at_top = rho / growth(high);
+        let inside_at_top = at_top < top.liquid_kg_per_m3 && at_top > top.vapour_kg_per_m3;
         if inside_at_top && matches!(self.model, Model::Equation(_)) {
             found.push(Crossing {
                 temperature: clamped(critical.temperature_k),
@@ -291,4 +304,22 @@ impl Fluid {
             quality,
         })
     }
+}
+
+/// Where a curve that peaks near `t` has its peak, when something that grows slowly with
+/// temperature is multiplied into it; by golden section, since the peak is flat.
+fn turning_near(t: f64, (low, high): (f64, f64), f: impl Fn(f64) -> f64) -> f64 {
+    const REACH_K: f64 = 25.0;
+    const SHARE: f64 = 0.618_033_988_749_894_9;
+    let (mut low, mut high) = ((t - REACH_K).max(low), (t + REACH_K).min(high));
+    // The peak is as flat as the rounding at a tenth of a millikelvin.
+    while high - low > 1e-4 {
+        let (a, b) = (high - SHARE * (high - low), low + SHARE * (high - low));
+        if f(a) < f(b) {
+            low = a;
+        } else {
+            high = b;
+        }
+    }
+    0.5 * (low + high)
 }

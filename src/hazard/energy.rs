@@ -31,7 +31,7 @@ pub fn rupture_energy(unit: &SealedUnit, temperature: Temperature) -> Result<Ene
     if state.regime == Regime::Frozen || state.pressure.pascal() <= STANDARD_ATMOSPHERE_PA {
         return Ok(Energy::from_joule(0.0).expect("zero"));
     }
-    let rho = unit.mean_density().kilogram_per_cubic_metre();
+    let rho = unit.mean_density_at(temperature).kilogram_per_cubic_metre();
     let (u1, s) = match state.quality {
         Some(x) if state.regime == Regime::TwoPhase => {
             let at = fluid.saturation(temperature)?;

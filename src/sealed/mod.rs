@@ -1,14 +1,16 @@
 //! The sealed unit: a mass of fluid in a fixed volume, at any temperature.
 //!
-//! The wall is rigid. That is careful for the liquid-full pressure; for dry-out
-//! the caller takes the largest volume.
+//! The volume moves with the temperature of its walls and, where asked, yields to the
+//! pressure; without the latter the liquid-full pressure is on the careful side. For
+//! dry-out the caller takes the largest volume.
 
 mod path;
 
 use std::sync::Arc;
 
+use crate::chamber::Movement;
 use crate::fluid::{Crossing, Fluid, FluidError, State};
-use crate::solve::roots_between;
+use crate::solve::{bracketed_root, roots_between};
 use crate::units::{Density, Mass, Pressure, Temperature, Volume};
 
 pub use path::{PathPoint, path};
@@ -18,8 +20,12 @@ pub use path::{PathPoint, path};
 pub struct SealedUnit {
     fluid: Arc<Fluid>,
     mass: Mass,
+    /// At the reference temperature, without load.
     volume: Volume,
+    /// In that volume.
     density: Density,
+    movement: Movement,
+    outside: Pressure,
 }
 
 /// A unit needs some fluid in some volume.
@@ -46,7 +52,19 @@ impl SealedUnit {
             mass,
             volume,
             density,
+            movement: Movement::default(),
+            outside: Pressure::from_pascal(0.0).expect("0 is a pressure"),
         })
+    }
+
+    /// The same unit in walls that move, against a pressure outside.
+    #[must_use]
+    pub fn with_walls(self, movement: Movement, outside: Pressure) -> Self {
+        Self {
+            movement,
+            outside,
+            ..self
+        }
     }
 
     pub fn fluid(&self) -> &Arc<Fluid> {
@@ -57,13 +75,14 @@ impl SealedUnit {
         self.mass
     }
 
-    pub fn volume(&self) -> Volume {
-        self.volume
+    /// Inside volume at a temperature, the walls without load, m³.
+    pub fn volume_at_m3(&self, temperature: Temperature) -> f64 {
+        self.volume.cubic_metre() * self.movement.growth(temperature.kelvin())
     }
 
-    /// Mass over inside volume.
-    pub fn mean_density(&self) -> Density {
-        self.density
+    /// Mass over that volume.
+    pub fn mean_density_at(&self, temperature: Temperature) -> Density {
+        self.density_in(self.movement.growth(temperature.kelvin()))
     }
 
     /// The same fluid and volume with another mass.
@@ -71,7 +90,8 @@ impl SealedUnit {
     /// # Errors
     /// [`SealedError::NoCharge`].
     pub fn with_mass(&self, mass: Mass) -> Result<Self, SealedError> {
-        Self::new(Arc::clone(&self.fluid), mass, self.volume)
+        let same = Self::new(Arc::clone(&self.fluid), mass, self.volume)?;
+        Ok(same.with_walls(self.movement, self.outside))
     }
 
     /// Regime, pressure and liquid share at a temperature.
@@ -79,15 +99,23 @@ impl SealedUnit {
     /// # Errors
     /// [`FluidError`] outside the model.
     pub fn state(&self, temperature: Temperature) -> Result<State, FluidError> {
-        self.fluid.state(self.density, temperature)
+        let rigid = self
+            .fluid
+            .state(self.mean_density_at(temperature), temperature);
+        if self.movement.compliance_per_pa == 0.0 {
+            return rigid;
+        }
+        self.yielding_state(temperature, rigid)
     }
 
-    /// Where the unit dries out or goes liquid-full, ascending.
+    /// Where the unit dries out or goes liquid-full, ascending. That the walls yield to
+    /// pressure is not credited here.
     ///
     /// # Errors
     /// [`FluidError`] if the fluid's saturation cannot be solved.
     pub fn crossings(&self) -> Result<Vec<Crossing>, FluidError> {
-        self.fluid.crossings(self.density)
+        self.fluid
+            .crossings_growing(self.density, |t| self.movement.growth(t))
     }
 
     /// Temperatures between two bounds at which the pressure meets `limit`.
@@ -141,4 +169,49 @@ impl SealedUnit {
             .filter_map(|t| Temperature::from_kelvin(t).ok())
             .collect())
     }
+
+    /// The state whose pressure the walls have given way to: p = p(m/V(T, p), T).
+    ///
+    /// The more the walls give the lower the pressure, so there is one answer, between the
+    /// pressure outside, where they stand as drawn, and that in rigid walls.
+    fn yielding_state(
+        &self,
+        temperature: Temperature,
+        rigid: Result<State, FluidError>,
+    ) -> Result<State, FluidError> {
+        let outside = self.outside.pascal();
+        let stretched = |p: f64| {
+            let load = (p - outside).max(0.0);
+            let growth = self.movement.growth(temperature.kelvin());
+            let density = self.density_in(growth * (1.0 + self.movement.compliance_per_pa * load));
+            self.fluid.state(density, temperature)
+        };
+        let most = match &rigid {
+            Ok(state) => state.pressure.pascal(),
+            // Too dense for the model in rigid walls; perhaps not in these.
+            Err(FluidError::PressureTooHigh { .. } | FluidError::TooDense { .. }) => MOST_PA,
+            Err(FluidError::Solid { melting, .. }) => melting.pascal(),
+            Err(_) => return rigid,
+        };
+        if most <= outside {
+            return rigid;
+        }
+        // Above the model's pressures counts as above any asked for.
+        let gap = |p: f64| match stretched(p) {
+            Ok(state) => state.pressure.pascal() - p,
+            Err(_) => MOST_PA,
+        };
+        match bracketed_root(gap, outside, most, 1e-12 * most) {
+            Ok(p) => stretched(p),
+            Err(_) => rigid,
+        }
+    }
+
+    fn density_in(&self, growth: f64) -> Density {
+        let density = self.density.kilogram_per_cubic_metre() / growth;
+        Density::from_kilogram_per_cubic_metre(density).unwrap_or(self.density)
+    }
 }
+
+/// Beyond every model, Pa.
+const MOST_PA: f64 = 1e11;

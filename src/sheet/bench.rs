@@ -2,7 +2,7 @@
 
 use super::page::Page;
 use crate::assess::{Assessment, Corners, Side, Window};
-use crate::design::{ChargeAim, Design, NamedVolume};
+use crate::design::{ChargeAim, Design};
 use crate::fluid::Regime;
 use crate::sealed::SealedUnit;
 use crate::units::{Kind, Temperature, Units, figures};
@@ -34,6 +34,8 @@ pub fn weighing(page: &mut Page, design: &Design, a: &Assessment, units: &Units)
     );
     let balance = design.bench.balance.kilogram();
     let purge = design.bench.purge_loss.kilogram();
+    // What is dispensed and does not stay.
+    let lost = purge + charge.stub_content.kilogram();
     // Both ends move inwards by the balance's uncertainty and round inwards.
     let (mut low, mut high) = (
         charge.least.kilogram() + balance,
@@ -67,8 +69,8 @@ pub fn weighing(page: &mut Page, design: &Design, a: &Assessment, units: &Units)
         "1  Dispense, scale shows",
         &format!(
             "from {} to {}",
-            reading(low + purge, false),
-            reading(high + purge, true)
+            reading(low + lost, false),
+            reading(high + lost, true)
         ),
     );
     page.row(
@@ -102,8 +104,23 @@ pub fn weighing(page: &mut Page, design: &Design, a: &Assessment, units: &Units)
     page.blank_row("Tare, evacuated");
     page.blank_row("Gross after dispensing");
     page.blank_row("Gross after purge and seal");
-    page.blank_row("Stub after pinch-off");
-    page.paragraph("After pinch-off weigh unit and stub together: the stub's mass is not fluid.");
+    if let Some(closure) = &design.chamber.closure
+        && closure.kind.parts_a_stub()
+    {
+        if charge.stub_content.kilogram() > 0.0 {
+            page.row(
+                "Vapour lost in the stub",
+                &format!(
+                    "{}, counted in row 1",
+                    units.show_to(charge.stub_content, 2)
+                ),
+            );
+        }
+        page.blank_row("Stub after closing");
+        page.paragraph(
+            "After closing weigh unit and stub together: the stub's own mass is not fluid.",
+        );
+    }
 }
 
 fn window_rows(page: &mut Page, a: &Assessment, units: &Units) {
@@ -140,10 +157,7 @@ fn stated(design: &Design, units: &Units) -> String {
             temperature,
             of,
         } => {
-            let of = match of {
-                NamedVolume::Inside => "the inside volume".to_owned(),
-                NamedVolume::Part(name) => format!("“{name}”"),
-            };
+            let of = words::named_volume(of);
             format!(
                 "liquid in {} of {of} at {}",
                 units.show(*ratio),

@@ -2,8 +2,9 @@
 
 use super::Head;
 use super::page::Page;
+use super::walls;
 use crate::assess::{Assessment, Figure, Severity};
-use crate::chamber::MeasuredVolume;
+use crate::chamber::Part;
 use crate::design::Design;
 use crate::units::{Temperature, Units, figures};
 use crate::words;
@@ -62,48 +63,22 @@ pub fn fluid(page: &mut Page, a: &Assessment) {
 
 pub fn before_filling(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
     page.heading("BEFORE FILLING");
-    match &design.chamber.measured {
-        Some(MeasuredVolume {
-            volume,
-            uncertainty,
-        }) => page.row(
-            "Inside volume",
-            &format!(
-                "{} +/- {}, measured",
-                units.show(*volume),
-                units.show_to(*uncertainty, 2)
-            ),
-        ),
-        None => {
-            if let Ok(volumes) = &a.volumes {
-                page.row(
-                    "Inside volume",
-                    &format!(
-                        "{} by the drawing ({} to {})",
-                        units.show(volumes.nominal),
-                        units.show(volumes.least),
-                        units.show(volumes.greatest)
-                    ),
-                );
-            }
-        }
-    }
+    walls::volumes(page, design, a, units);
     page.row("Bench temperature", &units.show(design.conditions.bench));
     page.blank_row("Cleaned as");
     page.blank_row("Bake-out, temperature, hours");
     page.blank_row("Proof test, medium, pressure");
     page.blank_row("Leak test, limit, result");
-    page.paragraph(
-        "Prove and leak-test before charging. The wall's strength under outside pressure while evacuated \
-         and hot is not judged here: ask for it before a hot bake-out.",
-    );
+    walls::vacuum(page, a, units);
+    page.paragraph("Prove and leak-test before charging.");
 }
 
-pub fn worst_case(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
+pub fn worst_case(page: &mut Page, a: &Assessment, units: &Units) {
     page.heading("WORST CASE");
     match &a.worst {
         Ok(case) => {
-            page.row("Governing temperature", &units.show(case.temperature));
+            page.row("Governs", &case.stretch);
+            page.row("At", &units.show(case.temperature));
             page.row(
                 "Pressure there",
                 &format!(
@@ -112,7 +87,7 @@ pub fn worst_case(page: &mut Page, design: &Design, a: &Assessment, units: &Unit
                     words::regime(case.state.regime)
                 ),
             );
-            let outside = design.conditions.least_outside;
+            let outside = case.outside;
             let load = if case.load.pascal() > 0.0 {
                 format!(
                     "{}, against {} abs outside",
@@ -137,6 +112,7 @@ pub fn worst_case(page: &mut Page, design: &Design, a: &Assessment, units: &Unit
                             words::basis(weakest.allowable.basis)
                         ),
                     );
+                    page.row("Judged by", weakest.formula);
                     if let Ok(share) = &case.of_allowable
                         && *share > 0.0
                     {
@@ -232,12 +208,8 @@ pub fn basis(page: &mut Page, design: &Design, a: &Assessment) {
     if let Ok(case) = &a.worst
         && let Ok(weakest) = &case.weakest
     {
-        let material = design
-            .chamber
-            .parts
-            .get(weakest.part)
-            .and_then(|part| part.wall.as_ref());
-        let material = material.map_or("", |wall| wall.material.as_str());
+        let part = design.chamber.parts.get(weakest.part);
+        let material = part.and_then(Part::material).unwrap_or_default();
         for source in a.envelope.sources(weakest.part, weakest.allowable.basis) {
             unconfirmed |= !source.is_confirmed();
             page.row("Strength", &format!("{material}: {source}"));

@@ -4,6 +4,7 @@ mod bench;
 mod facts;
 mod page;
 mod steps;
+mod walls;
 
 pub use page::WIDTH;
 
@@ -34,12 +35,15 @@ pub fn render(design: &Design, a: &Assessment, units: &Units, head: &Head) -> St
     facts::release(&mut page, fit);
     facts::fluid(&mut page, a);
     facts::before_filling(&mut page, design, a, units);
+    walls::closure(&mut page, design, units);
     if fit {
         bench::weighing(&mut page, design, a, units);
         steps::steps(&mut page, design, a, units);
         bench::afterwards(&mut page, design, a, units);
     }
-    facts::worst_case(&mut page, design, a, units);
+    facts::worst_case(&mut page, a, units);
+    walls::outside(&mut page, a, units);
+    walls::parts(&mut page, design, a, units);
     facts::warnings(&mut page, design, a, units);
     facts::basis(&mut page, design, a);
     facts::care(&mut page, a);

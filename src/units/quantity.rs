@@ -131,6 +131,12 @@ quantities! {
     Ratio, Ratio, "a ratio", "", from_fraction, fraction, 0.0, 1.0;
     /// Energy.
     Energy, Energy, "an energy", "J", from_joule, joule, -1e18, 1e18;
+    /// Permeability of a wick, more than 0.
+    Permeability, Area, "a permeability", "m2", from_square_metre, square_metre, 1e-24, 1.0;
+    /// Openings of a screen per length.
+    MeshNumber, MeshNumber, "a mesh number", "1/m", from_per_metre, per_metre, 1.0, 1e7;
+    /// Tilt of an axis against the horizontal, 0 to a right angle.
+    Tilt, Angle, "a tilt", "rad", from_radian, radian, 0.0, std::f64::consts::FRAC_PI_2;
 }
 
 impl Temperature {

@@ -62,6 +62,10 @@ impl Units {
             (Kind::Ratio, _) => unit_named(kind, "%"),
             (Kind::Energy, UnitSystem::Inch) => unit_named(kind, "ft·lbf"),
             (Kind::Energy, _) => pick(&[(1e4, "J")], "kJ"),
+            (Kind::Area, _) => unit_named(kind, "µm²"),
+            (Kind::MeshNumber, UnitSystem::Inch) => unit_named(kind, "/in"),
+            (Kind::MeshNumber, _) => unit_named(kind, "/mm"),
+            (Kind::Angle, _) => unit_named(kind, "°"),
             (Kind::Number, _) => unit_named(kind, ""),
         }
     }

@@ -12,6 +12,11 @@ pub enum Kind {
     Density,
     Ratio,
     Energy,
+    /// Permeability of a wick.
+    Area,
+    /// Openings of a screen per length.
+    MeshNumber,
+    Angle,
     /// A bare number, such as a factor.
     Number,
 }
@@ -195,5 +200,28 @@ pub static UNITS: &[Unit] = &[
     unit(Kind::Energy, "J", &[], 1.0),
     unit(Kind::Energy, "kJ", &[], 1e3),
     unit(Kind::Energy, "ft·lbf", &["ft lbf"], 1.355_817_948_331_400_4),
+    unit(Kind::Area, "m²", &["m2", "m^2"], 1.0),
+    unit(
+        Kind::Area,
+        "µm²",
+        &["um2", "um²", "µm2", "μm²", "μm2"],
+        1e-12,
+    ),
+    unit(Kind::MeshNumber, "/m", &["1/m"], 1.0),
+    unit(Kind::MeshNumber, "/mm", &["1/mm", "per mm"], 1e3),
+    unit(Kind::MeshNumber, "/cm", &["1/cm", "per cm"], 1e2),
+    unit(
+        Kind::MeshNumber,
+        "/in",
+        &["1/in", "per inch", "mesh", "openings per inch"],
+        1.0 / INCH,
+    ),
+    unit(Kind::Angle, "rad", &["radian"], 1.0),
+    unit(
+        Kind::Angle,
+        "°",
+        &["deg", "degree", "degrees"],
+        std::f64::consts::PI / 180.0,
+    ),
     unit(Kind::Number, "", &["-", "1"], 1.0),
 ];

@@ -60,7 +60,7 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
         FindingKind::Conditions(fault) => say("Conditions contradict each other", condition_fault(fault, units)),
         FindingKind::NotKnown(reason) => say("Not known", missing(reason, units))
             .try_this("A question without an answer is never skipped: change the design or give the figure."),
-        FindingKind::OverAllowable { pressure, allowable, temperature, part } => say(
+        FindingKind::OverAllowable { pressure, allowable, temperature, part, formula } => say(
             "Over the allowable pressure",
             format!(
                 "At {} the worst corner stands at {} abs; {part} allows {} abs.",
@@ -69,7 +69,8 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
                 units.show(*allowable)
             ),
         )
-        .try_this("A thicker or stronger wall, a smaller bore, another fluid, or a charge inside the window."),
+        .try_this("A thicker or stronger wall, a smaller bore, another fluid, or a charge inside the window.")
+        .source(formula),
         FindingKind::LiquidFull { at, hottest } => say(
             "Goes liquid-full",
             format!(
@@ -135,15 +136,61 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
             ),
         )
         .try_this("Dispense it warm, and weigh it: volumes and fill ratios on the bench do not exist."),
-        FindingKind::CollapseNotJudged { inside, outside } => say(
-            "Collapse not judged",
+        FindingKind::Collapses { part, stretch, temperature, load, allowable, formula } => say(
+            "Collapses under outside pressure",
             format!(
-                "In the cold the inside stands at {} abs or less, the outside at {} abs. Whether the wall bears that is not computed here.",
-                units.show_to(*inside, 3),
-                units.show_to(*outside, 3)
+                "{}, at {}, the outside presses with {} more than the inside; {part} may bear {}.",
+                upper(stretch),
+                units.show(*temperature),
+                units.show(*load),
+                units.show(*allowable)
             ),
         )
-        .try_this("Check the walls under outside pressure, also evacuated and hot in the bake-out."),
+        .try_this("A thicker, rounder or shorter wall, pillars, or a stiffer material.")
+        .source(formula),
+        FindingKind::CollapseNotKnown { stretch, missing: reason } => say(
+            "Collapse not known",
+            format!("{}, the outside presses. {}", upper(stretch), missing(reason, units)),
+        )
+        .try_this("Give the rating against outside pressure, or a wall whose strength is known there."),
+        FindingKind::ClosureNotStated => say(
+            "Closure not stated",
+            "Nothing is said of how the unit is closed: its dead volume, its strength, what comes off and what relieves it.".to_owned(),
+        )
+        .try_this("State the closure in the chamber section."),
+        FindingKind::StubNotStated { closure } => say(
+            "Stub not stated",
+            format!("The {closure} parts a stub from the unit. Without its mass the unit cannot be weighed after closing."),
+        )
+        .try_this("Give the stub's volume and mass, or weigh unit and stub together."),
+        FindingKind::NoReliefReason => say(
+            "No relief, no reason",
+            "There is no relief device, and no reason is given why none is needed.".to_owned(),
+        )
+        .try_this("Name the device, or write down the reason."),
+        FindingKind::ReliefTooHigh { opens_at, allowable } => say(
+            "Relief opens too late",
+            format!(
+                "The relief device opens at {} above the outside; the weakest part allows {}.",
+                units.show(*opens_at),
+                units.show(*allowable)
+            ),
+        )
+        .try_this("A device that opens below the allowable pressure."),
+        FindingKind::ReliefOpensInUse { opens_at, load } => say(
+            "Relief opens in use",
+            format!(
+                "The relief device opens at {} above the outside; the worst case stands at {}. The charge is lost into the room.",
+                units.show(*opens_at),
+                units.show(*load)
+            ),
+        )
+        .try_this("A higher set pressure, less charge or another fluid."),
+        FindingKind::MadeOfUnknown { parts } => say(
+            "Material of a body inside not stated",
+            format!("Nothing says what {parts} is made of: whether the fluid attacks it, and how it expands, is not judged."),
+        )
+        .try_this("Choose its material in the chamber section."),
         FindingKind::AboveCritical { hottest, critical } => say(
             "Above the critical temperature",
             format!(
@@ -272,9 +319,16 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
             "No hazard figures",
             "The fluid is classed as harmful, yet no exposure limit is recorded. Not known is not harmless.".to_owned(),
         ),
-        FindingKind::BrittleGlass { part } => say(
+        FindingKind::BrittleGlass { part, bears } => say(
             "Brittle glass",
-            format!("{} is glass: it breaks without warning, from a scratch or a shock.", upper(part)),
+            format!(
+                "{} is glass: it breaks without warning, from a scratch or a shock.{}",
+                upper(part),
+                bears.map_or_else(String::new, |bears| format!(
+                    " Empty, it bears a bath that is {} hotter or colder at most.",
+                    units.show_careful(bears, 2, true)
+                ))
+            ),
         )
         .try_this("Shield it, wear eye protection, never plunge it hot or cold."),
         FindingKind::NotForConsumers { reason, source } => {
@@ -289,9 +343,9 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
         )
         .try_this("Another fluid.")
         .source(source),
-        FindingKind::FactorsBelowDefault { on_burst, on_yield } => say(
+        FindingKind::FactorsBelowDefault { on_burst, on_yield, on_collapse } => say(
             "Factors below the customary",
-            format!("Burst is divided by {on_burst}, yield by {on_yield}; customary are 4 and 1.5."),
+            format!("Burst is divided by {on_burst}, yield by {on_yield}, collapse by {on_collapse}; customary are 4, 1.5 and 3."),
         )
         .try_this("Say on the sheet who answers for them."),
         FindingKind::Rupture { energy } => say(

@@ -9,7 +9,8 @@ pub use finding::{Said, finding};
 pub use missing::{chamber_fault, condition_fault, missing, upper};
 
 use crate::assess::{Bound, EventKind, Objection, Requirement, Severity, Side, Verdict};
-use crate::chamber::AllowableBasis;
+use crate::chamber::{AllowableBasis, OutsideBasis};
+use crate::design::NamedVolume;
 use crate::fluid::{FrozenPressure, Regime, StabilityKind};
 use crate::units::Units;
 
@@ -123,9 +124,33 @@ pub const fn basis(basis: AllowableBasis) -> &'static str {
         AllowableBasis::Yield => "yield pressure over its factor",
         AllowableBasis::CodeForm => "code-form allowable stress",
         AllowableBasis::Permissible => "permissible tensile stress of glass",
+        AllowableBasis::Rated => "rating stated by its maker",
+        AllowableBasis::CoreCollapse => "collapse of its core tube over its factor",
         AllowableBasis::BurstAtMost => "burst pressure over its factor, last known cooler",
         AllowableBasis::YieldAtMost => "yield pressure over its factor, last known cooler",
         AllowableBasis::CodeFormAtMost => "code-form allowable stress, last known cooler",
+    }
+}
+
+/// What an allowable outside pressure rests on.
+pub const fn outside_basis(basis: OutsideBasis) -> &'static str {
+    match basis {
+        OutsideBasis::Elastic => "elastic collapse over its factor",
+        OutsideBasis::Yield => "yield over its factor, ovality included",
+        OutsideBasis::YieldAtMost => "yield over its factor, strength last known cooler",
+        OutsideBasis::Permissible => "permissible tensile stress of glass",
+        OutsideBasis::Rated => "rating stated by its maker",
+    }
+}
+
+/// Which volume a fill ratio is of.
+pub fn named_volume(of: &NamedVolume) -> String {
+    match of {
+        NamedVolume::Inside => "the inside volume".to_owned(),
+        NamedVolume::VapourCore => "the vapour core".to_owned(),
+        NamedVolume::WickVoid => "the void of the wick".to_owned(),
+        NamedVolume::Evaporator => "the evaporator".to_owned(),
+        NamedVolume::Part(name) => format!("“{name}”"),
     }
 }
 

@@ -116,7 +116,16 @@ impl Vessel {
       name: "sphere",
       shape: Sphere(inside_diameter: (nominal_m: 0.05, tolerance_m: 0.0002)),
       wall: Some((material: "stainless-316l", thickness: (nominal_m: {:?}, tolerance_m: 0.0))),
-    )]),
+    )],
+      closure: Some((
+        kind: WeldedPlug,
+        rating: Some((
+          inside_pressure_pa: 1e9, outside_pressure_pa: Some(1e9), coldest_k: 1.0, hottest_k: 2000.0,
+          stated_by: "the tests",
+        )),
+        relief: None(because: "a test"),
+      )),
+    ),
     charge: (aim: Mass(mass_kg: {:?}), tolerance_kg: 0.00001),
     demands: (ullage: {:?}, liquid_full_margin_k: {:?}),
     room: (volume_m3: 60.0, temperature_k: 293.15, consumers: false),

@@ -59,7 +59,7 @@ fn fingerprints_tell_designs_apart() {
     let name = "copper-water-heat-pipe";
     seen.push(store::fingerprint(&preset_with(
         name,
-        &[("0.0045", "0.00450001")],
+        &[("0.0032", "0.00320001")],
     )));
     seen.push(store::fingerprint(&preset_with(
         name,

@@ -70,12 +70,12 @@ fn an_impossible_value_is_refused_by_line_column_field_value_and_limit() {
     );
     wrong("nominal_m: 0.25", "nominal_m: NaN", "nominal_m", &["NaN"]);
     wrong(
-        "mass_kg: 0.0045",
-        "mass_kg: -0.0045",
+        "mass_kg: 0.0032",
+        "mass_kg: -0.0032",
         "mass_kg",
-        &["-0.0045 kg", "0 kg"],
+        &["-0.0032 kg", "0 kg"],
     );
-    wrong("mass_kg: 0.0045", "mass_kg: -inf", "mass_kg", &["-inf"]);
+    wrong("mass_kg: 0.0032", "mass_kg: -inf", "mass_kg", &["-inf"]);
     wrong(
         "ullage: 0.05",
         "ullage: 1.5",

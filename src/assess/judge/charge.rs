@@ -21,6 +21,7 @@ impl Judge<'_> {
                 allowable,
                 temperature: case.temperature,
                 part: weakest.name.to_string(),
+                formula: weakest.formula,
             };
             // Whether less charge helps is the window's to say: its nearest charge is the remedy.
             self.add_share(Severity::Error, Section::Charge, kind, *share);
@@ -47,27 +48,9 @@ impl Judge<'_> {
                 FindingKind::FactorsBelowDefault {
                     on_burst: factors.on_burst.number(),
                     on_yield: factors.on_yield.number(),
+                    on_collapse: factors.on_collapse.number(),
                 },
             );
-        }
-    }
-
-    /// The strength of a wall under outside pressure is not computed: said wherever
-    /// there is any, which is in the cold.
-    pub(super) fn collapse(&mut self) {
-        let Ok(corners) = &self.a.corners else {
-            return;
-        };
-        let conditions = &self.design.conditions;
-        let outside = conditions.barometer;
-        if let Ok(state) = corners.nominal.state(conditions.coldest)
-            && state.pressure < outside
-        {
-            let kind = FindingKind::CollapseNotJudged {
-                inside: state.pressure,
-                outside,
-            };
-            self.add(Severity::Warning, Section::Chamber, kind);
         }
     }
 

@@ -2,11 +2,13 @@
 
 mod charge;
 mod people;
+mod walls;
 
 use super::figure::Missing;
 use super::finding::{Finding, FindingKind, Section, Severity};
 use super::{Assessment, Library};
-use crate::chamber::StrengthGap;
+use crate::chamber::{StrengthGap, StrengthUnknown};
+use crate::conditions::ConditionFault;
 use crate::design::{Change, Design};
 
 /// Every finding, worst first; within a severity in the order of the questions.
@@ -23,6 +25,8 @@ pub fn findings(design: &Design, library: &Library, a: &Assessment) -> Vec<Findi
     judge.pressure();
     judge.factors();
     judge.collapse();
+    judge.closure();
+    judge.bodies_inside();
     judge.tolerance();
     judge.liquid_full();
     judge.dry_out();
@@ -85,12 +89,23 @@ impl Judge<'_> {
             );
         }
         for fault in self.design.conditions.faults() {
-            self.add(
-                Severity::Error,
-                Section::Conditions,
-                FindingKind::Conditions(fault),
-            );
+            let section = match fault {
+                ConditionFault::ExposureReversed { .. }
+                | ConditionFault::ExposureOutsideExtremes { .. } => Section::Exposures,
+                _ => Section::Conditions,
+            };
+            self.add(Severity::Error, section, FindingKind::Conditions(fault));
         }
+    }
+
+    /// Whether a strength is missing because its part contradicts itself, which is told.
+    fn is_at_fault(&self, unknown: &StrengthUnknown) -> bool {
+        use StrengthGap as Gap;
+        let contradicts = matches!(
+            unknown.reason,
+            Gap::NoSize | Gap::UnknownMaterial | Gap::NoWall | Gap::BendTooTight
+        );
+        contradicts && unknown.part.is_some()
     }
 
     /// Each root of a missing figure once: what depends on it shows a dash.
@@ -116,18 +131,11 @@ impl Judge<'_> {
         root(Section::Room, a.release.as_ref().err());
         for (section, missing) in roots {
             // Contradictions have findings of their own.
-            let told = matches!(
-                missing,
-                Missing::Chamber(_)
-                    | Missing::Conditions
-                    | Missing::Strength(crate::chamber::StrengthUnknown {
-                        reason: StrengthGap::NoSize
-                            | StrengthGap::UnknownMaterial
-                            | StrengthGap::NoWall,
-                        part: Some(_),
-                        ..
-                    })
-            );
+            let told = match &missing {
+                Missing::Chamber(_) | Missing::Conditions => true,
+                Missing::Strength(unknown) => self.is_at_fault(unknown),
+                _ => false,
+            };
             let already = told
                 && self
                     .found

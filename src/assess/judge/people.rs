@@ -2,7 +2,6 @@
 
 use super::Judge;
 use crate::assess::finding::{FindingKind, Section, Severity};
-use crate::chamber::MaterialKind;
 use crate::fluid::{FluidError, StabilityKind};
 use crate::hazard::{Compatibility, CompatibilityTable, EnergyError, PairVerdict};
 use crate::units::Temperature;
@@ -16,17 +15,11 @@ impl Judge<'_> {
         let table = CompatibilityTable::built_in();
         // A row of the table may hold for several walls: it is said once, of all of them.
         let mut told: Vec<(Option<&Compatibility>, Vec<&str>)> = Vec::new();
-        for wall in self
-            .design
-            .chamber
-            .parts
-            .iter()
-            .filter_map(|part| part.wall.as_ref())
-        {
-            let Some(material) = self.library.materials.get(&wall.material) else {
+        for id in self.design.chamber.materials_in_order() {
+            let Some(material) = self.library.materials.get(id) else {
                 continue;
             };
-            let pair = table.of(self.a.fluid.id(), &wall.material);
+            let pair = table.of(self.a.fluid.id(), id);
             match told.iter_mut().find(|(known, _)| *known == pair) {
                 Some((_, names)) if names.contains(&material.name.as_str()) => {}
                 Some((_, names)) => names.push(&material.name),
@@ -195,21 +188,6 @@ impl Judge<'_> {
             .release
             .as_ref()
             .is_ok_and(|release| release.ppm < 5_000.0 || release.capped)
-    }
-
-    pub(super) fn glass(&mut self) {
-        let parts = self.design.chamber.parts.iter();
-        let glass = parts.filter_map(|part| {
-            let material = self.library.materials.get(&part.wall.as_ref()?.material)?;
-            matches!(material.kind, MaterialKind::Glass(_)).then(|| part.name.clone())
-        });
-        if let Some(part) = glass.into_iter().next() {
-            self.add(
-                Severity::Warning,
-                Section::Chamber,
-                FindingKind::BrittleGlass { part },
-            );
-        }
     }
 
     pub(super) fn rupture(&mut self) {

@@ -119,18 +119,22 @@ fn smallest_mass() -> Mass {
 }
 
 fn named_volume_ui(ui: &mut Ui, of: &mut NamedVolume, parts: &[String]) {
-    let shown = match of {
-        NamedVolume::Inside => "of the inside volume".to_owned(),
-        NamedVolume::Part(part) => format!("of “{part}”"),
-    };
+    let said = |of: &NamedVolume| format!("of {}", words::named_volume(of));
     let combo = ComboBox::from_id_salt("named volume")
-        .width(ui.available_width() - 8.0)
-        .selected_text(shown);
+        .width(ui.available_width())
+        .selected_text(said(of));
     let response = combo
         .show_ui(ui, |ui| {
-            ui.selectable_value(of, NamedVolume::Inside, "of the inside volume");
-            for part in parts {
-                ui.selectable_value(of, NamedVolume::Part(part.clone()), format!("of “{part}”"));
+            let named = [
+                NamedVolume::Inside,
+                NamedVolume::VapourCore,
+                NamedVolume::WickVoid,
+                NamedVolume::Evaporator,
+            ];
+            let parts = parts.iter().cloned().map(NamedVolume::Part);
+            for choice in named.into_iter().chain(parts) {
+                let text = said(&choice);
+                ui.selectable_value(of, choice, text);
             }
         })
         .response;

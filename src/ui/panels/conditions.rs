@@ -61,6 +61,11 @@ pub fn conditions_ui(ui: &mut Ui, design: &mut Design, units: &Units) {
         .slider(80_000.0, 105_000.0)
         .hover("Gauge pressures are counted from it")
         .show(ui);
+    QuantityField::new("Across a wall", &mut conditions.across_wall, units)
+        .slider(0.0, 100.0)
+        .digits(3)
+        .hover("Greatest difference of temperature across a wall in use: it stresses glass")
+        .show(ui);
 }
 
 pub fn demands_decision(design: &Design, units: &Units) -> String {
@@ -95,4 +100,22 @@ pub fn demands_ui(ui: &mut Ui, design: &mut Design, units: &Units) {
         .digits(3)
         .hover("Yield pressure over allowable pressure: customary 1.5")
         .show(ui);
+    QuantityField::new(
+        "Factor on collapse",
+        &mut demands.factors.on_collapse,
+        units,
+    )
+    .slider(1.0, 6.0)
+    .digits(3)
+    .hover("Elastic collapse over allowable pressure from outside: customary 3")
+    .show(ui);
+    QuantityField::new(
+        "Joint efficiency",
+        &mut demands.factors.joint_efficiency,
+        units,
+    )
+    .slider(0.5, 1.0)
+    .digits(3)
+    .hover("Share of the wall's strength that its joints have")
+    .show(ui);
 }

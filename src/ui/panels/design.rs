@@ -4,7 +4,7 @@ use eframe::egui::{ComboBox, Id, Role, TextEdit, Ui, WidgetInfo};
 
 use super::fluid::FluidPanel;
 use super::section::{column_ui, section_ui};
-use super::{chamber, charge, conditions, fluid};
+use super::{chamber, charge, conditions, exposures, fluid};
 use crate::assess::{Assessment, Library, Section};
 use crate::design::{Design, Duty};
 use crate::ui::widgets::QuantityField;
@@ -43,6 +43,17 @@ pub fn design_ui(
             show(Section::Conditions),
             |ui| {
                 conditions::conditions_ui(ui, design, units);
+            },
+        );
+        let decision = exposures::decision(&design.conditions);
+        section_ui(
+            ui,
+            "Exposures",
+            &decision,
+            false,
+            show(Section::Exposures),
+            |ui| {
+                exposures::exposures_ui(ui, &mut design.conditions, units);
             },
         );
         let decision = conditions::demands_decision(design, units);
@@ -90,7 +101,7 @@ fn duty_ui(ui: &mut Ui, design: &mut Design) {
     text_ui(ui, "Title", &mut design.title, false);
     text_ui(ui, "Note", &mut design.note, true);
     let combo = ComboBox::from_id_salt("duty")
-        .width(ui.available_width() - 8.0)
+        .width(ui.available_width())
         .selected_text(design.duty.name());
     let response = combo
         .show_ui(ui, |ui| {

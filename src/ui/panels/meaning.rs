@@ -138,6 +138,23 @@ fn worst_ui(ui: &mut Ui, a: &Assessment, units: &Units) {
         }
         Err(_) => row("Weakest part", "not known".to_owned()),
     }
+    if let Some(outside) = a.worst_outside() {
+        let used = match &outside.of_allowable {
+            Ok(share) => format!("{} % used", figures(100.0 * share, 3)),
+            Err(_) => "not known".to_owned(),
+        };
+        let what = format!("{}, {used}", units.show_to(outside.load, 3));
+        let (response, hint) = (
+            fact_ui(ui, 96.0, "From outside", &what),
+            format!(
+                "Outside less inside pressure: {}, at {}",
+                outside.stretch,
+                units.show(outside.temperature)
+            ),
+        );
+        response.on_hover_text(hint);
+    }
+    let mut row = |what: &str, value: String| drop(fact_ui(ui, 96.0, what, &value));
     if let Ok(Some(at)) = &a.heaviest_full_at {
         row("Liquid-full", format!("at {}", units.show(*at)));
     }

@@ -5,6 +5,7 @@ mod chamber;
 mod charge;
 mod conditions;
 mod design;
+mod exposures;
 mod findings;
 mod fluid;
 mod fluids;

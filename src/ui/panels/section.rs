@@ -119,7 +119,7 @@ pub fn column_ui(ui: &mut Ui, name: &str, body: impl FnOnce(&mut Ui)) {
         .auto_shrink(false)
         .show(ui, |ui| {
             // Room for the scroll bar, so that nothing hides under it.
-            ui.set_max_width(ui.available_width() - 8.0);
+            ui.set_max_width(ui.available_width());
             body(ui);
         });
 }

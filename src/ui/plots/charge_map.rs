@@ -166,7 +166,7 @@ impl FillScale {
         let unit = &a.corners.as_ref().ok()?.nominal;
         a.fluid.saturation_pressure(bench).ok()?;
         Some(Self {
-            volume_m3: unit.volume().cubic_metre(),
+            volume_m3: unit.volume_at_m3(bench),
             at: a.fluid.curve().ok()?.at(bench.kelvin()),
         })
     }

@@ -133,6 +133,19 @@ pub(super) fn strength(unknown: &StrengthUnknown, units: &Units) -> String {
             "not known for {material} above {}",
             temperature(*hottest, units)
         ),
+        StrengthGap::NoRating => format!("not known, “{name}” has no stated rating"),
+        StrengthGap::RatedElsewhere { coldest, hottest } => format!(
+            "not known, “{name}” is rated from {} to {}",
+            temperature(*coldest, units),
+            temperature(*hottest, units)
+        ),
+        StrengthGap::RatedOnly => format!("not known, “{name}” has only a rating"),
+        StrengthGap::NoOutsideRating => {
+            format!("not known, “{name}” is not rated from outside")
+        }
+        StrengthGap::BendTooTight => {
+            format!("not known, the bend of “{name}” is tighter than the tube is wide")
+        }
         StrengthGap::NoValueThere => format!("not known for {material} over temperature"),
         StrengthGap::Glass => "not known, glass has only a permissible stress".to_owned(),
     }
