@@ -22,6 +22,8 @@ pub mod conditions;
 
 pub mod sealed;
 
+pub mod section;
+
 pub mod hazard;
 
 pub mod design;
