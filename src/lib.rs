@@ -32,6 +32,8 @@ pub mod assess;
 
 pub mod words;
 
+pub mod picture;
+
 pub mod sheet;
 
 pub mod store;

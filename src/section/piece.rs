@@ -202,10 +202,6 @@ impl Form {
     /// Size of the way out at one end: the greatest circle that passes; nothing for what
     /// comes to a point there.
     pub fn mouth_m(&self, side: Side) -> f64 {
-        let x_m = match side {
-            Side::First => 0.0,
-            Side::Last => self.length_m(),
-        };
         match self {
             Self::Slab {
                 height_m, depth_m, ..
@@ -213,7 +209,16 @@ impl Form {
             Self::Obround {
                 height_m, across_m, ..
             } => height_m.min(*across_m),
-            _ => 2.0 * self.half_height_m(x_m),
+            _ => 2.0 * self.edge_m(side),
+        }
+    }
+
+    /// Half the height at one end, as drawn.
+    pub fn edge_m(&self, side: Side) -> f64 {
+        match (self, side) {
+            (Self::Bellows { root_m, .. }, _) => 0.5 * root_m,
+            (_, Side::First) => self.half_height_m(0.0),
+            (_, Side::Last) => self.half_height_m(self.length_m()),
         }
     }
 
