@@ -4,8 +4,10 @@
 //! [`svg`] in light ones for print. It is painted in this order: areas, hatches, lines,
 //! labels. Areas may cover one another, the later the earlier.
 
+mod liquid;
 mod marks;
 mod outline;
+mod pattern;
 mod plane;
 mod section;
 #[cfg(test)]

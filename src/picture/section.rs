@@ -2,9 +2,9 @@
 
 use super::marks;
 use super::outline::{inner, outer, outer_at};
-use super::plane::{self, Cut, Point, below, hatched, outside};
-use super::{Area, Bounds, Hatch, HotSpot, Line, Paint, Picture, Stroke};
-use crate::section::{Body, BodyOutline, Device, Form, Lies, Made, Piece, Side, Tilt};
+use super::plane::Point;
+use super::{Area, Bounds, HotSpot, Line, Paint, Picture, Stroke};
+use crate::section::{Body, BodyOutline, Device, Form, Made, Piece, Side};
 use crate::units::Units;
 
 /// What is in the device.
@@ -48,7 +48,7 @@ impl Frame {
             .plus(self.along.left(), y)
     }
 
-    fn polygon(&self, points: &[Point]) -> Vec<Point> {
+    pub(super) fn polygon(&self, points: &[Point]) -> Vec<Point> {
         points.iter().map(|p| self.place([p.x, p.y])).collect()
     }
 }
@@ -91,7 +91,7 @@ pub fn section(
     drawing.liquid(&mirrored(&inside), filling, view);
     drawing.solids();
     drawing.centre(&outside);
-    drawing.hatch(view);
+    drawing.patterns(view);
     let Drawing {
         mut picture, frame, ..
     } = drawing;
@@ -99,22 +99,23 @@ pub fn section(
     picture
 }
 
-struct Drawing<'a> {
-    picture: Picture,
-    frame: Frame,
-    device: &'a Device,
+/// A picture in the making.
+pub(super) struct Drawing<'a> {
+    pub(super) picture: Picture,
+    pub(super) frame: Frame,
+    pub(super) device: &'a Device,
 }
 
 impl Drawing<'_> {
     /// `points` in the device's own plane.
-    fn area(&mut self, points: &[Point], paint: Paint) {
+    pub(super) fn area(&mut self, points: &[Point], paint: Paint) {
         if points.len() > 2 {
             let outline = self.frame.polygon(points);
             self.picture.areas.push(Area { outline, paint });
         }
     }
 
-    fn line(&mut self, points: &[Point], closed: bool, stroke: Stroke) {
+    pub(super) fn line(&mut self, points: &[Point], closed: bool, stroke: Stroke) {
         let points = self.frame.polygon(points);
         self.picture.lines.push(Line {
             points,
@@ -123,7 +124,7 @@ impl Drawing<'_> {
         });
     }
 
-    fn spot(&mut self, points: &[Point], text: &str) {
+    pub(super) fn spot(&mut self, points: &[Point], text: &str) {
         let outline = self.frame.polygon(points);
         self.picture.spots.push(HotSpot {
             outline,
@@ -204,176 +205,6 @@ impl Drawing<'_> {
         }
     }
 
-    fn liquid(&mut self, inside: &[Point], filling: &Filling, view: &View) {
-        let paint = if filling.frozen {
-            Paint::Frozen
-        } else {
-            Paint::Liquid
-        };
-        let whole_m3 = self.device.volume_m3();
-        let liquid_m3 = filling.liquid_m3.clamp(0.0, whole_m3);
-        let tilt = Tilt::new(view.tilt_deg);
-        let up = Point::new(tilt.sin, tilt.cos);
-        // Frozen or held in slugs, no level stands in the wick either.
-        let mut level_m = f64::NEG_INFINITY;
-        let cuts = if liquid_m3 <= 0.0 {
-            Vec::new()
-        } else {
-            match filling.hold {
-                Hold::Gravity => {
-                    level_m = self.device.level_m(view.tilt_deg, liquid_m3);
-                    vec![below(inside, up, level_m)]
-                }
-                Hold::Slugs(count) => self.slugs(inside, liquid_m3, count),
-            }
-        };
-        for cut in &cuts {
-            for pool in &cut.pools {
-                self.area(pool, paint);
-            }
-        }
-        self.linings(paint, filling.wet_share.clamp(0.0, 1.0), view, level_m);
-        if liquid_m3 < whole_m3 {
-            let surfaces: Vec<[Point; 2]> = cuts.into_iter().flat_map(|cut| cut.surfaces).collect();
-            let is_level = filling.hold == Hold::Gravity && !filling.frozen;
-            self.surfaces(inside, surfaces, up, is_level);
-        }
-    }
-
-    /// Slugs of the same volume in the middle of as many equal shares of the device.
-    fn slugs(&self, inside: &[Point], liquid_m3: f64, count: usize) -> Vec<Cut> {
-        let count = count.clamp(1, 200);
-        let share_m3 = self.device.volume_m3() / count as f64;
-        let slug_m3 = liquid_m3 / count as f64;
-        let axis = Point::new(1.0, 0.0);
-        (0..count)
-            .flat_map(|i| {
-                let middle_m3 = share_m3 * (i as f64 + 0.5);
-                let from = self.device.along_m(middle_m3 - 0.5 * slug_m3);
-                let to = self.device.along_m(middle_m3 + 0.5 * slug_m3);
-                let begun = below(inside, Point::new(-1.0, 0.0), -from);
-                let mut cuts: Vec<Cut> = begun
-                    .pools
-                    .iter()
-                    .map(|pool| below(pool, axis, to))
-                    .collect();
-                if let Some(first) = cuts.first_mut() {
-                    first.surfaces.extend(begun.surfaces);
-                }
-                cuts
-            })
-            .collect()
-    }
-
-    /// Free surfaces, but for what solids and cores hide of them.
-    fn surfaces(
-        &mut self,
-        inside: &[Point],
-        mut surfaces: Vec<[Point; 2]>,
-        up: Point,
-        is_level: bool,
-    ) {
-        let hidden: Vec<Vec<Point>> = self
-            .device
-            .bodies
-            .iter()
-            .map(body_outline)
-            .chain(
-                self.device
-                    .pieces
-                    .iter()
-                    .filter_map(|piece| core(piece, 0.0)),
-            )
-            .collect();
-        for shape in &hidden {
-            surfaces = surfaces
-                .into_iter()
-                .flat_map(|surface| outside(surface, shape))
-                .collect();
-        }
-        for surface in &surfaces {
-            self.line(surface, false, Stroke::Level);
-        }
-        if is_level {
-            self.level_sign(inside, surfaces, up);
-        }
-    }
-
-    /// A triangle that stands on the widest surface, where there is room for it.
-    fn level_sign(&mut self, inside: &[Point], surfaces: Vec<[Point; 2]>, up: Point) {
-        let length = |[a, b]: [Point; 2]| (a.x - b.x).hypot(a.y - b.y);
-        let em = self.picture.em_m;
-        let Some([a, b]) = surfaces
-            .into_iter()
-            .max_by(|a, b| length(*a).total_cmp(&length(*b)))
-        else {
-            return;
-        };
-        let along = Point::new(b.x - a.x, b.y - a.y);
-        let sign = |share: f64| {
-            let foot = a.plus(along, share);
-            let head = foot.plus(up, 0.7 * em);
-            let side = up.left();
-            [foot, head.plus(side, 0.4 * em), head.plus(side, -0.4 * em)]
-        };
-        let free = |sign: &[Point; 3]| {
-            let room = |p: Point| plane::inside(inside, p);
-            let [foot, left, right] = *sign;
-            [foot, left, right]
-                .map(|p| p.plus(up, 0.15 * em))
-                .into_iter()
-                .all(room)
-        };
-        let found = [0.75, 0.25, 0.5, 0.9, 0.1].map(sign).into_iter().find(free);
-        if let Some(sign) = found {
-            self.line(&sign, true, Stroke::Level);
-        }
-    }
-
-    /// Wicks: dry, wet from the wall as far as they are, and wet below the level.
-    fn linings(&mut self, paint: Paint, wet_share: f64, view: &View, level_m: f64) {
-        let tilt = Tilt::new(view.tilt_deg);
-        let up = Point::new(tilt.sin, tilt.cos);
-        for piece in &self.device.pieces {
-            let mut off = 0.0;
-            for layer in &piece.layers {
-                let t = layer.thickness_m;
-                let (from, to) = match layer.lies {
-                    Lies::OnTheWall => (off, off + t),
-                    Lies::InTheWall => (-t, 0.0),
-                };
-                off += layer.inward_m();
-                for side in [1.0, -1.0] {
-                    let dry = band(piece, from, to, side);
-                    self.area(&dry, Paint::Wick);
-                    let wet = band(piece, from, from + wet_share * (to - from), side);
-                    if wet_share > 0.0 {
-                        self.area(&wet, paint);
-                    }
-                    for pool in below(&dry, up, level_m).pools {
-                        self.area(&pool, paint);
-                    }
-                    // The pattern of the wick goes over both.
-                    let outline = self.frame.polygon(&dry);
-                    let area = Area {
-                        outline,
-                        paint: Paint::Wick,
-                    };
-                    for (angle, distance) in Paint::Wick.pattern() {
-                        let angle = pattern_turn(Paint::Wick, *angle, view);
-                        let strokes = hatched(&area, angle, distance * self.picture.em_m);
-                        self.picture.hatches.extend(strokes);
-                    }
-                    let edge = |k: f64| Point::new(k, side * inner_edge(piece, to, k));
-                    let ends = [0.0, piece.form.length_m()];
-                    let points = ends.map(|x| edge(x).plus(Point::new(1.0, 0.0), piece.start_m));
-                    self.line(&points, false, Stroke::Joint);
-                    self.spot(&dry, &layer.text);
-                }
-            }
-        }
-    }
-
     /// Cores and inserts, over the liquid.
     fn solids(&mut self) {
         for piece in &self.device.pieces {
@@ -408,60 +239,10 @@ impl Drawing<'_> {
             self.line(&points, false, Stroke::Centre);
         }
     }
-
-    /// Patterns of all but the wick's layers, which have theirs already.
-    fn hatch(&mut self, view: &View) {
-        let em = self.picture.em_m;
-        let mut strokes = Vec::new();
-        let areas = &self.picture.areas;
-        for (i, area) in areas.iter().enumerate() {
-            if area.paint == Paint::Wick && !self.porous(area) {
-                continue;
-            }
-            // Shorter where something lies over them.
-            let over: Vec<&Area> = areas[i + 1..]
-                .iter()
-                .filter(|a| matches!(a.paint, Paint::Insert | Paint::Wall | Paint::Wick))
-                .collect();
-            for (angle, distance) in area.paint.pattern() {
-                for stroke in hatched(area, pattern_turn(area.paint, *angle, view), distance * em) {
-                    let mut left = vec![stroke.ends];
-                    for a in &over {
-                        left = left
-                            .into_iter()
-                            .flat_map(|ends| outside(ends, &a.outline))
-                            .collect();
-                    }
-                    strokes.extend(left.into_iter().map(|ends| Hatch { ends, ..stroke }));
-                }
-            }
-        }
-        self.picture.hatches.splice(0..0, strokes);
-    }
-
-    /// Whether a wick's area is a body and no layer.
-    fn porous(&self, area: &Area) -> bool {
-        self.device
-            .bodies
-            .iter()
-            .filter(|body| body.made == Made::Porous)
-            .any(|body| self.frame.polygon(&body_outline(body)) == area.outline)
-    }
-}
-
-/// Patterns lie with the level; that of a solid is turned by a quarter where its strokes
-/// would run along the device.
-fn pattern_turn(paint: Paint, angle_deg: f64, view: &View) -> f64 {
-    let off = (view.tilt_deg - angle_deg).rem_euclid(180.0);
-    let runs_along = off.min(180.0 - off) < 22.0;
-    match paint {
-        Paint::Wick | Paint::Insert if runs_along => view.turn_deg + angle_deg + 90.0,
-        _ => view.turn_deg + angle_deg,
-    }
 }
 
 /// A half outline and its mirror image, closed, running to the left around it.
-fn mirrored(half: &[[f64; 2]]) -> Vec<Point> {
+pub(super) fn mirrored(half: &[[f64; 2]]) -> Vec<Point> {
     let lower = half.iter().map(|[x, r]| Point::new(*x, -r));
     let upper = half.iter().rev().map(|[x, r]| Point::new(*x, *r));
     let mut points: Vec<Point> = lower.chain(upper).collect();
@@ -472,24 +253,8 @@ fn mirrored(half: &[[f64; 2]]) -> Vec<Point> {
     points
 }
 
-fn inner_edge(piece: &Piece, off: f64, x: f64) -> f64 {
-    (piece.form.half_height_m(x) - off).max(0.0)
-}
-
-/// A band along the wall between two distances inward of the bore, on one side.
-fn band(piece: &Piece, from: f64, to: f64, side: f64) -> Vec<Point> {
-    let edge = piece.form.drawn(0.0);
-    let at = |off: f64| {
-        edge.iter()
-            .map(move |([x, r], _)| Point::new(piece.start_m + x, side * (r - off).max(0.0)))
-    };
-    let mut points: Vec<Point> = at(to).collect();
-    points.extend(at(from).collect::<Vec<_>>().into_iter().rev());
-    points
-}
-
 /// The core of an annulus, closed at its ends, smaller by `off_m` all around.
-fn core(piece: &Piece, off_m: f64) -> Option<Vec<Point>> {
+pub(super) fn core(piece: &Piece, off_m: f64) -> Option<Vec<Point>> {
     let Form::Annulus {
         length_m, core_m, ..
     } = piece.form
@@ -501,7 +266,7 @@ fn core(piece: &Piece, off_m: f64) -> Option<Vec<Point>> {
     (r > 0.0 && to > from).then(|| mirrored(&[[from, r], [to, r]]))
 }
 
-fn body_outline(body: &Body) -> Vec<Point> {
+pub(super) fn body_outline(body: &Body) -> Vec<Point> {
     let middle = Point::new(body.along_m, body.over_m);
     match body.outline {
         BodyOutline::Bar { length_m, height_m } => {

@@ -5,7 +5,8 @@ use super::plane::{Point, signed_area, turn};
 /// Triangles of a simple polygon by cutting off ears.
 ///
 /// An ear is a corner that turns with the polygon and holds no other corner. Where
-/// rounding leaves none, the flattest corner goes, so that it always ends.
+/// rounding leaves none, the corner at hand goes, so that it always ends. Only corners that
+/// turn the other way can lie in an ear, and none becomes one as ears are cut off.
 ///
 /// Source: common practice; that every simple polygon has two ears is G. H. Meisters,
 /// Amer. Math. Monthly 82 (1975) 648 [from memory].
@@ -17,14 +18,22 @@ pub(super) fn triangles(outline: &[Point]) -> Vec<[usize; 3]> {
     };
     let mut corners: Vec<usize> = (0..outline.len()).collect();
     corners.dedup_by_key(|i| (outline[*i].x.to_bits(), outline[*i].y.to_bits()));
-    let mut triangles = Vec::with_capacity(corners.len());
+    let n = corners.len();
+    let inward: Vec<usize> = (0..n)
+        .filter(|at| {
+            let [a, b, c] = [(at + n - 1) % n, *at, (at + 1) % n].map(|k| outline[corners[k]]);
+            left * turn(a, b, c) < 0.0
+        })
+        .map(|at| corners[at])
+        .collect();
+    let mut triangles = Vec::with_capacity(n);
     let mut at = 0;
     let mut tried = 0;
     while corners.len() > 3 {
         let n = corners.len();
         at %= n;
         let [a, b, c] = [(at + n - 1) % n, at, (at + 1) % n].map(|k| corners[k]);
-        if tried >= n || is_ear(outline, &corners, [a, b, c], left) {
+        if tried >= n || is_ear(outline, &inward, [a, b, c], left) {
             let is_flat = turn(outline[a], outline[b], outline[c]) == 0.0;
             if !is_flat {
                 triangles.push([a, b, c]);
@@ -44,7 +53,7 @@ pub(super) fn triangles(outline: &[Point]) -> Vec<[usize; 3]> {
     triangles
 }
 
-fn is_ear(outline: &[Point], corners: &[usize], [a, b, c]: [usize; 3], left: f64) -> bool {
+fn is_ear(outline: &[Point], inward: &[usize], [a, b, c]: [usize; 3], left: f64) -> bool {
     let (p, q, r) = (outline[a], outline[b], outline[c]);
     let area = left * turn(p, q, r);
     if area < 0.0 {
@@ -53,7 +62,7 @@ fn is_ear(outline: &[Point], corners: &[usize], [a, b, c]: [usize; 3], left: f64
     if area == 0.0 {
         return true;
     }
-    corners
+    inward
         .iter()
         .filter(|i| ![a, b, c].contains(i))
         .map(|i| outline[*i])

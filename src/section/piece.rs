@@ -229,7 +229,7 @@ impl Form {
                 [one] => one.radius_m(one.from_m) == one.radius_m(one.to_m) && one.is_straight(),
                 _ => false,
             },
-            Self::Plate { .. } => false,
+            Self::Plate { .. } | Self::Bellows { .. } => false,
             _ => true,
         };
         alike.then(|| {
@@ -240,7 +240,7 @@ impl Form {
         })
     }
 
-    /// The same prism, shorter.
+    /// The same prism, of another length.
     pub(super) fn cut_to(&self, to_m: f64) -> Self {
         let mut cut = self.clone();
         match &mut cut {

@@ -58,7 +58,7 @@ pub enum NoSection {
 }
 
 /// More are no drawing any more.
-const MOST_PIECES: usize = 200;
+const MOST_PIECES: usize = 60;
 
 impl Device {
     /// Parts along the axis in the order of the list. Two ends alike close both ends, a
@@ -178,6 +178,7 @@ fn in_a_row(parts: &[Stacked]) -> Result<Row<'_>, NoSection> {
         let times = match &part.place {
             Place::End(_) if stays.contains(&i) => 1,
             Place::End(_) => part.count.saturating_sub(2),
+            place if is_one_stretch(place) => 1,
             _ => part.count,
         };
         if row.len() + times as usize > MOST_PIECES {
@@ -196,6 +197,15 @@ fn in_a_row(parts: &[Stacked]) -> Result<Row<'_>, NoSection> {
     Ok(row)
 }
 
+/// Prisms alike in a row make one longer; a core is closed, and closes again.
+fn is_one_stretch(place: &Place) -> bool {
+    match place {
+        Place::Along(Form::Annulus { .. }) => false,
+        Place::Along(form) => form.prism().is_some(),
+        _ => false,
+    }
+}
+
 fn piece(row: &Row, i: usize) -> Option<Piece> {
     let (part, backwards) = row.get(i)?;
     let beside = |at: Option<usize>, side| {
@@ -205,6 +215,9 @@ fn piece(row: &Row, i: usize) -> Option<Piece> {
     let before_m = beside(i.checked_sub(1), Side::Last);
     let after_m = beside(Some(i + 1), Side::First);
     let form = match &part.place {
+        Place::Along(form) if is_one_stretch(&part.place) => {
+            form.cut_to(f64::from(part.count) * form.length_m())
+        }
         Place::Along(form) | Place::Pillared { form, .. } | Place::End(form) => form.clone(),
         Place::Sphere { diameter_m } => Form::sphere(
             *diameter_m,

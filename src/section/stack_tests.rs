@@ -57,8 +57,9 @@ fn two_ends_close_both_and_single_ones_what_is_open() {
     );
     // Lids lie outside ends, and what is repeated stands in a row.
     let plate = Place::End(Form::Plate { height_m: 0.02 });
+    let cone = Place::Along(Form::cone(0.02, 0.01, 0.1));
     assert_eq!(
-        order(vec![(tube(0.02), 3), (dome(0.02), 2), (plate, 2)]),
+        order(vec![(cone, 3), (dome(0.02), 2), (plate, 2)]),
         [2, 1, 0, 0, 0, 1, 2]
     );
 }
@@ -160,9 +161,12 @@ fn nothing_too_much_and_too_many_are_said() {
     // Too much for their own part, but not for the device.
     assert!(with_rods(3).expect("room") > 0.0);
     assert_eq!(
-        assemble(&[stacked(tube(0.02), u32::MAX, 0)]),
-        Err(NoSection::TooManyPieces { most: 200 })
+        assemble(&[stacked(Place::Sphere { diameter_m: 0.02 }, u32::MAX, 0)]),
+        Err(NoSection::TooManyPieces { most: 60 })
     );
+    // Tubes alike in a row are one tube.
+    let tubes = assemble(&[stacked(tube(0.02), 1000, 0)]).expect("a section");
+    assert!((tubes / (1000.0 * std::f64::consts::PI * 1e-4 * 0.1) - 1.0).abs() < 1e-12);
 }
 
 /// Each shape of the menu, alone and with its neighbours, has the chamber's volume but

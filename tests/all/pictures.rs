@@ -56,7 +56,11 @@ fn every_ready_design_is_drawn_soundly_in_every_unit_and_tilt() {
                 sound(&text);
                 let parts = store::preset(name).expect(name).chamber.parts.len();
                 assert_eq!(picture.key.len(), parts, "{name}");
-                assert_eq!(text.contains("\u{a0}in"), system == UnitSystem::Inch, "{name}");
+                assert_eq!(
+                    text.contains("\u{a0}in"),
+                    system == UnitSystem::Inch,
+                    "{name}"
+                );
             }
         }
     }

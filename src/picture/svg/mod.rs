@@ -3,7 +3,13 @@
 //! Standalone SVG 1.1, lengths in mm of the device, the same bytes for the same picture.
 //! Light colours, and a pattern of strokes in what would else be alike in grey.
 
+mod style;
+mod text;
+
 use std::fmt::Write;
+
+use style::{INK, fill, hatch_colour, pen};
+use text::{escaped, number, wrapped};
 
 use super::marks::text_width;
 use super::plane::hatched;
@@ -240,114 +246,5 @@ impl Page {
     fn put(&mut self, text: std::fmt::Arguments) {
         // Writing into a string cannot fail.
         let _ = self.text.write_fmt(text);
-    }
-}
-
-const INK: &str = "#1d2329";
-
-const fn fill(paint: Paint) -> &'static str {
-    match paint {
-        Paint::Wall => "#7d858e",
-        Paint::Vapour => "#f7f9fb",
-        Paint::Liquid => "#a8d3f0",
-        Paint::Frozen => "#dceaf4",
-        Paint::Wick => "#efd9b0",
-        Paint::Insert => "#d3d6d9",
-        Paint::Outside => "#ffffff",
-    }
-}
-
-const fn hatch_colour(paint: Paint) -> &'static str {
-    match paint {
-        Paint::Liquid => "#3f86b8",
-        Paint::Frozen => "#6f9ab8",
-        Paint::Wick => "#7a5a1e",
-        _ => "#5b6168",
-    }
-}
-
-/// Colour, width and dashes of a line, both in heights of text.
-const fn pen(stroke: Stroke) -> (&'static str, f64, &'static [f64]) {
-    match stroke {
-        Stroke::Outline => (INK, 0.07, &[]),
-        Stroke::Joint => (INK, 0.05, &[]),
-        Stroke::Centre => ("#4a525b", 0.04, &[1.2, 0.25, 0.25, 0.25]),
-        Stroke::Level => ("#0b4f80", 0.11, &[]),
-        Stroke::Dimension => (INK, 0.05, &[]),
-    }
-}
-
-fn number(value: f64, decimals: usize) -> String {
-    let text = format!("{value:.decimals$}");
-    let text = if text.contains('.') {
-        text.trim_end_matches('0').trim_end_matches('.')
-    } else {
-        &text
-    };
-    // "-0" would be another text for the same place.
-    if text == "-0" {
-        "0".to_owned()
-    } else {
-        text.to_owned()
-    }
-}
-
-/// Text in lines of at most so many heights of text, broken between words.
-fn wrapped(text: &str, most: f64) -> Vec<String> {
-    let mut lines: Vec<String> = Vec::new();
-    for word in text
-        .split([' ', '\n', '\t'])
-        .filter(|word| !word.is_empty())
-    {
-        match lines.last_mut() {
-            Some(line) if text_width(line) + text_width(word) + 0.6 <= most => {
-                line.push(' ');
-                line.push_str(word);
-            }
-            _ => lines.push(word.to_owned()),
-        }
-    }
-    lines
-}
-
-/// Text that an XML parser takes as it is; what XML cannot hold becomes a blank.
-fn escaped(text: &str) -> String {
-    let mut out = String::with_capacity(text.len());
-    for c in text.chars() {
-        match c {
-            '&' => out.push_str("&amp;"),
-            '<' => out.push_str("&lt;"),
-            '>' => out.push_str("&gt;"),
-            '"' => out.push_str("&quot;"),
-            '\n' => out.push('\n'),
-            c if c.is_control() || matches!(c, '\u{fffe}' | '\u{ffff}') => out.push(' '),
-            c => out.push(c),
-        }
-    }
-    out
-}
-
-#[cfg(test)]
-mod tests {
-    use super::*;
-
-    #[test]
-    fn text_is_escaped_and_numbers_are_short() {
-        assert_eq!(
-            escaped("a < \"b\" & c\u{1}"),
-            "a &lt; &quot;b&quot; &amp; c "
-        );
-        assert_eq!(number(-1e-9, 3), "0");
-        assert_eq!(number(1.5, 3), "1.5");
-        assert_eq!(number(100.0, 0), "100");
-    }
-
-    #[test]
-    fn long_text_is_broken_between_words_and_never_lost() {
-        let text = "one two three four five";
-        let lines = wrapped(text, 6.0);
-        assert!(lines.len() > 2);
-        assert_eq!(lines.join(" "), text);
-        assert_eq!(wrapped("unbreakable", 1.0), ["unbreakable"]);
     }
 }
