@@ -11,12 +11,16 @@ use clap::{Parser, Subcommand};
 use crate::assess::{Library, Verdict, assess};
 use crate::design::Design;
 use crate::fluid::{Catalog, Fluid, FluidError, UnknownFluid};
+use crate::picture::{of_design, svg};
+use crate::section::NoSection;
 use crate::sheet::{Head, render};
 use crate::store::{self, Shelf, StoreError};
 use crate::units::{
     Density, Kind, ParseError, Quantity, QuantityError, Temperature, Units, parse_si, unit_named,
 };
 use crate::words;
+
+mod walls;
 
 /// Fluid, charge and envelope of sealed two-phase devices.
 #[derive(Debug, Parser)]
@@ -39,6 +43,25 @@ pub enum Headless {
     },
     /// List what was found in a design, worst first; exit 0 fit, 1 not fit.
     Check { design: PathBuf },
+    /// Draw a design in section, to scale, as SVG.
+    Section {
+        design: PathBuf,
+        /// Temperature that the liquid is drawn at, the hottest without it; kelvin without
+        /// a unit.
+        #[arg(long, value_name = "T", allow_hyphen_values = true)]
+        at: Option<String>,
+        /// Write to this file instead.
+        #[arg(long, value_name = "FILE")]
+        out: Option<PathBuf>,
+    },
+    /// What every wall of a design bears, inside and outside, as CSV.
+    Walls {
+        design: PathBuf,
+        /// Temperatures, comma-separated; kelvin without a unit. Coldest, bench and hottest
+        /// without it.
+        #[arg(long, value_name = "T1,T2,…", allow_hyphen_values = true)]
+        at: Option<String>,
+    },
     /// Saturation states as CSV.
     Saturation {
         /// Id, CAS number or refrigerant number.
@@ -91,6 +114,8 @@ pub enum CliError {
     },
     #[error("--{option} {text}: the decimal mark is a point here, and one value is asked for")]
     Comma { option: &'static str, text: String },
+    #[error("the chamber has no section: {0}")]
+    NoSection(#[from] NoSection),
     #[error("the output cannot be written: {0}")]
     Output(io::Error),
 }
@@ -141,7 +166,7 @@ pub fn run(command: &Headless) -> ExitCode {
     }
 }
 
-/// A command's answer; writes a file only for `sheet --out`. `settings` is the program's
+/// A command's answer; writes a file only for `--out`. `settings` is the program's
 /// own folder, which may hold the user's own fluids.
 ///
 /// # Errors
@@ -160,6 +185,26 @@ pub fn answer(command: &Headless, settings: Option<&Path>) -> Result<Outcome, Cl
                 code,
                 ..outcome(text, &shelf)
             })
+        }
+        Headless::Section { design, at, out } => {
+            let (design_read, shelf) = store::open(design, settings)?;
+            let at = match at {
+                Some(text) => temperatures(text)?.first().copied(),
+                None => None,
+            };
+            let text = section(&design_read, &shelf.library, at)?;
+            let text = written(text, out.as_deref(), design)?;
+            Ok(outcome(text, &shelf))
+        }
+        Headless::Walls { design, at } => {
+            let (design, shelf) = store::open(design, settings)?;
+            let conditions = &design.conditions;
+            let at = match at {
+                Some(text) => temperatures(text)?,
+                None => vec![conditions.coldest, conditions.bench, conditions.hottest],
+            };
+            let assessment = assess(&design, &shelf.library);
+            Ok(outcome(walls::table(&design, &assessment, &at), &shelf))
         }
         Headless::Saturation { fluid, at } => {
             let shelf = store::shelf(None, settings);
@@ -226,14 +271,30 @@ fn sheet(
     let name = path
         .file_name()
         .map(|name| name.to_string_lossy().into_owned());
-    let text = sheet_with(design, library, name);
+    written(sheet_with(design, library, name), out, path)
+}
+
+/// The text to print: none where it went into a file.
+fn written(text: String, out: Option<&Path>, design: &Path) -> Result<String, CliError> {
     match out {
         Some(out) => {
-            store::write_beside(out, &text, Some(path))?;
+            store::write_beside(out, &text, Some(design))?;
             Ok(String::new())
         }
         None => Ok(text),
     }
+}
+
+/// The section as SVG, in the metric system.
+fn section(
+    design: &Design,
+    library: &Library,
+    at: Option<Temperature>,
+) -> Result<String, CliError> {
+    let assessment = assess(design, library);
+    let at = at.unwrap_or(design.conditions.hottest);
+    let picture = of_design(design, &assessment, at, 0.0, &Units::default())?;
+    Ok(svg(&picture))
 }
 
 /// One line a finding, and the exit code.

@@ -22,6 +22,8 @@ pub mod conditions;
 
 pub mod sealed;
 
+pub mod section;
+
 pub mod hazard;
 
 pub mod design;
@@ -29,6 +31,8 @@ pub mod design;
 pub mod assess;
 
 pub mod words;
+
+pub mod picture;
 
 pub mod sheet;
 

@@ -91,6 +91,8 @@ pub enum ShapeFault {
     PillarsTouch,
     #[error("the wick is thicker than the bore leaves room for")]
     WickThickerThanBore,
+    #[error("the wick is wider than any part that could hold it")]
+    WickWiderThanAnyPart,
     #[error("{0}")]
     Wick(WickError),
     /// Of what must be at least one.
@@ -156,8 +158,22 @@ pub(super) fn faults(chamber: &Chamber, materials: &Materials) -> Vec<ChamberFau
     if chamber.parts.is_empty() {
         faults.push(ChamberFault::NoParts);
     }
+    let widest_m = chamber
+        .parts
+        .iter()
+        .filter(|part| part.shape.role() == Role::Cavity)
+        .filter_map(|part| part.shape.bore_m())
+        .fold(0.0, f64::max);
     for (index, part) in chamber.parts.iter().enumerate() {
         of_part(index, part, materials, &mut faults);
+        if let Shape::Wick(wick) = &part.shape
+            && let Some(Lies::Lining { bore, .. }) = wick.lies()
+            // As the drawing's tolerance goes.
+            && bore.least().metre() > widest_m
+        {
+            let why = ShapeFault::WickWiderThanAnyPart;
+            faults.push(ChamberFault::Shape { part: index, why });
+        }
     }
     of_closure(chamber, materials, &mut faults);
     faults

@@ -20,6 +20,7 @@ pub enum Command {
     Save,
     SaveAs,
     ExportSheet,
+    ExportSection,
     CopySheet,
     Undo,
     Redo,
@@ -46,6 +47,7 @@ impl Command {
             Self::Save => "Save".to_owned(),
             Self::SaveAs => "Save as…".to_owned(),
             Self::ExportSheet => "Export charge sheet…".to_owned(),
+            Self::ExportSection => "Export section drawing…".to_owned(),
             Self::CopySheet => "Copy the sheet".to_owned(),
             Self::Undo => "Undo".to_owned(),
             Self::Redo => "Redo".to_owned(),
@@ -74,6 +76,9 @@ impl Command {
             Self::Save => "Write the design to its file",
             Self::SaveAs => "Write the design to another file",
             Self::ExportSheet => "Write the charge sheet as plain text",
+            Self::ExportSection => {
+                "Write the section to scale as SVG, with the liquid at the chosen temperature"
+            }
             Self::CopySheet => "Put the charge sheet on the clipboard",
             Self::Undo => "Take back the last change",
             Self::Redo => "Make the change again",

@@ -35,6 +35,7 @@ pub enum Purpose {
     Open,
     SaveAs,
     ExportSheet,
+    ExportSection,
 }
 
 /// A path that can be typed, or chosen where the system offers a file dialog.
@@ -77,6 +78,7 @@ impl Purpose {
             Self::Open => "Open a design",
             Self::SaveAs => "Save the design as",
             Self::ExportSheet => "Export the charge sheet to",
+            Self::ExportSection => "Export the section drawing to",
         }
     }
 
@@ -84,7 +86,7 @@ impl Purpose {
         match self {
             Self::Open => "Open",
             Self::SaveAs => "Save",
-            Self::ExportSheet => "Export",
+            Self::ExportSheet | Self::ExportSection => "Export",
         }
     }
 
@@ -92,6 +94,7 @@ impl Purpose {
         match self {
             Self::Open | Self::SaveAs => "ron",
             Self::ExportSheet => "txt",
+            Self::ExportSection => "svg",
         }
     }
 }
@@ -213,10 +216,10 @@ impl PathDialog {
             .and_then(|path| path.parent())
             .filter(|folder| folder.is_dir());
         let mut dialog = dialog.add_filter(
-            if self.purpose == Purpose::ExportSheet {
-                "plain text"
-            } else {
-                "design"
+            match self.purpose {
+                Purpose::Open | Purpose::SaveAs => "design",
+                Purpose::ExportSheet => "plain text",
+                Purpose::ExportSection => "SVG drawing",
             },
             &[self.purpose.extension()],
         );

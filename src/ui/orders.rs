@@ -10,6 +10,7 @@ use super::desk::Desk;
 use super::dialogs::{Decision, Dialog, PathDialog, Purpose, dialog_ui};
 use super::theme;
 use crate::design::Design;
+use crate::picture::{of_design, svg};
 use crate::sheet::{Head, render};
 use crate::store;
 use crate::units::Units;
@@ -76,6 +77,7 @@ impl App {
             Command::Save => self.save(None),
             Command::SaveAs => self.ask_path(Purpose::SaveAs, None),
             Command::ExportSheet => self.ask_path(Purpose::ExportSheet, None),
+            Command::ExportSection => self.ask_path(Purpose::ExportSection, None),
             Command::CopySheet => {
                 let text = sheet_text(&self.desk, &Units::new(self.settings.units));
                 ctx.copy_text(text);
@@ -173,6 +175,10 @@ impl App {
             (Purpose::ExportSheet, None) => {
                 PathBuf::from(file_stem(&self.desk.design.title)).with_extension("txt")
             }
+            (Purpose::ExportSection, Some(path)) => path.with_extension("svg"),
+            (Purpose::ExportSection, None) => {
+                PathBuf::from(file_stem(&self.desk.design.title)).with_extension("svg")
+            }
         };
         let suggested = suggested.display().to_string();
         self.dialog = Some(Dialog::Path(PathDialog::new(purpose, suggested, then)));
@@ -212,6 +218,7 @@ impl App {
                 Err(error) => self.failed(error.to_string()),
             },
             Purpose::SaveAs => self.save_to(path, then),
+            Purpose::ExportSection => self.export_section(path),
             Purpose::ExportSheet => {
                 let text = sheet_text(&self.desk, &Units::new(self.settings.units));
                 match store::write_beside(path, &text, self.desk.path()) {
@@ -222,6 +229,26 @@ impl App {
                     Err(error) => self.failed(error.to_string()),
                 }
             }
+        }
+    }
+
+    /// The section at the temperature on the scrubber, the right way up.
+    fn export_section(&mut self, path: &Path) {
+        let desk = &self.desk;
+        let at = self.behaviour.scrubber(&desk.design);
+        let units = Units::new(self.settings.units);
+        let picture = of_design(&desk.design, desk.assessment(), at, 0.0, &units);
+        let written = match picture {
+            Ok(picture) => store::write_beside(path, &svg(&picture), desk.path())
+                .map_err(|error| error.to_string()),
+            Err(reason) => Err(format!("The chamber has no section: {reason}")),
+        };
+        match written {
+            Ok(()) => {
+                self.dialog = None;
+                self.notice = Some(format!("The section drawing is in {}.", path.display()));
+            }
+            Err(why) => self.failed(why),
         }
     }
 

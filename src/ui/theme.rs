@@ -26,6 +26,10 @@ pub struct Palette {
     pub supercritical: Color32,
     pub frozen: Color32,
     pub over_allowable: Color32,
+    /// In the section: walls, wicks and solids inside.
+    pub wall: Color32,
+    pub wick: Color32,
+    pub insert: Color32,
     /// Line of the saturation curve.
     pub saturation: Color32,
     /// Line of the sealed unit's own path.
@@ -100,6 +104,9 @@ static LIGHT: Palette = Palette {
     supercritical: rgb(0xEAE2F8),
     frozen: rgb(0xD2D5D9),
     over_allowable: rgb(0xF8D3C2),
+    wall: rgb(0x8B939C),
+    wick: rgb(0xEFD9B0),
+    insert: rgb(0xCDD1D5),
     saturation: rgb(0x0B5C9A),
     path: rgb(0x7A2E86),
     allowable: rgb(0x965800),
@@ -126,6 +133,9 @@ static DARK: Palette = Palette {
     supercritical: rgb(0x43264F),
     frozen: rgb(0x3A424D),
     over_allowable: rgb(0x6A311E),
+    wall: rgb(0x78828D),
+    wick: rgb(0x5C4A26),
+    insert: rgb(0x49525C),
     saturation: rgb(0x5DB4F2),
     path: rgb(0xDE9FD6),
     allowable: rgb(0xF0C060),

@@ -6,7 +6,7 @@ use std::path::{Path, PathBuf};
 
 /// Modules in reading order, as `src/lib.rs` lists them: each may use itself and
 /// earlier ones.
-const ORDER: [&str; 16] = [
+const ORDER: [&str; 18] = [
     "units",
     "solve",
     "source",
@@ -15,10 +15,12 @@ const ORDER: [&str; 16] = [
     "chamber",
     "conditions",
     "sealed",
+    "section",
     "hazard",
     "design",
     "assess",
     "words",
+    "picture",
     "sheet",
     "store",
     "cli",

@@ -17,6 +17,7 @@ mod metals;
 mod own_fluid_refusals;
 mod own_fluids;
 mod phase_lines;
+mod pictures;
 mod presets;
 mod printed_tables;
 mod random_states;

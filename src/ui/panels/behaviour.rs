@@ -8,7 +8,7 @@ use crate::design::{Charge, Design, FluidId};
 use crate::ui::command::Command;
 use crate::ui::desk::Desk;
 use crate::ui::plots::{
-    Picture, PlotState, charge_map_ui, liquid_share_ui, pressure_ui, scrubber_ui,
+    Picture, PlotState, charge_map_ui, liquid_share_ui, pressure_ui, scrubber_ui, section_ui,
 };
 use crate::ui::theme::Palette;
 use crate::units::{Mass, Temperature, Units};
@@ -112,7 +112,7 @@ fn picture_selector(ui: &mut Ui, state: &mut Behaviour) {
         ui.label(picture.name());
         return;
     }
-    for picture in [Picture::Pressure, Picture::LiquidShare] {
+    for picture in [Picture::Pressure, Picture::Section, Picture::LiquidShare] {
         ui.selectable_value(&mut state.second, picture, picture.name());
     }
 }
@@ -140,6 +140,7 @@ fn pictures_ui(
                 dragged = charge_map_ui(ui, design, a, units, palette, scrubber, state)
             }
             Picture::Pressure => pressure_ui(ui, design, a, units, palette, scrubber, state),
+            Picture::Section => section_ui(ui, design, a, units, palette, *scrubber, state),
             Picture::LiquidShare => liquid_share_ui(ui, design, a, units, palette, scrubber, state),
         }
     };
@@ -164,32 +165,26 @@ fn pictures_ui(
         );
     } else if size.x > WIDE {
         let left = (0.56 * size.x).floor();
-        let right = size.x - left - spacing.x;
+        // The buttons of one picture end well before the name of the next.
+        const GAP: f32 = 18.0;
+        let right = size.x - left - GAP;
         ui.horizontal_top(|ui| {
-            cell(
-                ui,
-                vec2(left, height),
-                Picture::ChargeMap,
-                &mut state.plots,
-                &mut scrubber,
-            );
-            ui.vertical(|ui| {
-                let half = 0.5 * (height - spacing.y);
-                cell(
-                    ui,
-                    vec2(right, half),
-                    Picture::Pressure,
-                    &mut state.plots,
-                    &mut scrubber,
-                );
-                cell(
-                    ui,
-                    vec2(right, half),
-                    Picture::LiquidShare,
-                    &mut state.plots,
-                    &mut scrubber,
-                );
-            });
+            ui.spacing_mut().item_spacing.x = GAP;
+            // The four of them, two by two; the map keeps the more room.
+            let upper = (0.58 * (height - spacing.y)).floor();
+            let lower = height - spacing.y - upper;
+            let columns = [
+                (left, Picture::ChargeMap, Picture::Section),
+                (right, Picture::Pressure, Picture::LiquidShare),
+            ];
+            for (width, above, below) in columns {
+                ui.vertical(|ui| {
+                    for (height, picture) in [(upper, above), (lower, below)] {
+                        let size = vec2(width, height);
+                        cell(ui, size, picture, &mut state.plots, &mut scrubber);
+                    }
+                });
+            }
         });
     } else {
         let upper = (0.56 * (height - spacing.y)).floor();

@@ -51,6 +51,7 @@ fn file_ui(ui: &mut Ui, recent: &[PathBuf], out: &mut Vec<Command>) {
     entry(ui, Command::Save, true, out);
     entry(ui, Command::SaveAs, true, out);
     entry(ui, Command::ExportSheet, true, out);
+    entry(ui, Command::ExportSection, true, out);
     ui.separator();
     entry(ui, Command::Quit, true, out);
 }

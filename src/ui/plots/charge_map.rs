@@ -11,7 +11,7 @@ use super::gutter::{EndLabel, widest};
 use super::items::Items;
 use super::map_areas::Areas;
 use super::over_temperature::condition_stroke;
-use super::{Picture, PlotState, header_ui, missing_ui, say, table};
+use super::{CopyAs, Picture, PlotState, header_ui, missing_ui, say, table};
 use crate::assess::{Assessment, ChargeFigures, Charts};
 use crate::design::Design;
 use crate::fluid::CurvePoint;
@@ -39,11 +39,18 @@ pub fn charge_map_ui(
         }
     };
     ui.push_id(Picture::ChargeMap.name(), |ui| {
-        let copy = header_ui(ui, Picture::ChargeMap, state, palette, |ui, _| {
-            let words =
-                RichText::new(charge_in_words(design, charge, units)).color(palette.text_faint);
-            ui.add(Label::new(words).truncate());
-        });
+        let copy = header_ui(
+            ui,
+            Picture::ChargeMap,
+            state,
+            palette,
+            CopyAs::Table,
+            |ui, _| {
+                let words =
+                    RichText::new(charge_in_words(design, charge, units)).color(palette.text_faint);
+                ui.add(Label::new(words).truncate());
+            },
+        );
         if copy {
             ui.ctx().copy_text(table::charge_map(charts, units));
         }

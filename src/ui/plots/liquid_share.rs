@@ -12,7 +12,7 @@ use super::labels::{Taken, place_in_area};
 use super::over_temperature::{
     lay_conditions, lay_regimes, mark_event, name_bands, name_conditions, temperature_side,
 };
-use super::{Picture, PlotState, header_ui, missing_ui, say, table};
+use super::{CopyAs, Picture, PlotState, header_ui, missing_ui, say, table};
 use crate::assess::{Assessment, Charts, EventKind};
 use crate::design::Design;
 use crate::sealed::PathPoint;
@@ -35,7 +35,14 @@ pub fn liquid_share_ui(
         Err(missing) => return missing_ui(ui, Picture::LiquidShare, missing, units, palette),
     };
     ui.push_id(Picture::LiquidShare.name(), |ui| {
-        if header_ui(ui, Picture::LiquidShare, state, palette, |_, _| {}) {
+        if header_ui(
+            ui,
+            Picture::LiquidShare,
+            state,
+            palette,
+            CopyAs::Table,
+            |_, _| {},
+        ) {
             ui.ctx().copy_text(table::liquid_share(charts, units));
         }
         plot_ui(ui, (design, a, charts), units, palette, scrubber, state);

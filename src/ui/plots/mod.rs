@@ -17,6 +17,7 @@ mod pressure;
 mod pressure_lines;
 mod say;
 mod scrubber;
+mod section;
 mod strip;
 mod table;
 #[cfg(test)]
@@ -37,6 +38,7 @@ pub use charge_map::charge_map_ui;
 pub use liquid_share::liquid_share_ui;
 pub use pressure::pressure_ui;
 pub use scrubber::scrubber_ui;
+pub use section::section_ui;
 
 /// The pictures to choose from.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, Default, Serialize, Deserialize)]
@@ -44,6 +46,7 @@ pub enum Picture {
     #[default]
     ChargeMap,
     Pressure,
+    Section,
     LiquidShare,
 }
 
@@ -72,16 +75,23 @@ pub struct PlotState {
     /// Whole ranges as last shown at rest: they stand still while the charge is dragged.
     map_home: Option<Home>,
     pressure_home: Option<Home>,
+    section: Option<Box<section::Drawn>>,
 }
 
 impl Picture {
     #[cfg(test)]
-    pub const ALL: [Self; 3] = [Self::ChargeMap, Self::Pressure, Self::LiquidShare];
+    pub const ALL: [Self; 4] = [
+        Self::ChargeMap,
+        Self::Pressure,
+        Self::Section,
+        Self::LiquidShare,
+    ];
 
     pub const fn name(self) -> &'static str {
         match self {
             Self::ChargeMap => "Charge map",
             Self::Pressure => "Pressure",
+            Self::Section => "Section",
             Self::LiquidShare => "Liquid share",
         }
     }
@@ -115,20 +125,44 @@ impl PlotState {
     }
 }
 
+/// What a picture's copy button puts on the clipboard.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+enum CopyAs {
+    Table,
+    Drawing,
+}
+
+impl CopyAs {
+    const fn text(self) -> &'static str {
+        match self {
+            Self::Table => "Copy as table",
+            Self::Drawing => "Copy as SVG",
+        }
+    }
+
+    const fn tooltip(self) -> &'static str {
+        match self {
+            Self::Table => "Values with their units, separated by tabs, for a spreadsheet",
+            Self::Drawing => "The drawing as SVG text; the File menu writes it to a file",
+        }
+    }
+}
+
 /// The line above a picture: its name, what belongs beside it, and its buttons.
-/// True when the picture is to be copied as a table.
+/// True when the picture is to be copied, as `copy_as` says.
 fn header_ui(
     ui: &mut Ui,
     picture: Picture,
     state: &mut PlotState,
     palette: &Palette,
+    copy_as: CopyAs,
     beside: impl FnOnce(&mut Ui, &mut PlotState),
 ) -> bool {
     let mut copy = false;
     let copy_text = if ui.available_width() < 480.0 {
         "Copy"
     } else {
-        "Copy as table"
+        copy_as.text()
     };
     // Buttons first, from the right: what stands beside the name gives way to them.
     let buttons = Layout::right_to_left(Align::Center);
@@ -136,7 +170,7 @@ fn header_ui(
     ui.allocate_ui_with_layout(row, buttons, |ui| {
         copy = ui
             .add(Button::new(copy_text).small())
-            .on_hover_text("Values with their units, separated by tabs, for a spreadsheet")
+            .on_hover_text(copy_as.tooltip())
             .clicked();
         // Where it is narrow a double click must do.
         if row.x > 520.0 {

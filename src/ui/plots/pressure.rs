@@ -14,7 +14,7 @@ use super::over_temperature::{
     lay_conditions, lay_regimes, mark_event, name_bands, name_conditions, temperature_side,
 };
 use super::pressure_lines::{limit_runs, path_runs, upward};
-use super::{Picture, PlotState, PressureScale, header_ui, missing_ui, say, table};
+use super::{CopyAs, Picture, PlotState, PressureScale, header_ui, missing_ui, say, table};
 use crate::assess::{Assessment, Charts};
 use crate::design::Design;
 use crate::fluid::Regime;
@@ -37,19 +37,26 @@ pub fn pressure_ui(
         Err(missing) => return missing_ui(ui, Picture::Pressure, missing, units, palette),
     };
     ui.push_id(Picture::Pressure.name(), |ui| {
-        let copy = header_ui(ui, Picture::Pressure, state, palette, |ui, state| {
-            for scale in PressureScale::ALL {
-                if ui
-                    .selectable_label(state.scale == scale, scale.name())
-                    .clicked()
-                    && state.scale != scale
-                {
-                    state.scale = scale;
-                    state.pressure_view = Default::default();
-                    state.pressure_home = None;
+        let copy = header_ui(
+            ui,
+            Picture::Pressure,
+            state,
+            palette,
+            CopyAs::Table,
+            |ui, state| {
+                for scale in PressureScale::ALL {
+                    if ui
+                        .selectable_label(state.scale == scale, scale.name())
+                        .clicked()
+                        && state.scale != scale
+                    {
+                        state.scale = scale;
+                        state.pressure_view = Default::default();
+                        state.pressure_home = None;
+                    }
                 }
-            }
-        });
+            },
+        );
         if copy {
             ui.ctx().copy_text(table::pressure(a, charts, units));
         }

@@ -73,6 +73,7 @@ impl World {
                     moved = charge_map_ui(ui, design, a, &units, palette, scrubber, plots)
                 }
                 Picture::Pressure => pressure_ui(ui, design, a, &units, palette, scrubber, plots),
+                Picture::Section => section_ui(ui, design, a, &units, palette, *scrubber, plots),
                 Picture::LiquidShare => {
                     liquid_share_ui(ui, design, a, &units, palette, scrubber, plots)
                 }
