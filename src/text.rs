@@ -14,6 +14,24 @@ pub struct TextError {
     pub what: String,
 }
 
+/// A user's own file, which a fluid or a material was read from.
+#[derive(Debug, Clone, PartialEq, Eq)]
+pub struct OwnFile {
+    /// File name without its folder.
+    pub name: String,
+    /// Fingerprint of its text.
+    pub fingerprint: String,
+}
+
+impl OwnFile {
+    pub fn new(name: &str, text: &str) -> Self {
+        Self {
+            name: name.to_owned(),
+            fingerprint: fingerprint(text),
+        }
+    }
+}
+
 impl TextError {
     /// What is wrong with the value at a path such as `model.critical.temperature_k`;
     /// where the text has no such value, at the nearest one around it.
@@ -69,6 +87,15 @@ pub fn fingerprint(text: &str) -> String {
         hash >> 16 & 0xffff,
         hash & 0xffff
     )
+}
+
+/// A name by which things are told apart: case, spaces and hyphens do not count ("R134a",
+/// "r-134a").
+pub fn folded(name: &str) -> String {
+    name.chars()
+        .filter(|c| !matches!(c, ' ' | '-' | '_'))
+        .flat_map(char::to_lowercase)
+        .collect()
 }
 
 fn at(text: &str, error: &ron::error::SpannedError, field: Option<String>) -> TextError {

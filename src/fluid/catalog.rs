@@ -6,6 +6,7 @@ use std::sync::{Arc, LazyLock, OnceLock};
 
 use super::entry::Entry;
 use super::{Fluid, asset};
+use crate::text::folded;
 
 include!(concat!(env!("OUT_DIR"), "/fluid_files.rs"));
 
@@ -170,14 +171,6 @@ impl Slot {
 
 fn answers_to(entry: &Entry, wanted: &str) -> bool {
     entry.names().any(|(_, name)| folded(name) == wanted)
-}
-
-/// Case, spaces and hyphens do not tell fluids apart: "R134a", "r-134a".
-fn folded(name: &str) -> String {
-    name.chars()
-        .filter(|c| !matches!(c, ' ' | '-' | '_'))
-        .flat_map(char::to_lowercase)
-        .collect()
 }
 
 /// Number of single-letter edits between two words (Levenshtein).

@@ -30,11 +30,12 @@ pub use entry::Entry;
 pub use error::FluidError;
 pub use lines::FrozenPressure;
 pub use model::{Critical, Model, SaturationPoint};
-pub use own::{OwnFile, read_own};
+pub use own::read_own;
 pub use safety::{Safety, Stability, StabilityKind};
 pub use state::{Crossing, DomeSide, Regime, State};
 
 use crate::source::Sourced;
+use crate::text::OwnFile;
 use crate::units::{Density, Pressure, Temperature};
 
 /// A working fluid with everything that is known of it.

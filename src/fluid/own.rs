@@ -4,16 +4,7 @@ use serde::Deserialize;
 
 use super::asset::{self, FluidFileError};
 use super::{Fluid, rules, sound};
-use crate::text::{self, TextError};
-
-/// The user's file that a fluid was read from.
-#[derive(Debug, Clone, PartialEq, Eq)]
-pub struct OwnFile {
-    /// File name without its folder.
-    pub name: String,
-    /// Fingerprint of its text.
-    pub fingerprint: String,
-}
+use crate::text::{OwnFile, TextError};
 
 const LONGEST_NAME: usize = 80;
 
@@ -27,10 +18,7 @@ pub fn read_own(text: &str, file: &str) -> Result<Fluid, TextError> {
     if !has_check_digit(fluid.cas()) {
         return Err(wrong_cas(text, fluid.cas()));
     }
-    fluid.own_file = Some(OwnFile {
-        name: file.to_owned(),
-        fingerprint: text::fingerprint(text),
-    });
+    fluid.own_file = Some(OwnFile::new(file, text));
     Ok(fluid)
 }
 
