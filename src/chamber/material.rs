@@ -5,9 +5,10 @@ use serde::{Deserialize, Serialize};
 use super::curve::{Curve, Positive, Strength};
 use super::part::HeatTreatment;
 use crate::source::Sourced;
+use crate::text::OwnFile;
 use crate::units::{Density, Ratio, Temperature};
 
-/// One file in `assets/materials`, or one that a user's design carries along.
+/// One file in `assets/materials`, or the user's own.
 /// Every value has a source; a file without one does not parse.
 #[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
 #[serde(deny_unknown_fields)]
@@ -31,6 +32,8 @@ pub struct Material {
     pub density: Sourced<Density>,
     /// Outside it no strength is given.
     pub service: ServiceRange,
+    #[serde(skip)]
+    pub(super) own_file: Option<OwnFile>,
 }
 
 #[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
@@ -106,6 +109,20 @@ pub struct Glass {
 }
 
 impl Material {
+    /// The user's file it was read from; `None` for one that comes with the program.
+    pub const fn own_file(&self) -> Option<&OwnFile> {
+        self.own_file.as_ref()
+    }
+
+    /// Every name it answers to, with the field of its file.
+    pub(super) fn names(&self) -> impl Iterator<Item = (String, &str)> {
+        let designations = self.designations.iter().enumerate();
+        [("id", &self.id), ("name", &self.name)]
+            .into_iter()
+            .map(|(field, name)| (field.to_owned(), name.as_str()))
+            .chain(designations.map(|(i, name)| (format!("designations[{i}]"), name.as_str())))
+    }
+
     /// The glass, where it is one.
     pub const fn glass(&self) -> Option<&Glass> {
         match &self.kind {

@@ -3,6 +3,7 @@
 use std::sync::Arc;
 
 use super::material::Material;
+use crate::text::folded;
 
 include!(concat!(env!("OUT_DIR"), "/material_files.rs"));
 
@@ -21,6 +22,21 @@ pub enum MaterialError {
     },
     #[error("material file {file} has the id {id}: they must be alike")]
     IdDiffers { file: String, id: String },
+}
+
+/// A user's own material answers to a name that another material has.
+#[derive(Debug, Clone, PartialEq, thiserror::Error)]
+#[error(
+    "“{name}” is already a name of {by}{}: give the material of this file another id, name and designation, or take the file away",
+    .by_file.as_ref().map_or_else(|| ", a material of this program".to_owned(), |file| format!(" in {file}"))
+)]
+pub struct MaterialNameTaken {
+    /// Field of the file that is refused.
+    pub field: String,
+    pub name: String,
+    /// Id of the material that has the name, and its file where it is the user's own.
+    pub by: String,
+    pub by_file: Option<String>,
 }
 
 impl Materials {
@@ -42,6 +58,27 @@ impl Materials {
             materials.insert(parse(file, text)?);
         }
         Ok(materials)
+    }
+
+    /// Takes in a user's own material.
+    ///
+    /// # Errors
+    /// [`MaterialNameTaken`] where another material here answers to one of its names.
+    pub fn add(&mut self, material: Material) -> Result<(), MaterialNameTaken> {
+        for (field, name) in material.names() {
+            let wanted = folded(name);
+            let has_it = |known: &&Arc<Material>| known.names().any(|(_, n)| folded(n) == wanted);
+            if let Some(by) = self.0.iter().find(has_it) {
+                return Err(MaterialNameTaken {
+                    field,
+                    name: name.to_owned(),
+                    by: by.id.clone(),
+                    by_file: by.own_file().map(|own| own.name.clone()),
+                });
+            }
+        }
+        self.insert(material);
+        Ok(())
     }
 
     /// Adds a material, or replaces the one with its id.
