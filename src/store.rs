@@ -1,5 +1,5 @@
-//! Designs, the user's own fluids, settings and drafts on disk: the only user of the
-//! file system.
+//! Designs, the user's own fluids and materials, settings and drafts on disk: the only
+//! user of the file system.
 
 use std::fs::{self, File};
 use std::io::{self, Read, Write};
@@ -14,7 +14,7 @@ use crate::text::{self, TextError};
 
 mod shelf;
 
-pub use shelf::{Shelf, carry_fluid, open, shelf};
+pub use shelf::{Refused, Shelf, carry_own, open, shelf};
 
 /// Version of the design file's format.
 pub const FORMAT: u32 = 1;
@@ -52,8 +52,8 @@ pub enum StoreError {
         /// The fluid files that may hold the design's fluid.
         notices: String,
     },
-    #[error("{} is another file than the fluid in use: choose another folder, or rename one of them", path.display())]
-    OtherFluid { path: PathBuf },
+    #[error("{} is another file than the {kind} in use: choose another folder, or rename one of them", path.display())]
+    OtherFile { path: PathBuf, kind: Kind },
 }
 
 /// A kind of file that a user may write; anything far larger than one is a mistake.
@@ -70,8 +70,13 @@ impl Kind {
         largest_mebibytes: 4,
     };
     /// The longest equation takes some thirty kilobytes.
-    const FLUID: Self = Self {
+    pub const FLUID: Self = Self {
         name: "fluid",
+        largest_mebibytes: 1,
+    };
+    /// A few kilobytes.
+    pub const MATERIAL: Self = Self {
+        name: "material",
         largest_mebibytes: 1,
     };
 

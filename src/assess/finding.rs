@@ -239,6 +239,11 @@ pub enum FindingKind {
     OwnFluid {
         file: String,
     },
+    /// A material of the chamber is the user's own, likewise.
+    OwnMaterial {
+        file: String,
+        name: String,
+    },
     FromMemory {
         what: String,
     },

@@ -17,7 +17,7 @@ mod worst;
 
 use std::sync::Arc;
 
-use crate::chamber::{Envelope, Materials, Movement, NamedVolumes, Volumes};
+use crate::chamber::{Envelope, Material, Materials, Movement, NamedVolumes, Volumes};
 use crate::design::Design;
 use crate::fluid::{Catalog, DomeSide, Fluid, FluidError, Regime};
 use crate::hazard::{EnergyError, Release, release, rupture_energy};
@@ -45,13 +45,8 @@ pub struct Library {
 impl Library {
     /// The fluids and materials that come with the program.
     pub fn built_in() -> Self {
-        Self::with_fluids(Catalog::built_in())
-    }
-
-    /// Other fluids, with the materials that come with the program.
-    pub fn with_fluids(fluids: Catalog) -> Self {
         Self {
-            fluids,
+            fluids: Catalog::built_in(),
             materials: Materials::built_in(),
         }
     }
@@ -78,6 +73,8 @@ pub enum EventKind {
 #[derive(Debug, Clone, PartialEq)]
 pub struct Assessment {
     pub fluid: Arc<Fluid>,
+    /// The user's own materials in the chamber, each once, in the order of the parts.
+    pub own_materials: Vec<Arc<Material>>,
     /// The inside at the reference temperature.
     pub volumes: Figure<Volumes>,
     pub named: Figure<NamedVolumes>,
@@ -201,6 +198,7 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
     let rupture = with_corners().map(|c| rupture_energy(&c.heaviest, design.conditions.hottest));
     let mut assessment = Assessment {
         fluid,
+        own_materials: own_materials(design, library),
         volumes,
         named,
         movement,
@@ -225,6 +223,18 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
     assessment.findings = judge::findings(design, library, &assessment);
     assessment.verdict = Verdict::of(&assessment.findings);
     assessment
+}
+
+fn own_materials(design: &Design, library: &Library) -> Vec<Arc<Material>> {
+    let mut found: Vec<Arc<Material>> = Vec::new();
+    for id in design.chamber.materials_in_order() {
+        let known = library.materials.get(id);
+        let own = known.filter(|material| material.own_file().is_some());
+        if let Some(own) = own.filter(|own| found.iter().all(|known| known.id != own.id)) {
+            found.push(Arc::clone(own));
+        }
+    }
+    found
 }
 
 impl Assessment {

@@ -193,6 +193,13 @@ pub fn basis(page: &mut Page, design: &Design, a: &Assessment) {
             &format!("{}, fingerprint {}", own.name, own.fingerprint),
         );
     }
+    for material in &a.own_materials {
+        if let Some(own) = material.own_file() {
+            let (name, file) = (&material.name, &own.name);
+            let text = format!("{name}: {file}, fingerprint {}", own.fingerprint);
+            page.row("The user's own material file", &text);
+        }
+    }
     // Sources of the user's own fluid are what the user says they are.
     let stated = |source: String| match a.fluid.own_file() {
         Some(_) => format!("the user states: {source}"),
@@ -212,7 +219,9 @@ pub fn basis(page: &mut Page, design: &Design, a: &Assessment) {
         let material = part.and_then(Part::material).unwrap_or_default();
         for source in a.envelope.sources(weakest.part, weakest.allowable.basis) {
             unconfirmed |= !source.is_confirmed();
-            page.row("Strength", &format!("{material}: {source}"));
+            let own = a.own_materials.iter().any(|own| own.id == material);
+            let states = if own { "the user states: " } else { "" };
+            page.row("Strength", &format!("{material}: {states}{source}"));
         }
     }
     let safety = a.fluid.safety();

@@ -1,61 +1,99 @@
-//! The fluids that a design may name: the built-in ones, the user's own beside the design,
-//! and those in the user's own folder.
+//! The fluids and materials that a design may name: the built-in ones, the user's own
+//! beside the design, and those in the user's own folder.
 
 use std::path::{Path, PathBuf};
 
 use super::{Kind, ParseError, StoreError, files_in, load_with, read_text};
 use crate::assess::Library;
+use crate::chamber::{Materials, read_own_material};
 use crate::design::Design;
 use crate::fluid::{Catalog, read_own};
 use crate::text::TextError;
 
-/// What a fluid file beside a design is called.
-const BESIDE: &str = ".fluid.ron";
-/// Folder of the user's own fluids in the program's own folder.
-const FOLDER: &str = "fluids";
+/// Where the user's own files of one kind are.
+struct Place {
+    kind: Kind,
+    /// What such a file beside a design is called.
+    beside: &'static str,
+    /// Their folder in the program's own folder.
+    folder: &'static str,
+}
 
-/// What a design is read and assessed against, and the fluid files that were refused.
+const FLUIDS: Place = Place {
+    kind: Kind::FLUID,
+    beside: ".fluid.ron",
+    folder: "fluids",
+};
+const MATERIALS: Place = Place {
+    kind: Kind::MATERIAL,
+    beside: ".material.ron",
+    folder: "materials",
+};
+
+/// What a design is read and assessed against, and the user's own files that were refused.
 #[derive(Debug)]
 pub struct Shelf {
     pub library: Library,
-    pub refused: Vec<StoreError>,
+    pub refused: Vec<Refused>,
+}
+
+/// One of the user's own files, and why it is of no use.
+#[derive(Debug, thiserror::Error)]
+#[error("{kind} file not read: {error}")]
+pub struct Refused {
+    pub kind: Kind,
+    pub error: StoreError,
 }
 
 impl Shelf {
-    /// One sentence for each fluid file that was refused.
+    /// One sentence for each file that was refused.
     pub fn notices(&self) -> Vec<String> {
-        let sentence = |error| format!("fluid file not read: {error}");
+        self.refused.iter().map(Refused::to_string).collect()
+    }
+
+    /// The same; a file that may hold a material of the design that nobody here knows is
+    /// said to.
+    pub fn notices_for(&self, design: &Design) -> Vec<String> {
+        let mut unknown = design.chamber.materials();
+        unknown.retain(|id| self.library.materials.get(id).is_none());
+        let names = unknown.join("”, “");
+        let sentence = |refused: &Refused| match refused.kind {
+            Kind::MATERIAL if !unknown.is_empty() => {
+                format!("{refused}; it may hold “{names}”, which the design names")
+            }
+            _ => refused.to_string(),
+        };
         self.refused.iter().map(sentence).collect()
+    }
+
+    /// One sentence for each file of one kind that was refused.
+    pub fn notices_of(&self, kind: Kind) -> Vec<String> {
+        let of_kind = self.refused.iter().filter(|refused| refused.kind == kind);
+        of_kind.map(Refused::to_string).collect()
     }
 }
 
 /// The shelf of a design's file, or of none; `settings` is the program's own folder,
-/// where `fluids/*.ron` is looked at. A file beside the design goes before one of the
-/// same text there.
+/// where `fluids/*.ron` and `materials/*.ron` are looked at. A file beside the design goes
+/// before one of the same text there.
 pub fn shelf(design: Option<&Path>, settings: Option<&Path>) -> Shelf {
-    let beside = design.map(|path| ron_files(folder_of(path), BESIDE));
-    let own = settings.map(|folder| ron_files(&folder.join(FOLDER), ".ron"));
     let mut fluids = Catalog::built_in();
+    let mut materials = Materials::built_in();
     let mut refused = Vec::new();
-    let mut texts = Vec::new();
-    for path in beside.into_iter().chain(own).flatten() {
-        match read_text(&path, Kind::FLUID) {
-            // A copy of one that is on the shelf.
-            Ok(text) if texts.contains(&text) => {}
-            Ok(text) => {
-                if let Err(error) = put(&mut fluids, &text, &path) {
-                    refused.push(StoreError::Parse {
-                        path,
-                        error: ParseError::At(error),
-                    });
-                }
-                texts.push(text);
-            }
-            Err(error) => refused.push(error),
-        }
-    }
+    let mut put_fluid = |text: &str, file: &str| {
+        fluids
+            .add(read_own(text, file)?)
+            .map_err(|taken| TextError::about(text, &taken.field, taken.to_string()))
+    };
+    FLUIDS.read(design, settings, &mut refused, &mut put_fluid);
+    let mut put_material = |text: &str, file: &str| {
+        materials
+            .add(read_own_material(text, file)?)
+            .map_err(|taken| TextError::about(text, &taken.field, taken.to_string()))
+    };
+    MATERIALS.read(design, settings, &mut refused, &mut put_material);
     Shelf {
-        library: Library::with_fluids(fluids),
+        library: Library { fluids, materials },
         refused,
     }
 }
@@ -74,38 +112,98 @@ pub fn open(path: &Path, settings: Option<&Path>) -> Result<(Design, Shelf), Sto
                 error: ParseError::UnknownFluid(_),
                 ..
             },
-        ) if !shelf.refused.is_empty() => Err(StoreError::FluidRefused {
-            design: Box::new(error),
-            notices: shelf.notices().join("; "),
+        ) => Err(match shelf.notices_of(Kind::FLUID).join("; ") {
+            none if none.is_empty() => error,
+            notices => StoreError::FluidRefused {
+                design: Box::new(error),
+                notices,
+            },
         }),
         Err(error) => Err(error),
     }
 }
 
-/// Takes a fluid's file that stands beside one design along to another's folder, so that
-/// the design opens alike there. A fluid of the user's own folder needs no copy.
+/// Takes the files of a design's own fluid and materials that stand beside it along to
+/// another design's folder, so that it opens alike there. What is in the user's own folder
+/// needs no copy.
 ///
 /// # Errors
-/// [`StoreError::OtherFluid`] where a file of that name with another text stands there;
+/// [`StoreError::OtherFile`] where a file of that name with another text stands there;
 /// nothing is written then.
-pub fn carry_fluid(file: &str, from: &Path, to: &Path) -> Result<(), StoreError> {
-    let source = folder_of(from).join(file);
-    let target = folder_of(to).join(file);
-    let Ok(text) = read_text(&source, Kind::FLUID) else {
-        return Ok(());
-    };
-    match read_text(&target, Kind::FLUID) {
-        Ok(there) if there == text => Ok(()),
-        Err(StoreError::Missing { .. }) => super::write_text(&target, &text),
-        _ => Err(StoreError::OtherFluid { path: target }),
+pub fn carry_own(
+    design: &Design,
+    library: &Library,
+    from: &Path,
+    to: &Path,
+) -> Result<(), StoreError> {
+    let mut copies = Vec::new();
+    let fluid = library.fluids.by_id(design.fluid.as_str());
+    if let Some(own) = fluid.as_ref().and_then(|fluid| fluid.own_file()) {
+        copies.extend(FLUIDS.copy(&own.name, from, to)?);
     }
+    for id in design.chamber.materials() {
+        let material = library.materials.get(id);
+        if let Some(own) = material.and_then(|material| material.own_file()) {
+            copies.extend(MATERIALS.copy(&own.name, from, to)?);
+        }
+    }
+    copies
+        .iter()
+        .try_for_each(|(target, text)| super::write_text(target, text))
 }
 
-fn put(fluids: &mut Catalog, text: &str, path: &Path) -> Result<(), TextError> {
-    let fluid = read_own(text, &name_of(path))?;
-    fluids
-        .add(fluid)
-        .map_err(|taken| TextError::about(text, &taken.field, taken.to_string()))
+impl Place {
+    /// Puts each file's text and name on the shelf, the nearer first.
+    fn read(
+        &self,
+        design: Option<&Path>,
+        settings: Option<&Path>,
+        refused: &mut Vec<Refused>,
+        put: &mut dyn FnMut(&str, &str) -> Result<(), TextError>,
+    ) {
+        let kind = self.kind;
+        let beside = design.map(|path| ron_files(folder_of(path), self.beside));
+        let own = settings.map(|folder| ron_files(&folder.join(self.folder), ".ron"));
+        let mut texts = Vec::new();
+        for path in beside.into_iter().chain(own).flatten() {
+            match read_text(&path, kind) {
+                // A copy of one that is on the shelf.
+                Ok(text) if texts.contains(&text) => {}
+                Ok(text) => {
+                    if let Err(error) = put(&text, &name_of(&path)) {
+                        let error = ParseError::At(error);
+                        let error = StoreError::Parse { path, error };
+                        refused.push(Refused { kind, error });
+                    }
+                    texts.push(text);
+                }
+                Err(error) => refused.push(Refused { kind, error }),
+            }
+        }
+    }
+
+    /// Target and text of a copy, where one is needed.
+    fn copy(
+        &self,
+        file: &str,
+        from: &Path,
+        to: &Path,
+    ) -> Result<Option<(PathBuf, String)>, StoreError> {
+        let (source, path) = (folder_of(from).join(file), folder_of(to).join(file));
+        // In the user's own folder a file may be called as any file here.
+        let found = file
+            .ends_with(self.beside)
+            .then(|| read_text(&source, self.kind));
+        let Some(Ok(text)) = found else {
+            return Ok(None);
+        };
+        let kind = self.kind;
+        match read_text(&path, kind) {
+            Ok(there) if there == text => Ok(None),
+            Err(StoreError::Missing { .. }) => Ok(Some((path, text))),
+            _ => Err(StoreError::OtherFile { path, kind }),
+        }
+    }
 }
 
 fn ron_files(folder: &Path, end: &str) -> Vec<PathBuf> {

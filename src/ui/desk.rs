@@ -69,9 +69,9 @@ impl Desk {
         &self.shelf.library
     }
 
-    /// One sentence for each of the user's fluid files that was not read.
+    /// One sentence for each of the user's own files that was not read.
     pub fn notices(&self) -> Vec<String> {
-        self.shelf.notices()
+        self.shelf.notices_for(&self.design)
     }
 
     pub fn assessment(&self) -> &Assessment {
@@ -174,16 +174,14 @@ impl Desk {
         self.write_draft();
     }
 
-    /// Writes the design to its file; a fluid file that stands beside it is taken along to
-    /// another folder.
+    /// Writes the design to its file; the user's own files that stand beside it are taken
+    /// along to another folder.
     ///
     /// # Errors
     /// [`StoreError`]; the design stays unsaved.
     pub fn save_to(&mut self, path: &Path) -> Result<(), StoreError> {
-        let own = self.library().fluids.by_id(self.design.fluid.as_str());
-        if let (Some(own), Some(before)) = (own.as_ref().and_then(|own| own.own_file()), &self.path)
-        {
-            store::carry_fluid(&own.name, before, path)?;
+        if let Some(before) = &self.path {
+            store::carry_own(&self.design, self.library(), before, path)?;
         }
         store::save(path, &self.design)?;
         self.saved = Some(self.design.clone());

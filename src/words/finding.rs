@@ -367,6 +367,11 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
             format!("Its hazards and all its figures are your own, from {file}; nobody else has checked them."),
         )
         .try_this("Hold every figure of that file against its source, and have a second person do so."),
+        FindingKind::OwnMaterial { file, name } => say(
+            "Your own material",
+            format!("All figures of {name} are your own, from {file}; nobody else has checked them."),
+        )
+        .try_this("Hold every figure of that file against its source, and have a second person do so."),
         FindingKind::FromMemory { what } => {
             say("To be confirmed", format!("From memory of a named document: {what}."))
         }

@@ -126,7 +126,7 @@ fn a_design_names_the_fluid_beside_it_by_any_of_its_names() {
 }
 
 /// Runs the program with a settings folder of the test's own.
-fn run(settings: &Path, arguments: &[&str]) -> Output {
+pub fn run(settings: &Path, arguments: &[&str]) -> Output {
     let mut command = program();
     // Where each system keeps it.
     command
@@ -137,16 +137,16 @@ fn run(settings: &Path, arguments: &[&str]) -> Output {
 }
 
 /// The program's own folder below what [`run`] is given.
-fn own_folder(settings: &Path) -> PathBuf {
+pub fn own_folder(settings: &Path) -> PathBuf {
     let base = if cfg!(target_os = "macos") {
         settings.join("Library/Application Support")
     } else {
         settings.to_owned()
     };
-    base.join("chargewright/fluids")
+    base.join("chargewright")
 }
 
-fn said(output: &Output, code: i32) -> (String, String) {
+pub fn said(output: &Output, code: i32) -> (String, String) {
     let text = |bytes: &[u8]| String::from_utf8(bytes.to_vec()).expect("text");
     assert_eq!(output.status.code(), Some(code), "{output:?}");
     (text(&output.stdout), text(&output.stderr))
@@ -178,7 +178,7 @@ fn sheet_and_check_use_the_fluid_beside_the_design_and_say_so() {
 #[test]
 fn every_command_sees_the_users_folder() {
     let folder = Folder::new("settings-own");
-    let own = own_folder(&folder.path(""));
+    let own = own_folder(&folder.path("")).join("fluids");
     fs::create_dir_all(&own).expect("a folder");
     fs::write(own.join("equation.ron"), equation_file()).expect("written");
     fs::write(own.join(FILE), EXAMPLE).expect("written");
@@ -254,20 +254,22 @@ fn the_fluid_goes_with_the_design_to_another_folder() {
     }
     fs::write(here.join(FILE), EXAMPLE).expect("written");
     let (from, to) = (here.join("a.ron"), there.join("b.ron"));
-    store::carry_fluid(FILE, &from, &to).expect("copied");
-    assert_eq!(
-        fs::read_to_string(there.join(FILE)).expect("there"),
-        EXAMPLE
-    );
-    store::carry_fluid(FILE, &from, &to).expect("the same file is there");
+    fs::write(&from, DESIGN).expect("written");
+    let (mut design, shelf) = store::open(&from, None).expect("a design");
+    let carry = |design: &_| store::carry_own(design, &shelf.library, &from, &to);
+    carry(&design).expect("copied");
+    let copy = || fs::read_to_string(there.join(FILE)).expect("there");
+    assert_eq!(copy(), EXAMPLE);
+    carry(&design).expect("the same file is there");
     fs::write(there.join(FILE), "another").expect("written");
-    let error = store::carry_fluid(FILE, &from, &to).expect_err("another file");
+    let error = carry(&design).expect_err("another file");
     assert!(error.to_string().contains("another file"), "{error}");
-    assert_eq!(
-        fs::read_to_string(there.join(FILE)).expect("there"),
-        "another"
-    );
-    // A fluid that is not beside the design is in the user's folder: nothing to copy.
-    store::carry_fluid("elsewhere.ron", &from, &to).expect("nothing to do");
-    assert!(!there.join("elsewhere.ron").exists());
+    assert_eq!(copy(), "another");
+    // A fluid of the program, or of the user's folder: nothing to copy.
+    design.fluid = chargewright::design::FluidId::from(&*fluid("acetone"));
+    carry(&design).expect("nothing to do");
+    design.fluid =
+        chargewright::design::FluidId::from(shelf.library.fluids.entries().last().expect("own"));
+    fs::remove_file(here.join(FILE)).expect("removed");
+    carry(&design).expect("nothing beside it");
 }

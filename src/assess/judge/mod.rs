@@ -22,6 +22,7 @@ pub fn findings(design: &Design, library: &Library, a: &Assessment) -> Vec<Findi
     judge.contradictions();
     judge.not_known();
     judge.own_fluid();
+    judge.own_materials();
     judge.pressure();
     judge.factors();
     judge.collapse();

@@ -19,7 +19,12 @@ impl Judge<'_> {
             let Some(material) = self.library.materials.get(id) else {
                 continue;
             };
-            let pair = table.of(self.a.fluid.id(), id);
+            // The table goes by the beginning of an id: bad news holds for whoever takes
+            // that name, good news only for the materials it was written of.
+            let is_own = material.own_file().is_some();
+            let pair = table
+                .of(self.a.fluid.id(), id)
+                .filter(|pair| !is_own || pair.verdict != PairVerdict::Good);
             match told.iter_mut().find(|(known, _)| *known == pair) {
                 Some((_, names)) if names.contains(&material.name.as_str()) => {}
                 Some((_, names)) => names.push(&material.name),

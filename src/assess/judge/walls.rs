@@ -119,6 +119,19 @@ impl Judge<'_> {
         }
     }
 
+    pub(super) fn own_materials(&mut self) {
+        for material in &self.a.own_materials {
+            let Some(own) = material.own_file() else {
+                continue;
+            };
+            let kind = FindingKind::OwnMaterial {
+                file: own.name.clone(),
+                name: material.name.clone(),
+            };
+            self.add(Severity::Warning, Section::Chamber, kind);
+        }
+    }
+
     pub(super) fn glass(&mut self) {
         let of_glass = |index: usize| {
             let part = &self.design.chamber.parts[index];

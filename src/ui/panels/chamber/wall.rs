@@ -142,7 +142,8 @@ fn material_combo(
             }
             for material in library.materials.iter() {
                 let id = Some(material.id.clone());
-                ui.selectable_value(chosen, id, &material.name);
+                let own = material.own_file().map_or("", |_| ", your own");
+                ui.selectable_value(chosen, id, format!("{}{own}", material.name));
             }
         })
         .response;
