@@ -10,7 +10,7 @@ use clap::{Parser, Subcommand};
 
 use crate::assess::{Library, Verdict, assess};
 use crate::design::Design;
-use crate::fluid::{Catalog, Fluid, FluidError, UnknownFluid};
+use crate::fluid::{Fluid, FluidError, UnknownFluid};
 use crate::picture::{of_design, svg};
 use crate::section::NoSection;
 use crate::sheet::{Head, render};
@@ -20,6 +20,7 @@ use crate::units::{
 };
 use crate::words;
 
+mod lists;
 mod walls;
 
 /// Fluid, charge and envelope of sealed two-phase devices.
@@ -83,6 +84,12 @@ pub enum Headless {
     },
     /// List the fluids.
     Fluids,
+    /// List the wall materials, with their strengths at room temperature as supplied.
+    Materials {
+        /// With those beside this design.
+        #[arg(long, value_name = "FILE")]
+        of: Option<PathBuf>,
+    },
 }
 
 /// Why a command did nothing.
@@ -125,7 +132,7 @@ pub enum CliError {
 pub struct Outcome {
     pub text: String,
     pub code: u8,
-    /// What is said beside the output: fluid files that were not read.
+    /// What is said beside the output: the user's own files that were not read.
     pub notices: Vec<String>,
 }
 
@@ -167,7 +174,7 @@ pub fn run(command: &Headless) -> ExitCode {
 }
 
 /// A command's answer; writes a file only for `--out`. `settings` is the program's
-/// own folder, which may hold the user's own fluids.
+/// own folder, which may hold the user's own fluids and materials.
 ///
 /// # Errors
 /// [`CliError`] where input is unreadable or out of range; nothing was printed then.
@@ -176,14 +183,14 @@ pub fn answer(command: &Headless, settings: Option<&Path>) -> Result<Outcome, Cl
         Headless::Sheet { design, out } => {
             let (design_read, shelf) = store::open(design, settings)?;
             let text = sheet(design, &design_read, &shelf.library, out.as_deref())?;
-            Ok(outcome(text, &shelf))
+            Ok(outcome(text, shelf.notices_for(&design_read)))
         }
         Headless::Check { design } => {
             let (design, shelf) = store::open(design, settings)?;
             let (text, code) = check(&design, &shelf.library);
             Ok(Outcome {
                 code,
-                ..outcome(text, &shelf)
+                ..outcome(text, shelf.notices_for(&design))
             })
         }
         Headless::Section { design, at, out } => {
@@ -194,7 +201,7 @@ pub fn answer(command: &Headless, settings: Option<&Path>) -> Result<Outcome, Cl
             };
             let text = section(&design_read, &shelf.library, at)?;
             let text = written(text, out.as_deref(), design)?;
-            Ok(outcome(text, &shelf))
+            Ok(outcome(text, shelf.notices_for(&design_read)))
         }
         Headless::Walls { design, at } => {
             let (design, shelf) = store::open(design, settings)?;
@@ -204,44 +211,52 @@ pub fn answer(command: &Headless, settings: Option<&Path>) -> Result<Outcome, Cl
                 None => vec![conditions.coldest, conditions.bench, conditions.hottest],
             };
             let assessment = assess(&design, &shelf.library);
-            Ok(outcome(walls::table(&design, &assessment, &at), &shelf))
+            let text = walls::table(&design, &assessment, &at);
+            Ok(outcome(text, shelf.notices_for(&design)))
         }
         Headless::Saturation { fluid, at } => {
             let shelf = store::shelf(None, settings);
             let text = saturation(&*find(&shelf, fluid)?, at)?;
-            Ok(outcome(text, &shelf))
+            Ok(outcome(text, shelf.notices_of(store::Kind::FLUID)))
         }
         Headless::Isochore { fluid, density, at } => {
             let shelf = store::shelf(None, settings);
             let text = isochore(&*find(&shelf, fluid)?, density, at)?;
-            Ok(outcome(text, &shelf))
+            Ok(outcome(text, shelf.notices_of(store::Kind::FLUID)))
         }
         Headless::Fluids => {
             let shelf = store::shelf(None, settings);
-            Ok(outcome(fluids(&shelf.library.fluids), &shelf))
+            let text = lists::fluids(&shelf.library.fluids);
+            Ok(outcome(text, shelf.notices_of(store::Kind::FLUID)))
+        }
+        Headless::Materials { of: None } => {
+            let shelf = store::shelf(None, settings);
+            let text = lists::materials(&shelf.library.materials);
+            Ok(outcome(text, shelf.notices_of(store::Kind::MATERIAL)))
+        }
+        Headless::Materials { of: Some(design) } => {
+            let (design, shelf) = store::open(design, settings)?;
+            let text = lists::materials(&shelf.library.materials);
+            Ok(outcome(text, shelf.notices_for(&design)))
         }
     }
 }
 
-fn outcome(text: String, shelf: &Shelf) -> Outcome {
+fn outcome(text: String, notices: Vec<String>) -> Outcome {
     Outcome {
         text,
         code: 0,
-        notices: shelf.notices(),
+        notices,
     }
 }
 
 /// A fluid by any of its names; one that is unknown may be in a file that was refused.
 fn find(shelf: &Shelf, name: &str) -> Result<Arc<Fluid>, CliError> {
-    shelf.library.fluids.find(name).map_err(|unknown| {
-        if shelf.refused.is_empty() {
-            CliError::UnknownFluid(unknown)
-        } else {
-            CliError::UnknownBesideRefused {
-                unknown,
-                notices: shelf.notices().join("; "),
-            }
-        }
+    let found = shelf.library.fluids.find(name);
+    let notices = || shelf.notices_of(store::Kind::FLUID).join("; ");
+    found.map_err(|unknown| match notices() {
+        none if none.is_empty() => CliError::UnknownFluid(unknown),
+        notices => CliError::UnknownBesideRefused { unknown, notices },
     })
 }
 
@@ -371,27 +386,6 @@ fn isochore_row(fluid: &Fluid, density: Density, t: Temperature) -> Result<[Stri
     ])
 }
 
-fn fluids(catalog: &Catalog) -> String {
-    let mut text = String::from("id,name,cas,refrigerant,model,lowest_k,highest_k,own_file\n");
-    for fluid in catalog.entries() {
-        let (low, high) = fluid.range_k();
-        push_row(
-            &mut text,
-            [
-                fluid.id().to_owned(),
-                cell(fluid.name()),
-                fluid.cas().to_owned(),
-                cell(fluid.refrigerant().unwrap_or_default()),
-                fluid.model_kind().to_owned(),
-                digits(low),
-                digits(high),
-                cell(fluid.own_file().unwrap_or_default()),
-            ],
-        );
-    }
-    text
-}
-
 /// A text as a cell of a CSV: in quotes where it holds a comma or a quote.
 fn cell(text: &str) -> String {
     let plain = one_line(text);
@@ -479,6 +473,7 @@ fn print(text: &str) -> Result<(), CliError> {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::fluid::Catalog;
 
     #[test]
     fn twelve_digits_without_padding() {
