@@ -16,6 +16,8 @@ mod layers;
 mod metals;
 mod own_fluid_refusals;
 mod own_fluids;
+mod own_material_refusals;
+mod own_materials;
 mod phase_lines;
 mod pictures;
 mod presets;
