@@ -3,6 +3,7 @@
 mod boundaries;
 mod catalogue;
 mod catalogue_table;
+mod chamber;
 mod charge_window;
 mod commands;
 mod consistency;
