@@ -264,6 +264,7 @@ pub fn dimension_ui(
     let field = QuantityField::new(label, nominal, units)
         .slider(range.0, range.1)
         .logarithmic()
+        .trimmed()
         .id_salt(salt);
     quantity_with_tolerance_row(ui, field, tolerance);
 }
@@ -272,6 +273,7 @@ pub fn capacity_ui(ui: &mut Ui, label: &str, capacity: &mut Capacity, salt: usiz
     let Capacity { nominal, tolerance } = capacity;
     let field = QuantityField::new(label, nominal, units)
         .slider(0.0, 5e-6)
+        .trimmed()
         .id_salt(salt);
     quantity_with_tolerance_row(ui, field, tolerance);
 }
