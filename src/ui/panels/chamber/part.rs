@@ -114,10 +114,7 @@ fn head_ui(ui: &mut Ui, row: &Row<'_>, part: &mut Part, change: &mut Option<Chan
     ui.horizontal(|ui| {
         ui.label(part.shape.kind_name());
         ui.label("×");
-        let mut count = part.count;
-        let response = ui.add(DragValue::new(&mut count).range(1..=999).speed(0.05));
-        response.widget_info(|| WidgetInfo::drag_value(true, f64::from(part.count)));
-        part.count = count;
+        count_ui(ui, "How many alike", &mut part.count, 1);
     });
     ui.horizontal(|ui| {
         let mut button = |label: &str, hint: &str, on: bool, wanted: Change| {
@@ -298,13 +295,20 @@ fn field_ui(ui: &mut Ui, label: &str, field: Field<'_>, salt: usize, units: &Uni
             ui.horizontal(|ui| {
                 ui.label(label);
                 ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
-                    let response = ui.add(DragValue::new(count).range(0..=9999).speed(0.05));
-                    let value = f64::from(*count);
-                    response.widget_info(|| WidgetInfo::drag_value(true, value));
+                    count_ui(ui, label, count, 0);
                 });
             });
         }
     }
+}
+
+fn count_ui(ui: &mut Ui, label: &str, count: &mut u32, least: u32) {
+    let response = ui.add(DragValue::new(count).range(least..=9999).speed(0.05));
+    let value = f64::from(*count);
+    response.widget_info(|| WidgetInfo {
+        label: Some(label.to_owned()),
+        ..WidgetInfo::drag_value(true, value)
+    });
 }
 
 /// A line of text: one undo step, not one a letter.
