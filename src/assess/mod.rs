@@ -92,6 +92,9 @@ pub struct Assessment {
     pub heaviest_over_at: Figure<Option<Temperature>>,
     /// Dry-out temperature of the lightest corner.
     pub lightest_dry_at: Figure<Option<Temperature>>,
+    /// The worst moment of every sealed stretch of life.
+    pub inside: Figure<Vec<WorstCase>>,
+    /// The one of them that governs.
     pub worst: Figure<WorstCase>,
     /// The hottest at which the empty unit may be pumped out in the air, from the bench up.
     pub vacuum_stands_to: Option<Temperature>,
@@ -159,7 +162,11 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         None => Ok(None),
     });
     let stretches = life::stretches(design);
-    let worst = with_corners().and_then(|c| worst::worst_case(&stretches, c, &walls));
+    let inside = with_corners().and_then(|c| worst::worst_cases(&stretches, c, &walls));
+    let worst = match &inside {
+        Ok(cases) => worst::governing(cases),
+        Err(missing) => Err(missing.clone()),
+    };
     let vacuum_stands_to =
         outside::vacuum_stands_to(&walls, design.conditions.bench, design.conditions.barometer);
     let outside = outside::outside_cases(&stretches, corners.as_ref().ok(), &walls);
@@ -209,6 +216,7 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         heaviest_full_at,
         heaviest_over_at,
         lightest_dry_at,
+        inside,
         worst,
         vacuum_stands_to,
         outside,
