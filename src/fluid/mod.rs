@@ -18,6 +18,7 @@ mod model;
 mod own;
 mod rules;
 mod safety;
+mod solubility;
 mod sound;
 mod state;
 pub mod viscosity;
@@ -34,6 +35,7 @@ pub use lines::FrozenPressure;
 pub use model::{Critical, Model, SaturationPoint};
 pub use own::read_own;
 pub use safety::{Safety, Stability, StabilityKind};
+pub use solubility::Solubility;
 pub use state::{Crossing, DomeSide, Regime, State};
 
 use crate::source::Sourced;
@@ -267,6 +269,14 @@ impl Fluid {
     /// Surface tension in N/m, where known.
     pub fn surface_tension(&self, temperature: Temperature) -> Option<f64> {
         self.surface_tension.as_ref()?.at(temperature.kelvin())
+    }
+
+    /// How much air the liquid takes up, where known; of the user's own fluid nothing is.
+    pub fn air_solubility(&self) -> Option<&'static Solubility> {
+        match self.own_file {
+            Some(_) => None,
+            None => Solubility::of(&self.id),
+        }
     }
 
     /// Mass in molecules of two atoms over the mass of the saturated vapour; `None` for a

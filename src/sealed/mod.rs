@@ -5,6 +5,7 @@
 //! dry-out the caller takes the largest volume. Permanent gas adds to the pressure; regime
 //! and crossings are the fluid's alone.
 
+pub mod effects;
 mod gas;
 mod path;
 
