@@ -2,7 +2,7 @@
 
 use serde::{Deserialize, Serialize};
 
-use crate::units::{Pressure, Temperature, TemperatureDifference, Volume};
+use crate::units::{Amount, Pressure, Temperature, TemperatureDifference, Volume};
 
 /// One standard atmosphere, Pa: the default outside and barometer.
 pub const STANDARD_ATMOSPHERE_PA: f64 = 101_325.0;
@@ -34,6 +34,10 @@ pub struct Conditions {
     /// it is put into: it stresses glass.
     #[serde(rename = "across_wall_k", default = "none")]
     pub across_wall: TemperatureDifference,
+    /// Permanent gas that corrosion, leaks and decay will have made by the end of its life,
+    /// as the user states it.
+    #[serde(rename = "gas_generated_mol", default = "no_gas")]
+    pub gas_generated: Amount,
     /// What else the walls must stand, before or after the seal.
     #[serde(default)]
     pub exposures: Vec<Exposure>,
@@ -249,4 +253,8 @@ impl Conditions {
 
 fn none() -> TemperatureDifference {
     TemperatureDifference::from_kelvin(0.0).expect("0 is a difference")
+}
+
+fn no_gas() -> Amount {
+    Amount::from_mole(0.0).expect("0 is an amount")
 }

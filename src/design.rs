@@ -5,7 +5,7 @@ use serde::{Deserialize, Serialize};
 use crate::chamber::{Chamber, Factors};
 use crate::conditions::{Conditions, Room};
 use crate::fluid::{Entry, Fluid};
-use crate::units::{Mass, Ratio, Temperature, TemperatureDifference, Volume};
+use crate::units::{Mass, Pressure, Ratio, Temperature, TemperatureDifference, Volume};
 
 /// What the user decided.
 #[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
@@ -103,6 +103,10 @@ pub struct Demands {
     pub liquid_full_margin: TemperatureDifference,
     #[serde(default)]
     pub factors: Factors,
+    /// Greatest partial pressure of residual gas at the lower end of the working range, over
+    /// the vapour pressure there.
+    #[serde(default = "usual_gas_share")]
+    pub gas_share: Ratio,
 }
 
 /// What the fill bench can do.
@@ -117,6 +121,14 @@ pub struct Bench {
     pub purge_loss: Mass,
     /// Whether a pressure gauge stays on the sealed unit.
     pub gauge: bool,
+    /// Gas left in the inside as it is sealed, absolute, besides the fluid's own vapour;
+    /// `None`: not stated.
+    #[serde(rename = "vacuum_pa", default)]
+    pub vacuum: Option<Pressure>,
+    /// Whether the air dissolved in the fluid is taken out before the seal. What a file does
+    /// not say counts as no.
+    #[serde(default)]
+    pub degassed: bool,
 }
 
 /// What one click may change: fluid, wall, volume or charge. Temperatures, outside
@@ -154,12 +166,14 @@ impl From<&Entry> for FluidId {
 }
 
 impl Default for Demands {
-    /// Customary: 5 % ullage and 15 K to liquid-full; physics decides nothing here.
+    /// Customary: 5 % ullage and 15 K to liquid-full; a tenth of the vapour pressure for
+    /// residual gas is our own mark. Physics decides nothing here.
     fn default() -> Self {
         Self {
             ullage: Ratio::from_fraction(0.05).expect("a share"),
             liquid_full_margin: TemperatureDifference::from_kelvin(15.0).expect("finite"),
             factors: Factors::default(),
+            gas_share: usual_gas_share(),
         }
     }
 }
@@ -196,4 +210,8 @@ impl Duty {
             Self::PulsatingLoop | Self::SensingBulb | Self::LiquidLift | Self::PlainVessel => true,
         }
     }
+}
+
+fn usual_gas_share() -> Ratio {
+    Ratio::from_fraction(0.1).expect("a share")
 }

@@ -3,6 +3,7 @@
 use std::sync::Arc;
 
 use super::figure::{Figure, Missing};
+use super::gas::GasInventory;
 use crate::chamber::{Movement, NamedVolumes, Volumes};
 use crate::design::{ChargeAim, Design, NamedVolume};
 use crate::fluid::Fluid;
@@ -30,9 +31,9 @@ pub struct ChargeFigures {
 #[derive(Debug, Clone, PartialEq)]
 pub struct Corners {
     pub nominal: SealedUnit,
-    /// Greatest mass in the smallest volume: governs pressure and liquid-full.
+    /// Greatest mass in the smallest volume, with its gas: governs pressure and liquid-full.
     pub heaviest: SealedUnit,
-    /// Least mass in the largest volume: governs dry-out; none where the tolerance
+    /// Least mass in the largest volume, without gas: governs dry-out and collapse; none where the tolerance
     /// reaches down to nothing.
     pub lightest: Option<SealedUnit>,
 }
@@ -89,15 +90,24 @@ pub fn corners(
     volumes: &Volumes,
     movement: Movement,
     outside: Pressure,
+    gas: &GasInventory,
 ) -> Figure<Corners> {
     let unit = |mass, volume| {
         SealedUnit::new(Arc::clone(fluid), mass, volume)
             .map(|unit| unit.with_walls(movement, outside))
             .map_err(|_| Missing::NoCharge)
     };
+    let with_gas = |mass: Mass, volume: Volume| -> Figure<SealedUnit> {
+        let unit = unit(mass, volume)?;
+        if gas.is_empty() {
+            return Ok(unit);
+        }
+        let amount = gas.amount(mass.kilogram(), volume.cubic_metre());
+        Ok(unit.with_gas(amount, gas.ostwald()))
+    };
     Ok(Corners {
-        nominal: unit(charge.nominal, volumes.nominal)?,
-        heaviest: unit(charge.greatest, volumes.least)?,
+        nominal: with_gas(charge.nominal, volumes.nominal)?,
+        heaviest: with_gas(charge.greatest, volumes.least)?,
         lightest: unit(charge.least, volumes.greatest).ok(),
     })
 }

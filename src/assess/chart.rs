@@ -4,7 +4,7 @@ use super::figure::Figure;
 use super::worst::Walls;
 use crate::design::Design;
 use crate::fluid::Fluid;
-use crate::sealed::{PathPoint, SealedUnit, path};
+use crate::sealed::{PathPoint, SealedUnit, densest_within, path};
 use crate::units::{Density, Mass, Pressure, Quantity, Temperature};
 
 /// Points of the sealed path.
@@ -160,6 +160,9 @@ fn allowable_line(
     range: (Temperature, Temperature),
     walls: &Walls<'_>,
 ) -> Figure<Vec<MapPoint>> {
+    if unit.gas().is_some() {
+        return allowable_line_with_gas(unit, range, walls);
+    }
     let fluid = unit.fluid();
     let mut line = Vec::new();
     let curve = fluid.curve()?;
@@ -218,6 +221,42 @@ fn allowable_line(
             .map(Density::kilogram_per_cubic_metre);
         line.extend(found.and_then(|rho| at(rho, temperature)));
         behind = [behind[1], found];
+    }
+    Ok(line)
+}
+
+/// The same with the unit's gas, which tilts the level stretch: more charge leaves the gas
+/// less room.
+fn allowable_line_with_gas(
+    unit: &SealedUnit,
+    range: (Temperature, Temperature),
+    walls: &Walls<'_>,
+) -> Figure<Vec<MapPoint>> {
+    let Some(gas) = unit.gas() else {
+        return Ok(Vec::new());
+    };
+    let mut line = Vec::new();
+    for temperature in temperatures(range, walls.knots.iter().copied()) {
+        let Ok(limit) = walls.allowable_pressure(temperature) else {
+            continue;
+        };
+        let volume_m3 = unit.volume_at_m3(temperature);
+        let amount = |_| gas.amount.mole();
+        let found = densest_within(
+            unit.fluid(),
+            limit,
+            temperature,
+            volume_m3,
+            gas.ostwald,
+            amount,
+        )?;
+        line.extend(found.and_then(|density| {
+            let mass = density.kilogram_per_cubic_metre() * volume_m3;
+            Some(MapPoint {
+                mass: Mass::from_kilogram(mass).ok()?,
+                temperature,
+            })
+        }));
     }
     Ok(line)
 }

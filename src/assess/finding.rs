@@ -6,7 +6,7 @@ use crate::chamber::ChamberFault;
 use crate::conditions::ConditionFault;
 use crate::design::Change;
 use crate::fluid::{FrozenPressure, StabilityKind};
-use crate::units::{Energy, Mass, Pressure, Temperature, TemperatureDifference};
+use crate::units::{Amount, Energy, Mass, Pressure, Temperature, TemperatureDifference};
 
 /// How much a finding weighs; worst first.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash)]
@@ -164,6 +164,24 @@ pub enum FindingKind {
     BalanceTooCoarse {
         balance: Mass,
         tolerance: Mass,
+    },
+    /// Nothing is said of the gas that is sealed in.
+    VacuumNotStated,
+    VacuumBelowZero {
+        pressure: Pressure,
+    },
+    /// The liquid brings the air of the bench with it.
+    NotDegassed {
+        amount: Amount,
+    },
+    /// Likewise, and nobody knows how much.
+    DissolvedAirNotKnown,
+    /// Residual gas over the share of the vapour pressure that is allowed.
+    GasAboveShare {
+        pressure: Pressure,
+        temperature: Temperature,
+        of_saturation: Share,
+        allowed: Share,
     },
     Incompatible {
         material: String,

@@ -7,6 +7,7 @@ mod charge;
 mod chart;
 mod figure;
 mod finding;
+mod gas;
 mod judge;
 mod life;
 mod outside;
@@ -28,6 +29,7 @@ pub use charge::{ChargeFigures, Corners};
 pub use chart::{ChargeMap, Charts, LimitPoint, MapPoint};
 pub use figure::{Figure, Missing};
 pub use finding::{Finding, FindingKind, Section, Severity, Verdict};
+pub use gas::{Blocked, DissolvedAir, GasInventory, LiftLoss, ResidualGas, SealedGas};
 pub use life::Stretch;
 pub use outside::OutsideCase;
 pub use place::LiquidPlace;
@@ -96,6 +98,8 @@ pub struct Assessment {
     pub inside: Figure<Vec<WorstCase>>,
     /// The one of them that governs.
     pub worst: Figure<WorstCase>,
+    /// Of nominal amount, at its pressures in the heaviest corner.
+    pub gas: Figure<ResidualGas>,
     /// The hottest at which the empty unit may be pumped out in the air, from the bench up.
     pub vacuum_stands_to: Option<Temperature>,
     /// The worst moment of every stretch of life in which the outside presses.
@@ -144,10 +148,11 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         .as_ref()
         .map_err(Clone::clone)
         .and_then(|v| charge::charge_figures(design, &fluid, v, movement));
+    let inventory = GasInventory::new(&gas::Seal::of(design, movement), &fluid);
     let corners = match (&charge, &volumes) {
         (Ok(charge), Ok(volumes)) => {
             let outside = design.conditions.least_outside;
-            charge::corners(&fluid, charge, volumes, movement, outside)
+            charge::corners(&fluid, charge, volumes, movement, outside, &inventory)
         }
         (Err(missing), _) | (_, Err(missing)) => Err(missing.clone()),
     };
@@ -167,6 +172,10 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         Ok(cases) => worst::governing(cases),
         Err(missing) => Err(missing.clone()),
     };
+    let gas = match (&corners, &named) {
+        (Ok(corners), Ok(named)) => Ok(gas::residual_gas(design, &inventory, corners, named)),
+        (Err(missing), _) | (_, Err(missing)) => Err(missing.clone()),
+    };
     let vacuum_stands_to =
         outside::vacuum_stands_to(&walls, design.conditions.bench, design.conditions.barometer);
     let outside = outside::outside_cases(&stretches, corners.as_ref().ok(), &walls);
@@ -184,6 +193,7 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
             &fluid,
             &window::Space::new(v, movement),
             &walls_known,
+            &inventory,
         )
     });
     let charts = with_corners().map(|c| {
@@ -218,6 +228,7 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         lightest_dry_at,
         inside,
         worst,
+        gas,
         vacuum_stands_to,
         outside,
         window,

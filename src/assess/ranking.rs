@@ -8,12 +8,14 @@
 use std::sync::Arc;
 
 use super::figure::Missing;
+use super::gas::{GasInventory, Seal};
 use super::{Assessment, Figure};
 use crate::chamber::Movement;
 use crate::design::{Design, Duty};
 use crate::fluid::{DomeSide, Fluid, FluidError, Regime, StabilityKind};
 use crate::hazard::{CompatibilityTable, PairVerdict};
-use crate::units::{Density, Mass, Pressure, Temperature};
+use crate::sealed::SealedUnit;
+use crate::units::{Density, Mass, Pressure, Temperature, Volume};
 
 /// One fluid in the design's chamber at the design's fill ratio.
 #[derive(Debug, Clone, PartialEq)]
@@ -54,6 +56,7 @@ pub enum Objection {
 /// What a candidate is measured against; worked out once for all of them.
 struct Yardstick<'a> {
     design: &'a Design,
+    seal: Seal<'a>,
     /// Fill ratio of the inside at the bench.
     fill: Figure<f64>,
     volume_m3: f64,
@@ -121,6 +124,7 @@ impl<'a> Yardstick<'a> {
         };
         Self {
             design,
+            seal: Seal::of(design, a.movement),
             fill,
             volume_m3: a.volumes.as_ref().map_or(0.0, |v| v.nominal.cubic_metre()),
             movement: a.movement,
@@ -136,12 +140,11 @@ impl<'a> Yardstick<'a> {
     fn measure(&self, fluid: Arc<Fluid>) -> Ranked {
         let conditions = &self.design.conditions;
         let density = self.density(&fluid);
+        let unit = density
+            .clone()
+            .and_then(|density| self.unit(&fluid, density));
         let state = |t: Temperature| {
-            let density = density.clone()?.kilogram_per_cubic_metre();
-            let there =
-                Density::from_kilogram_per_cubic_metre(density / self.movement.growth(t.kelvin()))
-                    .map_err(|_| Missing::NoCharge)?;
-            let state = fluid.state(there, t)?;
+            let state = unit.clone()?.state(t)?;
             Ok((state.pressure, state.regime))
         };
         let at_hottest = state(conditions.hottest);
@@ -180,6 +183,22 @@ impl<'a> Yardstick<'a> {
         };
         ranked.objections = self.objections(&ranked);
         ranked
+    }
+
+    /// The nominal unit in walls that do not yield, with its gas.
+    fn unit(&self, fluid: &Arc<Fluid>, density: Density) -> Figure<SealedUnit> {
+        let mass_kg = density.kilogram_per_cubic_metre() * self.volume_m3;
+        let mass = Mass::from_kilogram(mass_kg).map_err(|_| Missing::NoCharge)?;
+        let volume = Volume::from_cubic_metre(self.volume_m3).map_err(|_| Missing::NoCharge)?;
+        let unit = SealedUnit::new(Arc::clone(fluid), mass, volume)
+            .map_err(|_| Missing::NoCharge)?
+            .with_walls(self.movement.rigid(), self.design.conditions.least_outside);
+        let gas = GasInventory::new(&self.seal, fluid);
+        if gas.is_empty() {
+            return Ok(unit);
+        }
+        let amount = gas.amount(mass_kg, self.volume_m3);
+        Ok(unit.with_gas(amount, gas.ostwald()))
     }
 
     /// Mean density in the volume at its reference, at the design's fill ratio.

@@ -1,11 +1,13 @@
 //! The window of allowed mass: every requirement is a bound at a temperature.
 
 use super::figure::{Figure, Missing};
+use super::gas::GasInventory;
 use super::life::{Stretch, stretches};
 use super::worst::Walls;
 use crate::chamber::{Movement, Volumes};
 use crate::design::{Design, Duty};
 use crate::fluid::{Fluid, FluidError};
+use crate::sealed::densest_within;
 use crate::units::{Density, Mass, Pressure, Temperature, careful_down, careful_up};
 
 /// What a bound on mass comes from.
@@ -114,6 +116,7 @@ pub fn window(
     fluid: &Fluid,
     space: &Space<'_>,
     walls: &Figure<Walls<'_>>,
+    gas: &GasInventory,
 ) -> Figure<Window> {
     let mut bounds = Vec::new();
     if let Some(bound) = liquid_when_hot(design, fluid, space)? {
@@ -123,7 +126,7 @@ pub fn window(
     bounds.extend(liquid_full_margin(design, fluid, space)?);
     bounds.extend(frozen_volume(design, fluid, space));
     if let Ok(walls) = walls {
-        bounds.extend(allowable(&stretches(design), fluid, space, walls)?);
+        bounds.extend(allowable(&stretches(design), fluid, space, walls, gas)?);
     }
     let end = |side: Side, better: fn(f64, f64) -> bool| {
         bounds
@@ -266,13 +269,14 @@ fn frozen_volume(design: &Design, fluid: &Fluid, space: &Space<'_>) -> Option<Bo
     )
 }
 
-/// The mass that stands at the allowable pressure, least over the hottest and every
+/// The mass that stands at the allowable pressure, with its gas, least over the hottest and every
 /// temperature in range where a strength bends: between those the hottest governs.
 fn allowable(
     stretches: &[Stretch],
     fluid: &Fluid,
     space: &Space<'_>,
     walls: &Walls<'_>,
+    gas: &GasInventory,
 ) -> Figure<Option<Bound>> {
     let freezing = fluid.freezing_point();
     let mut least: Option<(Density, Temperature)> = None;
@@ -290,9 +294,15 @@ fn allowable(
         let Ok(limit) = Pressure::from_pascal(limit) else {
             continue;
         };
-        if let Some(density) = fluid
-            .densest_within(limit, t, None)
-            .map_err(Missing::Fluid)?
+        let densest = if gas.is_empty() {
+            fluid.densest_within(limit, t, None)
+        } else {
+            let volume_m3 = space.least_m3(t);
+            let drawn_m3 = space.volumes.least.cubic_metre();
+            let amount_mol = |rho: f64| gas.with(rho * volume_m3, drawn_m3).total();
+            densest_within(fluid, limit, t, volume_m3, gas.ostwald(), amount_mol)
+        };
+        if let Some(density) = densest.map_err(Missing::Fluid)?
             && least.is_none_or(|(found, _)| density < found)
         {
             least = Some((density, t));

@@ -26,6 +26,10 @@ pub struct Part {
     pub made_of: Option<String>,
     #[serde(default)]
     pub zone: Zone,
+    /// Of its inside as the unit is sealed, where that is not the bench's: a bulb whose
+    /// fluid is frozen.
+    #[serde(rename = "sealing_temperature_k", default)]
+    pub sealing_temperature: Option<Temperature>,
 }
 
 #[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
@@ -184,6 +188,7 @@ impl Part {
             rating: None,
             made_of: None,
             zone: Zone::default(),
+            sealing_temperature: None,
         }
     }
 

@@ -9,6 +9,7 @@ mod catalog;
 pub mod correlated;
 mod curve;
 mod density;
+mod divide;
 mod entry;
 mod error;
 pub mod helmholtz;
@@ -17,6 +18,7 @@ mod model;
 mod own;
 mod rules;
 mod safety;
+mod solubility;
 mod sound;
 mod state;
 pub mod viscosity;
@@ -26,12 +28,14 @@ use std::sync::OnceLock;
 pub use asset::{FluidFileError, SurfaceTension, parse as parse_fluid};
 pub use catalog::{Catalog, NameTaken, UnknownFluid};
 pub use curve::{CurvePoint, SaturationCurve};
+pub use divide::{Divide, Squeezed};
 pub use entry::Entry;
 pub use error::FluidError;
 pub use lines::FrozenPressure;
 pub use model::{Critical, Model, SaturationPoint};
 pub use own::read_own;
 pub use safety::{Safety, Stability, StabilityKind};
+pub use solubility::Solubility;
 pub use state::{Crossing, DomeSide, Regime, State};
 
 use crate::source::Sourced;
@@ -265,6 +269,14 @@ impl Fluid {
     /// Surface tension in N/m, where known.
     pub fn surface_tension(&self, temperature: Temperature) -> Option<f64> {
         self.surface_tension.as_ref()?.at(temperature.kelvin())
+    }
+
+    /// How much air the liquid takes up, where known; of the user's own fluid nothing is.
+    pub fn air_solubility(&self) -> Option<&'static Solubility> {
+        match self.own_file {
+            Some(_) => None,
+            None => Solubility::of(&self.id),
+        }
     }
 
     /// Mass in molecules of two atoms over the mass of the saturated vapour; `None` for a

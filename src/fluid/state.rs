@@ -37,6 +37,10 @@ pub struct State {
     pub liquid_share: Option<f64>,
     /// Mass of vapour over the whole mass.
     pub quality: Option<f64>,
+    /// What permanent gas adds, and [`Self::pressure`] includes: its partial pressure
+    /// wherever it has room. `None` where no gas is counted. Regime and shares are the
+    /// fluid's alone.
+    pub gas: Option<Pressure>,
 }
 
 /// Which side of the dome a line of constant density leaves it by.
@@ -55,6 +59,14 @@ pub enum DomeSide {
 pub struct Crossing {
     pub temperature: Temperature,
     pub side: DomeSide,
+}
+
+impl State {
+    /// The fluid's own pressure, without permanent gas.
+    pub fn own_pressure(&self) -> Pressure {
+        let gas = self.gas.map_or(0.0, Pressure::pascal);
+        Pressure::from_pascal(self.pressure.pascal() - gas).unwrap_or(self.pressure)
+    }
 }
 
 impl Fluid {
@@ -102,6 +114,7 @@ impl Fluid {
                 is_bound: false,
                 liquid_share: Some((rho - v) / (l - v)),
                 quality: Some((1.0 / rho - 1.0 / l) / (1.0 / v - 1.0 / l)),
+                gas: None,
             })
         }
     }
@@ -208,7 +221,7 @@ impl Fluid {
             .ok_or_else(|| self.no_compressed_liquid())
     }
 
-    fn no_compressed_liquid(&self) -> FluidError {
+    pub(crate) fn no_compressed_liquid(&self) -> FluidError {
         let reason = self.model.no_compressed_liquid().unwrap_or_default();
         FluidError::NoCompressedLiquid {
             fluid: self.name.clone(),
@@ -240,6 +253,7 @@ impl Fluid {
             is_bound: gas.is_some() || !matches!(solid, FrozenPressure::Known(_)),
             liquid_share: None,
             quality: None,
+            gas: None,
         })
     }
 
@@ -302,6 +316,7 @@ impl Fluid {
             is_bound: false,
             liquid_share,
             quality,
+            gas: None,
         })
     }
 }

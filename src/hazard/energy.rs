@@ -16,7 +16,7 @@ pub enum EnergyError {
 }
 
 /// Isentropic expansion to one atmosphere with flashing, m·(u(T, ρ) − u(p₀, s)),
-/// in every regime.
+/// in every regime. Of the fluid alone: what residual gas adds is small beside it.
 ///
 /// Source of the method: the usual isentropic estimate for flashing liquids
 /// (from memory of CCPS, Guidelines for Vapor Cloud Explosion, Pressure Vessel
@@ -28,7 +28,7 @@ pub enum EnergyError {
 pub fn rupture_energy(unit: &SealedUnit, temperature: Temperature) -> Result<Energy, EnergyError> {
     let fluid = unit.fluid();
     let state = unit.state(temperature)?;
-    if state.regime == Regime::Frozen || state.pressure.pascal() <= STANDARD_ATMOSPHERE_PA {
+    if state.regime == Regime::Frozen || state.own_pressure().pascal() <= STANDARD_ATMOSPHERE_PA {
         return Ok(Energy::from_joule(0.0).expect("zero"));
     }
     let rho = unit.mean_density_at(temperature).kilogram_per_cubic_metre();

@@ -2,8 +2,11 @@
 //!
 //! The volume moves with the temperature of its walls and, where asked, yields to the
 //! pressure; without the latter the liquid-full pressure is on the careful side. For
-//! dry-out the caller takes the largest volume.
+//! dry-out the caller takes the largest volume. Permanent gas adds to the pressure; regime
+//! and crossings are the fluid's alone.
 
+pub mod effects;
+mod gas;
 mod path;
 
 use std::sync::Arc;
@@ -11,8 +14,9 @@ use std::sync::Arc;
 use crate::chamber::Movement;
 use crate::fluid::{Crossing, Fluid, FluidError, State};
 use crate::solve::{bracketed_root, roots_between};
-use crate::units::{Density, Mass, Pressure, Temperature, Volume};
+use crate::units::{Amount, Density, Mass, Pressure, Temperature, Volume};
 
+pub use gas::{Gas, densest_within};
 pub use path::{PathPoint, path};
 
 /// A fluid, a mass and a volume that will not change any more.
@@ -26,6 +30,7 @@ pub struct SealedUnit {
     density: Density,
     movement: Movement,
     outside: Pressure,
+    gas: Option<Gas>,
 }
 
 /// A unit needs some fluid in some volume.
@@ -54,6 +59,7 @@ impl SealedUnit {
             density,
             movement: Movement::default(),
             outside: Pressure::from_pascal(0.0).expect("0 is a pressure"),
+            gas: None,
         })
     }
 
@@ -65,6 +71,26 @@ impl SealedUnit {
             outside,
             ..self
         }
+    }
+
+    /// The same unit with permanent gas sealed in, of which the liquid takes up `ostwald`
+    /// times the concentration in the space above it (0: nothing).
+    #[must_use]
+    pub fn with_gas(self, amount: Amount, ostwald: f64) -> Self {
+        Self {
+            gas: Some(Gas { amount, ostwald }),
+            ..self
+        }
+    }
+
+    /// The same unit as if no gas were in it.
+    #[must_use]
+    pub fn without_gas(self) -> Self {
+        Self { gas: None, ..self }
+    }
+
+    pub fn gas(&self) -> Option<&Gas> {
+        self.gas.as_ref()
     }
 
     pub fn fluid(&self) -> &Arc<Fluid> {
@@ -85,30 +111,31 @@ impl SealedUnit {
         self.density_in(self.movement.growth(temperature.kelvin()))
     }
 
-    /// The same fluid and volume with another mass.
+    /// The same fluid, volume and gas with another mass.
     ///
     /// # Errors
     /// [`SealedError::NoCharge`].
     pub fn with_mass(&self, mass: Mass) -> Result<Self, SealedError> {
         let same = Self::new(Arc::clone(&self.fluid), mass, self.volume)?;
-        Ok(same.with_walls(self.movement, self.outside))
+        Ok(Self {
+            gas: self.gas,
+            ..same.with_walls(self.movement, self.outside)
+        })
     }
 
-    /// Regime, pressure and liquid share at a temperature.
+    /// Regime, pressure and liquid share at a temperature; the pressure with that of the gas.
     ///
     /// # Errors
     /// [`FluidError`] outside the model.
     pub fn state(&self, temperature: Temperature) -> Result<State, FluidError> {
-        let rigid = self
-            .fluid
-            .state(self.mean_density_at(temperature), temperature);
+        let rigid = self.state_in(self.movement.growth(temperature.kelvin()), temperature);
         if self.movement.compliance_per_pa == 0.0 {
             return rigid;
         }
         self.yielding_state(temperature, rigid)
     }
 
-    /// Where the unit dries out or goes liquid-full, ascending. That the walls yield to
+    /// Where the unit dries out or goes liquid-full, ascending; by the fluid alone. That the walls yield to
     /// pressure is not credited here.
     ///
     /// # Errors
@@ -183,8 +210,8 @@ impl SealedUnit {
         let stretched = |p: f64| {
             let load = (p - outside).max(0.0);
             let growth = self.movement.growth(temperature.kelvin());
-            let density = self.density_in(growth * (1.0 + self.movement.compliance_per_pa * load));
-            self.fluid.state(density, temperature)
+            let growth = growth * (1.0 + self.movement.compliance_per_pa * load);
+            self.state_in(growth, temperature)
         };
         let most = match &rigid {
             Ok(state) => state.pressure.pascal(),
@@ -204,6 +231,19 @@ impl SealedUnit {
         match bracketed_root(gap, outside, most, 1e-12 * most) {
             Ok(p) => stretched(p),
             Err(_) => rigid,
+        }
+    }
+
+    /// In the volume at its reference times `growth`.
+    fn state_in(&self, growth: f64, temperature: Temperature) -> Result<State, FluidError> {
+        let density = self.density_in(growth);
+        let alone = self.fluid.state(density, temperature)?;
+        match &self.gas {
+            None => Ok(alone),
+            Some(gas) => {
+                let volume_m3 = self.volume.cubic_metre() * growth;
+                gas.joins(&self.fluid, alone, density, volume_m3, temperature)
+            }
         }
     }
 

@@ -196,8 +196,9 @@ pub fn afterwards(page: &mut Page, design: &Design, a: &Assessment, units: &Unit
             );
         }
         page.paragraph(
-            "A higher reading is gas in the unit, too much fluid or a wrong one; a lower reading is too little \
-             fluid, a wrong one or a leak. Release neither.",
+            "The upper limits include the gas that is counted, the lower ones none. A higher reading is more gas in \
+             the unit, too much fluid or a wrong one; a lower reading is too little fluid, a wrong one or a leak. \
+             Release neither.",
         );
     } else {
         page.paragraph("No gauge stays on the unit. Judge by the liquid level and by weight.");
@@ -248,6 +249,7 @@ fn expected_pressure(
             |pressure| format!("frozen: {}", words::solid_pressure(pressure, units)),
         );
     };
+    let gas = high.gas;
     let low = low.pressure.pascal() * (1.0 - uncertainty);
     let high = high.pressure.pascal() * (1.0 + uncertainty);
     let barometer = design.conditions.barometer.pascal();
@@ -264,8 +266,11 @@ fn expected_pressure(
             format!("{low} to {high}")
         }
     };
+    let gas = gas.map_or_else(String::new, |gas| {
+        format!("; {} of it gas", units.show_to(gas, 3))
+    });
     format!(
-        "{} abs, {} gauge; 1 K: {slope}",
+        "{} abs, {} gauge{gas}; 1 K: {slope}",
         range(low, high),
         range(low - barometer, high - barometer)
     )

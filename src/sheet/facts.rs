@@ -1,6 +1,7 @@
 //! What the sheet states: head, fluid, unit, worst case, basis, care.
 
 use super::Head;
+use super::gas;
 use super::page::Page;
 use super::walls;
 use crate::assess::{Assessment, Figure, Severity};
@@ -70,6 +71,7 @@ pub fn before_filling(page: &mut Page, design: &Design, a: &Assessment, units: &
     page.blank_row("Proof test, medium, pressure");
     page.blank_row("Leak test, limit, result");
     walls::vacuum(page, a, units);
+    gas::before_filling(page, design, a, units);
     page.paragraph("Prove and leak-test before charging.");
 }
 
@@ -87,6 +89,7 @@ pub fn worst_case(page: &mut Page, a: &Assessment, units: &Units) {
                     words::regime(case.state.regime)
                 ),
             );
+            gas::in_worst_case(page, case, units);
             let outside = case.outside;
             let load = if case.load.pascal() > 0.0 {
                 format!(
@@ -223,6 +226,13 @@ pub fn basis(page: &mut Page, design: &Design, a: &Assessment) {
             let states = if own { "the user states: " } else { "" };
             page.row("Strength", &format!("{material}: {states}{source}"));
         }
+    }
+    if let Ok(gas) = &a.gas
+        && let Some(solubility) = gas.counted_solubility()
+    {
+        let source = &solubility.source;
+        unconfirmed |= !source.is_confirmed();
+        page.row("Air in the fluid", &source.to_string());
     }
     let safety = a.fluid.safety();
     for (what, source) in [

@@ -2,6 +2,7 @@
 
 mod bench;
 mod facts;
+mod gas;
 mod page;
 mod steps;
 mod walls;
@@ -41,6 +42,7 @@ pub fn render(design: &Design, a: &Assessment, units: &Units, head: &Head) -> St
         steps::steps(&mut page, design, a, units);
         bench::afterwards(&mut page, design, a, units);
     }
+    gas::residual_gas(&mut page, design, a, units);
     facts::worst_case(&mut page, a, units);
     walls::outside(&mut page, a, units);
     walls::stretches(&mut page, a, units);

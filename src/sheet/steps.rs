@@ -1,7 +1,7 @@
 //! The steps of the fill, with the temperatures and pressures of this very fluid.
 
 use super::page::Page;
-use crate::assess::{Assessment, FindingKind};
+use crate::assess::{Assessment, DissolvedAir, FindingKind};
 use crate::conditions::STANDARD_ATMOSPHERE_PA;
 use crate::design::Design;
 use crate::fluid::{Fluid, FluidError, StabilityKind};
@@ -21,7 +21,7 @@ pub fn steps(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
         "[ ]",
         "Evacuate the clean, proven unit; close the valve; read the tare.",
     );
-    let is_gas = transfer(page, design, fluid, units);
+    let is_gas = transfer(page, design, a, units);
     page.item("[ ]", "Dispense by weight until the scale is inside row 1.");
     if is_gas {
         if design.bench.purge_loss.kilogram() > 0.0 {
@@ -59,6 +59,15 @@ pub fn steps(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
         let note = acid.note.trim_end_matches('.');
         page.item(" ! ", &format!("{note}: purge the joint before any flame."));
     }
+    if let Some(vacuum) = design.bench.vacuum {
+        page.item(
+            "[ ]",
+            &format!(
+                "Seal only while the gas in the unit, besides the fluid's vapour, is at or below {} abs.",
+                units.show(vacuum)
+            ),
+        );
+    }
     page.item(
         "[ ]",
         "Seal. Weigh unit and stub: the sealed mass must be inside row 2.",
@@ -66,7 +75,8 @@ pub fn steps(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
 }
 
 /// How the fluid gets in; true where it comes as a gas under pressure.
-fn transfer(page: &mut Page, design: &Design, fluid: &Fluid, units: &Units) -> bool {
+fn transfer(page: &mut Page, design: &Design, a: &Assessment, units: &Units) -> bool {
+    let fluid = &a.fluid;
     let bench = design.conditions.bench;
     match fluid.saturation_pressure(bench) {
         Ok(p) if p.pascal() > STANDARD_ATMOSPHERE_PA => {
@@ -84,8 +94,9 @@ fn transfer(page: &mut Page, design: &Design, fluid: &Fluid, units: &Units) -> b
             page.item(
                 "[ ]",
                 &format!(
-                    "Degas the fluid: it boils at {} abs on the bench. Dissolved air not removed here stays in the \
+                    "Degas the fluid{}: it boils at {} abs on the bench. Dissolved air not removed here stays in the \
                      unit.",
+                    mandatory(a),
                     units.show(p)
                 ),
             );
@@ -116,6 +127,15 @@ fn transfer(page: &mut Page, design: &Design, fluid: &Fluid, units: &Units) -> b
             );
             false
         }
+    }
+}
+
+/// Whether the design stands or falls with it.
+fn mandatory(a: &Assessment) -> &'static str {
+    match a.gas.as_ref().map(|gas| gas.dissolved) {
+        Ok(DissolvedAir::Degassed(_)) => " (mandatory: its air is counted as taken out)",
+        Ok(DissolvedAir::NotKnown) => " (mandatory: nobody knows how much air it brings)",
+        _ => "",
     }
 }
 

@@ -12,8 +12,8 @@ mod unit;
 pub use format::{careful_down, careful_up, figures};
 pub use parse::{ParseError, parse_si};
 pub use quantity::{
-    Density, Energy, Length, Mass, MeshNumber, Permeability, Pressure, Quantity, QuantityError,
-    Ratio, Temperature, TemperatureDifference, Tilt, Volume,
+    Amount, Density, Energy, Length, Mass, MeshNumber, Permeability, Pressure, Quantity,
+    QuantityError, Ratio, Temperature, TemperatureDifference, Tilt, Volume,
 };
 pub use system::{NBSP, UnitSystem, Units};
 pub use unit::{Kind, UNITS, Unit, unit_named};

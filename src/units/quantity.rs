@@ -129,6 +129,8 @@ quantities! {
     Density, Density, "a density", "kg/m3", from_kilogram_per_cubic_metre, kilogram_per_cubic_metre, 1e-30, 1e6;
     /// Ratio of two like quantities, 0 to 1; a percentage only on screen.
     Ratio, Ratio, "a ratio", "", from_fraction, fraction, 0.0, 1.0;
+    /// Amount of substance, 0 or more.
+    Amount, Amount, "an amount", "mol", from_mole, mole, 0.0, 1e9;
     /// Energy.
     Energy, Energy, "an energy", "J", from_joule, joule, -1e18, 1e18;
     /// Permeability of a wick, more than 0.

@@ -62,6 +62,7 @@ impl Units {
             (Kind::Ratio, _) => unit_named(kind, "%"),
             (Kind::Energy, UnitSystem::Inch) => unit_named(kind, "ft·lbf"),
             (Kind::Energy, _) => pick(&[(1e4, "J")], "kJ"),
+            (Kind::Amount, _) => pick(&[(1e-7, "nmol"), (1e-4, "µmol"), (1e-1, "mmol")], "mol"),
             (Kind::Area, _) => unit_named(kind, "µm²"),
             (Kind::MeshNumber, UnitSystem::Inch) => unit_named(kind, "/in"),
             (Kind::MeshNumber, _) => unit_named(kind, "/mm"),
@@ -144,7 +145,7 @@ fn with_unit(number: String, unit: &Unit) -> String {
 
 #[cfg(test)]
 mod tests {
-    use super::super::quantity::{Mass, Pressure, Temperature};
+    use super::super::quantity::{Amount, Mass, Pressure, Temperature};
     use super::*;
 
     #[test]
@@ -162,5 +163,10 @@ mod tests {
         assert_eq!(inch.show_careful(mass, 4, true), "0.6481\u{a0}oz");
         let p = Pressure::from_pascal(58_700.0).expect("pressure");
         assert_eq!(metric.show(p), "0.5870\u{a0}bar");
+        // methods.md section 5: 1 µmol of gas is about 0.024 mL(NTP).
+        let amount = Amount::from_mole(1e-6).expect("amount");
+        assert_eq!(metric.show(amount), "1.000\u{a0}µmol");
+        let ntp = unit_named(Kind::Amount, "mL(NTP)").number_of(amount.mole());
+        assert!((ntp - 0.024).abs() < 1e-4, "{ntp}");
     }
 }

@@ -17,6 +17,8 @@ pub enum Kind {
     /// Openings of a screen per length.
     MeshNumber,
     Angle,
+    /// Of substance.
+    Amount,
     /// A bare number, such as a factor.
     Number,
 }
@@ -75,6 +77,8 @@ const INCH: f64 = 0.0254;
 const FOOT: f64 = 0.3048;
 const POUND: f64 = 0.453_592_37;
 const PSI: f64 = 6_894.757_293_168_361;
+/// An ideal gas at 20 °C and 101 325 Pa, mol/m³: what NTP means here and to NIST [from memory].
+const MOLE_PER_M3_NTP: f64 = 101_325.0 / (8.314_462_618_153_24 * 293.15);
 const US_GALLON: f64 = 231.0 * INCH * INCH * INCH;
 
 /// Every unit understood. Conversion factors: NIST SP 811 (2008), appendix B;
@@ -222,6 +226,16 @@ pub static UNITS: &[Unit] = &[
         "°",
         &["deg", "degree", "degrees"],
         std::f64::consts::PI / 180.0,
+    ),
+    unit(Kind::Amount, "mol", &["mole", "moles"], 1.0),
+    unit(Kind::Amount, "mmol", &[], 1e-3),
+    unit(Kind::Amount, "µmol", &["umol", "μmol", "micromol"], 1e-6),
+    unit(Kind::Amount, "nmol", &[], 1e-9),
+    unit(
+        Kind::Amount,
+        "mL(NTP)",
+        &["mL NTP", "ml(NTP)", "ml NTP", "cm3(NTP)", "cm³(NTP)"],
+        1e-6 * MOLE_PER_M3_NTP,
     ),
     unit(Kind::Number, "", &["-", "1"], 1.0),
 ];

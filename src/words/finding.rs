@@ -1,7 +1,7 @@
 //! A finding in words: what, why, what to try.
 
 use super::missing::{chamber_fault, condition_fault, missing, upper};
-use super::{requirement, solid_pressure};
+use super::{gas_amount, requirement, solid_pressure};
 use crate::assess::{Finding, FindingKind};
 use crate::chamber::Chamber;
 use crate::design::Change;
@@ -265,6 +265,44 @@ fn kind(kind: &FindingKind, chamber: Option<&Chamber>, units: &Units) -> Said {
             ),
         )
         .try_this("A finer balance or a wider tolerance."),
+        FindingKind::VacuumNotStated => say(
+            "Vacuum not stated",
+            "Nothing is said of the gas left in the unit as it is sealed: no pressure here includes it.".to_owned(),
+        )
+        .try_this("State the vacuum that the bench reaches, and whether the fluid is degassed."),
+        FindingKind::VacuumBelowZero { pressure } => say(
+            "Vacuum below zero",
+            format!("The gas left at the seal is stated as {} abs.", units.show(*pressure)),
+        )
+        .try_this("Give it as an absolute pressure; a perfect vacuum is 0."),
+        FindingKind::NotDegassed { amount } => say(
+            "Fluid not degassed",
+            format!("It brings {} of the bench's air with it, dissolved.", gas_amount(*amount, units)),
+        )
+        .try_this("Degas it before the seal."),
+        FindingKind::DissolvedAirNotKnown => say(
+            "Dissolved air not known",
+            "The fluid is not degassed, and how much air it takes up is not recorded: that gas is not counted.".to_owned(),
+        )
+        .try_this("Degassing is mandatory with this fluid: do it, and say so under the bench."),
+        FindingKind::GasAboveShare { pressure, temperature, of_saturation, allowed } => {
+            let title = if *of_saturation > 1.0 {
+                "More residual gas than vapour"
+            } else {
+                "Much residual gas"
+            };
+            say(
+                title,
+                format!(
+                    "At {} the gas stands at {}, {} of the vapour pressure there; {} is asked for.",
+                    units.show(*temperature),
+                    units.show_to(*pressure, 3),
+                    percent(*of_saturation),
+                    percent(*allowed)
+                ),
+            )
+            .try_this("Reach a better vacuum, degas the fluid, leave the gas more room by less charge, or get what makes it (metal, seals) out of the unit.")
+        }
         FindingKind::Incompatible { material, reason, source } => {
             say("Fluid attacks the wall", format!("{material}: {reason}.")).try_this("Another wall or another fluid.").source(source)
         }

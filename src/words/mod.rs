@@ -12,7 +12,7 @@ use crate::assess::{Bound, EventKind, Objection, Requirement, Severity, Side, Ve
 use crate::chamber::{AllowableBasis, OutsideBasis};
 use crate::design::NamedVolume;
 use crate::fluid::{FrozenPressure, Regime, StabilityKind};
-use crate::units::Units;
+use crate::units::{Amount, Kind, NBSP, Quantity, Units, figures, unit_named};
 
 /// The care that is always said.
 pub const CAUTIONS: &[&str] = &[
@@ -67,6 +67,17 @@ pub fn solid_pressure(pressure: FrozenPressure, units: &Units) -> String {
 /// A bound's mass, rounded into the window.
 pub fn bound_mass(bound: &Bound, units: &Units) -> String {
     units.show_careful(bound.mass, 4, bound.side == Side::AtMost)
+}
+
+/// An amount of gas, and what that is at room temperature and one atmosphere.
+pub fn gas_amount(amount: Amount, units: &Units) -> String {
+    let shown = units.show_to(amount, 2);
+    if amount.mole() == 0.0 {
+        return shown;
+    }
+    let ntp = unit_named(Kind::Amount, "mL(NTP)");
+    let number = figures(ntp.number_of(amount.si()), 2);
+    format!("{shown} ({number}{NBSP}{})", ntp.symbol)
 }
 
 pub const fn event(event: EventKind) -> &'static str {

@@ -10,7 +10,7 @@ use chargewright::conditions::ConditionFault;
 use chargewright::design::{ChargeAim, Design, Duty, FluidId};
 use chargewright::fluid::Catalog;
 use chargewright::store;
-use chargewright::units::Units;
+use chargewright::units::{Amount, Pressure, Temperature, Units};
 use chargewright::words;
 use proptest::prelude::*;
 
@@ -266,6 +266,38 @@ fn a_contradiction_is_a_finding_by_its_name() {
     }
     let is = |kind: &_| matches!(kind, Chamber(ChamberFault::ZeroVolume));
     named(&flat, is, "zero volume");
+}
+
+/// Any vacuum, any gas made over life, degassed or not, in walls of any cold: what must hold
+/// of every design holds, and the remedies mend.
+#[test]
+fn any_residual_gas() {
+    for (name, design) in store::presets() {
+        for vacuum in [
+            None,
+            Some(0.0),
+            Some(1.0),
+            Some(1e3),
+            Some(1e5),
+            Some(1e9),
+            Some(-5.0),
+        ] {
+            for amount in [0.0, 1e-7, 1e-3, 1e3] {
+                for degassed in [false, true] {
+                    let mut design = design.clone();
+                    design.bench.vacuum =
+                        vacuum.map(|pa| Pressure::from_pascal(pa).expect("a pressure"));
+                    design.bench.degassed = degassed;
+                    design.conditions.gas_generated = Amount::from_mole(amount).expect("an amount");
+                    design.chamber.parts[0].sealing_temperature =
+                        Temperature::from_kelvin(77.36).ok().filter(|_| degassed);
+                    let what = format!("{name}: {vacuum:?} Pa, {amount} mol, {degassed}");
+                    let a = holds(&design, &what);
+                    remedies_mend(&design, &a, &what);
+                }
+            }
+        }
+    }
 }
 
 /// Charges that cannot be: nothing, the brim, ten times what there is room for.

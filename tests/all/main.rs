@@ -29,6 +29,7 @@ mod random_states;
 mod ranking;
 mod reference_equations;
 mod refusals;
+mod residual_gas;
 mod second_source;
 mod tables;
 mod transport;

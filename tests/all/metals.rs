@@ -90,6 +90,8 @@ fn an_unknown_liquid_full_state_is_not_fit() {
                 ("working_high_k: 323.15", "working_high_k: 700.0"),
                 ("hottest_k: 353.15", "hottest_k: 700.0"),
                 ("hottest_k: 373.15", "hottest_k: 800.0"),
+                // A bubble of gas would reach the walls' limit just before the liquid fills them.
+                ("vacuum_pa: Some(10.0)", "vacuum_pa: None"),
             ],
         );
         design.charge.aim = ChargeAim::Mass {

@@ -1,6 +1,7 @@
 //! From figures to findings: one function a question, each in one place.
 
 mod charge;
+mod gas;
 mod people;
 mod walls;
 
@@ -34,6 +35,7 @@ pub fn findings(design: &Design, library: &Library, a: &Assessment) -> Vec<Findi
     judge.freezing();
     judge.window();
     judge.balance();
+    judge.gas();
     judge.pair();
     judge.stability();
     judge.fire();

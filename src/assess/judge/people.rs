@@ -250,6 +250,11 @@ impl Judge<'_> {
         {
             from_memory.push(format!("strength of {}", weakest.name));
         }
+        let air = self.a.gas.as_ref().ok();
+        let air = air.and_then(|gas| gas.counted_solubility());
+        if air.is_some_and(|air| !air.source.is_confirmed()) {
+            from_memory.push("air dissolved in the fluid".to_owned());
+        }
         let safety = self.a.fluid.safety();
         for (what, confirmed) in [
             (
