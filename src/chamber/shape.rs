@@ -191,7 +191,7 @@ impl Shape {
     }
 
     /// Volume of the cavity, or of the solid for an insert, in m³; 0 for a wick, whose
-    /// volumes are [`Wick::volumes`]. Never negative.
+    /// volumes are its own. Never negative.
     /// [`super::Part::volumes`] gives it its sign.
     pub fn volume(&self, pick: Pick) -> f64 {
         let m = |dimension: &Dimension| dimension.at(pick).metre();

@@ -66,6 +66,13 @@ pub fn conditions_ui(ui: &mut Ui, design: &mut Design, units: &Units) {
         .digits(3)
         .hover("Greatest difference of temperature across a wall in use: it stresses glass")
         .show(ui);
+    QuantityField::new("Gas over life", &mut conditions.gas_generated, units)
+        .slider(0.0, 1e-4)
+        .digits(2)
+        .hover(
+            "Permanent gas that corrosion, leaks and decay will have made by the end of its life",
+        )
+        .show(ui);
 }
 
 pub fn demands_decision(design: &Design, units: &Units) -> String {
@@ -118,4 +125,9 @@ pub fn demands_ui(ui: &mut Ui, design: &mut Design, units: &Units) {
     .digits(3)
     .hover("Share of the wall's strength that its joints have")
     .show(ui);
+    QuantityField::new("Gas, at most", &mut demands.gas_share, units)
+        .slider(0.0, 1.0)
+        .digits(2)
+        .hover("Residual gas over the vapour pressure at the lower end of the working range")
+        .show(ui);
 }

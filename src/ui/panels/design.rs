@@ -8,7 +8,7 @@ use super::{chamber, charge, conditions, exposures, fluid};
 use crate::assess::{Assessment, Library, Section};
 use crate::design::{Design, Duty};
 use crate::ui::widgets::QuantityField;
-use crate::units::Units;
+use crate::units::{Pressure, Units};
 
 /// View-only state of the column.
 #[derive(Debug, Default)]
@@ -147,6 +147,23 @@ fn bench_ui(ui: &mut Ui, design: &mut Design, units: &Units) {
         .hover("Mass boiled off or purged after dispensing, before the seal")
         .show(ui);
     ui.checkbox(&mut bench.gauge, "A pressure gauge stays on the unit");
+    let mut stated = bench.vacuum.is_some();
+    if ui
+        .checkbox(&mut stated, "Vacuum reached is stated")
+        .changed()
+    {
+        bench.vacuum = Pressure::from_pascal(10.0).ok().filter(|_| stated);
+    }
+    if let Some(vacuum) = &mut bench.vacuum {
+        QuantityField::new("Gas left", vacuum, units)
+            .slider(0.01, 1e4)
+            .logarithmic()
+            .digits(2)
+            .hover("Pressure of gas left inside as it is sealed, besides the fluid's own vapour")
+            .show(ui);
+    }
+    ui.checkbox(&mut bench.degassed, "The fluid is degassed")
+        .on_hover_text("Air dissolved in the fluid is taken out before the seal");
 }
 
 fn room_ui(ui: &mut Ui, design: &mut Design, units: &Units) {

@@ -130,19 +130,15 @@ fn make(chamber: &mut Chamber, change: Option<Change>) {
 
 fn add_ui(ui: &mut Ui, chamber: &mut Chamber, library: &Library) {
     ui.menu_button("Add a part…", |ui| {
-        let groups: [(&str, fn(Role) -> bool); 3] = [
-            ("Cavities", |role| role == Role::Cavity),
-            ("Ends and bought-in parts", |role| {
-                matches!(role, Role::Lid | Role::Rated)
-            }),
-            ("Wicks and solids inside", |role| {
-                matches!(role, Role::Wick | Role::Insert)
-            }),
+        let groups: [(&str, &[Role]); 3] = [
+            ("Cavities", &[Role::Cavity]),
+            ("Ends and bought-in parts", &[Role::Lid, Role::Rated]),
+            ("Wicks and solids inside", &[Role::Wick, Role::Insert]),
         ];
         let shapes = Shape::default_of_each_kind();
-        for (label, belongs) in groups {
+        for (label, roles) in groups {
             ui.menu_button(label, |ui| {
-                for shape in shapes.iter().filter(|shape| belongs(shape.role())) {
+                for shape in shapes.iter().filter(|shape| roles.contains(&shape.role())) {
                     if ui.button(words::upper(shape.kind_name())).clicked() {
                         chamber
                             .parts
