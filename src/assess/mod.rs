@@ -96,6 +96,9 @@ pub struct Assessment {
     pub heaviest_over_at: Figure<Option<Temperature>>,
     /// Dry-out temperature of the lightest corner.
     pub lightest_dry_at: Figure<Option<Temperature>>,
+    /// The worst moment of every sealed stretch of life.
+    pub inside: Figure<Vec<WorstCase>>,
+    /// The one of them that governs.
     pub worst: Figure<WorstCase>,
     /// Of nominal amount, at its pressures in the heaviest corner.
     pub gas: Figure<ResidualGas>,
@@ -166,7 +169,11 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         None => Ok(None),
     });
     let stretches = life::stretches(design);
-    let worst = with_corners().and_then(|c| worst::worst_case(&stretches, c, &walls));
+    let inside = with_corners().and_then(|c| worst::worst_cases(&stretches, c, &walls));
+    let worst = match &inside {
+        Ok(cases) => worst::governing(cases),
+        Err(missing) => Err(missing.clone()),
+    };
     let gas = match (&corners, &named) {
         (Ok(corners), Ok(named)) => Ok(gas::residual_gas(design, &inventory, corners, named)),
         (Err(missing), _) | (_, Err(missing)) => Err(missing.clone()),
@@ -221,6 +228,7 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         heaviest_full_at,
         heaviest_over_at,
         lightest_dry_at,
+        inside,
         worst,
         gas,
         vacuum_stands_to,

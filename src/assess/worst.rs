@@ -60,47 +60,56 @@ pub fn absolute(load: Pressure, outside: Pressure) -> Pressure {
     Pressure::from_pascal(load.pascal() + outside.pascal()).unwrap_or(load)
 }
 
-/// The governing condition of the heaviest corner.
+/// The worst moment of the heaviest corner in every sealed stretch.
 ///
-/// The ends of every sealed stretch are asked, and every strength knot between
-/// them; the one with the greatest share of the allowable governs, or the greatest
-/// pressure where the strength is not known.
+/// The ends of a stretch are asked, and every strength knot between them; the one with the
+/// greatest share of the allowable governs, or the greatest pressure where the strength is
+/// not known.
 ///
 /// # Errors
 /// The fluid's, where a condition lies outside its model.
-pub fn worst_case(
+pub fn worst_cases(
     stretches: &[Stretch],
     corners: &Corners,
     walls: &Walls<'_>,
-) -> Figure<WorstCase> {
-    let mut worst: Option<WorstCase> = None;
-    let moments = stretches
-        .iter()
-        .filter(|stretch| stretch.is_sealed())
-        .flat_map(|stretch| {
-            let temperatures = stretch.temperatures(&walls.knots);
-            temperatures.map(move |temperature| (stretch, temperature))
-        });
-    for (stretch, temperature) in moments {
+) -> Figure<Vec<WorstCase>> {
+    let mut cases = Vec::new();
+    for stretch in stretches.iter().filter(|stretch| stretch.is_sealed()) {
         if stretch.hottest < stretch.coldest {
             return Err(Missing::Conditions);
         }
-        let case = at_temperature(corners, walls, stretch, temperature)?;
-        let worse = match &worst {
-            None => true,
-            Some(worst) => match (&case.of_allowable, &worst.of_allowable) {
-                (Ok(a), Ok(b)) => a > b,
-                // An unknown strength governs over any known one.
-                (Err(_), Ok(_)) => true,
-                (Ok(_), Err(_)) => false,
-                (Err(_), Err(_)) => case.pressure > worst.pressure,
-            },
-        };
-        if worse {
-            worst = Some(case);
+        let mut worst: Option<WorstCase> = None;
+        for temperature in stretch.temperatures(&walls.knots) {
+            let case = at_temperature(corners, walls, stretch, temperature)?;
+            if worst.as_ref().is_none_or(|worst| worse(&case, worst)) {
+                worst = Some(case);
+            }
         }
+        cases.extend(worst);
     }
-    worst.ok_or(Missing::Conditions)
+    Ok(cases)
+}
+
+/// The case that governs over all.
+///
+/// # Errors
+/// [`Missing::Conditions`] where no stretch is sealed.
+pub fn governing(cases: &[WorstCase]) -> Figure<WorstCase> {
+    cases
+        .iter()
+        .reduce(|worst, case| if worse(case, worst) { case } else { worst })
+        .cloned()
+        .ok_or(Missing::Conditions)
+}
+
+fn worse(case: &WorstCase, than: &WorstCase) -> bool {
+    match (&case.of_allowable, &than.of_allowable) {
+        (Ok(a), Ok(b)) => a > b,
+        // An unknown strength governs over any known one.
+        (Err(_), Ok(_)) => true,
+        (Ok(_), Err(_)) => false,
+        (Err(_), Err(_)) => case.pressure > than.pressure,
+    }
 }
 
 /// Load over its limit. A wall under less pressure than on its other side carries no

@@ -187,7 +187,7 @@ impl Envelope {
         Some(PartStrength {
             burst: wall.told(bounds.burst, temperature),
             allowable: wall.told(bounds.allowable, temperature),
-            outside: wall.told(bounds.outside, temperature),
+            outside: wall.told(wall.outside(temperature, &self.factors), temperature),
             formula: wall.formula,
             outside_formula: wall.outside_formula,
         })
@@ -231,8 +231,7 @@ impl Envelope {
     ) -> Result<WeakestOutside, StrengthUnknown> {
         let mut weakest: Option<(&WallStrength, OutsideAllowable)> = None;
         for wall in &self.walls {
-            let bounds = wall.bounds(temperature, &self.factors);
-            let allowable = wall.told(bounds.outside, temperature)?;
+            let allowable = wall.told(wall.outside(temperature, &self.factors), temperature)?;
             if weakest.is_none_or(|(_, least)| allowable.pressure < least.pressure) {
                 weakest = Some((wall, allowable));
             }

@@ -4,10 +4,12 @@
 //! contradiction in the data is never an error here but a [`ChamberFault`] on its
 //! part, and the rest still counts. Strengths are loads: inside minus outside.
 
+mod base;
 mod bounds;
 mod capacity;
 pub mod capillary;
 mod closure;
+mod contradiction;
 mod curve;
 mod dimension;
 mod envelope;
@@ -36,6 +38,7 @@ mod wick;
 pub use capacity::Capacity;
 pub use capillary::WickError;
 pub use closure::{Closure, ClosureKind, Relief, Stub};
+pub use contradiction::ShapeFault;
 pub use curve::{Curve, CurveError, Positive, ROOM_K, RoomValue, Strength, StrengthAt};
 pub use dimension::{Dimension, Pick};
 pub use envelope::{
@@ -43,7 +46,7 @@ pub use envelope::{
     StrengthUnknown, Weakest, WeakestOutside,
 };
 pub use factors::{Factor, Factors, JointEfficiency};
-pub use fault::{ChamberFault, ShapeFault};
+pub use fault::ChamberFault;
 pub use fields::Field;
 pub use material::{AfterAnnealing, Condition, Glass, Material, MaterialKind, Metal, ServiceRange};
 pub use materials::{MaterialError, MaterialNameTaken, Materials};

@@ -45,6 +45,7 @@ pub fn render(design: &Design, a: &Assessment, units: &Units, head: &Head) -> St
     gas::residual_gas(&mut page, design, a, units);
     facts::worst_case(&mut page, a, units);
     walls::outside(&mut page, a, units);
+    walls::stretches(&mut page, a, units);
     walls::parts(&mut page, design, a, units);
     facts::warnings(&mut page, design, a, units);
     facts::basis(&mut page, design, a);

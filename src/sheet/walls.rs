@@ -149,6 +149,47 @@ pub fn vacuum(page: &mut Page, a: &Assessment, units: &Units) {
     page.row("Empty, the unit", &text);
 }
 
+/// Each stretch of life with its worst moment, from inside and from outside.
+pub fn stretches(page: &mut Page, a: &Assessment, units: &Units) {
+    let Ok(inside) = &a.inside else { return };
+    if inside.len() + a.outside.len() < 3 {
+        return;
+    }
+    page.heading("EVERY STRETCH OF LIFE");
+    let used = |share: &Result<f64, _>| match share {
+        Ok(share) => format!("{} % used", figures(100.0 * share, 3)),
+        Err(_) => "strength not known".to_owned(),
+    };
+    for case in inside {
+        let load = if case.load.pascal() > 0.0 {
+            units.show(case.load)
+        } else {
+            "no load".to_owned()
+        };
+        let part = case.weakest.as_ref().map_or("", |w| &*w.name);
+        page.row(
+            &case.stretch,
+            &format!(
+                "from inside {load} at {}, {part}: {}",
+                units.show(case.temperature),
+                used(&case.of_allowable)
+            ),
+        );
+    }
+    for case in &a.outside {
+        let part = case.weakest.as_ref().map_or("", |w| &*w.name);
+        page.row(
+            &case.stretch,
+            &format!(
+                "from outside {} at {}, {part}: {}",
+                units.show(case.load),
+                units.show(case.temperature),
+                used(&case.of_allowable)
+            ),
+        );
+    }
+}
+
 /// Every part, at the temperatures that govern.
 pub fn parts(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
     let (Ok(case), Some(outside)) = (&a.worst, a.worst_outside()) else {
@@ -180,6 +221,14 @@ pub fn parts(page: &mut Page, design: &Design, a: &Assessment, units: &Units) {
             |unknown| format!("not known ({})", unknown.reason),
             |allowable| units.show(allowable.pressure),
         );
-        page.row(name, &format!("{inside} inside, {collapse} outside"));
+        let wall = design
+            .chamber
+            .parts
+            .get(index)
+            .and_then(|p| p.wall.as_ref());
+        let state = wall.map_or_else(String::new, |wall| {
+            format!("; {}, {}", wall.material, wall.treatment.name())
+        });
+        page.row(name, &format!("{inside} inside, {collapse} outside{state}"));
     }
 }

@@ -52,7 +52,7 @@ impl Units {
             (Kind::Pressure, UnitSystem::Kelvin) => pick(&[(1e3, "Pa"), (1e5, "kPa")], "MPa"),
             (Kind::Pressure, UnitSystem::Inch) => unit_named(kind, "psi"),
             (Kind::Length, UnitSystem::Inch) => pick(&[(1.0, "in")], "ft"),
-            (Kind::Length, _) => pick(&[(1e-5, "µm"), (1.0, "mm")], "m"),
+            (Kind::Length, _) => pick(&[(1e-4, "µm"), (1.0, "mm")], "m"),
             (Kind::Volume, UnitSystem::Inch) => pick(&[(1e-2, "in³")], "ft³"),
             (Kind::Volume, _) => pick(&[(1e-7, "µL"), (1e-3, "mL"), (1.0, "L")], "m³"),
             (Kind::Mass, UnitSystem::Inch) => pick(&[(0.5, "oz")], "lb"),

@@ -3,6 +3,9 @@
 mod boundaries;
 mod catalogue;
 mod catalogue_table;
+mod chamber;
+#[cfg(feature = "window")]
+mod chamber_window;
 mod charge_window;
 mod commands;
 mod consistency;

@@ -75,6 +75,30 @@ fn an_impossible_value_is_refused_by_line_column_field_value_and_limit() {
         "mass_kg",
         &["-0.0032 kg", "0 kg"],
     );
+    wrong(
+        "porosity: 0.48",
+        "porosity: 1.2",
+        "porosity",
+        &["1.2", "greatest allowed, 1"],
+    );
+    wrong(
+        "nominal_m: 0.0005,",
+        "nominal_m: -0.0005,",
+        "nominal_m",
+        &["-0.0005 m", "0 m"],
+    );
+    wrong(
+        "ovality: 0.01",
+        "ovality: 2.0",
+        "ovality",
+        &["2", "greatest allowed, 1"],
+    );
+    wrong(
+        "tilt_rad: 0.0",
+        "tilt_rad: 3.0",
+        "tilt_rad",
+        &["3 rad", "1.57"],
+    );
     wrong("mass_kg: 0.0032", "mass_kg: -inf", "mass_kg", &["-inf"]);
     wrong(
         "ullage: 0.05",

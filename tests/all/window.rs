@@ -10,7 +10,7 @@ use eframe::egui::{self, Key, Modifiers, Role};
 use egui_kittest::Harness;
 use egui_kittest::kittest::{NodeT as _, Queryable as _};
 
-struct Window {
+pub struct Window {
     app: Option<App>,
     path: Option<PathBuf>,
     folder: Option<PathBuf>,
@@ -26,7 +26,7 @@ impl Window {
     }
 }
 
-fn window(path: Option<&Path>, folder: Option<&Path>) -> Harness<'static, Window> {
+pub fn window(path: Option<&Path>, folder: Option<&Path>) -> Harness<'static, Window> {
     let state = Window {
         app: None,
         path: path.map(Path::to_owned),
@@ -40,7 +40,7 @@ fn window(path: Option<&Path>, folder: Option<&Path>) -> Harness<'static, Window
     harness
 }
 
-fn app<'a>(harness: &'a mut Harness<'static, Window>) -> &'a mut App {
+pub fn app<'a>(harness: &'a mut Harness<'static, Window>) -> &'a mut App {
     harness
         .state_mut()
         .app
@@ -48,12 +48,12 @@ fn app<'a>(harness: &'a mut Harness<'static, Window>) -> &'a mut App {
         .expect("made in the first frame")
 }
 
-fn order(harness: &mut Harness<'static, Window>, command: Command) {
+pub fn order(harness: &mut Harness<'static, Window>, command: Command) {
     app(harness).order(command);
     harness.run();
 }
 
-fn type_into(harness: &mut Harness<'static, Window>, label: &str, text: &str) {
+pub fn type_into(harness: &mut Harness<'static, Window>, label: &str, text: &str) {
     let field = harness.get_by_role_and_label(Role::TextInput, label);
     field.click();
     harness.run();
@@ -70,16 +70,16 @@ fn hottest(harness: &mut Harness<'static, Window>) -> f64 {
 }
 
 /// A folder of its own for one test, removed when it ends.
-struct Folder(PathBuf);
+pub struct Folder(PathBuf);
 
 impl Folder {
-    fn new(name: &str) -> Self {
+    pub fn new(name: &str) -> Self {
         let path = std::env::temp_dir().join(format!("chargewright-{name}-{}", std::process::id()));
         std::fs::create_dir_all(&path).expect("a temporary folder");
         Self(path)
     }
 
-    fn file(&self, name: &str) -> PathBuf {
+    pub fn file(&self, name: &str) -> PathBuf {
         self.0.join(name)
     }
 }
@@ -90,7 +90,7 @@ impl Drop for Folder {
     }
 }
 
-fn preset(folder: &Folder, name: &str) -> PathBuf {
+pub fn preset(folder: &Folder, name: &str) -> PathBuf {
     let path = folder.file(&format!("{name}.ron"));
     store::save(&path, &store::preset(name).expect(name)).expect("saves");
     path

@@ -4,6 +4,7 @@
 
 use chargewright::assess::{Library, assess};
 use chargewright::fluid::{Catalog, SaturationCurve};
+use chargewright::picture::of_design;
 use chargewright::sheet::{Head, render};
 use chargewright::store;
 use chargewright::units::{Density, Temperature, Units};
@@ -26,6 +27,30 @@ fn whole_assessment(bencher: Bencher<'_, '_>, name: &str) {
     let library = Library::built_in();
     assess(&design, &library);
     bencher.bench_local(|| assess(black_box(&design), &library));
+}
+
+/// The same with more parts, in half of which a wall is judged: the cost is linear in them.
+#[divan::bench(args = [5, 10, 20, 40, 80])]
+fn assessment_of_parts(bencher: Bencher<'_, '_>, parts: usize) {
+    let mut design = store::preset("copper-water-heat-pipe").expect("a ready design");
+    let some = design.chamber.parts.clone();
+    let more = some.iter().cycle().take(parts).cloned();
+    design.chamber.parts = more.collect();
+    let library = Library::built_in();
+    assess(&design, &library);
+    bencher.bench_local(|| assess(black_box(&design), &library));
+}
+
+/// The section of as many parts, as the window draws it anew when something changed.
+#[divan::bench(args = [5, 10, 20, 40])]
+fn section_of_parts(bencher: Bencher<'_, '_>, parts: usize) {
+    let mut design = store::preset("copper-water-heat-pipe").expect("a ready design");
+    let some = design.chamber.parts.clone();
+    design.chamber.parts = some.iter().cycle().take(parts).cloned().collect();
+    let library = Library::built_in();
+    let assessment = assess(&design, &library);
+    let at = design.conditions.bench;
+    bencher.bench_local(|| of_design(black_box(&design), &assessment, at, 0.0, &Units::default()));
 }
 
 #[divan::bench(args = designs())]

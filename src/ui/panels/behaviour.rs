@@ -150,6 +150,7 @@ fn pictures_ui(
                     state: &mut PlotState,
                     scrubber: &mut Temperature| {
         ui.allocate_ui_with_layout(size, Layout::top_down(Align::Min), |ui| {
+            ui.spacing_mut().item_spacing = spacing;
             ui.set_min_size(size);
             ui.set_max_size(size);
             show(ui, picture, state, scrubber);

@@ -86,13 +86,45 @@ pub fn section_ui(
             return;
         }
     };
-    let sheet = Sheet::fit(picture, rect);
+    let sheet = Sheet::fit(picture, key_ui(ui, picture, palette, rect));
     sheet.paint(ui, picture, palette);
     if let Some(pointer) = response.hover_pos()
         && let Some(text) = picture.text_at(sheet.point(pointer))
     {
         response.on_hover_text_at_pointer(text);
     }
+}
+
+/// Where there is room, what the ringed numbers stand for, at the foot; gives what is
+/// left for the picture.
+fn key_ui(ui: &Ui, picture: &Picture, palette: &Palette, rect: Rect) -> Rect {
+    const ROOM: f32 = 320.0;
+    const AT_MOST: f32 = 0.45;
+    if rect.height() < ROOM {
+        return rect;
+    }
+    let font = TextStyle::Small.resolve(ui.style());
+    let lines: Vec<_> = picture
+        .key
+        .iter()
+        .map(|(number, text)| {
+            let text = format!("{number}  {}", text.replace('\n', ", "));
+            let width = rect.width() - 12.0;
+            ui.painter()
+                .layout(text, font.clone(), palette.text_faint, width)
+        })
+        .collect();
+    let height: f32 = lines.iter().map(|line| line.size().y + 3.0).sum();
+    if height > AT_MOST * rect.height() {
+        return rect;
+    }
+    let mut at = pos2(rect.left() + 6.0, rect.bottom() - height);
+    for line in lines {
+        let down = line.size().y + 3.0;
+        ui.painter().galley(at, line, palette.text_faint);
+        at.y += down;
+    }
+    Rect::from_min_max(rect.min, pos2(rect.right(), rect.bottom() - height - 8.0))
 }
 
 /// Whether the picture lies down: a long upright device in a wide place.

@@ -45,6 +45,12 @@ impl<'a, Q: Quantity> QuantityField<'a, Q> {
         self
     }
 
+    /// Without the zeros at its end, as a drawing gives a size.
+    pub fn trimmed(mut self) -> Self {
+        self.form.trim = true;
+        self
+    }
+
     /// What the quantity means, as a tooltip and accessible description.
     pub fn hover(mut self, text: &'a str) -> Self {
         self.form.hover = Some(text);
@@ -68,7 +74,7 @@ impl<'a, Q: Quantity> QuantityField<'a, Q> {
             units,
             unit,
             digits: form.digits,
-            trim: false,
+            trim: form.trim,
             check: &check,
         };
         let new = form.show(ui, si, script);
@@ -92,7 +98,7 @@ pub fn quantity_with_tolerance_row<Q: Quantity, T: Quantity>(
         units,
         unit,
         digits: form.digits,
-        trim: false,
+        trim: form.trim,
         check: &check,
     };
     let tolerance_check = |si: f64| {
@@ -130,6 +136,7 @@ struct Form<'a> {
     range: Option<(f64, f64)>,
     logarithmic: bool,
     digits: usize,
+    trim: bool,
     salt: usize,
 }
 
@@ -141,6 +148,7 @@ impl<'a> Form<'a> {
             range: None,
             logarithmic: false,
             digits,
+            trim: false,
             salt: 0,
         }
     }

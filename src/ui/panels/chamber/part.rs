@@ -114,10 +114,7 @@ fn head_ui(ui: &mut Ui, row: &Row<'_>, part: &mut Part, change: &mut Option<Chan
     ui.horizontal(|ui| {
         ui.label(part.shape.kind_name());
         ui.label("×");
-        let mut count = part.count;
-        let response = ui.add(DragValue::new(&mut count).range(1..=999).speed(0.05));
-        response.widget_info(|| WidgetInfo::drag_value(true, f64::from(part.count)));
-        part.count = count;
+        count_ui(ui, "How many alike", &mut part.count, 1);
     });
     ui.horizontal(|ui| {
         let mut button = |label: &str, hint: &str, on: bool, wanted: Change| {
@@ -264,6 +261,7 @@ pub fn dimension_ui(
     let field = QuantityField::new(label, nominal, units)
         .slider(range.0, range.1)
         .logarithmic()
+        .trimmed()
         .id_salt(salt);
     quantity_with_tolerance_row(ui, field, tolerance);
 }
@@ -272,6 +270,7 @@ pub fn capacity_ui(ui: &mut Ui, label: &str, capacity: &mut Capacity, salt: usiz
     let Capacity { nominal, tolerance } = capacity;
     let field = QuantityField::new(label, nominal, units)
         .slider(0.0, 5e-6)
+        .trimmed()
         .id_salt(salt);
     quantity_with_tolerance_row(ui, field, tolerance);
 }
@@ -296,13 +295,20 @@ fn field_ui(ui: &mut Ui, label: &str, field: Field<'_>, salt: usize, units: &Uni
             ui.horizontal(|ui| {
                 ui.label(label);
                 ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
-                    let response = ui.add(DragValue::new(count).range(0..=9999).speed(0.05));
-                    let value = f64::from(*count);
-                    response.widget_info(|| WidgetInfo::drag_value(true, value));
+                    count_ui(ui, label, count, 0);
                 });
             });
         }
     }
+}
+
+fn count_ui(ui: &mut Ui, label: &str, count: &mut u32, least: u32) {
+    let response = ui.add(DragValue::new(count).range(least..=9999).speed(0.05));
+    let value = f64::from(*count);
+    response.widget_info(|| WidgetInfo {
+        label: Some(label.to_owned()),
+        ..WidgetInfo::drag_value(true, value)
+    });
 }
 
 /// A line of text: one undo step, not one a letter.
