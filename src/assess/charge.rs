@@ -3,7 +3,7 @@
 use std::sync::Arc;
 
 use super::figure::{Figure, Missing};
-use super::gas::GasInventory;
+use super::inventory::GasInventory;
 use crate::chamber::{Movement, NamedVolumes, Volumes};
 use crate::design::{ChargeAim, Design, NamedVolume};
 use crate::fluid::Fluid;

@@ -8,6 +8,7 @@ mod chart;
 mod figure;
 mod finding;
 mod gas;
+mod inventory;
 mod judge;
 mod life;
 mod outside;
@@ -29,7 +30,8 @@ pub use charge::{ChargeFigures, Corners};
 pub use chart::{ChargeMap, Charts, LimitPoint, MapPoint};
 pub use figure::{Figure, Missing};
 pub use finding::{Finding, FindingKind, Section, Severity, Verdict};
-pub use gas::{Blocked, DissolvedAir, GasInventory, LiftLoss, ResidualGas, SealedGas};
+pub use gas::{Blocked, DissolvedAir, LiftLoss, ResidualGas};
+pub use inventory::{GasInventory, SealedGas};
 pub use life::Stretch;
 pub use outside::OutsideCase;
 pub use place::LiquidPlace;
@@ -148,7 +150,7 @@ pub fn assess(design: &Design, library: &Library) -> Assessment {
         .as_ref()
         .map_err(Clone::clone)
         .and_then(|v| charge::charge_figures(design, &fluid, v, movement));
-    let inventory = GasInventory::new(&gas::Seal::of(design, movement), &fluid);
+    let inventory = GasInventory::new(&inventory::Seal::of(design, movement), &fluid);
     let corners = match (&charge, &volumes) {
         (Ok(charge), Ok(volumes)) => {
             let outside = design.conditions.least_outside;

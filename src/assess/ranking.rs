@@ -8,7 +8,7 @@
 use std::sync::Arc;
 
 use super::figure::Missing;
-use super::gas::{GasInventory, Seal};
+use super::inventory::{GasInventory, Seal};
 use super::{Assessment, Figure};
 use crate::chamber::Movement;
 use crate::design::{Design, Duty};

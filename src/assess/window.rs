@@ -1,7 +1,7 @@
 //! The window of allowed mass: every requirement is a bound at a temperature.
 
 use super::figure::{Figure, Missing};
-use super::gas::GasInventory;
+use super::inventory::GasInventory;
 use super::life::{Stretch, stretches};
 use super::worst::Walls;
 use crate::chamber::{Movement, Volumes};

@@ -259,7 +259,8 @@ pub fn densest_within(
         let Some(own) = Pressure::from_pascal(own).ok().filter(|p| p.pascal() > 0.0) else {
             return Ok(Density::from_kilogram_per_cubic_metre(NEXT_TO_NOTHING).ok());
         };
-        let Some(found) = fluid.density_at(own, temperature)? else {
+        let near = Density::from_kilogram_per_cubic_metre(rho).ok();
+        let Some(found) = fluid.density_near(own, temperature, near)? else {
             return Ok(None);
         };
         let found = found.kilogram_per_cubic_metre();

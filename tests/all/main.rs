@@ -14,6 +14,7 @@ mod expansions;
 mod facts;
 mod files;
 mod fixed_points;
+mod gas_in_designs;
 mod given;
 mod layers;
 mod metals;

@@ -11,8 +11,9 @@ use std::time::Instant;
 
 use chargewright::assess::{Library, assess, rank};
 use chargewright::fluid::{Catalog, Fluid};
+use chargewright::sealed::SealedUnit;
 use chargewright::store;
-use chargewright::units::{Density, Temperature};
+use chargewright::units::{Amount, Density, Mass, Temperature, Volume};
 
 const FLUIDS: [&str; 5] = ["water", "ammonia", "r-134a", "acetone", "n-pentane"];
 const STATES: usize = 1024;
@@ -34,6 +35,11 @@ fn main() {
         let design = store::preset(name).expect("a ready design");
         let library = Library::built_in();
         report("assessment", name, 200, |_| assess(&design, &library));
+        let mut gasless = design.clone();
+        gasless.bench.vacuum = None;
+        report("assessment without gas", name, 200, |_| {
+            assess(&gasless, &library)
+        });
     }
     ranking();
 }
@@ -71,6 +77,29 @@ fn single_states(fluid: &Fluid) {
         ),
     ] {
         report(job, id, 20_000, |i| fluid.state(states[i].0, states[i].1));
+    }
+    two_phases_with_gas(id, &states(&|liquid, vapour| 0.9 * liquid + 0.1 * vapour));
+}
+
+/// A millibar, and an atmosphere, of air in a tenth of the volume.
+fn two_phases_with_gas(id: &str, states: &[(Density, Temperature)]) {
+    let fluid = Catalog::built_in().by_id(id).expect("known");
+    let volume = Volume::from_cubic_metre(1e-4).expect("a volume");
+    for (job, amount) in [
+        ("p with 1 mbar of gas", 4e-7),
+        ("p with 1 atm of gas", 4e-4),
+    ] {
+        let amount = Amount::from_mole(amount).expect("an amount");
+        let units: Vec<SealedUnit> = states
+            .iter()
+            .map(|(density, _)| {
+                let mass = 1e-4 * density.kilogram_per_cubic_metre();
+                let mass = Mass::from_kilogram(mass).expect("a mass");
+                let unit = SealedUnit::new(Arc::clone(&fluid), mass, volume);
+                unit.expect("a unit").with_gas(amount, 0.2)
+            })
+            .collect();
+        report(job, id, 20_000, |i| units[i].state(states[i].1));
     }
 }
 
