@@ -34,7 +34,7 @@ pub fn volumes(page: &mut Page, design: &Design, a: &Assessment, units: &Units) 
     };
     page.row(
         "Inside volume",
-        &format!("{}, at 20 °C", range(inside, &format!(" {how}"))),
+        &format!("{}, at 20\u{a0}°C", range(inside, &format!(" {how}"))),
     );
     if wick_void.nominal.cubic_metre() > 0.0 {
         page.row("Vapour core", &range(vapour_core, ""));
@@ -69,7 +69,8 @@ pub fn closure(page: &mut Page, design: &Design, units: &Units) {
                 units.show(stub.volume.nominal)
             ),
         ),
-        None => page.row("Comes off", "nothing stated"),
+        None if closure.kind.parts_a_stub() => page.row("Comes off", "a stub, nothing stated of it"),
+        None => page.row("Comes off", "nothing"),
     }
     let refillable = if closure.refillable { "yes" } else { "no" };
     page.row("Can be opened and refilled", refillable);
