@@ -22,7 +22,7 @@ fn open_window(design: Option<std::path::PathBuf>) -> ExitCode {
 #[cfg(not(feature = "window"))]
 fn open_window(_design: Option<std::path::PathBuf>) -> ExitCode {
     eprintln!(
-        "chargewright: this build has no window; the headless commands are sheet, check, saturation, isochore, fluids"
+        "chargewright: this build has no window; the headless commands are sheet, check, section, walls, saturation, isochore, fluids, materials"
     );
     ExitCode::from(2)
 }

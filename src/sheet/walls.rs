@@ -69,7 +69,9 @@ pub fn closure(page: &mut Page, design: &Design, units: &Units) {
                 units.show(stub.volume.nominal)
             ),
         ),
-        None if closure.kind.parts_a_stub() => page.row("Comes off", "a stub, nothing stated of it"),
+        None if closure.kind.parts_a_stub() => {
+            page.row("Comes off", "a stub, nothing stated of it")
+        }
         None => page.row("Comes off", "nothing"),
     }
     let refillable = if closure.refillable { "yes" } else { "no" };

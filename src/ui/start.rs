@@ -99,7 +99,7 @@ fn has_display() -> bool {
 
 fn refuse(why: &str) -> ExitCode {
     eprintln!(
-        "chargewright: {why}; without a window there are the commands sheet, check, saturation, isochore, fluids"
+        "chargewright: {why}; without a window there are the commands sheet, check, section, walls, saturation, isochore, fluids, materials"
     );
     ExitCode::from(2)
 }
