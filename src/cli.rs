@@ -1,6 +1,5 @@
 //! The headless commands: each a pure function to text, then one write.
 
-use std::fmt::Write as _;
 use std::io::{self, Write as _};
 use std::path::{Path, PathBuf};
 use std::process::ExitCode;
@@ -15,13 +14,15 @@ use crate::picture::{of_design, svg};
 use crate::section::NoSection;
 use crate::sheet::{Head, render};
 use crate::store::{self, Shelf, StoreError};
-use crate::units::{
-    Density, Kind, ParseError, Quantity, QuantityError, Temperature, Units, parse_si, unit_named,
-};
+use crate::units::{ParseError, Quantity, QuantityError, Temperature, Units, parse_si, unit_named};
 use crate::words;
 
+mod csv;
 mod lists;
+mod states;
 mod walls;
+
+use csv::one_line;
 
 /// Fluid, charge and envelope of sealed two-phase devices.
 #[derive(Debug, Parser)]
@@ -216,12 +217,12 @@ pub fn answer(command: &Headless, settings: Option<&Path>) -> Result<Outcome, Cl
         }
         Headless::Saturation { fluid, at } => {
             let shelf = store::shelf(None, settings);
-            let text = saturation(&*find(&shelf, fluid)?, at)?;
+            let text = states::saturation(&*find(&shelf, fluid)?, at)?;
             Ok(outcome(text, shelf.notices_of(store::Kind::FLUID)))
         }
         Headless::Isochore { fluid, density, at } => {
             let shelf = store::shelf(None, settings);
-            let text = isochore(&*find(&shelf, fluid)?, density, at)?;
+            let text = states::isochore(&*find(&shelf, fluid)?, density, at)?;
             Ok(outcome(text, shelf.notices_of(store::Kind::FLUID)))
         }
         Headless::Fluids => {
@@ -330,72 +331,6 @@ fn check(design: &Design, library: &Library) -> (String, u8) {
     (text, u8::from(assessment.verdict == Verdict::NotFit))
 }
 
-fn saturation(fluid: &Fluid, at: &str) -> Result<String, CliError> {
-    let mut text = String::from(
-        "temperature_k,pressure_pa,liquid_density_kg_per_m3,vapour_density_kg_per_m3,\
-         latent_heat_j_per_kg,slope_pa_per_k,surface_tension_n_per_m,liquid_viscosity_pa_s,vapour_viscosity_pa_s\n",
-    );
-    for t in temperatures(at)? {
-        let state = fluid.saturation(t)?;
-        let cells = [
-            Some(t.kelvin()),
-            Some(state.pressure_pa),
-            Some(state.liquid_kg_per_m3),
-            Some(state.vapour_kg_per_m3),
-            Some(state.latent_heat_j_per_kg),
-            Some(state.slope_pa_per_k),
-            fluid.surface_tension(t),
-            fluid.liquid_viscosity(t),
-            fluid.vapour_viscosity(t),
-        ];
-        push_row(
-            &mut text,
-            cells.map(|cell| cell.map_or_else(String::new, digits)),
-        );
-    }
-    Ok(text)
-}
-
-fn isochore(fluid: &Fluid, density: &str, at: &str) -> Result<String, CliError> {
-    let density: Density = quantity(
-        "density",
-        density,
-        unit_named(Kind::Density, "kg/m³").symbol,
-    )?;
-    let mut text = String::from(
-        "temperature_k,density_kg_per_m3,regime,pressure_pa,liquid_share,vapour_quality\n",
-    );
-    for t in temperatures(at)? {
-        push_row(&mut text, isochore_row(fluid, density, t)?);
-    }
-    Ok(text)
-}
-
-fn isochore_row(fluid: &Fluid, density: Density, t: Temperature) -> Result<[String; 6], CliError> {
-    let state = fluid.state(density, t)?;
-    let cell = |value: Option<f64>| value.map_or_else(String::new, digits);
-    // A pressure that is only bounded is not known: the cell stays empty.
-    let pressure = (!state.is_bound).then(|| state.pressure.pascal());
-    Ok([
-        digits(t.kelvin()),
-        digits(density.kilogram_per_cubic_metre()),
-        words::regime_key(state.regime).to_owned(),
-        cell(pressure),
-        cell(state.liquid_share),
-        cell(state.quality),
-    ])
-}
-
-/// A text as a cell of a CSV: in quotes where it holds a comma or a quote.
-fn cell(text: &str) -> String {
-    let plain = one_line(text);
-    if plain.contains([',', '"']) {
-        format!("\"{}\"", plain.replace('"', "\"\""))
-    } else {
-        plain
-    }
-}
-
 /// Every temperature of a list, or the first that is wrong.
 fn temperatures(list: &str) -> Result<Vec<Temperature>, CliError> {
     list.split(',')
@@ -424,41 +359,9 @@ fn quantity<Q: Quantity>(option: &'static str, text: &str, default: &str) -> Res
     })
 }
 
-fn push_row<const N: usize>(text: &mut String, cells: [String; N]) {
-    writeln!(text, "{}", cells.join(",")).expect("writing to a string");
-}
-
-/// Twelve significant digits, without trailing zeros.
-fn digits(value: f64) -> String {
-    let scientific = format!("{value:.11e}");
-    let (mantissa, exponent) = scientific.split_once('e').unwrap_or((&scientific, "0"));
-    let exponent: i32 = exponent.parse().unwrap_or(0);
-    if (-5..12).contains(&exponent) {
-        let decimals = (11 - exponent).max(0) as usize;
-        let plain = format!("{value:.decimals$}");
-        if plain.contains('.') {
-            plain.trim_end_matches('0').trim_end_matches('.').to_owned()
-        } else {
-            plain
-        }
-    } else {
-        let mantissa = if mantissa.contains('.') {
-            mantissa.trim_end_matches('0').trim_end_matches('.')
-        } else {
-            mantissa
-        };
-        format!("{mantissa}e{exponent}")
-    }
-}
-
 /// One line on stderr.
 fn say(text: &str) {
     eprintln!("chargewright: {}", one_line(text));
-}
-
-fn one_line(text: &str) -> String {
-    let plain = text.replace(|c: char| c.is_control() || c == '\u{a0}', " ");
-    plain.split_whitespace().collect::<Vec<_>>().join(" ")
 }
 
 /// One write; a reader that has gone away is no error.
@@ -467,39 +370,5 @@ fn print(text: &str) -> Result<(), CliError> {
     match out.write_all(text.as_bytes()).and_then(|()| out.flush()) {
         Err(error) if error.kind() != io::ErrorKind::BrokenPipe => Err(CliError::Output(error)),
         _ => Ok(()),
-    }
-}
-
-#[cfg(test)]
-mod tests {
-    use super::*;
-    use crate::fluid::Catalog;
-
-    #[test]
-    fn twelve_digits_without_padding() {
-        assert_eq!(digits(298.15), "298.15");
-        assert_eq!(digits(1.0 / 3.0), "0.333333333333");
-        assert_eq!(digits(1.5e-9), "1.5e-9");
-        assert_eq!(digits(2_257_000.0), "2257000");
-        assert_eq!(digits(1.234_567_890_123_45e15), "1.23456789012e15");
-        assert_eq!(digits(0.0), "0");
-    }
-
-    #[test]
-    fn one_bad_temperature_refuses_the_list() {
-        let water = Catalog::built_in().by_id("water").expect("known");
-        let ask = |at: &str| saturation(&water, at);
-        // −5 °C is below water's freezing point.
-        assert!(matches!(
-            ask("300,-5degC"),
-            Err(CliError::Fluid(FluidError::Frozen { .. }))
-        ));
-        assert!(ask("300,25degC").is_ok());
-        assert!(matches!(ask("300,nan"), Err(CliError::Number { .. })));
-        assert!(matches!(ask("300,-1"), Err(CliError::Quantity { .. })));
-        assert!(matches!(
-            ask("300,700"),
-            Err(CliError::Fluid(FluidError::NoSaturation { .. }))
-        ));
     }
 }

@@ -4,7 +4,7 @@ use std::sync::Arc;
 
 use super::figure::{Figure, Missing};
 use super::inventory::GasInventory;
-use crate::chamber::{Movement, NamedVolumes, Volumes};
+use crate::chamber::{Closure, Movement, NamedVolumes, Volumes};
 use crate::design::{ChargeAim, Design, NamedVolume};
 use crate::fluid::Fluid;
 use crate::sealed::SealedUnit;
@@ -51,14 +51,9 @@ pub fn charge_figures(
     let mass =
         |kilogram: f64| Mass::from_kilogram(kilogram.max(0.0)).map_err(|_| Missing::NoCharge);
     let liquid = fluid.saturation(bench).map_err(Missing::Fluid);
-    let stub = design
-        .chamber
-        .closure
-        .as_ref()
-        .and_then(|c| c.stub.as_ref());
-    let stub_content = mass(match (&liquid, stub) {
-        (Ok(at), Some(stub)) => at.vapour_kg_per_m3 * stub.volume.nominal.cubic_metre(),
-        _ => 0.0,
+    let stub_content = mass(match &liquid {
+        Ok(at) => at.vapour_kg_per_m3 * stub_m3(design),
+        Err(_) => 0.0,
     })?;
     let lost = design.bench.purge_loss.kilogram() + stub_content.kilogram();
     let dispensed = mass(nominal.kilogram() + lost)?;
@@ -112,6 +107,11 @@ pub fn corners(
     })
 }
 
+fn stub_m3(design: &Design) -> f64 {
+    let closure = design.chamber.closure.as_ref();
+    closure.map_or(0.0, Closure::stub_m3)
+}
+
 fn sealed_mass(
     design: &Design,
     fluid: &Fluid,
@@ -129,13 +129,7 @@ fn sealed_mass(
         ChargeAim::Mass { mass } => checked(mass.kilogram()),
         ChargeAim::Dispensed { volume } => {
             let at = fluid.saturation(bench)?;
-            let stub = design
-                .chamber
-                .closure
-                .as_ref()
-                .and_then(|c| c.stub.as_ref());
-            let stub = stub.map_or(0.0, |stub| stub.volume.nominal.cubic_metre());
-            let lost = design.bench.purge_loss.kilogram() + at.vapour_kg_per_m3 * stub;
+            let lost = design.bench.purge_loss.kilogram() + at.vapour_kg_per_m3 * stub_m3(design);
             checked(volume.cubic_metre() * at.liquid_kg_per_m3 - lost)
         }
         ChargeAim::FillRatio {

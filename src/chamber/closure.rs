@@ -96,6 +96,12 @@ impl ClosureKind {
 }
 
 impl Closure {
+    /// Inside what comes off, m³; 0 where nothing does.
+    pub fn stub_m3(&self) -> f64 {
+        let stub = self.stub.as_ref();
+        stub.map_or(0.0, |stub| stub.volume.nominal.cubic_metre())
+    }
+
     /// The closure as the part it is to volume and strength.
     pub(super) fn part(&self) -> Part {
         Part {

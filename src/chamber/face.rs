@@ -1,8 +1,21 @@
-//! Shapes with flat sides: pressure over stress of their weakest face.
+//! Flat walls: pressure over stress of a plate, and of a shape's weakest face.
 
 use super::dimension::Pick;
 use super::shape::{Pillars, PlateEdge};
 use super::strength::{obround, pillar, plate};
+
+/// Of a circular plate by its bending.
+///
+/// The pressure itself stands on the inner face (Tresca); it also keeps a plug thicker
+/// than it is wide from bearing more than its stress.
+pub(super) fn of_disc(diameter_m: f64, t: f64, nu: f64, edge: PlateEdge) -> f64 {
+    1.0 / (plate::circular_stress_pa(1.0, 0.5 * diameter_m, t, nu, edge) + 1.0)
+}
+
+/// Of a rectangular plate, likewise.
+pub(super) fn of_plate(side_m: f64, other_side_m: f64, t: f64, edge: PlateEdge) -> f64 {
+    1.0 / (plate::rectangular_stress_pa(1.0, side_m, other_side_m, t, edge) + 1.0)
+}
 
 /// Of a box.
 ///

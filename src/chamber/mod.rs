@@ -54,6 +54,7 @@ pub use movement::{Movement, REFERENCE_K};
 pub use own::read_own_material;
 pub use part::{HeatTreatment, Part, PartVolumes, Rating, Spread, Wall, Zone};
 pub use shape::{Course, DishedForm, InsertForm, Pillars, PlateEdge, Role, Shape};
+pub use solid::TORISPHERE_KNUCKLE;
 pub use volumes::{ChamberError, MeasuredVolume, NamedVolumes, Volumes, WaterFill};
 pub use wick::{Entered, Lies, Wick, WickFigures, WickForm};
 

@@ -3,9 +3,9 @@
 use super::dimension::{Dimension, Pick};
 use super::envelope::StrengthGap;
 use super::face::{self, circle_m2};
-use super::resistance::wide_and_narrow;
+use super::resistance::Cone;
 use super::shape::Shape;
-use super::strength::{collapse, head, pillar, plate};
+use super::strength::{collapse, pillar};
 
 /// Sizes that collapse depends on, at their worst; elastic collapse goes with the modulus,
 /// yield with the strength, and ovality ties the two.
@@ -108,19 +108,15 @@ impl Against {
                 second_diameter,
                 length,
             } => {
-                let (wide, narrow) = wide_and_narrow(first_diameter, second_diameter);
-                let half_angle_degrees = head::half_angle_degrees(
-                    m(wide),
-                    narrow.least().metre(),
-                    length.least().metre(),
+                let cone = Cone::of(first_diameter, second_diameter, length)?;
+                let outside = |bore: &Dimension| m(bore) + 2.0 * t;
+                let same = collapse::cone_as_cylinder(
+                    outside(cone.wide),
+                    outside(cone.narrow),
+                    m(length),
+                    t,
+                    cone.half_angle_degrees,
                 );
-                if half_angle_degrees > head::CONE_HALF_ANGLE_DEGREES {
-                    return Err(StrengthGap::ConeTooSteep { half_angle_degrees });
-                }
-                let outside = |bore: f64| bore + 2.0 * t;
-                let (wide, narrow) = (outside(m(wide)), outside(m(narrow)));
-                let same =
-                    collapse::cone_as_cylinder(wide, narrow, m(length), t, half_angle_degrees);
                 vec![Form::Tube {
                     mean_diameter_m: same.diameter_m,
                     length_m: same.length_m,
@@ -131,19 +127,12 @@ impl Against {
             Shape::FlatEnd {
                 inside_diameter,
                 edge,
-            } => {
-                let radius = 0.5 * m(inside_diameter);
-                let stress = plate::circular_stress_pa(1.0, radius, t, nu, *edge);
-                vec![bending(1.0 / (stress + 1.0))]
-            }
+            } => vec![bending(face::of_disc(m(inside_diameter), t, nu, *edge))],
             Shape::PlateEnd {
                 width,
                 height,
                 edge,
-            } => {
-                let stress = plate::rectangular_stress_pa(1.0, m(width), m(height), t, *edge);
-                vec![bending(1.0 / (stress + 1.0))]
-            }
+            } => vec![bending(face::of_plate(m(width), m(height), t, *edge))],
             Shape::Box {
                 width,
                 height,

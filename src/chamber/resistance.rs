@@ -62,17 +62,9 @@ impl PressurePerStress {
                 second_diameter,
                 length,
             } => {
-                // The steepest cone that the tolerances allow.
-                let (wide, narrow) = wide_and_narrow(first_diameter, second_diameter);
-                let half_angle_degrees = head::half_angle_degrees(
-                    m(wide),
-                    narrow.least().metre(),
-                    length.least().metre(),
-                );
-                if half_angle_degrees > head::CONE_HALF_ANGLE_DEGREES {
-                    return Err(StrengthGap::ConeTooSteep { half_angle_degrees });
-                }
-                Self::cylinder(2.0 * head::cone_radius_m(m(wide), half_angle_degrees), t)
+                let cone = Cone::of(first_diameter, second_diameter, length)?;
+                let radius = head::cone_radius_m(m(cone.wide), cone.half_angle_degrees);
+                Self::cylinder(2.0 * radius, t)
             }
             Shape::FlatEnd {
                 inside_diameter,
@@ -82,10 +74,7 @@ impl PressurePerStress {
                 width,
                 height,
                 edge,
-            } => {
-                let bending = plate::rectangular_stress_pa(1.0, m(width), m(height), t, *edge);
-                Self::alike(1.0 / (bending + 1.0))
-            }
+            } => Self::alike(face::of_plate(m(width), m(height), t, *edge)),
             Shape::Box {
                 width,
                 height,
@@ -156,10 +145,7 @@ impl PressurePerStress {
     }
 
     fn flat_end(inside_diameter_m: f64, t: f64, nu: f64, edge: PlateEdge) -> Self {
-        // The pressure itself stands on the inner face (Tresca); it also keeps a
-        // plug thicker than it is wide from bearing more than its stress.
-        let bending = plate::circular_stress_pa(1.0, 0.5 * inside_diameter_m, t, nu, edge);
-        let plate = Self::alike(1.0 / (bending + 1.0));
+        let plate = Self::alike(face::of_disc(inside_diameter_m, t, nu, edge));
         let code_form = plate::flat_end_code_form_pa(1.0, inside_diameter_m, t);
         Self {
             code_form: code_form.min(1.0),
@@ -258,15 +244,39 @@ pub(super) fn growth_m3_per_pa(shape: &Shape, t: f64, modulus_pa: f64, nu: f64) 
     if grown.is_finite() { grown } else { 0.0 }
 }
 
-/// The wider end of a cone first.
-pub(super) fn wide_and_narrow<'a>(
-    first: &'a Dimension,
-    second: &'a Dimension,
-) -> (&'a Dimension, &'a Dimension) {
-    if first.nominal >= second.nominal {
-        (first, second)
-    } else {
-        (second, first)
+/// The steepest cone that the tolerances allow.
+pub(super) struct Cone<'a> {
+    pub(super) wide: &'a Dimension,
+    pub(super) narrow: &'a Dimension,
+    pub(super) half_angle_degrees: f64,
+}
+
+impl<'a> Cone<'a> {
+    /// # Errors
+    /// [`StrengthGap::ConeTooSteep`].
+    pub(super) fn of(
+        first: &'a Dimension,
+        second: &'a Dimension,
+        length: &Dimension,
+    ) -> Result<Self, StrengthGap> {
+        let (wide, narrow) = if first.nominal >= second.nominal {
+            (first, second)
+        } else {
+            (second, first)
+        };
+        let half_angle_degrees = head::half_angle_degrees(
+            wide.greatest().metre(),
+            narrow.least().metre(),
+            length.least().metre(),
+        );
+        if half_angle_degrees > head::CONE_HALF_ANGLE_DEGREES {
+            return Err(StrengthGap::ConeTooSteep { half_angle_degrees });
+        }
+        Ok(Self {
+            wide,
+            narrow,
+            half_angle_degrees,
+        })
     }
 }
 

@@ -279,10 +279,6 @@ impl Shape {
         }
     }
 
-    pub const fn is_insert(&self) -> bool {
-        matches!(self.role(), Role::Insert)
-    }
-
     /// Whether it lies inside the chamber and has no wall of its own.
     pub const fn lies_inside(&self) -> bool {
         matches!(self.role(), Role::Insert | Role::Wick)

@@ -1,7 +1,5 @@
 //! Inside volume of a vessel, measured by the water that fills it.
 
-use std::fmt;
-
 /// Density that balances take their weights to have.
 ///
 /// Source: OIML D 28 and R 111-1, conventional mass [from memory].
@@ -56,60 +54,31 @@ pub struct MeasuredVolume {
 }
 
 /// What keeps two weighings from giving a volume.
-#[derive(Debug, Clone, Copy, PartialEq)]
+#[derive(Debug, Clone, Copy, PartialEq, thiserror::Error)]
 pub enum WaterFillError {
     /// Not finite, or the full reading is not above the empty one.
+    #[error("full reading {full_kg} kg is not above empty {empty_kg} kg")]
     NotHeavier { empty_kg: f64, full_kg: f64 },
     /// An uncertainty or the bubble allowance is negative or not finite.
+    #[error("an uncertainty must be 0 or above")]
     Uncertainty,
     /// With its uncertainty, outside 0 °C to 40 °C.
+    #[error("water at {temperature_k} K is outside 273.15 K to 313.15 K")]
     WaterTemperature { temperature_k: f64 },
     /// Outside 0 °C to 40 °C.
+    #[error("air at {temperature_k} K is outside 273.15 K to 313.15 K")]
     AirTemperature { temperature_k: f64 },
     /// Outside 600 hPa to 1100 hPa.
+    #[error("air at {pressure_pa} Pa is outside 60000 Pa to 110000 Pa")]
     AirPressure { pressure_pa: f64 },
     /// Outside 0 to 1.
+    #[error("humidity {relative} is not 0 to 1")]
     Humidity { relative: f64 },
     /// Reference temperature and expansion change the volume by more than 2 %, or are
     /// not finite.
+    #[error("too far from the reference temperature")]
     Reduction,
 }
-
-impl fmt::Display for WaterFillError {
-    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
-        match self {
-            Self::NotHeavier { empty_kg, full_kg } => {
-                write!(
-                    f,
-                    "full reading {full_kg} kg is not above empty {empty_kg} kg"
-                )
-            }
-            Self::Uncertainty => write!(f, "an uncertainty must be 0 or above"),
-            Self::WaterTemperature { temperature_k } => {
-                write!(
-                    f,
-                    "water at {temperature_k} K is outside 273.15 K to 313.15 K"
-                )
-            }
-            Self::AirTemperature { temperature_k } => {
-                write!(
-                    f,
-                    "air at {temperature_k} K is outside 273.15 K to 313.15 K"
-                )
-            }
-            Self::AirPressure { pressure_pa } => {
-                write!(
-                    f,
-                    "air at {pressure_pa} Pa is outside 60000 Pa to 110000 Pa"
-                )
-            }
-            Self::Humidity { relative } => write!(f, "humidity {relative} is not 0 to 1"),
-            Self::Reduction => write!(f, "too far from the reference temperature"),
-        }
-    }
-}
-
-impl std::error::Error for WaterFillError {}
 
 /// Density of air-free water at 101.325 kPa; `None` outside 0 °C to 40 °C.
 ///

@@ -1,6 +1,6 @@
 //! What there is to choose from, as CSV.
 
-use super::{cell, digits, push_row};
+use super::csv::{cell, digits, push_row};
 use crate::chamber::{MaterialKind, Materials, Strength, StrengthAt};
 use crate::fluid::Catalog;
 use crate::units::Temperature;

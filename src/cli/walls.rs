@@ -5,7 +5,7 @@ use crate::design::Design;
 use crate::units::{Pressure, Temperature};
 use crate::words;
 
-use super::{cell, digits, push_row};
+use super::csv::{cell, digits, push_row};
 
 /// Allowable and burst pressure, and the allowable from outside, of every wall; empty
 /// where they are not known, with the reason in the last column.

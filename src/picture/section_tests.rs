@@ -2,9 +2,8 @@
 
 use super::plane::signed_area;
 use super::*;
-use crate::section::{
-    Body, BodyOutline, Device, Dome, Form, Layer, Lies, Lining, Made, Place, Stacked,
-};
+use crate::chamber::DishedForm;
+use crate::section::{Body, BodyOutline, Device, Form, Layer, Lies, Lining, Made, Place, Stacked};
 use crate::units::Units;
 
 pub(super) fn device(places: Vec<Place>) -> Device {
@@ -203,7 +202,11 @@ fn middle_of(picture: &Picture, paint: Paint) -> Point {
 
 #[test]
 fn an_outside_covers_every_inside_and_triangles_cover_every_area() {
-    let domes = [Dome::Hemisphere, Dome::Ellipsoid, Dome::Torisphere];
+    let domes = [
+        DishedForm::Hemispherical,
+        DishedForm::TwoToOneEllipsoidal,
+        DishedForm::Torispherical,
+    ];
     let mut devices: Vec<Device> = domes
         .into_iter()
         .map(|dome| device(vec![Place::End(Form::dome(dome, 0.02)), tube()]))
@@ -265,9 +268,9 @@ fn an_outside_covers_every_inside_and_triangles_cover_every_area() {
 #[test]
 fn the_outside_is_the_inside_and_the_wall() {
     let mut pipe = device(vec![
-        Place::End(Form::dome(Dome::Hemisphere, 0.02)),
+        Place::End(Form::dome(DishedForm::Hemispherical, 0.02)),
         tube(),
-        Place::End(Form::dome(Dome::Hemisphere, 0.02)),
+        Place::End(Form::dome(DishedForm::Hemispherical, 0.02)),
     ]);
     pipe.bodies.push(Body {
         outline: BodyOutline::Disc { diameter_m: 0.004 },

@@ -2,16 +2,7 @@
 
 use super::piece::Form;
 use super::stretch::{Curve, Stretch};
-
-/// A dished end by its meridian.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub enum Dome {
-    Hemisphere,
-    /// Depth a quarter of the diameter.
-    Ellipsoid,
-    /// Crown radius the diameter, knuckle 6 % of it.
-    Torisphere,
-}
+use crate::chamber::{DishedForm, TORISPHERE_KNUCKLE as KNUCKLE};
 
 impl Form {
     pub fn cylinder(diameter_m: f64, length_m: f64) -> Self {
@@ -59,11 +50,11 @@ impl Form {
     }
 
     /// A dished end that closes the beginning of a device: its apex comes first.
-    pub fn dome(dome: Dome, diameter_m: f64) -> Self {
+    pub fn dome(form: DishedForm, diameter_m: f64) -> Self {
         let radius = 0.5 * diameter_m;
-        Self::Round(match dome {
-            Dome::Hemisphere => vec![Stretch::sphere(0.0, radius, radius, radius)],
-            Dome::Ellipsoid => vec![Stretch {
+        Self::Round(match form {
+            DishedForm::Hemispherical => vec![Stretch::sphere(0.0, radius, radius, radius)],
+            DishedForm::TwoToOneEllipsoidal => vec![Stretch {
                 from_m: 0.0,
                 to_m: 0.5 * radius,
                 curve: Curve::Arc {
@@ -73,14 +64,13 @@ impl Form {
                     across_m: radius,
                 },
             }],
-            Dome::Torisphere => torisphere(diameter_m),
+            DishedForm::Torispherical => torisphere(diameter_m),
         })
     }
 }
 
 /// Crown and knuckle; the angle φ at which they meet as in `chamber/solid.rs`.
 fn torisphere(diameter_m: f64) -> Vec<Stretch> {
-    const KNUCKLE: f64 = 0.06;
     let crown = diameter_m;
     let knuckle = KNUCKLE * diameter_m;
     let lift_m = 0.5 * diameter_m - knuckle;
@@ -127,10 +117,10 @@ mod tests {
             Form::sphere(0.04, 0.0, 0.0),
             Form::sphere(0.04, 0.01, 0.039),
             Form::bulb(0.04, 0.005, 0.01, 0.03),
-            Form::dome(Dome::Hemisphere, 0.04),
-            Form::dome(Dome::Ellipsoid, 0.04),
-            Form::dome(Dome::Torisphere, 0.04),
-            Form::dome(Dome::Torisphere, 0.04).reversed(),
+            Form::dome(DishedForm::Hemispherical, 0.04),
+            Form::dome(DishedForm::TwoToOneEllipsoidal, 0.04),
+            Form::dome(DishedForm::Torispherical, 0.04),
+            Form::dome(DishedForm::Torispherical, 0.04).reversed(),
             Form::Bellows {
                 root_m: 0.01,
                 crest_m: 0.014,
@@ -163,10 +153,16 @@ mod tests {
         close(volume(&Form::cylinder(0.02, 0.3)), PI * 0.0001 * 0.3);
         close(volume(&Form::sphere(0.04, 0.0, 0.0)), PI * d3 / 6.0);
         close(volume(&Form::sphere(0.04, 0.0, 0.04)), PI * d3 / 12.0);
-        close(volume(&Form::dome(Dome::Hemisphere, 0.04)), PI * d3 / 12.0);
-        close(volume(&Form::dome(Dome::Ellipsoid, 0.04)), PI * d3 / 24.0);
+        close(
+            volume(&Form::dome(DishedForm::Hemispherical, 0.04)),
+            PI * d3 / 12.0,
+        );
+        close(
+            volume(&Form::dome(DishedForm::TwoToOneEllipsoidal, 0.04)),
+            PI * d3 / 24.0,
+        );
         // Roughly only; stack_tests.rs compares all digits with the closed form of the chamber.
-        let torisphere = volume(&Form::dome(Dome::Torisphere, 1.0));
+        let torisphere = volume(&Form::dome(DishedForm::Torispherical, 1.0));
         assert!((torisphere - 0.0810).abs() < 5e-5, "{torisphere}");
         // A cap of height e = R − √(R² − r²) is gone: π e² (3R − e)/3.
         let e = 0.02 - (0.0004f64 - 0.000025).sqrt();

@@ -4,6 +4,7 @@ use std::f64::consts::PI;
 
 use super::stack::{Place, Stacked};
 use super::*;
+use crate::chamber::DishedForm;
 
 fn one(place: Place) -> Stacked {
     Stacked {
@@ -129,9 +130,9 @@ fn every_place() -> Vec<Place> {
             neck_diameter_m: 0.01,
             neck_length_m: 0.03,
         },
-        Place::End(Form::dome(Dome::Hemisphere, 0.04)),
-        Place::End(Form::dome(Dome::Ellipsoid, 0.04)),
-        Place::End(Form::dome(Dome::Torisphere, 0.04)),
+        Place::End(Form::dome(DishedForm::Hemispherical, 0.04)),
+        Place::End(Form::dome(DishedForm::TwoToOneEllipsoidal, 0.04)),
+        Place::End(Form::dome(DishedForm::Torispherical, 0.04)),
         Place::Along(Form::Slab {
             length_m: 0.06,
             height_m: 0.013,

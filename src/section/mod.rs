@@ -22,7 +22,6 @@ mod stack_tests;
 mod stretch;
 
 pub use body::{Body, BodyOutline, Insert, Made, Solid};
-pub use forms::Dome;
 pub use level::Tilt;
 pub use lining::{Layer, Lies, Lining, pillar_share};
 pub use piece::{Form, Piece, Side};

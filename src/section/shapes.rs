@@ -2,13 +2,10 @@
 
 use super::Device;
 use super::body::{Insert, Made, Solid};
-use super::forms::Dome;
 use super::lining::{Layer, Lies, Lining};
 use super::piece::Form;
 use super::stack::{NoSection, Place, Stacked};
-use crate::chamber::{
-    self, Chamber, Dimension, DishedForm, InsertForm, Part, Pick, Shape, Wick, WickForm,
-};
+use crate::chamber::{self, Chamber, Dimension, InsertForm, Part, Pick, Shape, Wick, WickForm};
 use crate::units::{Kind, Units};
 
 impl Device {
@@ -129,14 +126,7 @@ fn place(shape: &Shape, part: usize, count: u32, text: &str) -> Place {
         Shape::DishedEnd {
             inside_diameter,
             form,
-        } => {
-            let dome = match form {
-                DishedForm::Hemispherical => Dome::Hemisphere,
-                DishedForm::TwoToOneEllipsoidal => Dome::Ellipsoid,
-                DishedForm::Torispherical => Dome::Torisphere,
-            };
-            Place::End(Form::dome(dome, m(inside_diameter)))
-        }
+        } => Place::End(Form::dome(*form, m(inside_diameter))),
         Shape::FlatEnd {
             inside_diameter, ..
         } => Place::End(Form::Plate {

@@ -2,7 +2,7 @@
 
 use super::stack::{NoSection, Place, Stacked};
 use super::*;
-use crate::chamber::{Chamber, Materials, Shape};
+use crate::chamber::{Chamber, DishedForm, Materials, Shape};
 use crate::units::Units;
 
 fn stacked(place: Place, count: u32, part: usize) -> Stacked {
@@ -20,7 +20,7 @@ fn tube(diameter_m: f64) -> Place {
 }
 
 fn dome(diameter_m: f64) -> Place {
-    Place::End(Form::dome(Dome::Hemisphere, diameter_m))
+    Place::End(Form::dome(DishedForm::Hemispherical, diameter_m))
 }
 
 /// Parts in order along the axis.

@@ -6,8 +6,9 @@
 
 use std::path::Path;
 
+use chargewright::chamber::DishedForm;
 use chargewright::picture::{Filling, Hold, Picture, View, section, svg};
-use chargewright::section::{Device, Dome, Form, Place, Stacked};
+use chargewright::section::{Device, Form, Place, Stacked};
 use chargewright::store;
 use chargewright::units::{UnitSystem, Units};
 use proptest::prelude::*;
@@ -122,7 +123,11 @@ fn places() -> impl Strategy<Value = Place> {
             neck_length_m,
         }),
         (d(), 0..3_usize).prop_map(|(d, i)| {
-            let dome = [Dome::Hemisphere, Dome::Ellipsoid, Dome::Torisphere][i];
+            let dome = [
+                DishedForm::Hemispherical,
+                DishedForm::TwoToOneEllipsoidal,
+                DishedForm::Torispherical,
+            ][i];
             Place::End(Form::dome(dome, d))
         }),
         (d(), d(), d()).prop_map(|(length_m, height_m, depth_m)| Place::Along(Form::Slab {

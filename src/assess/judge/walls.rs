@@ -7,10 +7,10 @@ use crate::chamber::{MaterialKind, OutsideBasis, Relief};
 
 impl Judge<'_> {
     pub(super) fn collapse(&mut self) {
-        let Some(case) = self.a.worst_outside() else {
+        let a = self.a;
+        let Some(case) = a.worst_outside() else {
             return;
         };
-        let case = case.clone();
         let (weakest, share) = match (&case.weakest, &case.of_allowable) {
             (Ok(weakest), Ok(share)) => (weakest, *share),
             (Err(unknown), _) => {

@@ -1,12 +1,11 @@
 //! How much goes in: by mass, by fill ratio, or by dispensed volume.
 
-use eframe::egui::{ComboBox, RichText, Ui};
+use eframe::egui::{RichText, Ui};
 
-use super::design::name;
 use crate::assess::Assessment;
 use crate::design::{ChargeAim, Design, NamedVolume};
 use crate::ui::theme::Palette;
-use crate::ui::widgets::QuantityField;
+use crate::ui::widgets::{ChoiceWidth, QuantityField, choice_ui};
 use crate::units::{Mass, Ratio, Units, Volume};
 use crate::words;
 
@@ -120,25 +119,25 @@ fn smallest_mass() -> Mass {
 
 fn named_volume_ui(ui: &mut Ui, of: &mut NamedVolume, parts: &[String]) {
     let said = |of: &NamedVolume| format!("of {}", words::named_volume(of));
-    let combo = ComboBox::from_id_salt("named volume")
-        .width(ui.available_width())
-        .selected_text(said(of));
-    let response = combo
-        .show_ui(ui, |ui| {
-            let named = [
-                NamedVolume::Inside,
-                NamedVolume::VapourCore,
-                NamedVolume::WickVoid,
-                NamedVolume::Evaporator,
-            ];
-            let parts = parts.iter().cloned().map(NamedVolume::Part);
-            for choice in named.into_iter().chain(parts) {
-                let text = said(&choice);
-                ui.selectable_value(of, choice, text);
-            }
-        })
-        .response;
-    name(&response, "Volume that the fill ratio is of");
+    let named = [
+        NamedVolume::Inside,
+        NamedVolume::VapourCore,
+        NamedVolume::WickVoid,
+        NamedVolume::Evaporator,
+    ];
+    let parts = parts.iter().cloned().map(NamedVolume::Part);
+    let shown = said(of);
+    choice_ui(
+        ui,
+        "Volume that the fill ratio is of",
+        &shown,
+        ChoiceWidth::Column,
+        of,
+        named.into_iter().chain(parts).map(|choice| {
+            let text = said(&choice);
+            (choice, text)
+        }),
+    );
 }
 
 /// What the charge comes to, in the other ways of stating it.

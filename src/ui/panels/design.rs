@@ -1,13 +1,13 @@
 //! The left column: what goes in, section by section in the order of the job.
 
-use eframe::egui::{ComboBox, Id, Role, TextEdit, Ui, WidgetInfo};
+use eframe::egui::{Id, Role, TextEdit, Ui, WidgetInfo};
 
 use super::fluid::FluidPanel;
 use super::section::{column_ui, section_ui};
 use super::{chamber, charge, conditions, exposures, fluid};
 use crate::assess::{Assessment, Library, Section};
 use crate::design::{Design, Duty};
-use crate::ui::widgets::QuantityField;
+use crate::ui::widgets::{ChoiceWidth, QuantityField, choice_ui};
 use crate::units::{Pressure, Units};
 
 /// View-only state of the column.
@@ -100,17 +100,14 @@ pub fn design_ui(
 fn duty_ui(ui: &mut Ui, design: &mut Design) {
     text_ui(ui, "Title", &mut design.title, false);
     text_ui(ui, "Note", &mut design.note, true);
-    let combo = ComboBox::from_id_salt("duty")
-        .width(ui.available_width())
-        .selected_text(design.duty.name());
-    let response = combo
-        .show_ui(ui, |ui| {
-            for duty in Duty::ALL {
-                ui.selectable_value(&mut design.duty, duty, duty.name());
-            }
-        })
-        .response;
-    name(&response, "Duty of the device");
+    choice_ui(
+        ui,
+        "Duty of the device",
+        design.duty.name(),
+        ChoiceWidth::Column,
+        &mut design.duty,
+        Duty::ALL.map(|duty| (duty, duty.name().to_owned())),
+    );
 }
 
 fn text_ui(ui: &mut Ui, label: &str, text: &mut String, long: bool) {
@@ -178,9 +175,4 @@ fn room_ui(ui: &mut Ui, design: &mut Design, units: &Units) {
         .slider(263.15, 313.15)
         .show(ui);
     ui.checkbox(&mut room.consumers, "The public holds it");
-}
-
-/// Gives a widget its accessible name.
-pub fn name(response: &eframe::egui::Response, label: &str) {
-    response.widget_info(|| WidgetInfo::labeled(Role::ComboBox, true, label));
 }

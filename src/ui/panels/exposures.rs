@@ -1,11 +1,10 @@
 //! What else the walls must stand: bake-out, leak test, autoclave and the like.
 
-use eframe::egui::{Button, ComboBox, Ui};
+use eframe::egui::{Button, Ui};
 
 use super::chamber::text_ui;
-use super::design::name;
 use crate::conditions::{Conditions, Contents, Exposure};
-use crate::ui::widgets::QuantityField;
+use crate::ui::widgets::{ChoiceWidth, QuantityField, choice_ui};
 use crate::units::Units;
 use crate::words;
 
@@ -49,15 +48,14 @@ fn exposure_ui(ui: &mut Ui, exposure: &mut Exposure, units: &Units) -> bool {
     text_ui(ui, &mut exposure.name, "Name of the exposure", "name");
     let mut remove = false;
     ui.horizontal(|ui| {
-        let combo = ComboBox::from_id_salt("contents").selected_text(exposure.contents.name());
-        let response = combo
-            .show_ui(ui, |ui| {
-                for contents in Contents::ALL {
-                    ui.selectable_value(&mut exposure.contents, contents, contents.name());
-                }
-            })
-            .response;
-        name(&response, "What is inside meanwhile");
+        choice_ui(
+            ui,
+            "What is inside meanwhile",
+            exposure.contents.name(),
+            ChoiceWidth::Text,
+            &mut exposure.contents,
+            Contents::ALL.map(|contents| (contents, contents.name().to_owned())),
+        );
         remove = ui.add(Button::new("Remove").small()).clicked();
     });
     for (label, value) in [

@@ -29,10 +29,25 @@ struct MadeOf {
     chamber: Chamber,
     title: String,
     duty: Duty,
+    view: View,
+}
+
+/// How the design is looked at.
+#[derive(Debug, Clone, PartialEq)]
+struct View {
     place: Option<LiquidPlace>,
     temperature: Temperature,
     units: Units,
     turn_deg: f64,
+}
+
+impl MadeOf {
+    fn is(&self, design: &Design, view: &View) -> bool {
+        self.view == *view
+            && self.duty == design.duty
+            && self.title == design.title
+            && self.chamber == design.chamber
+    }
 }
 
 /// Gain of scale for which a picture is turned on its side.
@@ -132,13 +147,13 @@ fn turn(design: &Design, rect: Rect, units: &Units, state: &PlotState) -> f64 {
     let tilt_deg = design.chamber.tilt.radian().to_degrees();
     let kept = state.section.as_ref().filter(|drawn| {
         let made = &drawn.made_of;
-        made.chamber == design.chamber && made.units == *units
+        made.chamber == design.chamber && made.view.units == *units
     });
     // By the picture at hand, either way up.
     let Some(Ok(picture)) = kept.map(|drawn| drawn.picture.as_ref()) else {
         return 0.0;
     };
-    let is_turned = kept.is_some_and(|drawn| drawn.made_of.turn_deg != 0.0);
+    let is_turned = kept.is_some_and(|drawn| drawn.made_of.view.turn_deg != 0.0);
     let (mut w, mut h) = (picture.bounds.width(), picture.bounds.height());
     if is_turned {
         (w, h) = (h, w);
@@ -161,18 +176,21 @@ fn drawn<'a>(
     turn_deg: f64,
     state: &'a mut PlotState,
 ) -> Result<&'a Picture, NoSection> {
-    let made_of = MadeOf {
-        chamber: design.chamber.clone(),
-        title: design.title.clone(),
-        duty: design.duty,
+    let view = View {
         place: a.liquid_place(temperature),
         temperature,
         units: *units,
         turn_deg,
     };
-    let fresh = matches!(&state.section, Some(drawn) if drawn.made_of == made_of);
+    let fresh = matches!(&state.section, Some(drawn) if drawn.made_of.is(design, &view));
     if !fresh {
         let picture = of_design(design, a, temperature, turn_deg, units);
+        let made_of = MadeOf {
+            chamber: design.chamber.clone(),
+            title: design.title.clone(),
+            duty: design.duty,
+            view,
+        };
         state.section = Some(Box::new(Drawn { made_of, picture }));
     }
     match &state.section {

@@ -3,6 +3,7 @@
 
 mod badge;
 mod bars;
+mod choice;
 mod draft;
 mod quantity;
 mod row;
@@ -14,6 +15,7 @@ mod tests;
 
 pub use badge::{Badge, badge_mark, verdict_badge};
 pub use bars::margin_bar;
+pub use choice::{ChoiceWidth, choice_ui};
 pub use draft::is_typing;
 pub use quantity::{QuantityField, quantity_with_tolerance_row};
 pub use window_bar::{WindowBar, WindowBarLabels, window_bar};

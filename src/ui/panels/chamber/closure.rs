@@ -1,15 +1,14 @@
 //! How the filled unit is closed.
 
-use eframe::egui::{ComboBox, RichText, Ui};
+use eframe::egui::{RichText, Ui};
 
 use super::faults_of;
 use super::part::{capacity_ui, text_ui};
 use super::wall::rating_ui;
 use crate::assess::Assessment;
 use crate::chamber::{Capacity, Chamber, Closure, ClosureKind, Relief, Stub};
-use crate::ui::panels::design::name;
 use crate::ui::theme::Palette;
-use crate::ui::widgets::QuantityField;
+use crate::ui::widgets::{ChoiceWidth, QuantityField, choice_ui};
 use crate::units::{Mass, Pressure, Units};
 use crate::words;
 
@@ -35,17 +34,14 @@ fn kind_ui(ui: &mut Ui, closure: &mut Option<Closure>) {
             |kind| format!("closed by: {}", kind.name()),
         )
     };
-    let combo = ComboBox::from_id_salt("kind")
-        .width(ui.available_width())
-        .selected_text(said(kind));
-    let response = combo
-        .show_ui(ui, |ui| {
-            for choice in ClosureKind::ALL {
-                ui.selectable_value(&mut chosen, Some(choice), words::upper(choice.name()));
-            }
-        })
-        .response;
-    name(&response, "How the unit is closed");
+    choice_ui(
+        ui,
+        "How the unit is closed",
+        &said(kind),
+        ChoiceWidth::Column,
+        &mut chosen,
+        ClosureKind::ALL.map(|kind| (Some(kind), words::upper(kind.name()))),
+    );
     if let (Some(kind), true) = (chosen, chosen != kind) {
         match closure {
             Some(closure) => closure.kind = kind,

@@ -1,12 +1,11 @@
 //! The inside volume: the sum of the parts, as measured, or weighed full of water.
 
-use eframe::egui::{ComboBox, RichText, Ui};
+use eframe::egui::{RichText, Ui};
 
 use crate::assess::Assessment;
 use crate::chamber::{Chamber, MeasuredVolume, WaterFill};
-use crate::ui::panels::design::name;
 use crate::ui::theme::Palette;
-use crate::ui::widgets::{QuantityField, quantity_with_tolerance_row};
+use crate::ui::widgets::{ChoiceWidth, QuantityField, choice_ui, quantity_with_tolerance_row};
 use crate::units::{Mass, Pressure, Ratio, Temperature, TemperatureDifference, Units, Volume};
 
 #[derive(Clone, Copy, PartialEq, Eq)]
@@ -35,17 +34,14 @@ pub fn inside_ui(ui: &mut Ui, chamber: &mut Chamber, a: &Assessment, units: &Uni
         (None, None) => Way::Sum,
     };
     let mut chosen = way;
-    let combo = ComboBox::from_id_salt("inside")
-        .width(ui.available_width())
-        .selected_text(way.name());
-    let response = combo
-        .show_ui(ui, |ui| {
-            for choice in Way::ALL {
-                ui.selectable_value(&mut chosen, choice, choice.name());
-            }
-        })
-        .response;
-    name(&response, "How the inside volume is found");
+    choice_ui(
+        ui,
+        "How the inside volume is found",
+        way.name(),
+        ChoiceWidth::Column,
+        &mut chosen,
+        Way::ALL.map(|way| (way, way.name().to_owned())),
+    );
     if chosen != way {
         let now = a.volumes.as_ref().map(|volumes| volumes.nominal).ok();
         chamber.measured = now.filter(|_| chosen == Way::Stated).map(stated);

@@ -157,16 +157,14 @@ fn new_part(chamber: &Chamber, shape: Shape, library: &Library) -> Part {
     let last = chamber.parts.iter().rev().find_map(|p| p.wall.clone());
     let wall = last.or_else(|| wall::default_wall(library));
     let name = shape.kind_name().to_owned();
-    let mut part = match shape.role() {
+    match shape.role() {
         Role::Cavity | Role::Lid => Part::new(&name, shape, wall),
         Role::Rated => Part::new(&name, shape, None),
         Role::Insert | Role::Wick => Part {
             made_of: wall.map(|wall| wall.material),
             ..Part::new(&name, shape, None)
         },
-    };
-    part.name = name;
-    part
+    }
 }
 
 fn faults_of(a: &Assessment, index: usize, units: &Units) -> Vec<String> {

@@ -1,16 +1,16 @@
 //! One part of the list: its row, and its body when it is open.
 
 use eframe::egui::{
-    Align, Button, ComboBox, DragValue, Id, Layout, RichText, Role, TextEdit, Ui, WidgetInfo, vec2,
+    Align, Button, DragValue, Id, Layout, RichText, Role, TextEdit, Ui, WidgetInfo, vec2,
 };
 
 use super::wall::{made_of_ui, rating_ui, wall_ui};
 use super::{Change, share};
 use crate::assess::Library;
 use crate::chamber::{Capacity, Dimension, Field, Part, PlateEdge, Role as PartRole, Shape, Zone};
-use crate::ui::panels::design::{editing_text_id, name};
+use crate::ui::panels::design::editing_text_id;
 use crate::ui::theme::Palette;
-use crate::ui::widgets::{QuantityField, quantity_with_tolerance_row};
+use crate::ui::widgets::{ChoiceWidth, QuantityField, choice_ui, quantity_with_tolerance_row};
 use crate::units::{Kind, Units};
 use crate::words;
 
@@ -155,16 +155,16 @@ fn sizes_ui(ui: &mut Ui, shape: &mut Shape, units: &Units) {
             PlateEdge::Clamped => "rim held, cannot turn",
             PlateEdge::SimplySupported => "rim can turn (careful)",
         };
-        let combo = ComboBox::from_id_salt("edge").selected_text(said(*edge));
-        let response = combo
-            .width(ui.available_width())
-            .show_ui(ui, |ui| {
-                for choice in [PlateEdge::SimplySupported, PlateEdge::Clamped] {
-                    ui.selectable_value(edge, choice, said(choice));
-                }
-            })
-            .response;
-        name(&response, "How its rim is held");
+        let shown = said(*edge);
+        choice_ui(
+            ui,
+            "How its rim is held",
+            shown,
+            ChoiceWidth::Column,
+            edge,
+            [PlateEdge::SimplySupported, PlateEdge::Clamped]
+                .map(|edge| (edge, said(edge).to_owned())),
+        );
     }
     if let Shape::Wick(wick) = shape {
         let figures = wick.figures();
@@ -236,17 +236,14 @@ fn entered_ui(ui: &mut Ui, wick: &mut crate::chamber::Wick, units: &Units) {
 }
 
 fn zone_ui(ui: &mut Ui, part: &mut Part) {
-    let combo = ComboBox::from_id_salt("zone")
-        .width(ui.available_width())
-        .selected_text(part.zone.name());
-    let response = combo
-        .show_ui(ui, |ui| {
-            for zone in Zone::ALL {
-                ui.selectable_value(&mut part.zone, zone, zone.name());
-            }
-        })
-        .response;
-    name(&response, "Zone of the device");
+    choice_ui(
+        ui,
+        "Zone of the device",
+        part.zone.name(),
+        ChoiceWidth::Column,
+        &mut part.zone,
+        Zone::ALL.map(|zone| (zone, zone.name().to_owned())),
+    );
 }
 
 pub fn dimension_ui(

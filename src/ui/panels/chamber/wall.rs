@@ -1,12 +1,11 @@
 //! What a part is made of and what it bears.
 
-use eframe::egui::{ComboBox, Ui};
+use eframe::egui::Ui;
 
 use super::part::{dimension_ui, text_ui};
 use crate::assess::Library;
 use crate::chamber::{Dimension, HeatTreatment, MaterialKind, Rating, Wall};
-use crate::ui::panels::design::name;
-use crate::ui::widgets::QuantityField;
+use crate::ui::widgets::{ChoiceWidth, QuantityField, choice_ui};
 use crate::units::{Length, Pressure, Temperature, Units};
 
 pub fn wall_ui(ui: &mut Ui, wall: &mut Wall, library: &Library, units: &Units) {
@@ -15,17 +14,14 @@ pub fn wall_ui(ui: &mut Ui, wall: &mut Wall, library: &Library, units: &Units) {
     if let Some(chosen) = chosen {
         wall.material = chosen;
     }
-    let combo = ComboBox::from_id_salt("treatment")
-        .width(ui.available_width())
-        .selected_text(format!("last heat: {}", wall.treatment.name()));
-    let response = combo
-        .show_ui(ui, |ui| {
-            for treatment in HeatTreatment::ALL {
-                ui.selectable_value(&mut wall.treatment, treatment, treatment.name());
-            }
-        })
-        .response;
-    name(&response, "Last heat treatment");
+    choice_ui(
+        ui,
+        "Last heat treatment",
+        &format!("last heat: {}", wall.treatment.name()),
+        ChoiceWidth::Column,
+        &mut wall.treatment,
+        HeatTreatment::ALL.map(|treatment| (treatment, treatment.name().to_owned())),
+    );
     let thickness = &mut wall.thickness;
     dimension_ui(ui, "Wall thickness", thickness, (5e-5, 0.02), 99, units);
     QuantityField::new("Corrosion", &mut wall.corrosion_allowance, units)
@@ -131,21 +127,18 @@ fn material_combo(
             material.map_or_else(|| id.to_owned(), |m| m.name.clone())
         },
     );
-    let combo = ComboBox::from_id_salt(label)
-        .width(ui.available_width())
-        .truncate()
-        .selected_text(shown);
-    let response = combo
-        .show_ui(ui, |ui| {
-            if let Some(none) = none {
-                ui.selectable_value(chosen, None, none);
-            }
-            for material in library.materials.iter() {
-                let id = Some(material.id.clone());
-                let own = material.own_file().map_or("", |_| ", your own");
-                ui.selectable_value(chosen, id, format!("{}{own}", material.name));
-            }
-        })
-        .response;
-    name(&response, label);
+    let none = none.map(|none| (None, none.to_owned()));
+    let known = library.materials.iter().map(|material| {
+        let own = material.own_file().map_or("", |_| ", your own");
+        let text = format!("{}{own}", material.name);
+        (Some(material.id.clone()), text)
+    });
+    choice_ui(
+        ui,
+        label,
+        &shown,
+        ChoiceWidth::Column,
+        chosen,
+        none.into_iter().chain(known),
+    );
 }
