@@ -196,10 +196,8 @@ pub fn answer(command: &Headless, settings: Option<&Path>) -> Result<Outcome, Cl
         }
         Headless::Section { design, at, out } => {
             let (design_read, shelf) = store::open(design, settings)?;
-            let at = match at {
-                Some(text) => temperatures(text)?.first().copied(),
-                None => None,
-            };
+            let at = at.as_ref().map(|text| quantity("at", text, "K"));
+            let at = at.transpose()?;
             let text = section(&design_read, &shelf.library, at)?;
             let text = written(text, out.as_deref(), design)?;
             Ok(outcome(text, shelf.notices_for(&design_read)))

@@ -39,13 +39,16 @@ impl Fluid {
         let t = temperature.kelvin();
         let melting = self.melting_pressure(temperature);
         let most = melting.map_or(f64::INFINITY, Pressure::pascal);
-        let p = pressure.pascal().min(most);
+        let mut p = pressure.pascal().min(most);
         let critical = self.critical();
         let (_, most) = self.model.limits(self.molar_mass);
         let (from, to, liquid) = if t < critical.temperature_k {
             let (_, top) = self.saturation_range();
             let at = self.curve()?.at(t.min(top.kelvin()));
-            if p > at.pressure_pa {
+            if pressure.pascal() > at.pressure_pa {
+                // A melting line that starts a little below the vapour pressure, by its own
+                // error, does not turn the liquid into a vapour.
+                p = p.max(at.pressure_pa);
                 // A correlated liquid has no stated densest state: twice ρ′ is beyond its pressure limit.
                 let densest = if most.is_finite() {
                     most

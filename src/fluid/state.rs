@@ -229,7 +229,9 @@ impl Fluid {
         }
     }
 
-    fn is_beside_its_line(&self, pressure: Pressure, temperature: Temperature) -> bool {
+    /// Whether a liquid at this pressure stands so little above its vapour pressure that the
+    /// melting line, which meets it at the triple point, says nothing of it.
+    pub fn is_beside_its_line(&self, pressure: Pressure, temperature: Temperature) -> bool {
         self.saturation_pressure(temperature)
             .map(Pressure::pascal)
             .is_ok_and(|p| pressure.pascal() - p <= BESIDE_THE_LINE.1.max(BESIDE_THE_LINE.0 * p))

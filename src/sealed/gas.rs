@@ -225,6 +225,11 @@ pub fn densest_within(
 ) -> Result<Option<Density>, FluidError> {
     let spread = |rho: f64| amount_mol(rho) * GAS_CONSTANT * temperature.kelvin() / volume_m3;
     let melting = fluid.melting_pressure(temperature);
+    // At the triple point the liquid melts as it is: the gas presses on it by less than the
+    // line is known to.
+    if melting.is_some_and(|m| m < limit && fluid.is_beside_its_line(m, temperature)) {
+        return fluid.densest_within(limit, temperature, None);
+    }
     let limit_pa = melting.map_or(limit.pascal(), |m| m.pascal().min(limit.pascal()));
     let divide = fluid.divide(temperature)?;
     let excess = limit_pa - divide.pressure_pa;

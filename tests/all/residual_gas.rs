@@ -216,3 +216,23 @@ fn the_densest_within_a_pressure_stands_at_it() {
         assert!(off.abs() < 1e-9, "{id}: {off:e}");
     }
 }
+
+/// Where the fluid melts as it boils the walls' limit is far off, and a trace of gas changes
+/// nothing of it: a vessel may be all but full of liquid there as a little warmer.
+#[test]
+fn at_the_triple_point_a_trace_of_gas_does_not_empty_the_vessel() {
+    for id in ["water", "ammonia", "propane", "carbon-dioxide", "methanol"] {
+        let (low, _) = fluid(id).saturation_range();
+        let from = low.max(fluid(id).freezing_point());
+        for above in [0.0, 1e-3, 0.1, 1.0] {
+            let t = from.kelvin() + above;
+            let found = densest_within(&fluid(id), pascal(2e6), kelvin(t), 2e-5, 0.0, |_| 1e-8);
+            let found = found.expect(id).expect(id).kilogram_per_cubic_metre();
+            let liquid = fluid(id).curve().expect(id).at(t).liquid_kg_per_m3;
+            assert!(
+                (found / liquid - 1.0).abs() < 2e-2,
+                "{id} {t}: {found} {liquid}"
+            );
+        }
+    }
+}
